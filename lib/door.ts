@@ -26,7 +26,9 @@ export function checkNumber(value: unknown, rule: NumberRule): number {
   const tooLow = typeof value === "number" && (rule.above ? value <= min : value < min);
   if (typeof value === "number" && Number.isFinite(value) && !tooLow && value <= max) return value;
   const advice = rule.advice === undefined ? "" : `; ${rule.advice}`;
-  throw new InputError(`${rule.where}: ${rule.field} is ${show(value)}; it must be ${describeRange(rule)}${advice}`);
+  throw new InputError(
+    `${rule.where}: ${rule.field} is ${show(value)}; it must be ${describeRange(rule)}${advice}`,
+  );
 }
 
 /** Checks every number of `input` named in `rules`; `where` stands before each message. */
@@ -59,20 +61,26 @@ export function unknownName(where: string, kind: string, given: string, known: r
   return `${where}: unknown ${kind} "${given}"; ${hint}`;
 }
 
-/** The name in `known` within a third of its length in edits from `given` (letter case ignored), or undefined. */
+/**
+ * The name in `known` within a third of its length in edits from `given`, or undefined. Letter case is ignored, and a unit
+ * ending (`_mPas`) may be left off.
+ */
 export function nearestName(given: string, known: readonly string[]): string | undefined {
   let best: string | undefined;
   let bestEdits = Infinity;
   for (const name of known) {
-    const edits = editDistance(given.toLowerCase(), name.toLowerCase());
-    if (edits < bestEdits) [best, bestEdits] = [name, edits];
+    const stem = name.replace(/_[^_]*$/, "");
+    const edits = Math.min(edit(given, name), edit(given, stem));
+    if (edits < bestEdits && edits <= Math.max(1, Math.ceil(stem.length / 3)))
+      [best, bestEdits] = [name, edits];
   }
-  return best !== undefined && bestEdits <= Math.max(1, Math.ceil(best.length / 3)) ? best : undefined;
+  return best;
 }
 
 /** A value as an error shows it: text in quotes, numbers bare, everything else named by its kind. */
 export function show(value: unknown): string {
-  if (typeof value === "string") return JSON.stringify(value.length > 60 ? `${value.slice(0, 57)}...` : value);
+  if (typeof value === "string")
+    return JSON.stringify(value.length > 60 ? `${value.slice(0, 57)}...` : value);
   if (typeof value === "number" || typeof value === "boolean" || value === null) return String(value);
   if (value === undefined) return "missing";
   return Array.isArray(value) ? "a list" : `a ${typeof value}`;
@@ -85,7 +93,9 @@ function describeRange({ min = -Infinity, max = Infinity, above }: NumberRule): 
   return above ? `a number above ${min} and at most ${max}` : `a number from ${min} to ${max}`;
 }
 
-function editDistance(a: string, b: string): number {
+/** Levenshtein distance, letter case ignored. */
+function edit(first: string, second: string): number {
+  const [a, b] = [first.toLowerCase(), second.toLowerCase()];
   let previous = Array.from({ length: b.length + 1 }, (_, j) => j);
   for (let i = 1; i <= a.length; i++) {
     const row = [i];

@@ -1,10 +1,17 @@
 // What a result looks like everywhere: an interval with its warnings and its sources, never a bare digit.
 
 /** How well a value is known to be what it says: the ground it stands on. */
-export type SourceStatus = "published" | "measured here" | "common practice" | "from memory" | "invented for the demo";
+export type SourceStatus =
+  | "published"
+  | "computed from published data"
+  | "measured here"
+  | "common practice"
+  | "from memory"
+  | "invented for the demo";
 
 export const sourceStatuses: readonly SourceStatus[] = [
   "published",
+  "computed from published data",
   "measured here",
   "common practice",
   "from memory",

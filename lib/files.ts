@@ -1,0 +1,4 @@
+// The door for programs that run in Node: reads briefs, formulations and shelves from disc, and keeps the lab record.
+
+export { readFormulation, readShelf, openBrief, readNumberFile, type Workbench } from "./recipe/files.js";
+export { appendRecord, readRecords, type LabRecord } from "./lab/record.js";

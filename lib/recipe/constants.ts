@@ -1,0 +1,42 @@
+// The constants that belong to acrylate and methacrylate resins as a class, not to one ingredient; all of them uncertain.
+
+import { z } from "zod";
+import type { SourcedValue } from "../result.js";
+import { readDocument, strict, type JsonDocument } from "./document.js";
+import { sourced } from "./sourced.js";
+
+/** Class constants of free-radical resins. */
+export interface ResinConstants {
+  /** Oxygen dissolved per pascal of oxygen above the resin. */
+  readonly oxygenSolubility_molm3Pa: SourcedValue;
+  /** Oxygen molecules used up per radical started, while oxygen lasts. */
+  readonly oxygenPerRadical: SourcedValue;
+  /** Factor on the oxygen diffusivity that the two-thirds law gives. */
+  readonly diffusivityFactor: SourcedValue;
+  /** Propagation kp. */
+  readonly propagation_m3mols: SourcedValue;
+  /** Termination kt in d[R]/dt = -2 kt [R]². */
+  readonly termination_m3mols: SourcedValue;
+  /** Double-bond conversion at which the resin holds as a solid. */
+  readonly gelConversion: SourcedValue;
+  /** Napierian absorption of the resin without initiator and absorber. */
+  readonly backgroundAbsorption_percm: SourcedValue;
+  /** Grunberg–Nissan G of a pair of liquids that nobody has measured. */
+  readonly unmeasuredInteraction: SourcedValue;
+}
+
+/** Reads the constants file. @throws InputError with file, line and field. */
+export function readConstants(document: JsonDocument): ResinConstants {
+  return readDocument(constantsSchema, document);
+}
+
+const constantsSchema: z.ZodType<ResinConstants> = strict({
+  oxygenSolubility_molm3Pa: sourced("oxygenSolubility_molm3Pa", { above: 0 }),
+  oxygenPerRadical: sourced("oxygenPerRadical", { above: 0 }),
+  diffusivityFactor: sourced("diffusivityFactor", { above: 0 }),
+  propagation_m3mols: sourced("propagation_m3mols", { above: 0 }),
+  termination_m3mols: sourced("termination_m3mols", { above: 0 }),
+  gelConversion: sourced("gelConversion", { above: 0, max: 0.9 }),
+  backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { min: 0 }),
+  unmeasuredInteraction: sourced("unmeasuredInteraction"),
+});

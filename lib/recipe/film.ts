@@ -1,0 +1,28 @@
+// The window film under the resin: a generic polymer and how fast oxygen passes through it.
+
+import { z } from "zod";
+import type { SourcedValue } from "../result.js";
+import { readDocument, strict, type JsonDocument } from "./document.js";
+import { idSchema, sourced } from "./sourced.js";
+
+/** A window film by its generic polymer name. */
+export interface Film {
+  readonly id: string;
+  readonly name: string;
+  readonly cas?: string;
+  readonly oxygenPermeability_barrer: SourcedValue;
+  readonly note?: string;
+}
+
+/** Reads a film file. @throws InputError with file, line and field. */
+export function readFilm(document: JsonDocument): Film {
+  return readDocument(filmSchema, document);
+}
+
+const filmSchema: z.ZodType<Film> = strict({
+  id: idSchema,
+  name: z.string().min(2),
+  cas: z.string().optional(),
+  oxygenPermeability_barrer: sourced("oxygenPermeability_barrer", { above: 0 }),
+  note: z.string().optional(),
+});

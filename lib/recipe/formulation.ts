@@ -1,0 +1,278 @@
+// A formulation: what goes into the bottle as mass fractions, and the other ways of saying the same.
+
+import { z } from "zod";
+import { checkNumber, InputError, unknownName } from "../door.js";
+import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
+import type { Ingredient } from "./ingredient.js";
+import { ingredientOn, type Shelf } from "./shelf.js";
+import { idSchema } from "./sourced.js";
+
+/** One line of a formulation file: an ingredient (of a lot, if named) or a blend mixed before, and its share. */
+export interface Part {
+  readonly ingredient?: string;
+  readonly lot?: string;
+  /** Path of another formulation file, relative to this one. */
+  readonly blend?: string;
+  readonly mass_pct: number;
+}
+
+/** A formulation as its file states it. */
+export interface Recipe {
+  readonly id: string;
+  readonly title: string;
+  /** Parts by mass of any total are brought to 100 %. */
+  readonly normalise: boolean;
+  readonly parts: readonly Part[];
+}
+
+/** An ingredient with its share of the mass, 0 to 1. */
+export interface Component {
+  readonly ingredient: Ingredient;
+  readonly massFraction: number;
+}
+
+/** What is in the bottle: each ingredient once, mass fractions adding up to 1. */
+export interface Formulation {
+  readonly id: string;
+  readonly title: string;
+  readonly components: readonly Component[];
+}
+
+/** A component seen every way: by mass, volume, amount, concentration, and per hundred parts of liquid. */
+export interface CompositionRow extends Component {
+  readonly volumeFraction: number;
+  /** Undefined where an ingredient of the formulation has no molar mass. */
+  readonly moleFraction?: number;
+  readonly concentration_molL?: number;
+  /** Grams for each hundred grams of diluents and oligomers; undefined where there are none. */
+  readonly partsPerHundred?: number;
+}
+
+/** Gives the number to use for a figure of an ingredient: the stated value, or one drawn from its doubt. */
+export type FigureReader = (
+  ingredient: Ingredient,
+  figure: "density_gcm3" | "molarMass_gmol",
+) => number | undefined;
+
+/** Reads a formulation file. @throws InputError with file, line and field. */
+export function readRecipe(document: JsonDocument): Recipe {
+  return readDocument(recipeSchema, document);
+}
+
+/**
+ * Brings a recipe's parts to mass fractions; blends are taken apart into their ingredients.
+ * @param input - `recipe`, the `shelf` its ingredients stand on, `blends` by the names its parts use.
+ * @throws InputError when parts do not add up to 100 ± 0.05 and the recipe does not say `normalise`, when an ingredient or
+ * blend is unknown, when a part names both or neither.
+ * @example
+ * ```ts
+ * import { formulate } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const shelf = readShelf(["data"]);
+ * const parts = [{ ingredient: "HDDA", mass_pct: 3 }, { ingredient: "IBOA", mass_pct: 1 }];
+ * const blend = formulate({ recipe: { id: "two", title: "two diluents", normalise: true, parts }, shelf });
+ * blend.components[0].massFraction; // → 0.75
+ * ```
+ */
+export function formulate({
+  recipe,
+  shelf,
+  blends = new Map(),
+}: {
+  recipe: Recipe;
+  shelf: Shelf;
+  blends?: ReadonlyMap<string, Formulation>;
+}): Formulation {
+  const where = `formulation "${recipe.id}"`;
+  const total = recipe.parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
+  if (!recipe.normalise && !(Math.abs(total - 100) <= 0.05)) {
+    const shown = Number(total.toPrecision(8));
+    throw new InputError(
+      `${where}: mass_pct adds up to ${shown}; parts must add up to 100 ± 0.05, or say "normalise": true`,
+    );
+  }
+  if (!(total > 0))
+    throw new InputError(`${where}: mass_pct adds up to ${total}; at least one part must be above 0`);
+  const components = recipe.parts.flatMap((part): Component[] => {
+    const share = part.mass_pct / total;
+    if ((part.ingredient === undefined) === (part.blend === undefined)) {
+      throw new InputError(
+        `${where}: each part names either an ingredient or a blend, not both and not neither`,
+      );
+    }
+    if (part.ingredient !== undefined) {
+      return [{ ingredient: ingredientOn(shelf, where, part.ingredient, part.lot), massFraction: share }];
+    }
+    const blend = blends.get(part.blend!);
+    if (blend === undefined)
+      throw new InputError(unknownName(where, "blend", part.blend!, [...blends.keys()]));
+    return blend.components.map((one) => ({ ...one, massFraction: share * one.massFraction }));
+  });
+  return { id: recipe.id, title: recipe.title, components: merge(components) };
+}
+
+/** Diluents and oligomers are the liquid; initiator, absorber and the like are dissolved or dispersed in it. */
+export function isLiquid({ ingredient }: Component): boolean {
+  return ingredient.role === "diluent" || ingredient.role === "oligomer";
+}
+
+/**
+ * Mass density, g/cm³, volumes taken as additive: 1 / sum(massFraction / density).
+ * @param formulation - What is in the bottle.
+ * @param read - Where the numbers come from; the stated values unless given.
+ * @throws InputError when an ingredient has no density.
+ */
+export function densityOf(formulation: Formulation, read: FigureReader = statedFigure): number {
+  let volume_cm3g = 0;
+  for (const one of formulation.components) volume_cm3g += specificVolume(formulation, one, read);
+  return 1 / volume_cm3g;
+}
+
+/**
+ * The composition every way: by mass, volume (taken as additive), amount and concentration.
+ * @param formulation - What is in the bottle.
+ * @param read - Where the numbers come from; the stated values unless given.
+ * @throws InputError when an ingredient has no density.
+ */
+export function composition(
+  formulation: Formulation,
+  read: FigureReader = statedFigure,
+): { density_gcm3: number; rows: CompositionRow[] } {
+  const { components } = formulation;
+  const density_gcm3 = densityOf(formulation, read);
+  const amounts_molg = components.map(({ ingredient, massFraction }) => {
+    const molarMass = read(ingredient, "molarMass_gmol");
+    return molarMass === undefined ? undefined : massFraction / molarMass;
+  });
+  const amount_molg = amounts_molg.includes(undefined) ? undefined : sum(amounts_molg as number[]);
+  const liquid = sum(components.filter(isLiquid).map(({ massFraction }) => massFraction));
+  const rows = components.map((component, i): CompositionRow => {
+    const own_molg = amounts_molg[i];
+    return {
+      ...component,
+      volumeFraction: specificVolume(formulation, component, read) * density_gcm3,
+      moleFraction: amount_molg === undefined ? undefined : own_molg! / amount_molg,
+      concentration_molL: own_molg === undefined ? undefined : own_molg * density_gcm3 * 1000,
+      partsPerHundred: liquid > 0 ? (100 * component.massFraction) / liquid : undefined,
+    };
+  });
+  return { density_gcm3, rows };
+}
+
+/** The mass of each ingredient in a batch of `batch_g`. @throws InputError when `batch_g` is not above 0. */
+export function batchMasses(
+  formulation: Formulation,
+  { batch_g }: { batch_g: number },
+): { ingredient: Ingredient; mass_g: number }[] {
+  checkNumber(batch_g, { where: `formulation "${formulation.id}"`, field: "batch_g", min: 0, above: true });
+  return formulation.components.map(({ ingredient, massFraction }) => ({
+    ingredient,
+    mass_g: massFraction * batch_g,
+  }));
+}
+
+/** The share of an ingredient, 0 to 1; 0 where it is not in the formulation. */
+export function massFractionOf(formulation: Formulation, id: string): number {
+  return sum(
+    formulation.components.filter(({ ingredient }) => ingredient.id === id).map((one) => one.massFraction),
+  );
+}
+
+/**
+ * The formulation with one ingredient at another share; the others keep their proportions.
+ * @throws InputError when the ingredient is not in the formulation or `massFraction` is not from 0 to below 1.
+ */
+export function withMassFraction(
+  formulation: Formulation,
+  { id, massFraction }: { id: string; massFraction: number },
+): Formulation {
+  const where = `formulation "${formulation.id}"`;
+  checkNumber(massFraction, { where, field: "massFraction", min: 0, max: 1 });
+  requirePresent(formulation, id);
+  const before = massFractionOf(formulation, id);
+  if (before === 1)
+    throw new InputError(`${where}: ${id} is alone in it; there is nothing to make up the rest`);
+  const rest = (1 - massFraction) / (1 - before);
+  return reweigh(formulation, (one) =>
+    one.ingredient.id === id ? one.massFraction * safeRatio(massFraction, before) : one.massFraction * rest,
+  );
+}
+
+/**
+ * The formulation with two ingredients shared out anew between them: `share` of their common mass is `id`, the rest `against`.
+ * @throws InputError when one of them is not in the formulation or `share` is not from 0 to 1.
+ */
+export function withRatio(
+  formulation: Formulation,
+  { id, against, share }: { id: string; against: string; share: number },
+): Formulation {
+  checkNumber(share, { where: `formulation "${formulation.id}"`, field: "share", min: 0, max: 1 });
+  requirePresent(formulation, id);
+  requirePresent(formulation, against);
+  const [first, second] = [massFractionOf(formulation, id), massFractionOf(formulation, against)];
+  const both = first + second;
+  return reweigh(formulation, ({ ingredient, massFraction }) => {
+    if (ingredient.id === id) return massFraction * safeRatio(share * both, first);
+    if (ingredient.id === against) return massFraction * safeRatio((1 - share) * both, second);
+    return massFraction;
+  });
+}
+
+/** Volume that a component takes up in a gram of the formulation, cm³. */
+function specificVolume(
+  { id }: Formulation,
+  { ingredient, massFraction }: Component,
+  read: FigureReader,
+): number {
+  const density = read(ingredient, "density_gcm3");
+  if (density !== undefined) return massFraction / density;
+  throw new InputError(
+    `formulation "${id}": ${ingredient.id} has no density_gcm3; add it to the ingredient with its source and u`,
+  );
+}
+
+const statedFigure: FigureReader = (ingredient, figure) => ingredient[figure]?.value;
+
+function requirePresent(formulation: Formulation, id: string): void {
+  const known = formulation.components.map(({ ingredient }) => ingredient.id);
+  if (massFractionOf(formulation, id) > 0) return;
+  throw new InputError(unknownName(`formulation "${formulation.id}"`, "ingredient", id, known));
+}
+
+function reweigh(formulation: Formulation, massFractionFor: (one: Component) => number): Formulation {
+  const components = formulation.components.map((one) => ({ ...one, massFraction: massFractionFor(one) }));
+  return { ...formulation, components };
+}
+
+function merge(components: readonly Component[]): Component[] {
+  const merged = new Map<string, Component>();
+  for (const one of components) {
+    const key = `${one.ingredient.id} ${one.ingredient.lot?.id ?? ""}`;
+    merged.set(key, { ...one, massFraction: one.massFraction + (merged.get(key)?.massFraction ?? 0) });
+  }
+  return [...merged.values()];
+}
+
+function safeRatio(wanted: number, before: number): number {
+  return before === 0 ? 0 : wanted / before;
+}
+
+function sum(values: readonly number[]): number {
+  return values.reduce((total, value) => total + value, 0);
+}
+
+const recipeSchema: z.ZodType<Recipe> = strict({
+  id: idSchema,
+  title: z.string().min(3),
+  normalise: z.boolean().default(false),
+  parts: z
+    .array(
+      strict({
+        ingredient: idSchema.optional(),
+        lot: idSchema.optional(),
+        blend: z.string().optional(),
+        mass_pct: quantity("mass_pct", { min: 0 }),
+      }),
+    )
+    .min(1),
+}) as unknown as z.ZodType<Recipe>;

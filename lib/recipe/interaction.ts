@@ -1,0 +1,26 @@
+// How two liquids of a blend pull its viscosity off the log-ideal line: a Grunberg–Nissan G with the basis it was fitted on.
+
+import { z } from "zod";
+import type { SourcedValue } from "../result.js";
+import { readDocument, strict, type JsonDocument } from "./document.js";
+import { idSchema, sourced } from "./sourced.js";
+
+/** A measured interaction of two liquids. A G is meaningless without its basis. */
+export interface Interaction {
+  readonly pair: readonly [string, string];
+  readonly basis: "mole" | "mass" | "volume";
+  readonly G: SourcedValue;
+  readonly temperature_C?: number;
+}
+
+/** Reads an interaction file. @throws InputError with file, line and field. */
+export function readInteraction(document: JsonDocument): Interaction {
+  return readDocument(interactionSchema, document);
+}
+
+const interactionSchema: z.ZodType<Interaction> = strict({
+  pair: z.tuple([idSchema, idSchema]),
+  basis: z.enum(["mole", "mass", "volume"]),
+  G: sourced("G"),
+  temperature_C: z.number().optional(),
+});

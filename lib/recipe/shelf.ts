@@ -1,0 +1,63 @@
+// The shelf: every ingredient, lot, spectrum, film and interaction that a formulation or a brief may name.
+
+import { InputError, unknownName } from "../door.js";
+import type { ResinConstants } from "./constants.js";
+import type { Film } from "./film.js";
+import { withLot, type Ingredient, type Lot } from "./ingredient.js";
+import type { Interaction } from "./interaction.js";
+import type { Spectrum } from "./spectrum.js";
+
+/** All that is known about what can go into a bottle and what the light passes through. */
+export interface Shelf {
+  readonly ingredients: ReadonlyMap<string, Ingredient>;
+  readonly lots: ReadonlyMap<string, Lot>;
+  readonly spectra: ReadonlyMap<string, Spectrum>;
+  readonly films: ReadonlyMap<string, Film>;
+  readonly interactions: readonly Interaction[];
+  readonly constants: ResinConstants;
+}
+
+/**
+ * The ingredient of that name, as measured on a lot of it where one is named.
+ * @throws InputError with the nearest known name; when the lot belongs to another ingredient.
+ */
+export function ingredientOn(shelf: Shelf, where: string, id: string, lotId?: string): Ingredient {
+  const ingredient = lookUp(shelf.ingredients, where, "ingredient", id);
+  if (lotId === undefined) return ingredient;
+  const lot = lookUp(shelf.lots, where, "lot", lotId);
+  if (lot.ingredient !== id) {
+    throw new InputError(
+      `${where}: lot "${lotId}" is a lot of ${lot.ingredient}, not of ${id}; name one of its own lots or none`,
+    );
+  }
+  return withLot(ingredient, lot);
+}
+
+/** The spectrum of that name. @throws InputError with the nearest known name. */
+export function spectrumOn(shelf: Shelf, where: string, id: string): Spectrum {
+  return lookUp(shelf.spectra, where, "spectrum", id);
+}
+
+/** The film of that name. @throws InputError with the nearest known name. */
+export function filmOn(shelf: Shelf, where: string, id: string): Film {
+  return lookUp(shelf.films, where, "film", id);
+}
+
+/** The measured interaction of two liquids, in whichever order they are named, or undefined. */
+export function interactionOn(shelf: Shelf, first: string, second: string): Interaction | undefined {
+  return shelf.interactions.find(
+    ({ pair: [a, b] }) => (a === first && b === second) || (a === second && b === first),
+  );
+}
+
+/** The shelf with one more interaction, in place of an older one of the same pair. */
+export function withInteraction(shelf: Shelf, interaction: Interaction): Shelf {
+  const older = interactionOn(shelf, ...interaction.pair);
+  return { ...shelf, interactions: [...shelf.interactions.filter((one) => one !== older), interaction] };
+}
+
+function lookUp<T>(known: ReadonlyMap<string, T>, where: string, kind: string, id: string): T {
+  const found = known.get(id);
+  if (found === undefined) throw new InputError(unknownName(where, kind, id, [...known.keys()]));
+  return found;
+}

@@ -1,0 +1,161 @@
+// Units at the door: people write "450 cP" or "77 °F", mathjs reads them once, and inside there are only numbers in the unit a
+// field's name ends in. The list of those endings stands here, once.
+
+import { create, unitDependencies, createUnitDependencies, type Unit } from "mathjs";
+import { InputError, nearestName, show } from "../door.js";
+
+/** What a field-name ending means: the unit as people write it in tables, and as mathjs reads it. */
+export interface FieldUnit {
+  readonly label: string;
+  readonly mathjs: string;
+}
+
+/** The endings of field names and the unit each stands for. `layerThickness_um` ends in `um`: micrometres. */
+export const fieldUnits: Readonly<Record<string, FieldUnit>> = {
+  mPas: { label: "mPa s", mathjs: "mPa s" },
+  C: { label: "°C", mathjs: "degC" },
+  K: { label: "K", mathjs: "K" },
+  nm: { label: "nm", mathjs: "nm" },
+  um: { label: "µm", mathjs: "um" },
+  mm: { label: "mm", mathjs: "mm" },
+  mm2: { label: "mm²", mathjs: "mm^2" },
+  s: { label: "s", mathjs: "s" },
+  pers: { label: "s⁻¹", mathjs: "s^-1" },
+  g: { label: "g", mathjs: "g" },
+  gcm3: { label: "g/cm³", mathjs: "g cm^-3" },
+  gmol: { label: "g/mol", mathjs: "g mol^-1" },
+  molL: { label: "mol/L", mathjs: "mol L^-1" },
+  molm3: { label: "mol/m³", mathjs: "mol m^-3" },
+  molm3s: { label: "mol/(m³ s)", mathjs: "mol m^-3 s^-1" },
+  molm2s: { label: "mol/(m² s)", mathjs: "mol m^-2 s^-1" },
+  molm3Pa: { label: "mol/(m³ Pa)", mathjs: "mol m^-3 Pa^-1" },
+  molm2sPa: { label: "mol/(m² s Pa)", mathjs: "mol m^-2 s^-1 Pa^-1" },
+  molmm2sPa: { label: "mol m/(m² s Pa)", mathjs: "mol m^-1 s^-1 Pa^-1" },
+  m3mols: { label: "m³/(mol s)", mathjs: "m^3 mol^-1 s^-1" },
+  Lmolcm: { label: "L/(mol cm)", mathjs: "L mol^-1 cm^-1" },
+  mLgcm: { label: "mL/(g cm)", mathjs: "mL g^-1 cm^-1" },
+  percm: { label: "cm⁻¹", mathjs: "cm^-1" },
+  m2s: { label: "m²/s", mathjs: "m^2 s^-1" },
+  ms: { label: "m/s", mathjs: "m s^-1" },
+  umsqrts: { label: "µm/√s", mathjs: "um s^-0.5" },
+  mWcm2: { label: "mW/cm²", mathjs: "mW cm^-2" },
+  mJcm2: { label: "mJ/cm²", mathjs: "mJ cm^-2" },
+  Jmol: { label: "J/mol", mathjs: "J mol^-1" },
+  barrer: { label: "barrer", mathjs: "barrer" },
+  Pa: { label: "Pa", mathjs: "Pa" },
+  MPa: { label: "MPa", mathjs: "MPa" },
+  N: { label: "N", mathjs: "N" },
+  pct: { label: "%", mathjs: "percent" },
+};
+
+/** The ending of a field name (`"um"` of `layerThickness_um`), or undefined where the name carries no unit. */
+export function unitEndingOf(field: string): string | undefined {
+  const ending = field.slice(field.lastIndexOf("_") + 1);
+  return field.includes("_") && ending in fieldUnits ? ending : undefined;
+}
+
+/** The unit of a field as tables and figures show it: `"µm"` for `layerThickness_um`, `""` for a field without unit. */
+export function unitLabel(field: string): string {
+  const ending = unitEndingOf(field);
+  return ending === undefined ? "" : fieldUnits[ending]!.label;
+}
+
+/**
+ * Reads a quantity written by a person into the unit the field's name ends in.
+ *
+ * A number is taken to be in that unit already; text must carry a unit of the same kind.
+ * @param input - `field` such as `viscosity_mPas`, `given` a number or text such as `"450 cP"`, `where` for the message.
+ * @throws InputError when the text has no unit, an unknown one, or one of another kind; when the number is not finite.
+ * @example
+ * ```ts
+ * import { readQuantity } from "resinwright";
+ * readQuantity({ where: "brief", field: "viscosity_mPas", given: "450 cP" }); // → 450
+ * readQuantity({ where: "brief", field: "temperature_C", given: "77 °F" }); // → 25
+ * readQuantity({ where: "brief", field: "irradiance_mWcm2", given: "25 W/m^2" }); // → 2.5
+ * ```
+ */
+export function readQuantity({
+  where,
+  field,
+  given,
+}: {
+  where: string;
+  field: string;
+  given: unknown;
+}): number {
+  try {
+    return toFieldUnit(field, given);
+  } catch (error) {
+    if (error instanceof InputError) throw new InputError(`${where}: ${field} ${error.message}`);
+    throw error;
+  }
+}
+
+/** As {@link readQuantity}, with a message that begins at "is ...": for callers that name the place themselves. */
+export function toFieldUnit(field: string, given: unknown): number {
+  const unit = fieldUnits[unitEndingOf(field) ?? ""];
+  if (typeof given === "number" && Number.isFinite(given)) return given;
+  if (typeof given !== "string" || unit === undefined) {
+    const allowed =
+      unit === undefined ? "a finite number" : `a finite number of ${unit.label} or text with a unit`;
+    throw new InputError(`is ${show(given)}; it must be ${allowed}`);
+  }
+  const read = parseUnit(given, unit);
+  const value = read.equalBase(math.unit(1, unit.mathjs)) ? read.toNumber(unit.mathjs) : NaN;
+  if (!Number.isFinite(value)) {
+    throw new InputError(`is ${show(given)}; it must be a quantity that converts to ${unit.label}`);
+  }
+  // Conversions such as °F to °C leave rounding noise of a few 1e-14; people write at most 12 digits.
+  return Number(value.toPrecision(12));
+}
+
+const math = create({ unitDependencies, createUnitDependencies });
+math.createUnit({
+  cP: { definition: "1 mPa s", aliases: ["centipoise"] },
+  poise: { definition: "100 mPa s" },
+});
+// Stern 1968: 1 barrer = 1e-10 cm³(STP) cm cm⁻² s⁻¹ cmHg⁻¹, here as an amount of substance.
+math.createUnit("barrer", "3.346402e-16 mol m^-1 s^-1 Pa^-1");
+math.createUnit("percent");
+
+function parseUnit(given: string, wanted: FieldUnit): Unit {
+  const text = given
+    .trim()
+    .replace(/[µμ]/g, "u")
+    .replace(/°\s*(?=[CFK]\b)/g, "deg")
+    .replace(/%/g, "percent")
+    .replace(/[·⋅]/g, " ")
+    .replace(/²/g, "^2")
+    .replace(/³/g, "^3");
+  if (/^[-+]?[\d.]+(e[-+]?\d+)?$/i.test(text)) {
+    throw new InputError(`is ${show(given)} without a unit; write for instance "${text} ${wanted.label}"`);
+  }
+  try {
+    return math.unit(text);
+  } catch {
+    const word = /[a-z]+/i.exec(text.replace(/^[-+\d.e\s]+/i, ""))?.[0] ?? "";
+    const near = nearestName(word, unitWords);
+    const hint =
+      near === undefined || near === word
+        ? `write for instance "1 ${wanted.label}"`
+        : `did you mean "${near}"?`;
+    throw new InputError(`is ${show(given)}, which cannot be read as a quantity; ${hint}`);
+  }
+}
+
+const unitWords = [
+  "mPa",
+  "Pa",
+  "cP",
+  "poise",
+  "mW",
+  "mJ",
+  "nm",
+  "um",
+  "mm",
+  "cm",
+  "degC",
+  "degF",
+  "barrer",
+  "mol",
+];

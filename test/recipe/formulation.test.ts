@@ -1,0 +1,157 @@
+import fc from "fast-check";
+import { describe, expect, it } from "vitest";
+import { parseJson } from "../../lib/recipe/document.js";
+import {
+  batchMasses,
+  composition,
+  formulate,
+  massFractionOf,
+  readRecipe,
+  withMassFraction,
+  withRatio,
+  type Part,
+} from "../../lib/recipe/formulation.js";
+import { formulationOf, shelf } from "../fixtures.js";
+
+const make = (parts: Part[], normalise = false) =>
+  formulate({ recipe: { id: "amber-3", title: "t", normalise, parts }, shelf });
+const sum = (values: number[]) => values.reduce((a, b) => a + b, 0);
+
+describe("formulate", () => {
+  it("brings parts to mass fractions that add up to 1", () => {
+    const { components } = make([
+      { ingredient: "THIN", mass_pct: 60.02 },
+      { ingredient: "THICK", mass_pct: 40 },
+    ]);
+    expect(sum(components.map(({ massFraction }) => massFraction))).toBeCloseTo(1, 14);
+  });
+
+  it("refuses parts that do not add up, unless told to normalise", () => {
+    const parts = [
+      { ingredient: "THIN", mass_pct: 57.4 },
+      { ingredient: "THICK", mass_pct: 40 },
+    ];
+    expect(() => make(parts)).toThrow(
+      'formulation "amber-3": mass_pct adds up to 97.4; parts must add up to 100 ± 0.05, or say "normalise": true',
+    );
+    expect(make(parts, true).components[0]!.massFraction).toBeCloseTo(57.4 / 97.4, 14);
+  });
+
+  it("takes blends of blends apart and adds up what they share", () => {
+    const premix = make([
+      { ingredient: "THIN", mass_pct: 90 },
+      { ingredient: "PI", mass_pct: 10 },
+    ]);
+    const recipe = {
+      id: "outer",
+      title: "t",
+      normalise: false,
+      parts: [
+        { ingredient: "THIN", mass_pct: 50 },
+        { blend: "premix.json", mass_pct: 50 },
+      ],
+    };
+    const whole = formulate({ recipe, shelf, blends: new Map([["premix.json", premix]]) });
+    expect(massFractionOf(whole, "THIN")).toBeCloseTo(0.95, 14);
+    expect(massFractionOf(whole, "PI")).toBeCloseTo(0.05, 14);
+    expect(whole.components).toHaveLength(2);
+  });
+
+  it("uses a lot's own figure and says so", () => {
+    const { ingredient } = make([{ ingredient: "THICK", lot: "T-7", mass_pct: 100 }]).components[0]!;
+    expect(ingredient.viscosity_mPas!.value).toBe(12000);
+    expect(ingredient.lot).toEqual({ id: "T-7", measured: ["viscosity_mPas"] });
+  });
+
+  it("names what it cannot find", () => {
+    expect(() => make([{ ingredient: "THINN", mass_pct: 100 }])).toThrow(
+      'formulation "amber-3": unknown ingredient "THINN"; did you mean "THIN"?',
+    );
+    expect(() => make([{ ingredient: "THIN", lot: "T-7", mass_pct: 100 }])).toThrow(
+      'formulation "amber-3": lot "T-7" is a lot of THICK, not of THIN; name one of its own lots or none',
+    );
+    expect(() => make([{ blend: "none.json", mass_pct: 100 }])).toThrow('unknown blend "none.json"');
+    expect(() => make([{ mass_pct: 100 }])).toThrow("each part names either an ingredient or a blend");
+    expect(() => make([{ ingredient: "THIN", mass_pct: 0 }], true)).toThrow(
+      "at least one part must be above 0",
+    );
+  });
+});
+
+describe("readRecipe", () => {
+  it("refuses a negative share with its line", () => {
+    const text = '{"id": "a", "title": "abc",\n "parts": [\n {"ingredient": "THIN", "mass_pct": -5}]}';
+    expect(() => readRecipe(parseJson(text, "a.json"))).toThrow(
+      "a.json, line 3: parts[0].mass_pct is -5; it must be at least 0",
+    );
+  });
+});
+
+describe("composition", () => {
+  // Exact by arithmetic: 40 g of 2 g/cm³ with 60 g of 1 g/cm³ fill 20 + 60 cm³.
+  it("adds volumes", () => {
+    const blend = formulationOf({ THIN: 60, THICK: 40 });
+    const { density_gcm3, rows } = composition(blend, (one, figure) =>
+      figure === "density_gcm3" ? (one.id === "THICK" ? 2 : 1) : one.id === "THICK" ? 400 : 100,
+    );
+    expect(density_gcm3).toBeCloseTo(1.25, 14);
+    expect(rows[1]!.volumeFraction).toBeCloseTo(0.25, 14);
+    expect(rows[1]!.moleFraction).toBeCloseTo(0.1 / 0.7, 14);
+    expect(rows[1]!.concentration_molL).toBeCloseTo(0.1 / 0.08, 12);
+  });
+
+  it("counts parts per hundred of the liquids only", () => {
+    const { rows } = composition(formulationOf({ THIN: 49, THICK: 49, PI: 2 }));
+    expect(rows[2]!.partsPerHundred).toBeCloseTo((100 * 2) / 98, 12);
+  });
+
+  it("keeps fractions of every kind adding up to 1", () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 0, max: 100 }), (thick) => {
+        const { rows } = composition(formulationOf({ THIN: 100 - thick, THICK: thick }));
+        expect(sum(rows.map((row) => row.volumeFraction))).toBeCloseTo(1, 12);
+        expect(sum(rows.map((row) => row.moleFraction!))).toBeCloseTo(1, 12);
+      }),
+    );
+  });
+
+  it("names the ingredient without a density", () => {
+    expect(() => composition(formulationOf({ THIN: 100 }), () => undefined)).toThrow(
+      'formulation "test": THIN has no density_gcm3; add it to the ingredient with its source and u',
+    );
+  });
+});
+
+describe("changing a formulation", () => {
+  const base = formulationOf({ THIN: 50, THICK: 30, MID: 20 });
+
+  it("sets one share and keeps the others in proportion", () => {
+    const changed = withMassFraction(base, { id: "MID", massFraction: 0.6 });
+    expect(massFractionOf(changed, "MID")).toBeCloseTo(0.6, 14);
+    expect(massFractionOf(changed, "THIN") / massFractionOf(changed, "THICK")).toBeCloseTo(5 / 3, 12);
+  });
+
+  it("shares out two ingredients and leaves the rest", () => {
+    const changed = withRatio(base, { id: "THIN", against: "THICK", share: 0.25 });
+    expect(massFractionOf(changed, "THIN")).toBeCloseTo(0.2, 14);
+    expect(massFractionOf(changed, "THICK")).toBeCloseTo(0.6, 14);
+    expect(massFractionOf(changed, "MID")).toBeCloseTo(0.2, 14);
+  });
+
+  it("refuses an ingredient that is not in it and a share out of range", () => {
+    expect(() => withMassFraction(base, { id: "THINN", massFraction: 0.5 })).toThrow('did you mean "THIN"?');
+    expect(() => withRatio(base, { id: "THIN", against: "THICK", share: 1.5 })).toThrow(
+      'formulation "test": share is 1.5; it must be a number from 0 to 1',
+    );
+    expect(() => withMassFraction(formulationOf({ THIN: 100 }), { id: "THIN", massFraction: 0.5 })).toThrow(
+      "THIN is alone in it",
+    );
+  });
+
+  it("scales to a batch", () => {
+    expect(batchMasses(base, { batch_g: 250 }).map(({ mass_g }) => mass_g)).toEqual([125, 75, 50]);
+    expect(() => batchMasses(base, { batch_g: 0 })).toThrow(
+      "batch_g is 0; it must be a finite number above 0",
+    );
+  });
+});
