@@ -85,6 +85,7 @@ export const shelf: Shelf = {
     ["OPEN", { id: "OPEN", name: "a permeable film", oxygenPermeability_barrer: sure(600, 60) }],
   ]),
   interactions: [],
+  readings: [],
   constants: {
     oxygenSolubility_molm3Pa: sure(5e-5, 1e-5),
     oxygenPerRadical: sure(1, 0.2),
@@ -114,6 +115,7 @@ export const brief: Brief = {
     gasPressure_Pa: 101325,
   },
   crossSection_mm2: 100,
+  liftSpeed_mms: 1,
   targets: {},
   avoid: [],
 };

@@ -70,6 +70,8 @@ export interface Brief {
   };
   /** The largest cross-section that has to come off the window in one lift. */
   readonly crossSection_mm2: number;
+  /** Speed at which the plate leaves the window. */
+  readonly liftSpeed_mms: number;
   readonly targets: Readonly<Partial<Record<PropertyName, Target>>>;
   readonly avoid: readonly Avoid[];
 }
@@ -130,6 +132,7 @@ const briefSchema = strict({
     gasPressure_Pa: quantity("gasPressure_Pa", { above: 0, max: 1e6 }),
   }),
   crossSection_mm2: quantity("crossSection_mm2", { above: 0 }),
+  liftSpeed_mms: quantity("liftSpeed_mms", { above: 0 }),
   targets: strict(targetShape),
   avoid: z.array(
     strict({

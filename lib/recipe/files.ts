@@ -11,6 +11,7 @@ import { formulate, readRecipe, type Formulation } from "./formulation.js";
 import { readIngredient, readLot } from "./ingredient.js";
 import { readInteraction, type Interaction } from "./interaction.js";
 import type { Shelf } from "./shelf.js";
+import { readBlendReadings } from "./readings.js";
 import { readSpectrum } from "./spectrum.js";
 import { readNumberTable } from "./table.js";
 
@@ -37,7 +38,7 @@ export function openBrief(file: string): Workbench {
 }
 
 /**
- * Reads a shelf from folders laid out as `ingredients/`, `lots/`, `spectra/`, `films/`, `interactions/` (one JSON file each)
+ * Reads a shelf from folders laid out as `ingredients/`, `lots/`, `spectra/`, `films/`, `interactions/`, `measurements/` (one JSON file each)
  * and `constants/resin.json`; what a later folder holds comes before the same in an earlier one.
  * @throws InputError when a folder is missing, two files of one folder share an id, or no folder holds the constants.
  */
@@ -60,6 +61,7 @@ export function readShelf(folders: readonly string[]): Shelf {
     spectra: merged("spectra"),
     films: merged("films"),
     interactions: [...interactions.values()],
+    readings: parts.flatMap((part) => part.readings),
     constants,
   };
 }
@@ -109,6 +111,7 @@ function readShelfFolder(folder: string) {
     spectra: byId(folder, "spectra", readSpectrum),
     films: byId(folder, "films", readFilm),
     interactions: documentsIn(folder, "interactions").map(readInteraction),
+    readings: documentsIn(folder, "measurements").map(readBlendReadings),
     constants: existsSync(constantsFile)
       ? readConstants(readJson(constantsFile))
       : (undefined as ResinConstants | undefined),

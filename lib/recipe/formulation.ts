@@ -3,7 +3,7 @@
 import { z } from "zod";
 import { checkNumber, InputError, unknownName } from "../door.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
-import type { Ingredient } from "./ingredient.js";
+import type { Ingredient, Role } from "./ingredient.js";
 import { ingredientOn, type Shelf } from "./shelf.js";
 import { idSchema } from "./sourced.js";
 
@@ -179,6 +179,38 @@ export function massFractionOf(formulation: Formulation, id: string): number {
 }
 
 /**
+ * The ingredient of a role that there is most of.
+ * @throws InputError when the formulation has none of that role.
+ */
+export function largestOf({ id, components }: Formulation, role: Role): Ingredient {
+  const [largest] = byMass(components.filter(({ ingredient }) => ingredient.role === role));
+  if (largest === undefined)
+    throw new InputError(`formulation "${id}": no ${role} in it; add one (0 % will do)`);
+  return largest.ingredient;
+}
+
+/**
+ * The two liquids that there is most of, the thicker one first: the pair whose ratio sets the viscosity.
+ * @throws InputError when there are fewer than two liquids or one of them has no viscosity.
+ */
+export function mainPair({ id, components }: Formulation): [thick: Ingredient, thin: Ingredient] {
+  const [first, second] = byMass(components.filter(isLiquid));
+  if (first === undefined || second === undefined) {
+    throw new InputError(
+      `formulation "${id}": it has fewer than two liquids, so there is no ratio to vary; add a diluent or an oligomer`,
+    );
+  }
+  const pair = [first.ingredient, second.ingredient] as const;
+  const [a, b] = pair.map((ingredient) => {
+    if (ingredient.viscosity_mPas !== undefined) return ingredient.viscosity_mPas.value;
+    throw new InputError(
+      `formulation "${id}": ${ingredient.id} has no viscosity_mPas; add it to the ingredient with its source and u`,
+    );
+  });
+  return a! >= b! ? [pair[0], pair[1]] : [pair[1], pair[0]];
+}
+
+/**
  * The formulation with one ingredient at another share; the others keep their proportions.
  * @throws InputError when the ingredient is not in the formulation or `massFraction` is not from 0 to below 1.
  */
@@ -192,10 +224,7 @@ export function withMassFraction(
   const before = massFractionOf(formulation, id);
   if (before === 1)
     throw new InputError(`${where}: ${id} is alone in it; there is nothing to make up the rest`);
-  const rest = (1 - massFraction) / (1 - before);
-  return reweigh(formulation, (one) =>
-    one.ingredient.id === id ? one.massFraction * safeRatio(massFraction, before) : one.massFraction * rest,
-  );
+  return reweigh(formulation, new Map([[id, massFraction]]), (1 - massFraction) / (1 - before));
 }
 
 /**
@@ -209,13 +238,15 @@ export function withRatio(
   checkNumber(share, { where: `formulation "${formulation.id}"`, field: "share", min: 0, max: 1 });
   requirePresent(formulation, id);
   requirePresent(formulation, against);
-  const [first, second] = [massFractionOf(formulation, id), massFractionOf(formulation, against)];
-  const both = first + second;
-  return reweigh(formulation, ({ ingredient, massFraction }) => {
-    if (ingredient.id === id) return massFraction * safeRatio(share * both, first);
-    if (ingredient.id === against) return massFraction * safeRatio((1 - share) * both, second);
-    return massFraction;
-  });
+  const both = massFractionOf(formulation, id) + massFractionOf(formulation, against);
+  return reweigh(
+    formulation,
+    new Map([
+      [id, share * both],
+      [against, (1 - share) * both],
+    ]),
+    1,
+  );
 }
 
 /** Volume that a component takes up in a gram of the formulation, cm³. */
@@ -233,14 +264,27 @@ function specificVolume(
 
 const statedFigure: FigureReader = (ingredient, figure) => ingredient[figure]?.value;
 
+function byMass(components: readonly Component[]): Component[] {
+  return [...components].sort((a, b) => b.massFraction - a.massFraction);
+}
+
 function requirePresent(formulation: Formulation, id: string): void {
   const known = formulation.components.map(({ ingredient }) => ingredient.id);
-  if (massFractionOf(formulation, id) > 0) return;
+  if (known.includes(id)) return;
   throw new InputError(unknownName(`formulation "${formulation.id}"`, "ingredient", id, known));
 }
 
-function reweigh(formulation: Formulation, massFractionFor: (one: Component) => number): Formulation {
-  const components = formulation.components.map((one) => ({ ...one, massFraction: massFractionFor(one) }));
+/** Gives the named ingredients their new masses (lots of one keep their proportions) and all others `rest` times theirs. */
+function reweigh(formulation: Formulation, masses: ReadonlyMap<string, number>, rest: number): Formulation {
+  const components = formulation.components.map((one, i) => {
+    const wanted = masses.get(one.ingredient.id);
+    if (wanted === undefined) return { ...one, massFraction: one.massFraction * rest };
+    const before = massFractionOf(formulation, one.ingredient.id);
+    const isFirst =
+      formulation.components.findIndex(({ ingredient }) => ingredient.id === one.ingredient.id) === i;
+    const share = before > 0 ? one.massFraction / before : Number(isFirst);
+    return { ...one, massFraction: wanted * share };
+  });
   return { ...formulation, components };
 }
 
@@ -251,10 +295,6 @@ function merge(components: readonly Component[]): Component[] {
     merged.set(key, { ...one, massFraction: one.massFraction + (merged.get(key)?.massFraction ?? 0) });
   }
   return [...merged.values()];
-}
-
-function safeRatio(wanted: number, before: number): number {
-  return before === 0 ? 0 : wanted / before;
 }
 
 function sum(values: readonly number[]): number {

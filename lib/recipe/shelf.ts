@@ -5,6 +5,7 @@ import type { ResinConstants } from "./constants.js";
 import type { Film } from "./film.js";
 import { withLot, type Ingredient, type Lot } from "./ingredient.js";
 import type { Interaction } from "./interaction.js";
+import type { BlendReadings } from "./readings.js";
 import type { Spectrum } from "./spectrum.js";
 
 /** All that is known about what can go into a bottle and what the light passes through. */
@@ -14,6 +15,7 @@ export interface Shelf {
   readonly spectra: ReadonlyMap<string, Spectrum>;
   readonly films: ReadonlyMap<string, Film>;
   readonly interactions: readonly Interaction[];
+  readonly readings: readonly BlendReadings[];
   readonly constants: ResinConstants;
 }
 

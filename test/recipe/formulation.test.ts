@@ -5,6 +5,8 @@ import {
   batchMasses,
   composition,
   formulate,
+  largestOf,
+  mainPair,
   massFractionOf,
   readRecipe,
   withMassFraction,
@@ -122,6 +124,18 @@ describe("composition", () => {
   });
 });
 
+describe("what there is most of", () => {
+  it("finds the largest of a role and the pair that sets the viscosity, the thicker first", () => {
+    const blend = formulationOf({ THIN: 50, THICK: 28, MID: 20, PI: 2 });
+    expect(largestOf(blend, "diluent").id).toBe("THIN");
+    expect(mainPair(blend).map(({ id }) => id)).toEqual(["THICK", "THIN"]);
+    expect(() => largestOf(blend, "absorber")).toThrow(
+      'formulation "test": no absorber in it; add one (0 % will do)',
+    );
+    expect(() => mainPair(formulationOf({ THIN: 98, PI: 2 }))).toThrow("it has fewer than two liquids");
+  });
+});
+
 describe("changing a formulation", () => {
   const base = formulationOf({ THIN: 50, THICK: 30, MID: 20 });
 
@@ -136,6 +150,30 @@ describe("changing a formulation", () => {
     expect(massFractionOf(changed, "THIN")).toBeCloseTo(0.2, 14);
     expect(massFractionOf(changed, "THICK")).toBeCloseTo(0.6, 14);
     expect(massFractionOf(changed, "MID")).toBeCloseTo(0.2, 14);
+  });
+
+  it("raises an ingredient from nothing", () => {
+    const none = formulationOf({ THIN: 60, THICK: 40, MID: 0 });
+    expect(massFractionOf(withMassFraction(none, { id: "MID", massFraction: 0.2 }), "MID")).toBeCloseTo(
+      0.2,
+      14,
+    );
+    expect(massFractionOf(withRatio(none, { id: "MID", against: "THIN", share: 0.5 }), "MID")).toBeCloseTo(
+      0.3,
+      14,
+    );
+  });
+
+  it("keeps the proportions of two lots of one ingredient", () => {
+    const lots = make([
+      { ingredient: "THICK", lot: "T-7", mass_pct: 20 },
+      { ingredient: "THICK", mass_pct: 10 },
+      { ingredient: "THIN", mass_pct: 70 },
+    ]);
+    const changed = withMassFraction(lots, { id: "THICK", massFraction: 0.6 });
+    expect(changed.components.map(({ massFraction }) => Number(massFraction.toPrecision(12)))).toEqual([
+      0.4, 0.2, 0.4,
+    ]);
   });
 
   it("refuses an ingredient that is not in it and a share out of range", () => {

@@ -1,0 +1,111 @@
+// Every property of one formulation under one brief, from the same draws, with a verdict for each target.
+
+import { propertyNames, type PropertyName, type Target } from "../recipe/brief.js";
+import type { Ingredient } from "../recipe/ingredient.js";
+import type { Warning } from "../result.js";
+import type { Case } from "./case.js";
+import { drawCure } from "./cure.js";
+import { startDraws, type DrawOptions, type Draws } from "./doubt.js";
+import { drawPenetrationDepth } from "./light.js";
+import { drawDeadZone, drawInductionTime, type DeadZoneEstimate } from "./oxygen.js";
+import { judge, type Drawn, type Property, type Verdict } from "./property.js";
+import { drawViscosity } from "./viscosity.js";
+
+/** All that the models say of a formulation under a brief. */
+export interface Assessment {
+  readonly brief: string;
+  readonly formulation: string;
+  readonly properties: Readonly<Record<Exclude<PropertyName, "deadZone_um">, Property>> & {
+    readonly deadZone_um: DeadZoneEstimate;
+  };
+  readonly verdicts: readonly Verdict[];
+  /** Ingredients the brief says to avoid, with its reason. */
+  readonly avoided: readonly { readonly ingredient: string; readonly reason: string }[];
+  /** Every warning once. */
+  readonly warnings: readonly Warning[];
+  /** Every source this run used, once. */
+  readonly sources: readonly string[];
+  readonly draws: number;
+  readonly seed: number;
+  readonly level: number;
+}
+
+/**
+ * Assesses a formulation under a brief: every property as an interval, a verdict for each target, what is to be avoided, all
+ * warnings and sources. The same seed gives the same answer.
+ * @param input - The case; `draws` (20 to 1e6, 2000 unless given), `seed`, `level` (0.5 to 0.999, 0.95 unless given).
+ * @throws InputError naming formulation, ingredient and figure of whatever is missing.
+ * @example
+ * ```ts
+ * import { assess } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { verdicts } = assess(openBrief("data/briefs/flow-cell.json"));
+ * verdicts.map(({ title, outcome }) => `${title}: ${outcome}`);
+ * ```
+ */
+export function assess(input: Case & DrawOptions): Assessment {
+  const draws = startDraws(input);
+  const drawn = propertyNames.map((name) => drawers[name](input, draws));
+  const verdicts = drawn.flatMap((one) => {
+    const target = input.brief.targets[one.property.property];
+    return target === undefined ? [] : [judge(one, target, draws.level)];
+  });
+  const all = drawn.map(({ property }) => property);
+  return {
+    brief: input.brief.id,
+    formulation: input.formulation.id,
+    properties: Object.fromEntries(
+      all.map((one) => [one.property, one]),
+    ) as unknown as Assessment["properties"],
+    verdicts,
+    avoided: avoidedIn(input),
+    warnings: distinctWarnings(all.flatMap(({ warnings }) => warnings)),
+    sources: [...new Set(all.flatMap(({ sources }) => sources))].sort(),
+    draws: draws.count,
+    seed: draws.seed,
+    level: draws.level,
+  };
+}
+
+/**
+ * The verdict on one property alone: for sweeps and maps, where a whole assessment of every point would be waste.
+ * @param input - The case, the `property` and its `target`; draw options as for {@link assess}.
+ * @throws InputError as {@link assess}.
+ */
+export function verdictOf(input: Case & DrawOptions & { property: PropertyName; target: Target }): Verdict {
+  const draws = startDraws(input);
+  return judge(drawers[input.property](input, draws), input.target, draws.level);
+}
+
+const drawers: Readonly<
+  Record<PropertyName, (input: Case, draws: Draws) => Drawn<Property | DeadZoneEstimate>>
+> = {
+  viscosity_mPas: drawViscosity,
+  penetrationDepth_um: drawPenetrationDepth,
+  criticalExposure_mJcm2: (input, draws) => drawCure(input, "criticalExposure_mJcm2", draws),
+  layerExposure_mJcm2: (input, draws) => drawCure(input, "layerExposure_mJcm2", draws),
+  layerTime_s: (input, draws) => drawCure(input, "layerTime_s", draws),
+  deadZone_um: drawDeadZone,
+  inductionTime_s: drawInductionTime,
+};
+
+function avoidedIn({ brief, formulation }: Case): { ingredient: string; reason: string }[] {
+  return formulation.components
+    .filter(({ massFraction }) => massFraction > 0)
+    .flatMap(({ ingredient }) =>
+      brief.avoid
+        .filter(
+          ({ ingredient: id, hazard }) =>
+            ingredient.id === id || (hazard !== undefined && carries(ingredient, hazard)),
+        )
+        .map(({ reason }) => ({ ingredient: ingredient.id, reason })),
+    );
+}
+
+function carries({ hazards }: Ingredient, code: string): boolean {
+  return (hazards ?? []).some((statement) => statement.code.startsWith(code));
+}
+
+function distinctWarnings(warnings: readonly Warning[]): Warning[] {
+  return [...new Map(warnings.map((warning) => [warning.code + warning.message, warning])).values()];
+}

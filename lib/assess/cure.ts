@@ -1,0 +1,93 @@
+// The working curve of a formulation under a brief, estimated from its ingredients until a cure-depth series is measured,
+// and the exposure a layer needs.
+
+import { exposureForDepth, steadyConversionTime } from "../models/cure.js";
+import { penetrationDepth } from "../models/light.js";
+import { inductionTime } from "../models/oxygen.js";
+import type { PropertyName } from "../recipe/brief.js";
+import type { Warning } from "../result.js";
+import { constantOf, type Case } from "./case.js";
+import { startDraws, type DrawOptions, type Draws, type Read } from "./doubt.js";
+import { drawPenetrationDepth } from "./light.js";
+import { airSaturation, radicalModel } from "./oxygen.js";
+import { drawProperty, type Drawn, type Property } from "./property.js";
+
+/** The two figures of a working curve and the exposure that follows from them for this brief's layer. */
+export interface WorkingCurveEstimate {
+  readonly penetrationDepth_um: Property;
+  readonly criticalExposure_mJcm2: Property;
+  readonly layerExposure_mJcm2: Property;
+  readonly layerTime_s: Property;
+}
+
+/**
+ * The estimated working curve: optical penetration depth, critical exposure at the window, exposure and time for one layer.
+ *
+ * Critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
+ * radicals. Cure depth = penetration depth × ln(exposure / critical exposure). The layer's exposure cures
+ * `cureDepthPerLayer` layers deep. An estimate to plan the first cure-depth series with, not a setting to print with.
+ * @throws InputError as {@link penetrationDepthOf}; when no initiator absorbs the light.
+ * @source Models: {@link inductionTime}, {@link steadyConversionTime}, {@link exposureForDepth}. Propagation: JCGM 101:2008.
+ */
+export function workingCurveOf(input: Case & DrawOptions): WorkingCurveEstimate {
+  const draws = startDraws(input);
+  return {
+    penetrationDepth_um: drawPenetrationDepth(input, draws).property,
+    criticalExposure_mJcm2: drawCure(input, "criticalExposure_mJcm2", draws).property,
+    layerExposure_mJcm2: drawCure(input, "layerExposure_mJcm2", draws).property,
+    layerTime_s: drawCure(input, "layerTime_s", draws).property,
+  };
+}
+
+/** @internal */
+export function drawCure(input: Case, property: PropertyName & keyof CureFigures, draws: Draws): Drawn {
+  const model = cureModel(input);
+  return drawProperty(property, (read) => model(read)[property], cureWarnings, draws);
+}
+
+interface CureFigures {
+  readonly criticalExposure_mJcm2: number;
+  readonly layerExposure_mJcm2: number;
+  readonly layerTime_s: number;
+}
+
+function cureModel(input: Case): (read: Read) => CureFigures {
+  const { brief, shelf } = input;
+  const radicals = radicalModel(input);
+  const constant = (name: "propagation_m3mols" | "termination_m3mols" | "gelConversion") =>
+    constantOf(shelf.constants, name);
+  return (read) => {
+    const drawn = radicals(read);
+    const { radicalGeneration_molm3s, oxygenPerRadical, irradiance_mWcm2 } = drawn;
+    const oxygenTime_s = inductionTime({
+      oxygen_molm3: airSaturation(drawn.solubility_molm3Pa),
+      radicalGeneration_molm3s,
+      oxygenPerRadical,
+    });
+    const gelTime_s = steadyConversionTime({
+      conversion: read(constant("gelConversion")),
+      propagation_m3mols: read(constant("propagation_m3mols")),
+      termination_m3mols: read(constant("termination_m3mols")),
+      radicalGeneration_molm3s,
+    });
+    const criticalExposure_mJcm2 = irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
+    const layerExposure_mJcm2 = exposureForDepth({
+      cureDepth_um: brief.cureDepthPerLayer * brief.layerThickness_um,
+      penetrationDepth_um: penetrationDepth(drawn),
+      criticalExposure_mJcm2,
+    });
+    return {
+      criticalExposure_mJcm2,
+      layerExposure_mJcm2,
+      layerTime_s: layerExposure_mJcm2 / irradiance_mWcm2,
+    };
+  };
+}
+
+const cureWarnings: readonly Warning[] = [
+  {
+    code: "working-curve-estimated",
+    message:
+      "Estimated from rate constants and dissolved oxygen, not measured. Cure five spots on a glass slide over a factor of ten in exposure before trusting an exposure time.",
+  },
+];

@@ -1,0 +1,140 @@
+// Doubt carried through a model: every uncertain input is drawn, the model runs once a draw, the outcomes are summed up.
+// JCGM 101:2008 (Monte Carlo propagation of distributions), with Latin hypercube draws instead of plain random ones.
+
+import { checkNumber } from "../door.js";
+import { normalQuantile } from "../numerics/distributions.js";
+import { latinHypercube } from "../numerics/sampling.js";
+import { coverageInterval, rankCorrelation } from "../numerics/summary.js";
+import type { Interval, SourcedValue } from "../result.js";
+
+/**
+ * An input with its doubt. The label tells inputs apart: two uses of one label are the same physical quantity and move together.
+ * `positive`: log-normal with `value` as its median; `signed`: normal; `flat`: uniform over value ± √3 u.
+ */
+export interface Uncertain extends SourcedValue {
+  readonly label: string;
+  readonly spread: "positive" | "signed" | "flat";
+  /** What the quantity cannot exceed by its nature; draws stop there. */
+  readonly max?: number;
+}
+
+/** Gives a model the number to use for an input: its stated value, or the one of the present draw. */
+export type Read = (input: Uncertain) => number;
+
+/** How many draws are taken, from which seed, and the probability that intervals hold. */
+export interface DrawOptions {
+  readonly draws?: number;
+  readonly seed?: number;
+  readonly level?: number;
+}
+
+/** The draws of one run: the same input has the same column wherever it is used. */
+export interface Draws {
+  readonly count: number;
+  readonly seed: number;
+  readonly level: number;
+  readonly column: (input: Uncertain) => Float64Array;
+}
+
+/** What came of a model: its answer at the stated values, one outcome a draw, and the inputs it read. */
+export interface Ensemble<T> {
+  readonly stated: T;
+  readonly outcomes: readonly T[];
+  readonly inputs: readonly Uncertain[];
+}
+
+/** How much of a result's doubt one input carries, 0 to 1; the shares of a result add up to 1. */
+export interface DoubtShare {
+  readonly label: string;
+  readonly share: number;
+}
+
+/** Sets up draws; columns are made when an input is first read. @throws InputError for a count, seed or level out of range. */
+export function startDraws({ draws = 2000, seed = 1, level = 0.95 }: DrawOptions = {}): Draws {
+  const where = "assess";
+  checkNumber(draws, { where, field: "draws", min: 20, max: 1e6, advice: "2000 is usual" });
+  checkNumber(seed, { where, field: "seed", min: 0, max: 2 ** 32 - 1 });
+  checkNumber(level, { where, field: "level", min: 0.5, max: 0.999 });
+  const columns = new Map<string, Float64Array>();
+  const column = (input: Uncertain) => {
+    const made = columns.get(input.label) ?? drawColumn(input, draws, (seed ^ hash(input.label)) >>> 0);
+    columns.set(input.label, made);
+    return made;
+  };
+  return { count: draws, seed, level, column };
+}
+
+/** Runs a model at the stated values and once a draw. */
+export function propagate<T>(model: (read: Read) => T, draws: Draws): Ensemble<T> {
+  const columns = new Map<Uncertain, Float64Array | undefined>();
+  const columnOf = (input: Uncertain) => {
+    if (!columns.has(input)) columns.set(input, input.u === 0 ? undefined : draws.column(input));
+    return columns.get(input);
+  };
+  const stated = model((input) => {
+    columnOf(input);
+    return input.value;
+  });
+  const outcomes = Array.from({ length: draws.count }, (_, k) =>
+    model((input) => columnOf(input)?.[k] ?? input.value),
+  );
+  return { stated, outcomes, inputs: [...columns.keys()] };
+}
+
+/** The coverage interval of drawn numbers around the answer at the stated values. */
+export function intervalOf({
+  stated,
+  values,
+  level,
+}: {
+  stated: number;
+  values: readonly number[];
+  level: number;
+}): Interval {
+  const { low, high } = coverageInterval(values, level);
+  // A model that bends can put the stated answer outside the middle of its own draws; the interval never excludes it.
+  return { value: stated, low: Math.min(low, stated), high: Math.max(high, stated), level };
+}
+
+/**
+ * Which inputs carry the doubt: squared rank correlation of input and outcome, brought to a sum of 1, largest first.
+ * Inputs that explain less than chance would are left out.
+ */
+export function doubtShares(
+  values: readonly number[],
+  inputs: readonly Uncertain[],
+  draws: Draws,
+): DoubtShare[] {
+  if (values.every((value) => value === values[0])) return [];
+  const chance = 9 / draws.count;
+  const raw = inputs
+    .filter((input) => input.u > 0)
+    .map((input) => ({ label: input.label, share: rankCorrelation(draws.column(input), values) ** 2 }))
+    .filter(({ share }) => share > chance);
+  const total = raw.reduce((sum, { share }) => sum + share, 0);
+  return raw.map(({ label, share }) => ({ label, share: share / total })).sort((a, b) => b.share - a.share);
+}
+
+/** The sources of the inputs a run read, each once: what it is the source of, the source, the ground it stands on. */
+export function sourcesOf(inputs: readonly Uncertain[]): string[] {
+  return [...new Set(inputs.map(({ label, source, status }) => `${label}: ${source} (${status})`))].sort();
+}
+
+function drawColumn(input: Uncertain, count: number, seed: number): Float64Array {
+  const [column] = latinHypercube({ dimensions: 1, draws: count, seed });
+  return column!.map((p) => Math.min(quantileOf(input, p), input.max ?? Infinity));
+}
+
+function quantileOf({ value, u, spread }: Uncertain, probability: number): number {
+  if (spread === "flat") return value + Math.sqrt(3) * u * (2 * probability - 1);
+  const z = normalQuantile({ probability });
+  if (spread === "signed") return value + u * z;
+  return value * Math.exp(z * Math.sqrt(Math.log1p((u / value) ** 2)));
+}
+
+/** FNV-1a (Fowler, Noll, Vo), 32 bit: gives each label its own stream. */
+function hash(text: string): number {
+  let h = 0x811c9dc5;
+  for (const character of text) h = Math.imul(h ^ character.codePointAt(0)!, 0x01000193);
+  return h >>> 0;
+}

@@ -1,0 +1,181 @@
+// Oxygen in the resin and through the window: what delays the cure, and how thick a layer stays liquid on the window.
+
+import { InputError } from "../door.js";
+import {
+  oxygenPartialPressure,
+  deadZone,
+  diffusivityFromViscosity,
+  filmEquivalentThickness,
+  filmPermeance,
+  filmTransferCoefficient,
+  inductionTime,
+  radicalGeneration,
+} from "../models/oxygen.js";
+import { photonFlux } from "../models/light.js";
+import { filmOn } from "../recipe/shelf.js";
+import { unitLabel } from "../recipe/units.js";
+import type { Warning } from "../result.js";
+import { componentsIn, constantOf, uncertain, type Case } from "./case.js";
+import {
+  doubtShares,
+  intervalOf,
+  propagate,
+  sourcesOf,
+  startDraws,
+  type DrawOptions,
+  type Draws,
+  type Read,
+} from "./doubt.js";
+import { lightModel } from "./light.js";
+import { drawProperty, propertyTitles, type Drawn, type NeverCures, type Property } from "./property.js";
+import { viscosityModel } from "./viscosity.js";
+
+/** The dead zone of an assessed formulation: a thickness, with the share of draws that never cure, or the "never cures" outcome. */
+export type DeadZoneEstimate = (Property & { readonly neverCuresShare: number }) | NeverCures;
+
+/**
+ * Thickness of the layer that stays liquid on the window under steady light, µm, or the outcome that nothing ever cures.
+ *
+ * Zero-order oxygen sink in light that decays with depth, oxygen fed through the film in series; oxygen diffuses as the
+ * two-thirds power of viscosity allows. Steady state, no flow: layers shorter than a few induction times never reach it.
+ * @throws InputError as {@link viscosityOf} and {@link penetrationDepthOf}; when the film is unknown.
+ * @source Models: {@link deadZone}, {@link diffusivityFromViscosity}, {@link filmPermeance}. Propagation: JCGM 101:2008.
+ */
+export function deadZoneOf(input: Case & DrawOptions): DeadZoneEstimate {
+  return drawDeadZone(input, startDraws(input)).property;
+}
+
+/** @internal */
+export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate> {
+  const property = "deadZone_um" as const;
+  const { stated, outcomes, inputs } = propagate(deadZoneModel(input), draws);
+  const values = outcomes.map((one) => (one.outcome === "dead-zone" ? one.thickness_um : NaN));
+  const cured = values.filter((value) => !Number.isNaN(value));
+  const share = 1 - cured.length / values.length;
+  const common = {
+    property,
+    title: propertyTitles[property],
+    unit: unitLabel(property),
+    sources: sourcesOf(inputs),
+  };
+  const warnings = deadZoneWarnings(input, share);
+  if (stated.outcome === "never-cures")
+    return { values, property: { ...common, outcome: "never-cures", share, warnings } };
+  return {
+    values,
+    property: {
+      ...common,
+      outcome: "value",
+      ...intervalOf({ stated: stated.thickness_um, values: cured, level: draws.level }),
+      neverCuresShare: share,
+      warnings,
+      // A draw that never cures is the thickest of all.
+      doubt: doubtShares(
+        values.map((value) => (Number.isNaN(value) ? Number.MAX_VALUE : value)),
+        inputs,
+        draws,
+      ),
+    },
+  };
+}
+
+/** @internal */
+export function drawInductionTime(input: Case, draws: Draws): Drawn {
+  return drawProperty("inductionTime_s", inductionModel(input), [], draws);
+}
+
+/** Radicals started at the window, and the oxygen figures that go with them. @internal */
+export function radicalModel(input: Case) {
+  const { brief, shelf } = input;
+  if (componentsIn(input.formulation, ["photoinitiator"]).length === 0) {
+    throw new InputError(
+      `formulation "${input.formulation.id}": no photoinitiator in it; nothing would start the cure`,
+    );
+  }
+  const light = lightModel(input);
+  const irradiance = uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
+  return (read: Read) => {
+    const inResin = light(read);
+    const irradiance_mWcm2 = read(irradiance);
+    const photonFlux_molm2s = photonFlux({ irradiance_mWcm2, wavelength_nm: inResin.wavelength_nm });
+    return {
+      ...inResin,
+      irradiance_mWcm2,
+      radicalGeneration_molm3s: radicalGeneration({ ...inResin, photonFlux_molm2s }),
+      oxygenPerRadical: read(constantOf(shelf.constants, "oxygenPerRadical")),
+      solubility_molm3Pa: read(constantOf(shelf.constants, "oxygenSolubility_molm3Pa")),
+    };
+  };
+}
+
+/** Oxygen that fresh resin brings along, mol/m³: it has stood in dry air at 101325 Pa. @internal */
+export function airSaturation(solubility_molm3Pa: number): number {
+  return solubility_molm3Pa * oxygenPartialPressure({ oxygenFraction: 0.2095, pressure_Pa: 101325 });
+}
+
+function inductionModel(input: Case) {
+  const radicals = radicalModel(input);
+  return (read: Read) => {
+    const { radicalGeneration_molm3s, oxygenPerRadical, solubility_molm3Pa } = radicals(read);
+    return inductionTime({
+      oxygen_molm3: airSaturation(solubility_molm3Pa),
+      radicalGeneration_molm3s,
+      oxygenPerRadical,
+    });
+  };
+}
+
+function deadZoneModel(input: Case) {
+  const { brief, shelf } = input;
+  const { window } = brief;
+  const radicals = radicalModel(input);
+  const viscosity = viscosityModel(input);
+  const film = filmOn(shelf, `brief "${brief.id}"`, window.film);
+  const permeability = uncertain(`oxygen permeability of ${film.id}`, film.oxygenPermeability_barrer);
+  const filmThickness = uncertain("film thickness", window.filmThickness_um);
+  const diffusivityFactor = constantOf(shelf.constants, "diffusivityFactor");
+  const gasOxygen_Pa = oxygenPartialPressure({
+    oxygenFraction: window.gasOxygenFraction,
+    pressure_Pa: window.gasPressure_Pa,
+  });
+  return (read: Read) => {
+    const drawn = radicals(read);
+    const diffusivity_m2s =
+      read(diffusivityFactor) *
+      diffusivityFromViscosity({ viscosity_mPas: viscosity(read), temperature_C: brief.temperature_C });
+    const permeance_molm2sPa = filmPermeance({
+      permeability_barrer: read(permeability),
+      thickness_um: read(filmThickness),
+    });
+    const transferCoefficient_ms = filmTransferCoefficient({
+      permeance_molm2sPa,
+      solubility_molm3Pa: drawn.solubility_molm3Pa,
+    });
+    return deadZone({
+      diffusivity_m2s,
+      saturation_molm3: drawn.solubility_molm3Pa * gasOxygen_Pa,
+      radicalGeneration_molm3s: drawn.radicalGeneration_molm3s,
+      oxygenPerRadical: drawn.oxygenPerRadical,
+      napierianAbsorption_percm: drawn.napierianAbsorption_percm,
+      filmEquivalentThickness_um: filmEquivalentThickness({ diffusivity_m2s, transferCoefficient_ms }),
+    });
+  };
+}
+
+function deadZoneWarnings({ brief }: Case, neverCuresShare: number): Warning[] {
+  const warnings: Warning[] = [];
+  if (neverCuresShare > 0) {
+    warnings.push({
+      code: "may-never-cure",
+      message: `In ${(100 * neverCuresShare).toPrecision(2)} % of the draws this light never cures this resin at this window: oxygen comes in faster than it is burnt. More light, more initiator or a tighter film cures it.`,
+    });
+  }
+  if (brief.window.gasOxygenFraction === 0) {
+    warnings.push({
+      code: "no-oxygen-below",
+      message:
+        "The gas under the film holds no oxygen: no standing dead zone, and the part may stick to the window.",
+    });
+  }
+  return warnings;
+}

@@ -1,0 +1,79 @@
+// The public door of resinwright: everything here runs in Node and in a browser. Reading files is in "resinwright/files".
+
+export { InputError } from "./door.js";
+export type { Interval, SourcedValue, SourceStatus, Warning } from "./result.js";
+
+export { readQuantity, unitLabel, fieldUnits, type FieldUnit } from "./recipe/units.js";
+export { hasCasCheckDigit, molarMassOfFormula } from "./recipe/identity.js";
+export { parseJson, type JsonDocument } from "./recipe/document.js";
+export {
+  readIngredient,
+  readLot,
+  withLot,
+  roles,
+  type Ingredient,
+  type IngredientFigures,
+  type HazardStatement,
+  type Lot,
+  type Role,
+} from "./recipe/ingredient.js";
+export type { AtTemperature } from "./recipe/sourced.js";
+export { readSpectrum, type Spectrum } from "./recipe/spectrum.js";
+export { readFilm, type Film } from "./recipe/film.js";
+export { readInteraction, type Interaction } from "./recipe/interaction.js";
+export { readConstants, type ResinConstants } from "./recipe/constants.js";
+export {
+  filmOn,
+  ingredientOn,
+  interactionOn,
+  spectrumOn,
+  withInteraction,
+  type Shelf,
+} from "./recipe/shelf.js";
+export {
+  batchMasses,
+  composition,
+  densityOf,
+  formulate,
+  isLiquid,
+  largestOf,
+  mainPair,
+  massFractionOf,
+  readRecipe,
+  withMassFraction,
+  withRatio,
+  type Component,
+  type CompositionRow,
+  type FigureReader,
+  type Formulation,
+  type Part,
+  type Recipe,
+} from "./recipe/formulation.js";
+export {
+  readBrief,
+  propertyNames,
+  type Avoid,
+  type Brief,
+  type PropertyName,
+  type Target,
+} from "./recipe/brief.js";
+export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
+export { readNumberTable } from "./recipe/table.js";
+
+export * from "./models/viscosity.js";
+export * from "./models/light.js";
+export * from "./models/cure.js";
+export * from "./models/oxygen.js";
+export * from "./models/separation.js";
+
+export type { DoubtShare, DrawOptions } from "./assess/doubt.js";
+export type { Case } from "./assess/case.js";
+export type { NeverCures, Property, Verdict } from "./assess/property.js";
+export { viscosityOf } from "./assess/viscosity.js";
+export { penetrationDepthOf } from "./assess/light.js";
+export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
+export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export { assess, verdictOf, type Assessment } from "./assess/assess.js";
+
+export { mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
+export { calibrate, interactionFrom } from "./decide/calibrate.js";

@@ -1,0 +1,90 @@
+import { describe, expect, it } from "vitest";
+import { viscosityOf } from "../../lib/assess/viscosity.js";
+import { calibrate, interactionFrom } from "../../lib/decide/calibrate.js";
+import { parseJson } from "../../lib/recipe/document.js";
+import { readBlendReadings, type BlendReadings } from "../../lib/recipe/readings.js";
+import { brief, formulationOf, shelf } from "../fixtures.js";
+
+// Constructed so that the answer is exact: neat 20 and 5000 mPa s, G = -1.5 on mass fractions, no scatter.
+const massFractions = [0, 0.25, 0.5, 0.75, 1];
+const readings: BlendReadings = {
+  id: "r1",
+  pair: ["THICK", "THIN"],
+  temperature_C: 25,
+  relativeU: 0.02,
+  massFractions,
+  viscosities_mPas: massFractions.map((w) => 5000 ** w * 20 ** (1 - w) * Math.exp(-1.5 * w * (1 - w))),
+  source: "constructed for a test",
+  status: "invented for the demo",
+};
+const work = {
+  formulation: formulationOf({ THIN: 50, THICK: 50 }),
+  brief,
+  shelf: { ...shelf, readings: [readings] },
+};
+
+describe("interactionFrom", () => {
+  it("finds the interaction that made the readings, on a mass basis, and says where it is from", () => {
+    const { G, basis, pair, temperature_C } = interactionFrom(readings);
+    expect(G.value).toBeCloseTo(-1.5, 12);
+    expect(G.u).toBeLessThan(1e-12);
+    expect([basis, pair, temperature_C]).toEqual(["mass", ["THICK", "THIN"], 25]);
+    expect(G.source).toBe("fit to 3 blends of r1: constructed for a test");
+    expect(G.status).toBe("invented for the demo");
+  });
+});
+
+describe("calibrate", () => {
+  it("makes the model give the readings back", () => {
+    const { value, warnings } = viscosityOf({ ...calibrate(work), draws: 100 });
+    expect(value).toBeCloseTo(readings.viscosities_mPas[2]!, 8);
+    expect(warnings).toEqual([]);
+  });
+
+  it("narrows the interval", () => {
+    const width = ({ low, high }: { low: number; high: number }) => high / low;
+    expect(width(viscosityOf({ ...calibrate(work), draws: 500 }))).toBeLessThan(1.2);
+    expect(width(viscosityOf({ ...work, draws: 500 }))).toBeGreaterThan(5);
+  });
+
+  it("leaves the case it was given, and a lot's own figure, as they were", () => {
+    const before = structuredClone(work.formulation);
+    const [thin, thick] = work.formulation.components;
+    const lot = { id: "T-7", measured: ["viscosity_mPas"] };
+    const ofLot = {
+      ...work,
+      formulation: {
+        ...work.formulation,
+        components: [thin!, { ...thick!, ingredient: { ...thick!.ingredient, lot } }],
+      },
+    };
+    const [newThin, newThick] = calibrate(ofLot).formulation.components;
+    expect(newThin!.ingredient.viscosity_mPas!.value).toBeCloseTo(20, 12);
+    expect(newThick!.ingredient.viscosity_mPas!.value).toBe(10000);
+    expect(work.formulation).toEqual(before);
+  });
+});
+
+describe("readBlendReadings", () => {
+  const read = (change: object) =>
+    readBlendReadings(parseJson(JSON.stringify({ ...readings, ...change }, null, 1), "m.json"));
+
+  it("reads what it wrote", () => {
+    expect(read({})).toEqual(readings);
+  });
+
+  it.each([
+    [
+      { viscosities_mPas: [1, 2, 3, 4] },
+      "m.json: massFractions has 5 entries and viscosities_mPas has 4; each blend needs one reading",
+    ],
+    [
+      { massFractions: [0.1, 0.25, 0.5, 0.75, 1] },
+      "m.json: no reading of neat THIN (mass fraction 0); add it",
+    ],
+    [{ massFractions: [0, 0.25, 0.5, 0.75, 1.2] }, "massFractions[4] is 1.2; it must be at most 1"],
+    [{ viscosities_mPas: [20, -1, 3, 4, 5] }, "viscosities_mPas[1] is -1; it must be above 0"],
+  ])("refuses %j", (change, message) => {
+    expect(() => read(change)).toThrow(message);
+  });
+});
