@@ -75,5 +75,5 @@ export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
-export { mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
+export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, interactionFrom } from "./decide/calibrate.js";

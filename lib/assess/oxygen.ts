@@ -52,31 +52,19 @@ export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate>
   const values = outcomes.map((one) => (one.outcome === "dead-zone" ? one.thickness_um : NaN));
   const cured = values.filter((value) => !Number.isNaN(value));
   const share = 1 - cured.length / values.length;
+  // A draw that never cures is the thickest of all.
+  const ranked = values.map((value) => (Number.isNaN(value) ? Number.MAX_VALUE : value));
   const common = {
     property,
     title: propertyTitles[property],
     unit: unitLabel(property),
+    warnings: deadZoneWarnings(input, share),
+    doubt: doubtShares(ranked, inputs, draws),
     sources: sourcesOf(inputs),
   };
-  const warnings = deadZoneWarnings(input, share);
-  if (stated.outcome === "never-cures")
-    return { values, property: { ...common, outcome: "never-cures", share, warnings } };
-  return {
-    values,
-    property: {
-      ...common,
-      outcome: "value",
-      ...intervalOf({ stated: stated.thickness_um, values: cured, level: draws.level }),
-      neverCuresShare: share,
-      warnings,
-      // A draw that never cures is the thickest of all.
-      doubt: doubtShares(
-        values.map((value) => (Number.isNaN(value) ? Number.MAX_VALUE : value)),
-        inputs,
-        draws,
-      ),
-    },
-  };
+  if (stated.outcome === "never-cures") return { values, property: { ...common, outcome: "never-cures", share } };
+  const interval = intervalOf({ stated: stated.thickness_um, values: cured, level: draws.level });
+  return { values, property: { ...common, outcome: "value", ...interval, neverCuresShare: share } };
 }
 
 /** @internal */

@@ -33,6 +33,7 @@ export interface NeverCures {
   /** Share of the draws in which it does not cure, 0 to 1. */
   readonly share: number;
   readonly warnings: readonly Warning[];
+  readonly doubt: readonly DoubtShare[];
   readonly sources: readonly string[];
 }
 

@@ -1,6 +1,6 @@
 // One property along one variable, or a number over two: what a figure needs, and the point on it to choose.
 
-import { checkNumber, InputError } from "../door.js";
+import { checkNumber, InputError, positive } from "../door.js";
 import type { Case } from "../assess/case.js";
 import type { DrawOptions } from "../assess/doubt.js";
 import type { NeverCures, Property } from "../assess/property.js";
@@ -53,6 +53,35 @@ export function sweep({
     curve.high.push(property.high);
   }
   return curve;
+}
+
+/**
+ * Evenly spaced values, both ends included; on a logarithmic scale each is the same multiple of the one before.
+ * @throws InputError when there are fewer than two, the ends are not in order, or a logarithmic scale does not start above 0.
+ * @example
+ * ```ts
+ * import { evenSteps } from "resinwright";
+ * evenSteps({ from: 1, to: 100, count: 3, logarithmic: true }); // → [1, 10, 100]
+ * ```
+ */
+export function evenSteps({
+  from,
+  to,
+  count,
+  logarithmic = false,
+}: {
+  from: number;
+  to: number;
+  count: number;
+  logarithmic?: boolean;
+}): number[] {
+  const where = "evenSteps";
+  checkNumber(count, { where, field: "count", min: 2, max: 10000 });
+  checkNumber(from, { where, field: "from", ...(logarithmic ? positive : {}) });
+  checkNumber(to, { where, field: "to", min: from, above: true });
+  const at = (part: number) => (logarithmic ? from * (to / from) ** part : from + (to - from) * part);
+  // Twelve digits: steps such as 0.1 + 0.2 should read as people write them.
+  return Array.from({ length: count }, (_, i) => Number(at(i / (count - 1)).toPrecision(12)));
 }
 
 /** A number for each place of a grid: one row for each `y`, one number for each `x`, as a contour figure takes them. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { deadZoneOf } from "../../lib/assess/oxygen.js";
 import { viscosityOf } from "../../lib/assess/viscosity.js";
-import { mapOver, nearestWithin, sweep } from "../../lib/decide/sweep.js";
+import { evenSteps, mapOver, nearestWithin, sweep } from "../../lib/decide/sweep.js";
 import { withRatio } from "../../lib/recipe/formulation.js";
 import { brief, formulationOf, shelf, sure } from "../fixtures.js";
 
@@ -31,6 +31,23 @@ describe("sweep", () => {
   it("refuses nothing to go through", () => {
     expect(() => sweep({ over: [], at: () => work, of: viscosityOf })).toThrow(
       "sweep: over is empty; give the values to go through",
+    );
+  });
+});
+
+describe("evenSteps", () => {
+  it("spaces values evenly on either scale, ends included", () => {
+    expect(evenSteps({ from: 0, to: 0.3, count: 4 })).toEqual([0, 0.1, 0.2, 0.3]);
+    expect(evenSteps({ from: 0.5, to: 8, count: 5, logarithmic: true })).toEqual([0.5, 1, 2, 4, 8]);
+  });
+
+  it("refuses ends out of order and a logarithm of nothing", () => {
+    expect(() => evenSteps({ from: 2, to: 1, count: 3 })).toThrow(
+      "evenSteps: to is 1; it must be a finite number above 2",
+    );
+    expect(() => evenSteps({ from: 0, to: 1, count: 3, logarithmic: true })).toThrow("evenSteps: from is 0");
+    expect(() => evenSteps({ from: 0, to: 1, count: 1 })).toThrow(
+      "evenSteps: count is 1; it must be a number from 2 to 10000",
     );
   });
 });

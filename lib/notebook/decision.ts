@@ -1,0 +1,47 @@
+// The end of a notebook: what was decided, shown and appended to the lab record.
+
+import { appendRecord } from "../lab/record.js";
+import type { Case } from "../assess/case.js";
+import { numberText } from "./digits.js";
+import { showMarkdown, showTable } from "./show.js";
+import { tableOf } from "./table.js";
+
+/**
+ * Shows a decision with the figures behind it and appends it to the lab record, in the folder that the environment variable
+ * `RESINWRIGHT_RECORDS` names or else `../records`.
+ * @param input - The case decided on; `from`, the notebook; the `statement`; `figures`, numbers or short text with units in
+ * their names.
+ * @throws InputError when the statement is empty or a figure is not finite; outside a notebook.
+ */
+export function decide({
+  work,
+  from,
+  statement,
+  figures,
+}: {
+  work: Case;
+  from: string;
+  statement: string;
+  figures: Readonly<Record<string, number | string>>;
+}): void {
+  const folder = process.env["RESINWRIGHT_RECORDS"] ?? "../records";
+  const record = {
+    kind: "decision" as const,
+    from,
+    brief: work.brief.id,
+    formulation: work.formulation.id,
+    statement,
+    figures,
+  };
+  const { file, record: written } = appendRecord({ folder, record });
+  showMarkdown(`**Decided.** ${statement}`);
+  showTable(
+    tableOf({
+      caption: "What was appended to the lab record",
+      rows: Object.entries({ ...figures, written: written.at, file }).map(([figure, value]) => ({
+        figure,
+        value: typeof value === "number" ? numberText(value) : value,
+      })),
+    }),
+  );
+}

@@ -1,0 +1,54 @@
+// The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
+
+export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
+export { showFigure, showMarkdown, showTable } from "./show.js";
+
+export { lineFigure, type LineFigure, type Series } from "./figure/line.js";
+export {
+  contourFigure,
+  type ContourFigure,
+  type GridAxis,
+  type GridValues,
+  type Region,
+} from "./figure/contour.js";
+export { intervalFigure, type IntervalFigure, type IntervalRow } from "./figure/interval.js";
+export { shareFigure, type ShareFigure, type ShareRow } from "./figure/share.js";
+export type { Axis, Limits } from "./figure/axis.js";
+export type { Band, Mark } from "./figure/marks.js";
+
+export {
+  frameOf,
+  tableOf,
+  tableOfFrame,
+  type Column,
+  type Frame,
+  type FrameColumn,
+  type FrameCondition,
+  type FrameGroups,
+  type TableInput,
+} from "./table.js";
+export { intervalText, numberText } from "./digits.js";
+
+export { gasText, lightText, targetBand, targetRegion, targetText, windowText } from "./phrases.js";
+export {
+  assessmentTable,
+  briefTable,
+  figureRows,
+  formulationTable,
+  hazardTable,
+  propertyTable,
+  sourceTable,
+  valueText,
+  verdictText,
+  warningTable,
+  type FigureRow,
+} from "./views.js";
+export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
+export { decide } from "./decision.js";
+
+export type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
+export type { Origin } from "./page.js";
+export { renderIndex, renderNotebook } from "./pages.js";
+export type { IndexEntry, Page } from "./render.js";
+export { runNotebook, runNotebooks } from "./run.js";
+export type { NotebookRun, Progress, RunFailure, RunOptions } from "./run.js";

@@ -1,0 +1,140 @@
+// How a page looks: a quiet report in the reader's own fonts, for a desk, a phone, a dark room and A4 paper.
+// One style sheet for notebook pages and the index.
+
+import { darkPalette, lightPalette, type Palette } from "./palette.js";
+
+function variables(palette: Palette): string {
+  return Object.entries(palette)
+    .map(([name, color]) => `--${name}: ${color};`)
+    .join(" ");
+}
+
+/** The style sheet of every page. */
+export const pageStyle = `
+:root { color-scheme: light dark; ${variables(lightPalette)} }
+@media screen and (prefers-color-scheme: dark) { :root { ${variables(darkPalette)} } }
+
+* { box-sizing: border-box; }
+html { font: 100%/1.6 system-ui, sans-serif; color: var(--ink); background: var(--paper); text-size-adjust: 100%; }
+body { margin: 0; overflow-wrap: break-word; }
+a { color: var(--accent); text-underline-offset: 0.15em; text-decoration-thickness: 1px; }
+a:hover { text-decoration-thickness: 2px; }
+:focus-visible { outline: 3px solid var(--accent); outline-offset: 2px; border-radius: 2px; }
+.skip { position: absolute; left: 1rem; top: -4rem; padding: 0.5rem 1rem; background: var(--paper); z-index: 2; }
+.skip:focus { top: 0.5rem; }
+
+.bar, .page, .foot { width: min(100% - 2rem, 45rem); margin-inline: auto; }
+.bar { padding-block: 1rem; font-size: 0.875rem; color: var(--muted); border-bottom: 1px solid var(--rule); }
+.page { padding-block: 2rem 3rem; }
+.foot { padding-block: 1rem 3rem; font-size: 0.8125rem; color: var(--muted); border-top: 1px solid var(--rule); }
+.foot p { margin: 0; }
+.print-only { display: none; }
+
+h1, h2, h3, h4, h5, h6 { line-height: 1.25; font-weight: 650; text-wrap: balance; scroll-margin-top: 1rem; }
+h1 { font-size: 2rem; margin: 0.5rem 0 1.25rem; letter-spacing: -0.015em; }
+h2 { font-size: 1.375rem; margin: 3rem 0 0.75rem; letter-spacing: -0.01em; }
+h3 { font-size: 1.125rem; margin: 2rem 0 0.5rem; }
+h4, h5, h6 { font-size: 1rem; margin: 1.5rem 0 0.5rem; }
+p, ul, ol, dl, blockquote { margin: 0 0 1rem; }
+ul, ol { padding-left: 1.5rem; }
+li { margin-bottom: 0.25rem; }
+blockquote { padding-left: 1rem; border-left: 3px solid var(--rule); color: var(--muted); }
+hr { border: 0; border-top: 1px solid var(--rule); margin: 2.5rem 0; }
+img { max-width: 100%; height: auto; }
+.left-out { color: var(--muted); font-style: italic; }
+
+.contents { margin: 0 0 2rem; font-size: 0.9375rem; }
+.contents p { margin: 0 0 0.25rem; font-size: 0.8125rem; color: var(--muted); }
+.contents ol { list-style: none; margin: 0; padding: 0; }
+.contents li { margin: 0; padding-block: 0.2rem; line-height: 1.4; }
+.contents .deeper { padding-left: 1.25rem; }
+.contents a { text-decoration: none; }
+.contents a:hover { text-decoration: underline; }
+
+.scroll { overflow-x: auto; max-width: 100%; }
+.formula { display: block; overflow-y: hidden; margin: 1.25rem 0; padding-block: 0.25rem; text-align: center; }
+math { font-size: 1.08em; }
+
+code, pre { font-family: ui-monospace, monospace; font-size: 0.875em; }
+:not(pre) > code { padding: 0.1em 0.3em; background: var(--shade); border-radius: 3px; }
+pre { margin: 0 0 1rem; padding: 0.75rem 1rem; background: var(--shade); border-radius: 4px; line-height: 1.5; tab-size: 2; }
+pre code { font-size: 1em; }
+pre.output { padding: 0 0 0 1rem; background: none; border-left: 3px solid var(--rule); border-radius: 0; }
+.hljs-keyword, .hljs-built_in, .hljs-literal { color: var(--codeWord); }
+.hljs-string, .hljs-regexp { color: var(--codeText); }
+.hljs-number { color: var(--codeNumber); }
+.hljs-comment { color: var(--muted); font-style: italic; }
+
+details { margin: 0 0 1rem; }
+details + figure, details + .scroll:has(> table) { margin-top: 0.75rem; }
+summary { width: fit-content; padding: 0.25rem 0; font-size: 0.8125rem; color: var(--muted); cursor: pointer; }
+summary:hover { color: var(--accent); }
+details[open] > summary { margin-bottom: 0.5rem; }
+.data .scroll { max-height: 26rem; overflow-y: auto; }
+
+table { border-collapse: collapse; font-size: 0.9375rem; line-height: 1.4; font-variant-numeric: tabular-nums lining-nums; }
+.scroll > table { margin: 0.25rem 0 0.5rem; min-width: min(100%, 34rem); }
+.scroll:has(> table) { margin: 1.5rem 0; }
+.scroll:has(> table) { container-type: inline-size; }
+caption span { display: inline-block; position: sticky; left: 0; max-width: 100cqi; }
+caption { padding-bottom: 0.5rem; text-align: left; font-size: 0.875rem; line-height: 1.45; color: var(--muted); }
+caption strong, figcaption strong { color: var(--ink); }
+thead { border-top: 2px solid var(--ink); border-bottom: 1px solid var(--ink); }
+tbody { border-bottom: 2px solid var(--ink); }
+tbody tr + tr { border-top: 1px solid var(--rule); }
+th, td { padding: 0.375rem 1.25rem 0.375rem 0; text-align: left; vertical-align: baseline; font-weight: 400; }
+th:last-child, td:last-child { padding-right: 0; }
+thead th { vertical-align: bottom; font-weight: 600; }
+th.right, td.right { text-align: right; }
+td.right, .whole { white-space: nowrap; }
+.unit { font-weight: 400; color: var(--muted); white-space: nowrap; }
+
+figure { margin: 2rem 0; }
+.plot { width: 100%; overflow: hidden; }
+.plot .draglayer * { touch-action: pan-y; }
+figcaption { margin-top: 0.5rem; font-size: 0.875rem; line-height: 1.5; color: var(--muted); }
+figcaption p { margin: 0 0 0.375rem; }
+figcaption .name { color: var(--ink); }
+
+.list { list-style: none; padding: 0; margin: 2rem 0 0; }
+.list li { margin: 0; padding-block: 1.25rem; border-top: 1px solid var(--rule); }
+.list a { font-size: 1.125rem; font-weight: 600; }
+.list p { margin: 0.375rem 0 0; color: var(--muted); }
+
+@media (min-width: 75rem) {
+  .bar, .page, .foot { margin-left: max(50% - 22.5rem, 18rem); }
+  .scroll:has(> .many) { width: min(58rem, 100vw - max(50vw - 22.5rem, 18rem) - 3rem); max-width: none; }
+  .has-contents { position: relative; }
+  .contents-place { position: absolute; top: 2.9rem; bottom: 0; right: calc(100% + 2.5rem); width: 14rem; }
+  .contents { position: sticky; top: 2rem; max-height: calc(100vh - 4rem); overflow-y: auto; font-size: 0.875rem; }
+}
+@media (max-width: 30rem) {
+  h1 { font-size: 1.625rem; }
+  h2 { font-size: 1.25rem; margin-top: 2.25rem; }
+  table { font-size: 0.875rem; }
+  th, td { padding-right: 0.875rem; }
+}
+@media (prefers-reduced-motion: no-preference) { html { scroll-behavior: smooth; } }
+
+@page { size: A4; margin: 18mm 20mm; }
+@media print {
+  html { font-size: 10pt; line-height: 1.45; background: #fff; }
+  .bar, .skip, .contents, details { display: none; }
+  .print-only { display: block; }
+  .bar, .page, .foot { width: 100%; padding-block: 0; }
+  .foot { margin-top: 2rem; padding-top: 0.5rem; }
+  a { color: inherit; text-decoration: none; }
+  .page a[href^="http"]::after { content: " (" attr(href) ")"; color: var(--muted); overflow-wrap: anywhere; }
+  h1, h2, h3, h4, h5, h6, caption { break-after: avoid; }
+  h2 { margin-top: 2rem; }
+  figure, table, tr, img, .formula, blockquote { break-inside: avoid; }
+  thead { display: table-header-group; }
+  .scroll { overflow: visible; }
+  pre { white-space: pre-wrap; overflow-wrap: anywhere; }
+  table { max-width: 100%; font-size: 9pt; }
+  th, td { padding-right: 0.75rem; }
+  .many { font-size: 8pt; }
+  .many th, .many td { padding-right: 0.375rem; white-space: normal; overflow-wrap: anywhere; }
+  * { print-color-adjust: exact; }
+}
+`;

@@ -1,0 +1,109 @@
+// The figures notebooks share: an assessment against its targets, where doubt sits, a fitted blend, the pull of a lift.
+
+import type { Assessment } from "../assess/assess.js";
+import type { Case } from "../assess/case.js";
+import type { DeadZoneEstimate } from "../assess/oxygen.js";
+import type { NeverCures, Property } from "../assess/property.js";
+import { viscosityOf } from "../assess/viscosity.js";
+import { interactionFrom } from "../decide/calibrate.js";
+import { evenSteps } from "../decide/sweep.js";
+import { stefanForce, suctionLimit } from "../models/separation.js";
+import { grunbergNissan } from "../models/viscosity.js";
+import type { BlendReadings } from "../recipe/readings.js";
+import type { FigureContent } from "./content.js";
+import { numberText } from "./digits.js";
+import { intervalFigure, type IntervalRow } from "./figure/interval.js";
+import { lineFigure } from "./figure/line.js";
+import { shareFigure } from "./figure/share.js";
+
+/**
+ * Every property with a target, as a multiple of the target's limit (the upper one where there are two).
+ * @throws InputError when the brief sets no target.
+ */
+export function targetFigure(assessment: Assessment): FigureContent {
+  const rows = assessment.verdicts.flatMap(
+    ({ property: name, title, target: { min, max } }): IntervalRow[] => {
+      const property = assessment.properties[name];
+      if (property.outcome === "never-cures") return [];
+      const limit = max ?? min!;
+      const { value, low, high, level } = property;
+      return [
+        {
+          label: title,
+          value: value / limit,
+          low: low / limit,
+          high: high / limit,
+          level,
+          target: [min === undefined ? undefined : min / limit, max === undefined ? undefined : 1],
+        },
+      ];
+    },
+  );
+  return intervalFigure({
+    caption: "Each property against its target",
+    conditions: `${assessment.formulation} under ${assessment.brief}`,
+    axis: { label: "multiple of the target's limit" },
+    rows,
+  });
+}
+
+/** The target that is hardest to call; viscosity where the brief sets no target. */
+export function hardestToCall({ verdicts, properties }: Assessment): Property | NeverCures {
+  const [hardest] = [...verdicts].sort((a, b) => Math.abs(a.share - 0.5) - Math.abs(b.share - 0.5));
+  return properties[hardest?.property ?? "viscosity_mPas"];
+}
+
+/** Which inputs carry the doubt in a property, the eight largest. */
+export function doubtFigure(property: Property | NeverCures, conditions: string): FigureContent {
+  const rows = property.doubt.slice(0, 8);
+  return shareFigure({ caption: `What carries the doubt in the ${property.title}`, conditions, rows });
+}
+
+/** Readings of two liquids' blends with the fitted mixing rule and the log-ideal one. */
+export function blendFigure(readings: BlendReadings): FigureContent {
+  const [first, second] = readings.pair;
+  const { G, basis } = interactionFrom(readings);
+  const neat = (end: number) => readings.viscosities_mPas[readings.massFractions.indexOf(end)]!;
+  const x = evenSteps({ from: 0, to: 1, count: 41 });
+  const rule = (value: number) =>
+    x.map((share) =>
+      grunbergNissan({
+        fractions: [share, 1 - share],
+        viscosities_mPas: [neat(1), neat(0)],
+        basis,
+        interactions: [{ first: 0, second: 1, G: value, basis }],
+      }),
+    );
+  return lineFigure({
+    caption: `Blends of ${first} with ${second}: read and fitted`,
+    conditions: `${numberText(readings.temperature_C)} °C, ${readings.source}`,
+    x: { label: `mass fraction of ${first}` },
+    y: { label: "viscosity", unit: "mPa s", logarithmic: true },
+    series: [
+      { name: "readings", x: readings.massFractions, y: readings.viscosities_mPas, style: "points" },
+      { name: `Grunberg–Nissan, G = ${numberText(G.value, 3)}`, x, y: rule(G.value) },
+      { name: "log-ideal, G = 0", x, y: rule(0) },
+    ],
+  });
+}
+
+/** The pull of the brief's largest cross-section against the gap it is lifted from, and the most the window can hold. */
+export function liftFigure(work: Case, zone: DeadZoneEstimate): FigureContent {
+  const { crossSection_mm2, liftSpeed_mms, temperature_C } = work.brief;
+  const { value, low, high, level } = viscosityOf(work);
+  const x = evenSteps({ from: 5, to: 1000, count: 30, logarithmic: true });
+  const pull = (viscosity_mPas: number) =>
+    x.map((gap_um) => stefanForce({ viscosity_mPas, crossSection_mm2, gap_um, liftSpeed_mms }));
+  const limit_N = suctionLimit({ crossSection_mm2, pressure_Pa: 101325 });
+  return lineFigure({
+    caption: "Pull on the largest cross-section against the gap it starts from",
+    conditions: `rigid disc of ${numberText(crossSection_mm2)} mm² lifted at ${numberText(liftSpeed_mms)} mm/s, ${work.formulation.title} at ${numberText(temperature_C)} °C`,
+    x: { label: "gap", unit: "µm", logarithmic: true },
+    y: { label: "pull", unit: "N", logarithmic: true, range: [limit_N / 1000, 30 * limit_N] },
+    bands: [
+      { label: `more than one atmosphere holds (${numberText(limit_N, 3)} N)`, axis: "y", from: limit_N },
+    ],
+    series: [{ name: "rigid disc", x, y: pull(value), low: pull(low), high: pull(high), level }],
+    marks: zone.outcome === "value" && zone.value > 0 ? [{ label: "dead zone", x: zone.value }] : [],
+  });
+}

@@ -1,0 +1,159 @@
+// The program behind `npm start`: runs all notebooks with one brief and leaves their pages in rendered/.
+// Pages are written only once every notebook has passed and been rendered, so that no half-made set is ever seen.
+
+import { mkdirSync, readdirSync, readFileSync, renameSync, rmSync, writeFileSync } from "node:fs";
+import { createRequire } from "node:module";
+import path from "node:path";
+import { InputError } from "../door.js";
+import { parseJson } from "./json.js";
+import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
+import type { Origin } from "./page.js";
+import { renderIndex, renderNotebook } from "./render.js";
+import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
+
+const defaultBrief = path.join("data", "briefs", "flow-cell.json");
+
+/**
+ * Runs the notebooks of the workbench in `folder` with the brief named first in `words`, and writes their pages.
+ * Returns the exit code: 0 done, 1 a notebook failed, 2 there was nothing to start with.
+ */
+export async function start(given: {
+  readonly words: readonly string[];
+  readonly folder: string;
+  readonly print: (line: string) => void;
+  readonly printError: (line: string) => void;
+}): Promise<0 | 1 | 2> {
+  const { words, folder, print, printError } = given;
+  let task: { brief: string; files: string[] };
+  try {
+    task = { brief: checkedBrief(folder, words), files: notebooksIn(folder) };
+  } catch (error) {
+    printError(messageOf(error));
+    return 2;
+  }
+  const { brief, files } = task;
+  const records = process.env["RESINWRIGHT_RECORDS"] ?? path.join(folder, "records");
+  try {
+    const runs = await runNotebooks({
+      files,
+      environment: { RESINWRIGHT_BRIEF: brief, RESINWRIGHT_RECORDS: records },
+      onProgress: (progress) => print(progressLine(progress)),
+    });
+    const failures = runs.flatMap((run) => (run.outcome === "failed" ? [run.failure.message] : []));
+    if (failures.length > 0) throw new Error(failures.join("\n"));
+    const written = writePages(folder, pagesOf(runs, { brief, records, folder }));
+    print(["Pages:", ...written.map((file) => `  ${path.relative(folder, file)}`)].join("\n"));
+    return 0;
+  } catch (error) {
+    printError(messageOf(error).replaceAll(folder + path.sep, ""));
+    return 1;
+  }
+}
+
+function checkedBrief(folder: string, words: readonly string[]): string {
+  const [named = defaultBrief, ...others] = words;
+  if (others.length > 0) {
+    throw new InputError(
+      `npm start: ${words.length} arguments given; it must be one brief; name one file after --`,
+    );
+  }
+  const brief = path.resolve(folder, named);
+  let text: string;
+  try {
+    text = readFileSync(brief, "utf8");
+  } catch (error) {
+    const code = (error as NodeJS.ErrnoException).code;
+    throw new InputError(
+      `brief ${named}: it cannot be read (${code}); name a file: npm start -- ${defaultBrief}`,
+    );
+  }
+  parseJson({ text, where: `brief ${named}` });
+  return brief;
+}
+
+function notebooksIn(folder: string): string[] {
+  const home = path.join(folder, "notebooks");
+  let names: string[] = [];
+  try {
+    names = readdirSync(home).filter((name) => name.endsWith(".ipynb"));
+  } catch {
+    // No folder is told like an empty one.
+  }
+  if (names.length === 0) {
+    throw new InputError("notebooks: no .ipynb file in this folder; start in the folder of the workbench");
+  }
+  return names.sort().map((name) => path.join(home, name));
+}
+
+function progressLine({ file, cell, cells, elapsed_s }: Progress): string {
+  const where = cell > cells ? "done" : `cell ${cell} of ${cells}`;
+  return `${path.basename(file, ".ipynb")}  ${where}  ${elapsed_s.toFixed(1)} s`;
+}
+
+/** The pages by file name, with the index last. */
+function pagesOf(
+  runs: readonly NotebookRun[],
+  places: { brief: string; records: string; folder: string },
+): Map<string, string> {
+  const origin: Origin = {
+    brief: path.basename(places.brief),
+    libraryVersion: libraryVersion(),
+    nodeVersion: process.versions.node,
+    date: new Date().toISOString().slice(0, 10),
+  };
+  const notebooks = runs.flatMap((run) => (run.outcome === "passed" ? [run.notebook] : []));
+  const pages = notebooks.map((notebook) => ({
+    file: `${path.basename(notebook.file, ".ipynb")}.html`,
+    ...renderNotebook({ notebook: withoutPaths(notebook, places), origin }),
+  }));
+  return new Map([
+    ...pages.map(({ file, html }) => [file, html] as const),
+    ["index.html", renderIndex({ pages, origin })],
+  ]);
+}
+
+// Where this machine keeps its files is nothing a colleague needs to know.
+function withoutPaths(
+  notebook: Notebook,
+  { brief, records, folder }: { brief: string; records: string; folder: string },
+): Notebook {
+  const clean = (text: string): string =>
+    text
+      .replaceAll(brief, path.basename(brief))
+      .replaceAll(records, path.basename(records))
+      .replaceAll(folder + path.sep, "")
+      .replaceAll(folder, ".");
+  const cleanOutput = (output: Output): Output =>
+    output.kind === "text"
+      ? { kind: "text", text: clean(output.text) }
+      : {
+          kind: "display",
+          data: Object.fromEntries(Object.entries(output.data).map(([type, text]) => [type, clean(text)])),
+        };
+  const cleanCell = (cell: CodeCell | MarkdownCell) =>
+    cell.kind === "code" ? { ...cell, outputs: cell.outputs.map(cleanOutput) } : cell;
+  return { file: path.relative(folder, notebook.file), cells: notebook.cells.map(cleanCell) };
+}
+
+function libraryVersion(): string {
+  return (createRequire(import.meta.url)("resinwright/package.json") as { version: string }).version;
+}
+
+// A page appears under its name only when whole; if one cannot be written, none is replaced.
+function writePages(folder: string, pages: ReadonlyMap<string, string>): string[] {
+  const home = path.join(folder, "rendered");
+  mkdirSync(home, { recursive: true });
+  const written = [...pages].map(([name, html]) => ({ file: path.join(home, name), html }));
+  const unfinished = (file: string) => `${file}.${process.pid}.part`;
+  try {
+    for (const { file, html } of written) writeFileSync(unfinished(file), html);
+    for (const { file } of written) renameSync(unfinished(file), file);
+  } finally {
+    for (const { file } of written) rmSync(unfinished(file), { force: true });
+  }
+  return written.map(({ file }) => file);
+}
+
+function messageOf(error: unknown): string {
+  return error instanceof Error ? error.message : String(error);
+}

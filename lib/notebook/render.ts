@@ -1,0 +1,110 @@
+// A notebook that has run, as one page that needs nothing else: no network, no other file, no kernel.
+// Prose is set, code is folded away, figures can be hovered over, tables are tables.
+
+import { readFileSync } from "node:fs";
+import { createRequire } from "node:module";
+import path from "node:path";
+import { codeHtml } from "./code.js";
+import { escapeHtml } from "./html.js";
+import { inlineHtml, markdownHtml, plainText, splitTitle, type Heading } from "./markdown.js";
+import type { CodeCell, Notebook } from "./notebookFile.js";
+import { outputHtml, type Counts } from "./outputs.js";
+import { pageHtml, type Origin } from "./page.js";
+import { pageScript } from "./pageScript.js";
+
+/** A page: its title and first paragraph in plain words, and the whole of it as HTML. */
+export interface Page {
+  readonly title: string;
+  readonly summary: string;
+  readonly html: string;
+}
+
+/** A page as the index lists it; `file` is the name of the page's file. */
+export interface IndexEntry {
+  readonly file: string;
+  readonly title: string;
+  readonly summary: string;
+}
+
+/**
+ * Renders a notebook with its outputs to one self-contained HTML page.
+ *
+ * The title is the heading of level 1 that the first cell starts with, or the name of the file.
+ * @throws InputError naming the cell for a formula, figure, table or picture that cannot be shown.
+ */
+export function renderNotebook(given: { readonly notebook: Notebook; readonly origin: Origin }): Page {
+  const { notebook, origin } = given;
+  const name = path.basename(notebook.file, ".ipynb");
+  const [first] = notebook.cells;
+  const { title = escapeMarkdown(name), rest } =
+    first?.kind === "markdown" ? splitTitle(first.source) : { rest: undefined };
+  const titleHtml = inlineHtml({ source: title, where: notebook.file });
+  const counts: Counts = { figures: 0, tables: 0, pictures: 0, headings: [] };
+  let number = 0;
+  const body = notebook.cells.map((cell, i) => {
+    if (cell.kind === "code") return codeCellHtml(cell, ++number, notebook.file, counts);
+    const source = i === 0 && rest !== undefined ? rest : cell.source;
+    return markdownHtml({ source, where: `${notebook.file}, cell ${i + 1}`, headings: counts.headings });
+  });
+  const contents = contentsHtml(counts.headings);
+  const html = pageHtml({
+    title: plainText(titleHtml),
+    origin,
+    bar: `<header class="bar"><a href="index.html">All notebooks</a></header>`,
+    mainClass: contents === "" ? "page" : "page has-contents",
+    main: `<h1>${titleHtml}</h1>\n${contents}\n${body.join("\n")}`,
+    note: number === 0 ? "" : `<p class="print-only">${printNote}</p>\n`,
+    scripts: counts.figures > 0 ? [figureLibrary(), pageScript] : [pageScript],
+  });
+  return { title: plainText(titleHtml), summary: firstParagraph(body), html };
+}
+
+/** Renders the page that lists all others, in the order given. */
+export function renderIndex(given: {
+  readonly pages: readonly IndexEntry[];
+  readonly origin: Origin;
+}): string {
+  const items = given.pages.map(({ file, title, summary }) => {
+    const words = summary === "" ? "" : `<p>${escapeHtml(summary)}</p>`;
+    return `<li><a href="${escapeHtml(encodeURIComponent(file))}">${escapeHtml(title)}</a>${words}</li>`;
+  });
+  const main = `<h1>Notebooks</h1>\n<ol class="list">\n${items.join("\n")}\n</ol>`;
+  return pageHtml({ title: "Notebooks", main, origin: given.origin });
+}
+
+const printNote =
+  "The code and the numbers behind the figures are left out in print; on a screen they are folded away beside each result.";
+
+function codeCellHtml({ source, outputs }: CodeCell, number: number, file: string, counts: Counts): string {
+  const where = `${file}, code cell ${number}`;
+  const code = codeHtml({ source: source.trim(), language: "typescript" });
+  const folded =
+    source.trim() === ""
+      ? ""
+      : `<details class="code"><summary>Code of cell ${number}</summary>\n<pre class="scroll"><code>${code}</code></pre></details>\n`;
+  return folded + outputs.map((output) => outputHtml({ output, where, counts })).join("");
+}
+
+function contentsHtml(headings: readonly Heading[]): string {
+  const listed = headings.filter(({ level }) => level <= 3);
+  if (listed.length < 2) return "";
+  const items = listed.map(({ level, anchor, html }) => {
+    const deeper = level === 3 ? ` class="deeper"` : "";
+    return `<li${deeper}><a href="#${escapeHtml(encodeURIComponent(anchor))}">${escapeHtml(plainText(html))}</a></li>`;
+  });
+  return `<div class="contents-place"><nav class="contents" aria-label="Contents"><p>Contents</p>\n<ol>\n${items.join("\n")}\n</ol></nav></div>`;
+}
+
+function firstParagraph(body: readonly string[]): string {
+  const found = /<p>(?!<img)([^]*?)<\/p>/.exec(body.join("\n"));
+  return found === null ? "" : plainText(found[1]!).replace(/\s+/g, " ").trim();
+}
+
+function figureLibrary(): string {
+  const file = createRequire(import.meta.url).resolve("plotly.js-cartesian-dist-min");
+  return readFileSync(file, "utf8").replaceAll("</script", "<\\/script");
+}
+
+function escapeMarkdown(text: string): string {
+  return text.replace(/[\\`*_[\]$<>#]/g, "\\$&");
+}

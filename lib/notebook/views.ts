@@ -1,0 +1,214 @@
+// The tables every notebook needs: a brief, a formulation, the figures behind it, an assessment, cautions, sources.
+
+import type { Assessment } from "../assess/assess.js";
+import { propertyTitles, type NeverCures, type Property, type Verdict } from "../assess/property.js";
+import { propertyNames, type Brief } from "../recipe/brief.js";
+import { composition, type Formulation } from "../recipe/formulation.js";
+import type { Ingredient, IngredientFigures } from "../recipe/ingredient.js";
+import { unitEndingOf, unitLabel } from "../recipe/units.js";
+import type { SourcedValue } from "../result.js";
+import type { TableContent } from "./content.js";
+import { intervalText, numberText } from "./digits.js";
+import { gasText, targetText } from "./phrases.js";
+import { tableOf } from "./table.js";
+
+/** A brief as a table: the printer, the conditions, the targets, what to avoid. */
+export function briefTable(brief: Brief): TableContent {
+  const { light, window, targets } = brief;
+  const engine =
+    light.spectrum === undefined
+      ? `${sourcedText("wavelength_nm", light.wavelength_nm!)}, one wavelength`
+      : `spectrum "${light.spectrum}"`;
+  const rows = [
+    ["light", engine],
+    ["irradiance at the window", sourcedText("irradiance_mWcm2", light.irradiance_mWcm2)],
+    [
+      "layer",
+      `${numberText(brief.layerThickness_um)} µm, cured ${numberText(brief.cureDepthPerLayer)} layers deep`,
+    ],
+    ["window", `${window.film} film, ${sourcedText("filmThickness_um", window.filmThickness_um)}`],
+    ["gas under the film", `${gasText(brief)} at ${numberText(window.gasPressure_Pa / 1000)} kPa`],
+    ["resin temperature", `${numberText(brief.temperature_C)} °C`],
+    [
+      "largest cross-section",
+      `${numberText(brief.crossSection_mm2)} mm², lifted at ${numberText(brief.liftSpeed_mms)} mm/s`,
+    ],
+    ...propertyNames.flatMap((name) => {
+      const target = targets[name];
+      return target === undefined
+        ? []
+        : [[`target: ${propertyTitles[name]}`, `${targetText(target)} ${unitLabel(name)}`]];
+    }),
+    ...brief.avoid.map(({ ingredient, hazard, reason }) => [`avoid: ${ingredient ?? hazard}`, reason]),
+  ];
+  return tableOf({ caption: `The brief: ${brief.title}`, rows: rows.map(([what, is]) => ({ what, is })) });
+}
+
+/** A formulation as a table: by mass, per hundred parts of liquid, by volume, as a concentration. */
+export function formulationTable(formulation: Formulation): TableContent {
+  const { density_gcm3, rows } = composition(formulation);
+  return tableOf({
+    caption: `The formulation: ${formulation.title}. Density ${numberText(density_gcm3)} g/cm³ with volumes taken as additive`,
+    rows: rows.map(({ ingredient, massFraction, partsPerHundred, volumeFraction, concentration_molL }) => ({
+      ingredient: ingredient.id,
+      name: ingredient.name,
+      role: ingredient.role,
+      mass_pct: 100 * massFraction,
+      partsPerHundred,
+      volume_pct: 100 * volumeFraction,
+      concentration_molL,
+    })),
+    columns: [
+      { key: "ingredient" },
+      { key: "name" },
+      { key: "role" },
+      { key: "mass_pct", name: "mass" },
+      { key: "partsPerHundred", name: "per 100 of liquid", digits: 3 },
+      { key: "volume_pct", name: "volume" },
+      { key: "concentration_molL", digits: 3 },
+    ],
+  });
+}
+
+/** One row for each sourced figure of the ingredients of a formulation: for tables, frames and counts. */
+export function figureRows(formulation: Formulation): FigureRow[] {
+  return formulation.components.flatMap(({ ingredient }) =>
+    figureFields.flatMap((field) => {
+      const figure = ingredient[field];
+      if (figure === undefined) return [];
+      const lot = ingredient.lot?.measured.includes(field) ? ` (lot ${ingredient.lot.id})` : "";
+      return [
+        {
+          ingredient: ingredient.id + lot,
+          figure: nameOf(field),
+          value: sourcedText(field, figure),
+          status: figure.status,
+          source: figure.source,
+        },
+      ];
+    }),
+  );
+}
+
+/** A figure of an ingredient as text: value with its standard uncertainty and unit, the ground it stands on, its source. */
+export interface FigureRow {
+  readonly ingredient: string;
+  readonly figure: string;
+  readonly value: string;
+  readonly status: string;
+  readonly source: string;
+}
+
+/** An assessment as a table: each property with its interval, its target and the verdict. */
+export function assessmentTable(assessment: Assessment): TableContent {
+  const verdicts = new Map(assessment.verdicts.map((verdict) => [verdict.property, verdict]));
+  return tableOf({
+    caption: `Assessment of ${assessment.formulation} under ${assessment.brief}: value and ${numberText(100 * assessment.level)} % interval from ${assessment.draws} draws`,
+    rows: propertyNames.map((name) => {
+      const property = assessment.properties[name];
+      const verdict = verdicts.get(name);
+      return {
+        property: property.title,
+        unit: property.unit,
+        value: valueText(property),
+        target: verdict === undefined ? null : targetText(verdict.target),
+        verdict: verdict === undefined ? null : verdictText(verdict),
+      };
+    }),
+  });
+}
+
+/** Properties as a table: each with its interval, unit and level. */
+export function propertyTable(caption: string, properties: readonly (Property | NeverCures)[]): TableContent {
+  return tableOf({
+    caption,
+    rows: properties.map((property) => ({
+      property: property.title,
+      unit: property.unit,
+      value: valueText(property),
+      interval: property.outcome === "value" ? `${numberText(100 * property.level)} %` : null,
+    })),
+  });
+}
+
+/** What to know before using the numbers, one warning a row. */
+export function warningTable({ warnings }: { warnings: Assessment["warnings"] }): TableContent {
+  const said =
+    warnings.length > 0 ? warnings : [{ code: "nothing", message: "No warning for these numbers." }];
+  const rows = said.map(({ code, message }) => ({
+    about: code.replaceAll("-", " "),
+    "what to know": message,
+  }));
+  const columns = [{ key: "about" }, { key: "what to know", name: "what to know" }];
+  return tableOf({
+    caption: "What to know before using these numbers",
+    rows,
+    columns,
+  });
+}
+
+/** The hazard statements of what is in the bottle; where nobody has looked, it says so. */
+export function hazardTable(formulation: Formulation): TableContent {
+  return tableOf({
+    caption:
+      "Hazard statements known for the ingredients. A screening: the suppliers' safety data sheets decide",
+    rows: formulation.components.map(({ ingredient }) => ({
+      ingredient: ingredient.id,
+      "CAS number": ingredient.cas ?? "none: generic",
+      statements: hazardText(ingredient),
+      note: ingredient.note ?? null,
+    })),
+    columns: [
+      { key: "ingredient" },
+      { key: "CAS number", name: "CAS number" },
+      { key: "statements" },
+      { key: "note", align: "left" },
+    ],
+  });
+}
+
+/** The sources this run used, each with what it is the source of and the ground it stands on. */
+export function sourceTable(sources: readonly string[]): TableContent {
+  return tableOf({
+    caption: "Sources of the figures this page used",
+    rows: sources.map((line) => {
+      const [, figure, source, status] = /^(.*?): (.*) \(([^()]*)\)$/s.exec(line)!;
+      return { figure, status, source };
+    }),
+  });
+}
+
+/** A property as text without its unit: "450 (300 to 610)", or "never cures". */
+export function valueText(property: Property | NeverCures): string {
+  return property.outcome === "value" ? intervalText(property) : "never cures";
+}
+
+/** A verdict as text with its share of draws: "meets (98 % of draws)". */
+export function verdictText({ outcome, share }: Verdict): string {
+  return `${outcome} (${Math.round(100 * share)} % of draws)`;
+}
+
+function sourcedText(field: string, { value, u }: SourcedValue): string {
+  const unit = unitLabel(field);
+  const digits = u > 0 ? Math.max(2, Math.ceil(Math.log10(Math.abs(value) / u)) + 2) : 4;
+  return `${numberText(value, Math.min(digits, 7))} ± ${numberText(u, 2)}${unit === "" ? "" : ` ${unit}`}`;
+}
+
+function nameOf(field: keyof IngredientFigures): string {
+  const ending = unitEndingOf(field);
+  const bare = ending === undefined ? field : field.slice(0, -ending.length - 1);
+  return bare.replace(/([A-Z])/g, " $1").toLowerCase();
+}
+
+function hazardText({ hazards }: Ingredient): string {
+  return hazards === undefined ? "not checked" : hazards.map(({ code }) => code).join(", ");
+}
+
+const figureFields: readonly (keyof IngredientFigures)[] = [
+  "molarMass_gmol",
+  "density_gcm3",
+  "viscosity_mPas",
+  "viscosityActivation_K",
+  "homopolymerGlassTransition_C",
+  "radicalsPerPhoton",
+];

@@ -1,0 +1,139 @@
+// Opens the pages of a rendered folder in a browser, wide and narrow, light and dark, and prints them.
+// node test/browser/page.mjs [folder, default rendered] [--shots <folder for pictures>]
+/* global document, innerWidth */
+
+import { mkdirSync, readFileSync, readdirSync, writeFileSync } from "node:fs";
+import { createRequire } from "node:module";
+import path from "node:path";
+import { pathToFileURL } from "node:url";
+import { chromium } from "playwright-core";
+
+const words = process.argv.slice(2);
+const shotsAt = words.indexOf("--shots");
+const shots = shotsAt === -1 ? undefined : words.splice(shotsAt, 2)[1];
+const folder = path.resolve(words[0] ?? "rendered");
+const axe = readFileSync(createRequire(import.meta.url).resolve("axe-core"), "utf8");
+const views = [
+  { width: 1280, colorScheme: "light" },
+  { width: 1280, colorScheme: "dark" },
+  { width: 360, colorScheme: "light" },
+  { width: 360, colorScheme: "dark" },
+];
+
+let passed = 0;
+let failed = 0;
+const check = (what, met, found = "") => {
+  if (met) return void passed++;
+  failed++;
+  console.log(`FAILED ${what} ${found}`.trim());
+};
+
+const browser = await chromium.launch({
+  executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
+  args: [
+    "--no-sandbox",
+    "--disable-gpu",
+    "--disable-quic",
+    "--no-first-run",
+    "--disable-background-networking",
+    "--disable-component-update",
+    "--disable-sync",
+  ],
+});
+const files = readdirSync(folder).filter((name) => name.endsWith(".html"));
+check(`${folder} has pages`, files.length > 0);
+if (shots !== undefined) mkdirSync(shots, { recursive: true });
+try {
+  for (const file of files) {
+    for (const view of views) await checkView(file, view);
+    await checkWithoutScript(file);
+  }
+} finally {
+  await browser.close();
+}
+console.log(`${passed} passed, ${failed} failed`);
+process.exitCode = failed === 0 ? 0 : 1;
+
+async function checkView(file, { width, colorScheme }) {
+  const name = `${file} at ${width} px, ${colorScheme}`;
+  const context = await browser.newContext({ viewport: { width, height: 800 }, colorScheme });
+  const page = await context.newPage();
+  const troubles = [];
+  const requests = [];
+  page.on("console", (message) => {
+    if (["error", "warning"].includes(message.type())) troubles.push(message.text());
+  });
+  page.on("pageerror", (error) => troubles.push(error.message));
+  page.on("dialog", (dialog) => {
+    troubles.push(`dialog ${dialog.message()}`);
+    void dialog.dismiss();
+  });
+  const address = pathToFileURL(path.join(folder, file)).href;
+  page.on("request", (request) => {
+    if (request.url() !== address && !request.url().startsWith("data:")) requests.push(request.url());
+  });
+  await page.goto(address);
+
+  const figures = await page.locator("figure.drawn").count();
+  const drawn = await page.locator("figure.drawn .plot:has(svg.main-svg)").count();
+  check(`${name}: every figure is drawn`, figures === drawn, `${drawn} of ${figures}`);
+  const wide = await page.evaluate(() => document.documentElement.scrollWidth - innerWidth);
+  check(`${name}: nothing is wider than the page`, wide <= 0, `${wide} px`);
+  const tooWide = await page.evaluate(
+    () =>
+      [...document.querySelectorAll("figure.drawn svg.main-svg")].filter(
+        (svg) => svg.getBoundingClientRect().right > innerWidth,
+      ).length,
+  );
+  check(`${name}: figures fit`, tooWide === 0, `${tooWide} do not`);
+
+  await page.evaluate(() => document.querySelectorAll("details").forEach((details) => (details.open = true)));
+  await page.waitForTimeout(100);
+  await page.evaluate(axe);
+  const violations = await page.evaluate(async () => {
+    const result = await globalThis.axe.run();
+    return result.violations
+      .filter(({ impact }) => ["serious", "critical"].includes(impact))
+      .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html.slice(0, 120)).join(" | ")}`);
+  });
+  check(`${name}: accessible`, violations.length === 0, violations.join("\n  "));
+  await page.evaluate(() =>
+    document.querySelectorAll("details").forEach((details) => (details.open = false)),
+  );
+
+  await page.keyboard.press("Tab");
+  const first = await page.evaluate(() => document.activeElement?.className);
+  check(`${name}: the first stop of the keyboard skips to the text`, first === "skip", first);
+  if (shots !== undefined) {
+    await page.evaluate(() => document.activeElement?.blur());
+    await page.screenshot({
+      path: path.join(shots, `${path.basename(file, ".html")}-${width}-${colorScheme}.png`),
+      fullPage: true,
+    });
+  }
+
+  const pdf = await page.pdf({ preferCSSPageSize: true, printBackground: true });
+  check(
+    `${name}: prints`,
+    pdf.subarray(0, 5).toString() === "%PDF-" && pdf.length > 2000,
+    `${pdf.length} bytes`,
+  );
+  check(`${name}: no error in the console`, troubles.length === 0, troubles.join("\n  "));
+  check(`${name}: no request leaves the page`, requests.length === 0, requests.join("\n  "));
+  if (shots !== undefined && width === 1280) {
+    writeFileSync(path.join(shots, `${path.basename(file, ".html")}-${colorScheme}.pdf`), pdf);
+  }
+  await context.close();
+}
+
+async function checkWithoutScript(file) {
+  const context = await browser.newContext({ javaScriptEnabled: false });
+  const page = await context.newPage();
+  await page.goto(pathToFileURL(path.join(folder, file)).href);
+  const figures = await page.locator("figure.drawn").count();
+  const seen = await page.locator("figure.drawn:has(noscript p) figcaption .name:visible").count();
+  const tables = await page.locator("figure.drawn details.data table").count();
+  check(`${file} without scripts: captions stand`, seen === figures, `${seen} of ${figures}`);
+  check(`${file} without scripts: tables stand`, tables === figures, `${tables} of ${figures}`);
+  await context.close();
+}

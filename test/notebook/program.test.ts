@@ -1,0 +1,232 @@
+import { spawn } from "node:child_process";
+import {
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readFileSync,
+  readdirSync,
+  rmSync,
+  writeFileSync,
+} from "node:fs";
+import { tmpdir } from "node:os";
+import path from "node:path";
+import { describe, expect, it, onTestFinished, vi } from "vitest";
+import { embed } from "../../lib/notebook/content.js";
+import { start } from "../../lib/notebook/program.js";
+import { scratchFolder, writeNotebook } from "./scratch.js";
+
+const figure = embed({
+  kind: "figure",
+  caption: "A line",
+  alternativeText: "It rises.",
+  data: [{ x: [1, 2], y: [3, 4] }],
+  layout: {},
+  table: { kind: "table", caption: "Numbers", columns: [{ name: "x", align: "right" }], rows: [[1], [2]] },
+});
+
+const twoNotebooks = {
+  "02-light.ipynb": [
+    `md: # Light\n\nHow deep.`,
+    `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(figure)})`,
+  ],
+  "01-flow.ipynb": [
+    `md: # Flow\n\nHow fast.`,
+    `import { readFileSync } from "fs";\nconsole.log(readFileSync(process.env.RESINWRIGHT_BRIEF!, "utf8"))`,
+    `console.log(process.env.RESINWRIGHT_BRIEF, process.env.RESINWRIGHT_RECORDS, process.cwd())`,
+  ],
+};
+
+const workbench = (notebooks: Record<string, string[]>, brief = `{"name":"thin walls"}`) => {
+  const folder = scratchFolder();
+  mkdirSync(path.join(folder, "notebooks"));
+  mkdirSync(path.join(folder, "data", "briefs"), { recursive: true });
+  writeFileSync(path.join(folder, "data", "briefs", "flow-cell.json"), brief);
+  for (const [name, cells] of Object.entries(notebooks))
+    writeNotebook(cells, path.join(folder, "notebooks"), name);
+  return folder;
+};
+
+const run = async (folder: string, ...words: string[]) => {
+  const printed: string[] = [];
+  const errors: string[] = [];
+  const code = await start({
+    words,
+    folder,
+    print: (line) => printed.push(line),
+    printError: (line) => errors.push(line),
+  });
+  return { code, printed: printed.join("\n"), errors: errors.join("\n") };
+};
+
+const rendered = (folder: string, name: string) => readFileSync(path.join(folder, "rendered", name), "utf8");
+
+describe("start", () => {
+  it("leaves a page a notebook and an index, and says where", async () => {
+    const folder = workbench(twoNotebooks);
+    const { code, printed, errors } = await run(folder);
+    expect(errors).toBe("");
+    expect(code).toBe(0);
+    expect(printed).toMatch(/^01-flow {2}cell 2 of 2 {2}\d+\.\d s$/m);
+    expect(printed).toMatch(/^02-light {2}done {2}\d+\.\d s$/m);
+    expect(printed).toMatch(
+      /Pages:\n {2}rendered\/01-flow\.html\n {2}rendered\/02-light\.html\n {2}rendered\/index\.html$/,
+    );
+    expect(readdirSync(path.join(folder, "rendered")).sort()).toEqual([
+      "01-flow.html",
+      "02-light.html",
+      "index.html",
+    ]);
+    const [flow, light, index] = ["01-flow.html", "02-light.html", "index.html"].map((name) =>
+      rendered(folder, name),
+    );
+    expect(flow).toContain("{&quot;name&quot;:&quot;thin walls&quot;}");
+    expect(flow).toContain(">flow-cell.json records notebooks</pre>");
+    expect(light).toContain("<strong>Figure 1.</strong> A line");
+    expect(index).toMatch(
+      /href="01-flow\.html">Flow<\/a><p>How fast\.<\/p><\/li>\n<li><a href="02-light\.html">Light</,
+    );
+    const version = (JSON.parse(readFileSync("lib/package.json", "utf8")) as { version: string }).version;
+    for (const page of [flow, light, index]) {
+      expect(page).toMatch(
+        new RegExp(
+          `Brief flow-cell\\.json · run \\d{4}-\\d\\d-\\d\\d · resinwright ${version} · Node ${process.versions.node}<`,
+        ),
+      );
+      expect(page).not.toContain(path.resolve("."));
+    }
+  });
+
+  it("takes the brief it is given", async () => {
+    const folder = workbench({ "01-flow.ipynb": twoNotebooks["01-flow.ipynb"] });
+    writeFileSync(path.join(folder, "other.json"), `{"name":"clear lens"}`);
+    expect((await run(folder, "other.json")).code).toBe(0);
+    expect(rendered(folder, "01-flow.html")).toContain("clear lens");
+    expect(rendered(folder, "01-flow.html")).toContain("<p>Brief other.json");
+  });
+
+  it.each([
+    [
+      "a brief that is not there",
+      ["no.json"],
+      "{}",
+      /^brief no\.json: it cannot be read \(ENOENT\); name a file: npm start -- data/,
+    ],
+    [
+      "a brief that is not JSON",
+      [],
+      "{\n  name: 1\n}",
+      /^brief data\/briefs\/flow-cell\.json: line 2 is not JSON \(.+\)/,
+    ],
+    [
+      "two briefs",
+      ["a.json", "b.json"],
+      "{}",
+      /^npm start: 2 arguments given; it must be one brief; name one file after --$/,
+    ],
+  ])("refuses %s in one line, before anything runs", async (_, words, brief, message) => {
+    const { code, printed, errors } = await run(workbench(twoNotebooks, brief), ...words);
+    expect([code, printed]).toEqual([2, ""]);
+    expect(errors).toMatch(message);
+    expect(errors).not.toContain("\n");
+  });
+
+  it("refuses a folder without notebooks", async () => {
+    const message = "notebooks: no .ipynb file in this folder; start in the folder of the workbench";
+    expect(await run(workbench({}))).toEqual({ code: 2, printed: "", errors: message });
+  });
+
+  it("keeps the old pages, and writes none, if one notebook fails", async () => {
+    const folder = workbench({ "01-a.ipynb": ["1"], "02-b.ipynb": [`throw new Error("no")`] });
+    mkdirSync(path.join(folder, "rendered"));
+    writeFileSync(path.join(folder, "rendered", "01-a.html"), "old");
+    const { code, errors } = await run(folder);
+    expect(code).toBe(1);
+    expect(errors).toMatch(
+      /^notebooks\/02-b\.ipynb, code cell 1 \(throw new Error\("no"\)\): the cell ended with an error\n/,
+    );
+    expect(readdirSync(path.join(folder, "rendered"))).toEqual(["01-a.html"]);
+    expect(rendered(folder, "01-a.html")).toBe("old");
+  });
+
+  it("writes no page if one cannot be rendered", async () => {
+    const folder = workbench({ "01-a.ipynb": ["1"], "02-b.ipynb": ["md: $\\frac$", "1"] });
+    const { code, errors } = await run(folder);
+    expect(code).toBe(1);
+    expect(errors).toMatch(/^notebooks\/02-b\.ipynb, cell 1: formula "\\frac" cannot be set/);
+    expect(existsSync(path.join(folder, "rendered"))).toBe(false);
+  });
+
+  it("replaces no page if one cannot be written", async () => {
+    const folder = workbench({ "01-a.ipynb": ["1"] });
+    mkdirSync(path.join(folder, "rendered", "index.html"), { recursive: true });
+    const { code, errors } = await run(folder);
+    expect(code).toBe(1);
+    expect(errors).toMatch(/EISDIR|ENOTEMPTY|EEXIST|EPERM/);
+    expect(readdirSync(path.join(folder, "rendered")).filter((name) => name.endsWith(".part"))).toEqual([]);
+  });
+});
+
+// The built program, as npm start runs it; npm test builds it first.
+describe("the program itself", () => {
+  const startProgram = (folder: string, environment: Record<string, string> = {}) => {
+    const program = path.resolve("lib/dist/notebook/start.js");
+    const child = spawn(process.execPath, [program], {
+      cwd: folder,
+      env: { ...process.env, ...environment },
+    });
+    let printed = "";
+    let errors = "";
+    child.stdout.on("data", (data: Buffer) => (printed += data.toString()));
+    child.stderr.on("data", (data: Buffer) => (errors += data.toString()));
+    const ended = new Promise<{
+      code: number | null;
+      signal: string | null;
+      printed: string;
+      errors: string;
+    }>((resolve) => child.on("close", (code, signal) => resolve({ code, signal, printed, errors })));
+    return { child, ended };
+  };
+
+  it("ends with the exit code", async () => {
+    const good = await startProgram(workbench({ "01-a.ipynb": ["1"] })).ended;
+    expect(good).toMatchObject({ code: 0, errors: "" });
+    expect(good.printed).toContain("rendered/01-a.html");
+    const bad = await startProgram(workbench({ "01-a.ipynb": ["console.assert(false)"] })).ended;
+    expect(bad.code).toBe(1);
+    expect(bad.errors).toContain("Assertion failed");
+    expect(await startProgram(workbench({})).ended).toMatchObject({ code: 2, printed: "" });
+  });
+
+  it("takes its kernels and their folders with it when it is interrupted", async () => {
+    const folder = workbench({
+      "01-a.ipynb": [
+        `import { writeFileSync } from "fs";\nwriteFileSync("pid", String(process.pid)); for (;;) {}`,
+      ],
+    });
+    const temporary = mkdtempSync(path.join(tmpdir(), "start-"));
+    onTestFinished(() => rmSync(temporary, { recursive: true }));
+    const { child, ended } = startProgram(folder, { TMPDIR: temporary });
+    const pidFile = path.join(folder, "notebooks", "pid");
+    const pid = await vi.waitUntil(
+      () => existsSync(pidFile) && Number(readFileSync(pidFile, "utf8")),
+      patience,
+    );
+    expect(readdirSync(temporary)).toHaveLength(1);
+    child.kill("SIGINT");
+    expect(await ended).toMatchObject({ code: null, signal: "SIGINT" });
+    expect(readdirSync(temporary)).toEqual([]);
+    await vi.waitUntil(() => hasEnded(pid), patience);
+    expect(readdirSync(folder)).not.toContain("rendered");
+  });
+});
+
+const patience = { timeout: 30_000, interval: 50 };
+
+function hasEnded(pid: number): boolean {
+  try {
+    process.kill(pid, 0);
+    return false;
+  } catch {
+    return true;
+  }
+}
