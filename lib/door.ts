@@ -32,12 +32,14 @@ export function checkNumber(value: unknown, rule: NumberRule): number {
 }
 
 /** Checks every number of `input` named in `rules`; `where` stands before each message. */
-export function checkNumbers<K extends string>(
+export function checkNumbers<I extends object>(
   where: string,
-  input: Readonly<Record<K, unknown>>,
-  rules: Readonly<Record<K, Omit<NumberRule, "where" | "field">>>,
+  input: I,
+  rules: { readonly [F in keyof I]?: Omit<NumberRule, "where" | "field"> },
 ): void {
-  for (const field of Object.keys(rules) as K[]) checkNumber(input[field], { where, field, ...rules[field] });
+  for (const field of Object.keys(rules) as (keyof I & string)[]) {
+    checkNumber(input[field], { where, field, ...rules[field] });
+  }
 }
 
 export const positive = { min: 0, above: true } as const;
@@ -83,7 +85,7 @@ export function show(value: unknown): string {
     return JSON.stringify(value.length > 60 ? `${value.slice(0, 57)}...` : value);
   if (typeof value === "number" || typeof value === "boolean" || value === null) return String(value);
   if (value === undefined) return "missing";
-  return Array.isArray(value) ? "a list" : `a ${typeof value}`;
+  return Array.isArray(value) ? "a list" : typeof value === "object" ? "an object" : `a ${typeof value}`;
 }
 
 function describeRange({ min = -Infinity, max = Infinity, above }: NumberRule): string {

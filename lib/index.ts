@@ -60,6 +60,7 @@ export {
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
 export { readNumberTable } from "./recipe/table.js";
 
+export * from "./numerics.js";
 export * from "./models/viscosity.js";
 export * from "./models/light.js";
 export * from "./models/cure.js";

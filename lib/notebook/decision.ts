@@ -12,6 +12,19 @@ import { tableOf } from "./table.js";
  * @param input - The case decided on; `from`, the notebook; the `statement`; `figures`, numbers or short text with units in
  * their names.
  * @throws InputError when the statement is empty or a figure is not finite; outside a notebook.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { decide } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const cell = () => decide({
+ *   work,
+ *   from: "02-viscosity-and-ratio",
+ *   statement: "Mix six parts of oligomer with four of diluent.",
+ *   figures: { share: 0.6, viscosity_mPas: 400 },
+ * });
+ * typeof cell; // → "function"
+ * ```
  */
 export function decide({
   work,

@@ -29,7 +29,15 @@ export {
 } from "./table.js";
 export { intervalText, numberText } from "./digits.js";
 
-export { gasText, lightText, targetBand, targetRegion, targetText, windowText } from "./phrases.js";
+export {
+  gasText,
+  lightText,
+  targetBand,
+  targetRegion,
+  targetText,
+  windowText,
+  withinText,
+} from "./phrases.js";
 export {
   assessmentTable,
   briefTable,

@@ -19,6 +19,15 @@ import { shareFigure } from "./figure/share.js";
 /**
  * Every property with a target, as a multiple of the target's limit (the upper one where there are two).
  * @throws InputError when the brief sets no target.
+ * @example
+ * ```ts
+ * import { assess } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { targetFigure } from "resinwright/notebook";
+ * const figure = targetFigure(assess(openBrief("data/briefs/flow-cell.json")));
+ * figure.caption; // → "Each property against its target. flow-cell-a under flow-cell."
+ * figure.table.rows[2][4]; // → "at most 1"
+ * ```
  */
 export function targetFigure(assessment: Assessment): FigureContent {
   const rows = assessment.verdicts.flatMap(
@@ -47,19 +56,53 @@ export function targetFigure(assessment: Assessment): FigureContent {
   });
 }
 
-/** The target that is hardest to call; viscosity where the brief sets no target. */
+/**
+ * The target that is hardest to call; viscosity where the brief sets no target.
+ * @example
+ * ```ts
+ * import { assess } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { hardestToCall } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const brief = { ...work.brief, targets: { deadZone_um: { min: 5, max: 50 } } };
+ * const property = hardestToCall(assess({ ...work, brief }));
+ * property.title; // → "dead-zone thickness"
+ * ```
+ */
 export function hardestToCall({ verdicts, properties }: Assessment): Property | NeverCures {
   const [hardest] = [...verdicts].sort((a, b) => Math.abs(a.share - 0.5) - Math.abs(b.share - 0.5));
   return properties[hardest?.property ?? "viscosity_mPas"];
 }
 
-/** Which inputs carry the doubt in a property, the eight largest. */
+/**
+ * Which inputs carry the doubt in a property, the eight largest.
+ * @example
+ * ```ts
+ * import { viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { doubtFigure } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const figure = doubtFigure(viscosityOf(work), "flow-cell-a at 28 °C");
+ * figure.caption; // → "What carries the doubt in the viscosity at print temperature. flow-cell-a at 28 °C."
+ * ```
+ */
 export function doubtFigure(property: Property | NeverCures, conditions: string): FigureContent {
   const rows = property.doubt.slice(0, 8);
   return shareFigure({ caption: `What carries the doubt in the ${property.title}`, conditions, rows });
 }
 
-/** Readings of two liquids' blends with the fitted mixing rule and the log-ideal one. */
+/**
+ * Readings of two liquids' blends with the fitted mixing rule and the log-ideal one.
+ * @example
+ * ```ts
+ * import { readShelf } from "resinwright/files";
+ * import { blendFigure } from "resinwright/notebook";
+ * const readings = readShelf(["data"]).readings.find(({ id }) => id === "udma-iboa-25C")!;
+ * const figure = blendFigure(readings);
+ * figure.table.columns[1].name; // → "mass fraction of UDMA"
+ * figure.table.rows[0]; // → ["readings", 1, 9640]
+ * ```
+ */
 export function blendFigure(readings: BlendReadings): FigureContent {
   const [first, second] = readings.pair;
   const { G, basis } = interactionFrom(readings);
@@ -87,7 +130,18 @@ export function blendFigure(readings: BlendReadings): FigureContent {
   });
 }
 
-/** The pull of the brief's largest cross-section against the gap it is lifted from, and the most the window can hold. */
+/**
+ * The pull of the brief's largest cross-section against the gap it is lifted from, and the most the window can hold.
+ * @example
+ * ```ts
+ * import { deadZoneOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { liftFigure } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const figure = liftFigure(work, deadZoneOf(work));
+ * figure.alternativeText.includes("more than one atmosphere holds (32.4 N)"); // → true
+ * ```
+ */
 export function liftFigure(work: Case, zone: DeadZoneEstimate): FigureContent {
   const { crossSection_mm2, liftSpeed_mms, temperature_C } = work.brief;
   const { value, low, high, level } = viscosityOf(work);

@@ -12,7 +12,18 @@ import { intervalText, numberText } from "./digits.js";
 import { gasText, targetText } from "./phrases.js";
 import { tableOf } from "./table.js";
 
-/** A brief as a table: the printer, the conditions, the targets, what to avoid. */
+/**
+ * A brief as a table: the printer, the conditions, the targets, what to avoid.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { briefTable } from "resinwright/notebook";
+ * const { brief } = openBrief("data/briefs/flow-cell.json");
+ * const table = briefTable(brief);
+ * table.rows[2]; // → ["layer", "50 µm, cured 1.5 layers deep"]
+ * table.rows[7]; // → ["target: viscosity at print temperature", "100 to 600 mPa s"]
+ * ```
+ */
 export function briefTable(brief: Brief): TableContent {
   const { light, window, targets } = brief;
   const engine =
@@ -44,7 +55,18 @@ export function briefTable(brief: Brief): TableContent {
   return tableOf({ caption: `The brief: ${brief.title}`, rows: rows.map(([what, is]) => ({ what, is })) });
 }
 
-/** A formulation as a table: by mass, per hundred parts of liquid, by volume, as a concentration. */
+/**
+ * A formulation as a table: by mass, per hundred parts of liquid, by volume, as a concentration.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { formulationTable } from "resinwright/notebook";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const table = formulationTable(formulation);
+ * table.columns[3]; // → { name: "mass", unit: "%", align: "right" }
+ * table.rows[1].slice(0, 4); // → ["IBOA", "isobornyl acrylate", "diluent", 30]
+ * ```
+ */
 export function formulationTable(formulation: Formulation): TableContent {
   const { density_gcm3, rows } = composition(formulation);
   return tableOf({
@@ -70,7 +92,20 @@ export function formulationTable(formulation: Formulation): TableContent {
   });
 }
 
-/** One row for each sourced figure of the ingredients of a formulation: for tables, frames and counts. */
+/**
+ * One row for each sourced figure of the ingredients of a formulation: for tables, frames and counts.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { figureRows, frameOf } from "resinwright/notebook";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const frame = frameOf(figureRows(formulation));
+ * frame.columns; // → ["ingredient", "figure", "value", "status", "source"]
+ * // What to look up first: every figure that stands on memory alone.
+ * const remembered = frame.query(frame.column("status").eq("from memory"));
+ * remembered.shape[1]; // → 5
+ * ```
+ */
 export function figureRows(formulation: Formulation): FigureRow[] {
   return formulation.components.flatMap(({ ingredient }) =>
     figureFields.flatMap((field) => {
@@ -99,7 +134,18 @@ export interface FigureRow {
   readonly source: string;
 }
 
-/** An assessment as a table: each property with its interval, its target and the verdict. */
+/**
+ * An assessment as a table: each property with its interval, its target and the verdict.
+ * @example
+ * ```ts
+ * import { assess } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { assessmentTable } from "resinwright/notebook";
+ * const table = assessmentTable(assess(openBrief("data/briefs/flow-cell.json")));
+ * table.columns.map(({ name }) => name); // → ["property", "unit", "value", "target", "verdict"]
+ * table.rows[0][3]; // → "100 to 600"
+ * ```
+ */
 export function assessmentTable(assessment: Assessment): TableContent {
   const verdicts = new Map(assessment.verdicts.map((verdict) => [verdict.property, verdict]));
   return tableOf({
@@ -118,7 +164,18 @@ export function assessmentTable(assessment: Assessment): TableContent {
   });
 }
 
-/** Properties as a table: each with its interval, unit and level. */
+/**
+ * Properties as a table: each with its interval, unit and level.
+ * @example
+ * ```ts
+ * import { penetrationDepthOf, viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { propertyTable } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const table = propertyTable("Before mixing", [viscosityOf(work), penetrationDepthOf(work)]);
+ * table.rows.map(([property]) => property); // → ["viscosity at print temperature", "penetration depth"]
+ * ```
+ */
 export function propertyTable(caption: string, properties: readonly (Property | NeverCures)[]): TableContent {
   return tableOf({
     caption,
@@ -131,7 +188,18 @@ export function propertyTable(caption: string, properties: readonly (Property | 
   });
 }
 
-/** What to know before using the numbers, one warning a row. */
+/**
+ * What to know before using the numbers, one warning a row.
+ * @example
+ * ```ts
+ * import { viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { warningTable } from "resinwright/notebook";
+ * const viscosity = viscosityOf(openBrief("data/briefs/flow-cell.json"));
+ * warningTable(viscosity).rows[0][0]; // → "interaction unmeasured"
+ * warningTable({ warnings: [] }).rows; // → [["nothing", "No warning for these numbers."]]
+ * ```
+ */
 export function warningTable({ warnings }: { warnings: Assessment["warnings"] }): TableContent {
   const said =
     warnings.length > 0 ? warnings : [{ code: "nothing", message: "No warning for these numbers." }];
@@ -147,7 +215,18 @@ export function warningTable({ warnings }: { warnings: Assessment["warnings"] })
   });
 }
 
-/** The hazard statements of what is in the bottle; where nobody has looked, it says so. */
+/**
+ * The hazard statements of what is in the bottle; where nobody has looked, it says so.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { hazardTable } from "resinwright/notebook";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const table = hazardTable(formulation);
+ * table.rows[1].slice(0, 3); // → ["IBOA", "5888-33-5", "H317, H319, H335, H410"]
+ * table.rows[4].slice(0, 3); // → ["BBOT", "7128-64-5", "not checked"]
+ * ```
+ */
 export function hazardTable(formulation: Formulation): TableContent {
   return tableOf({
     caption:
@@ -167,7 +246,15 @@ export function hazardTable(formulation: Formulation): TableContent {
   });
 }
 
-/** The sources this run used, each with what it is the source of and the ground it stands on. */
+/**
+ * The sources this run used, each with what it is the source of and the ground it stands on.
+ * @example
+ * ```ts
+ * import { sourceTable } from "resinwright/notebook";
+ * const table = sourceTable(["density of IBOA: pycnometer (25 mL) at 25 °C (measured here)"]);
+ * table.rows; // → [["density of IBOA", "measured here", "pycnometer (25 mL) at 25 °C"]]
+ * ```
+ */
 export function sourceTable(sources: readonly string[]): TableContent {
   return tableOf({
     caption: "Sources of the figures this page used",
@@ -178,12 +265,33 @@ export function sourceTable(sources: readonly string[]): TableContent {
   });
 }
 
-/** A property as text without its unit: "450 (300 to 610)", or "never cures". */
+/**
+ * A property as text without its unit: "450 (300 to 610)", or "never cures".
+ * @example
+ * ```ts
+ * import { viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { valueText } from "resinwright/notebook";
+ * const viscosity = viscosityOf(openBrief("data/briefs/flow-cell.json"));
+ * valueText({ ...viscosity, value: 447.3, low: 301.2, high: 612.9 }); // → "450 (300 to 610)"
+ * ```
+ */
 export function valueText(property: Property | NeverCures): string {
   return property.outcome === "value" ? intervalText(property) : "never cures";
 }
 
-/** A verdict as text with its share of draws: "meets (98 % of draws)". */
+/**
+ * A verdict as text with its share of draws: "meets (98 % of draws)".
+ * @example
+ * ```ts
+ * import { calibrate, verdictOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { verdictText } from "resinwright/notebook";
+ * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
+ * const verdict = verdictOf({ ...work, property: "viscosity_mPas", target: { max: 50 } });
+ * verdictText(verdict); // → "fails (0 % of draws)"
+ * ```
+ */
 export function verdictText({ outcome, share }: Verdict): string {
   return `${outcome} (${Math.round(100 * share)} % of draws)`;
 }

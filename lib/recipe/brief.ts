@@ -16,6 +16,7 @@ export type PropertyName =
   | "deadZone_um"
   | "inductionTime_s";
 
+/** Every property that is assessed, in the order tables show them. */
 export const propertyNames: readonly PropertyName[] = [
   "viscosity_mPas",
   "penetrationDepth_um",
@@ -80,6 +81,14 @@ export interface Brief {
  * Reads a brief file.
  * @throws InputError with file, line and field; when the light has both a spectrum and a wavelength or neither; when a
  * target's `min` is above its `max`.
+ * @example
+ * ```ts
+ * import { readFileSync } from "node:fs";
+ * import { parseJson, readBrief } from "resinwright";
+ * const file = "data/briefs/flow-cell.json";
+ * const brief = readBrief(parseJson(readFileSync(file, "utf8"), file));
+ * brief.targets.viscosity_mPas; // → { min: 100, max: 600 }
+ * ```
  */
 export function readBrief(document: JsonDocument): Brief {
   const brief = readDocument(briefSchema, document);

@@ -1,6 +1,6 @@
 // The constants that belong to acrylate and methacrylate resins as a class, not to one ingredient; all of them uncertain.
 
-import { z } from "zod";
+import type { z } from "zod";
 import type { SourcedValue } from "../result.js";
 import { readDocument, strict, type JsonDocument } from "./document.js";
 import { sourced } from "./sourced.js";
@@ -25,7 +25,18 @@ export interface ResinConstants {
   readonly unmeasuredInteraction: SourcedValue;
 }
 
-/** Reads the constants file. @throws InputError with file, line and field. */
+/**
+ * Reads the constants file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { readFileSync } from "node:fs";
+ * import { parseJson, readConstants } from "resinwright";
+ * const file = "data/constants/resin.json";
+ * const { unmeasuredInteraction } = readConstants(parseJson(readFileSync(file, "utf8"), file));
+ * unmeasuredInteraction.value; // → 0
+ * ```
+ */
 export function readConstants(document: JsonDocument): ResinConstants {
   return readDocument(constantsSchema, document);
 }

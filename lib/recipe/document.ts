@@ -15,6 +15,12 @@ export interface JsonDocument {
 /**
  * Parses JSON strictly: no comments, no trailing commas, no key given twice.
  * @throws InputError with file, line and column.
+ * @example
+ * ```ts
+ * import { parseJson } from "resinwright";
+ * const document = parseJson('{ "layerThickness_um": 50 }', "brief.json");
+ * document.value; // → { layerThickness_um: 50 }
+ * ```
  */
 export function parseJson(text: string, where: string): JsonDocument {
   let tree: DocumentNode;

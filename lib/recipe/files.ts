@@ -28,6 +28,13 @@ export interface Workbench {
  * Opens a brief with its formulation and its shelf.
  * @param file - Path of the brief; the environment variable `RESINWRIGHT_BRIEF` comes before it.
  * @throws InputError naming file, line and field of whatever cannot be used.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * const { brief, formulation, shelf } = openBrief("data/briefs/flow-cell.json");
+ * [brief.id, formulation.id]; // → ["flow-cell", "flow-cell-a"]
+ * shelf.films.has(brief.window.film); // → true
+ * ```
  */
 export function openBrief(file: string): Workbench {
   const path = process.env["RESINWRIGHT_BRIEF"] ?? file;
@@ -41,6 +48,12 @@ export function openBrief(file: string): Workbench {
  * Reads a shelf from folders laid out as `ingredients/`, `lots/`, `spectra/`, `films/`, `interactions/`, `measurements/` (one JSON file each)
  * and `constants/resin.json`; what a later folder holds comes before the same in an earlier one.
  * @throws InputError when a folder is missing, two files of one folder share an id, or no folder holds the constants.
+ * @example
+ * ```ts
+ * import { readShelf } from "resinwright/files";
+ * const shelf = readShelf(["data"]);
+ * shelf.ingredients.get("IBOA")?.cas; // → "5888-33-5"
+ * ```
  */
 export function readShelf(folders: readonly string[]): Shelf {
   const parts = folders.map(readShelfFolder);
@@ -69,6 +82,13 @@ export function readShelf(folders: readonly string[]): Shelf {
 /**
  * Reads a formulation file and the blends its parts name.
  * @throws InputError naming file, line and field; when blends contain each other in a ring.
+ * @example
+ * ```ts
+ * import { readFormulation, readShelf } from "resinwright/files";
+ * const formulation = readFormulation("data/formulations/flow-cell-a.json", readShelf(["data"]));
+ * formulation.components[0].ingredient.id; // → "UDMA"
+ * formulation.components[0].massFraction; // → 0.55
+ * ```
  */
 export function readFormulation(file: string, shelf: Shelf): Formulation {
   return readNested(resolve(file), shelf, []);
@@ -77,6 +97,16 @@ export function readFormulation(file: string, shelf: Shelf): Formulation {
 /**
  * Reads a CSV file of numbers whose columns are named by field and unit.
  * @throws InputError naming file, row and column; see {@link readNumberTable}.
+ * @example
+ * ```ts
+ * import { mkdtempSync, writeFileSync } from "node:fs";
+ * import { tmpdir } from "node:os";
+ * import { join } from "node:path";
+ * import { readNumberFile } from "resinwright/files";
+ * const file = join(mkdtempSync(join(tmpdir(), "readings-")), "flow.csv");
+ * writeFileSync(file, "# cone and plate\nmassFraction,viscosity_mPas\n0.5,224\n0.4,114\n");
+ * readNumberFile({ file, columns: ["massFraction", "viscosity_mPas"] }).viscosity_mPas; // → [224, 114]
+ * ```
  */
 export function readNumberFile<C extends string>({
   file,

@@ -14,7 +14,17 @@ export interface Film {
   readonly note?: string;
 }
 
-/** Reads a film file. @throws InputError with file, line and field. */
+/**
+ * Reads a film file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readFilm } from "resinwright";
+ * const oxygenPermeability_barrer = { value: 600, u: 100, source: "one permeation cell", status: "measured here" };
+ * const file = { id: "PDMS", name: "poly(dimethylsiloxane)", oxygenPermeability_barrer };
+ * readFilm(parseJson(JSON.stringify(file), "pdms.json")).oxygenPermeability_barrer.value; // → 600
+ * ```
+ */
 export function readFilm(document: JsonDocument): Film {
   return readDocument(filmSchema, document);
 }

@@ -54,7 +54,17 @@ export type FigureReader = (
   figure: "density_gcm3" | "molarMass_gmol",
 ) => number | undefined;
 
-/** Reads a formulation file. @throws InputError with file, line and field. */
+/**
+ * Reads a formulation file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readRecipe } from "resinwright";
+ * const parts = [{ ingredient: "UDMA", mass_pct: 65 }, { ingredient: "IBOA", mass_pct: 35 }];
+ * const recipe = readRecipe(parseJson(JSON.stringify({ id: "two", title: "oligomer and diluent", parts }), "two.json"));
+ * recipe.normalise; // → false
+ * ```
+ */
 export function readRecipe(document: JsonDocument): Recipe {
   return readDocument(recipeSchema, document);
 }
@@ -111,7 +121,16 @@ export function formulate({
   return { id: recipe.id, title: recipe.title, components: merge(components) };
 }
 
-/** Diluents and oligomers are the liquid; initiator, absorber and the like are dissolved or dispersed in it. */
+/**
+ * Diluents and oligomers are the liquid; initiator, absorber and the like are dissolved or dispersed in it.
+ * @example
+ * ```ts
+ * import { isLiquid } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * formulation.components.filter(isLiquid).map(({ ingredient }) => ingredient.id); // → ["UDMA", "IBOA", "TEGDMA"]
+ * ```
+ */
 export function isLiquid({ ingredient }: Component): boolean {
   return ingredient.role === "diluent" || ingredient.role === "oligomer";
 }
@@ -121,6 +140,16 @@ export function isLiquid({ ingredient }: Component): boolean {
  * @param formulation - What is in the bottle.
  * @param read - Where the numbers come from; the stated values unless given.
  * @throws InputError when an ingredient has no density.
+ * @example
+ * ```ts
+ * import { densityOf, formulate } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const shelf = readShelf(["data"]);
+ * const parts = [{ ingredient: "IBOA", mass_pct: 100 }];
+ * const neat = formulate({ recipe: { id: "neat", title: "one diluent", normalise: false, parts }, shelf });
+ * densityOf(neat) === shelf.ingredients.get("IBOA")?.density_gcm3?.value; // → true
+ * densityOf(neat, () => 1.2); // → 1.2
+ * ```
  */
 export function densityOf(formulation: Formulation, read: FigureReader = statedFigure): number {
   let volume_cm3g = 0;
@@ -133,6 +162,15 @@ export function densityOf(formulation: Formulation, read: FigureReader = statedF
  * @param formulation - What is in the bottle.
  * @param read - Where the numbers come from; the stated values unless given.
  * @throws InputError when an ingredient has no density.
+ * @example
+ * ```ts
+ * import { composition } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const { rows } = composition(formulation);
+ * rows.map(({ ingredient }) => ingredient.id); // → ["UDMA", "IBOA", "TEGDMA", "BAPO", "BBOT", "MEHQ"]
+ * rows.reduce((sum, { volumeFraction }) => sum + volumeFraction, 0); // → 1.000000
+ * ```
  */
 export function composition(
   formulation: Formulation,
@@ -159,7 +197,19 @@ export function composition(
   return { density_gcm3, rows };
 }
 
-/** The mass of each ingredient in a batch of `batch_g`. @throws InputError when `batch_g` is not above 0. */
+/**
+ * The mass of each ingredient in a batch of `batch_g`.
+ * @throws InputError when `batch_g` is not above 0.
+ * @example
+ * ```ts
+ * import { batchMasses } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const [udma, iboa] = batchMasses(formulation, { batch_g: 500 });
+ * udma.mass_g; // → 275.0
+ * iboa.mass_g; // → 150.0
+ * ```
+ */
 export function batchMasses(
   formulation: Formulation,
   { batch_g }: { batch_g: number },
@@ -171,7 +221,17 @@ export function batchMasses(
   }));
 }
 
-/** The share of an ingredient, 0 to 1; 0 where it is not in the formulation. */
+/**
+ * The share of an ingredient, 0 to 1; 0 where it is not in the formulation.
+ * @example
+ * ```ts
+ * import { massFractionOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * massFractionOf(formulation, "IBOA"); // → 0.3
+ * massFractionOf(formulation, "HDDA"); // → 0
+ * ```
+ */
 export function massFractionOf(formulation: Formulation, id: string): number {
   return sum(
     formulation.components.filter(({ ingredient }) => ingredient.id === id).map((one) => one.massFraction),
@@ -181,6 +241,13 @@ export function massFractionOf(formulation: Formulation, id: string): number {
 /**
  * The ingredient of a role that there is most of.
  * @throws InputError when the formulation has none of that role.
+ * @example
+ * ```ts
+ * import { largestOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * largestOf(formulation, "photoinitiator").id; // → "BAPO"
+ * ```
  */
 export function largestOf({ id, components }: Formulation, role: Role): Ingredient {
   const [largest] = byMass(components.filter(({ ingredient }) => ingredient.role === role));
@@ -192,6 +259,14 @@ export function largestOf({ id, components }: Formulation, role: Role): Ingredie
 /**
  * The two liquids that there is most of, the thicker one first: the pair whose ratio sets the viscosity.
  * @throws InputError when there are fewer than two liquids or one of them has no viscosity.
+ * @example
+ * ```ts
+ * import { mainPair } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const [thick, thin] = mainPair(formulation);
+ * [thick.id, thin.id]; // → ["UDMA", "IBOA"]
+ * ```
  */
 export function mainPair({ id, components }: Formulation): [thick: Ingredient, thin: Ingredient] {
   const [first, second] = byMass(components.filter(isLiquid));
@@ -213,6 +288,15 @@ export function mainPair({ id, components }: Formulation): [thick: Ingredient, t
 /**
  * The formulation with one ingredient at another share; the others keep their proportions.
  * @throws InputError when the ingredient is not in the formulation or `massFraction` is not from 0 to below 1.
+ * @example
+ * ```ts
+ * import { massFractionOf, withMassFraction } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const darker = withMassFraction(formulation, { id: "BBOT", massFraction: 0.003 });
+ * massFractionOf(darker, "BBOT"); // → 0.003
+ * massFractionOf(darker, "UDMA") / massFractionOf(darker, "IBOA"); // → 1.8333
+ * ```
  */
 export function withMassFraction(
   formulation: Formulation,
@@ -230,6 +314,15 @@ export function withMassFraction(
 /**
  * The formulation with two ingredients shared out anew between them: `share` of their common mass is `id`, the rest `against`.
  * @throws InputError when one of them is not in the formulation or `share` is not from 0 to 1.
+ * @example
+ * ```ts
+ * import { massFractionOf, withRatio } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const thinner = withRatio(formulation, { id: "UDMA", against: "IBOA", share: 0.6 });
+ * massFractionOf(thinner, "UDMA"); // → 0.5100
+ * massFractionOf(thinner, "IBOA"); // → 0.3400
+ * ```
  */
 export function withRatio(
   formulation: Formulation,

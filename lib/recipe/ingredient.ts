@@ -18,6 +18,7 @@ import {
 export type Role =
   "diluent" | "oligomer" | "photoinitiator" | "synergist" | "absorber" | "inhibitor" | "pigment" | "filler";
 
+/** Every role an ingredient can have, liquids first. */
 export const roles: readonly Role[] = [
   "diluent",
   "oligomer",
@@ -78,7 +79,20 @@ export interface Lot {
   readonly measured: IngredientFigures;
 }
 
-/** Reads an ingredient file. @throws InputError with file, line and field. */
+/**
+ * Reads an ingredient file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readIngredient } from "resinwright";
+ * const viscosity_mPas = {
+ *   value: "9 cP", u: "2 cP", temperature_C: "77 °F", source: "supplier's sheet", status: "from memory",
+ * };
+ * const file = { id: "IBOA", name: "isobornyl acrylate", cas: "5888-33-5", role: "diluent", state: "liquid", viscosity_mPas };
+ * const { viscosity_mPas: read } = readIngredient(parseJson(JSON.stringify(file), "iboa.json"));
+ * [read?.value, read?.temperature_C]; // → [9, 25]
+ * ```
+ */
 export function readIngredient(document: JsonDocument): Ingredient {
   const ingredient = readDocument(ingredientSchema, document);
   if (ingredient.cas !== undefined && !hasCasCheckDigit(ingredient.cas)) {
@@ -89,12 +103,37 @@ export function readIngredient(document: JsonDocument): Ingredient {
   return ingredient;
 }
 
-/** Reads a lot file. @throws InputError with file, line and field. */
+/**
+ * Reads a lot file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readLot } from "resinwright";
+ * const viscosity_mPas = {
+ *   value: 8.6, u: 0.2, temperature_C: 25, source: "mean of three readings", status: "measured here",
+ * };
+ * const file = { id: "L-3", ingredient: "IBOA", measured: { viscosity_mPas } };
+ * readLot(parseJson(JSON.stringify(file), "l-3.json")).measured.viscosity_mPas?.value; // → 8.6
+ * ```
+ */
 export function readLot(document: JsonDocument): Lot {
   return readDocument(lotSchema, document);
 }
 
-/** The ingredient as this lot of it was measured: measured figures in place of typical ones, and says which. */
+/**
+ * The ingredient as this lot of it was measured: measured figures in place of typical ones, and says which.
+ * @example
+ * ```ts
+ * import { withLot, type Lot } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const measured: Lot["measured"] = {
+ *   viscosity_mPas: { value: 8.6, u: 0.2, temperature_C: 25, source: "mean of three readings", status: "measured here" },
+ * };
+ * const iboa = withLot(readShelf(["data"]).ingredients.get("IBOA")!, { id: "L-3", ingredient: "IBOA", measured });
+ * iboa.viscosity_mPas?.value; // → 8.6
+ * iboa.lot; // → { id: "L-3", measured: ["viscosity_mPas"] }
+ * ```
+ */
 export function withLot(ingredient: Ingredient, lot: Lot): Ingredient {
   return { ...ingredient, ...lot.measured, lot: { id: lot.id, measured: Object.keys(lot.measured) } };
 }

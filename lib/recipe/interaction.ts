@@ -13,7 +13,17 @@ export interface Interaction {
   readonly temperature_C?: number;
 }
 
-/** Reads an interaction file. @throws InputError with file, line and field. */
+/**
+ * Reads an interaction file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readInteraction } from "resinwright";
+ * const G = { value: -0.9, u: 0.05, source: "fit to seven blends", status: "measured here" };
+ * const file = { pair: ["UDMA", "IBOA"], basis: "mass", G, temperature_C: 25 };
+ * readInteraction(parseJson(JSON.stringify(file), "udma-iboa.json")).G.value; // → -0.9
+ * ```
+ */
 export function readInteraction(document: JsonDocument): Interaction {
   return readDocument(interactionSchema, document);
 }

@@ -22,6 +22,12 @@ export interface Shelf {
 /**
  * The ingredient of that name, as measured on a lot of it where one is named.
  * @throws InputError with the nearest known name; when the lot belongs to another ingredient.
+ * @example
+ * ```ts
+ * import { ingredientOn } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * ingredientOn(readShelf(["data"]), "my script", "IBOA").role; // → "diluent"
+ * ```
  */
 export function ingredientOn(shelf: Shelf, where: string, id: string, lotId?: string): Ingredient {
   const ingredient = lookUp(shelf.ingredients, where, "ingredient", id);
@@ -35,24 +41,64 @@ export function ingredientOn(shelf: Shelf, where: string, id: string, lotId?: st
   return withLot(ingredient, lot);
 }
 
-/** The spectrum of that name. @throws InputError with the nearest known name. */
+/**
+ * The spectrum of that name.
+ * @throws InputError with the nearest known name.
+ * @example
+ * ```ts
+ * import { spectrumOn } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * spectrumOn(readShelf(["data"]), "my script", "led-412").quantity; // → "relativePower"
+ * ```
+ */
 export function spectrumOn(shelf: Shelf, where: string, id: string): Spectrum {
   return lookUp(shelf.spectra, where, "spectrum", id);
 }
 
-/** The film of that name. @throws InputError with the nearest known name. */
+/**
+ * The film of that name.
+ * @throws InputError with the nearest known name.
+ * @example
+ * ```ts
+ * import { filmOn } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * filmOn(readShelf(["data"]), "my script", "PDMS").name; // → "poly(dimethylsiloxane)"
+ * ```
+ */
 export function filmOn(shelf: Shelf, where: string, id: string): Film {
   return lookUp(shelf.films, where, "film", id);
 }
 
-/** The measured interaction of two liquids, in whichever order they are named, or undefined. */
+/**
+ * The measured interaction of two liquids, in whichever order they are named, or undefined.
+ * @example
+ * ```ts
+ * import { interactionFrom, interactionOn, withInteraction } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const shelf = readShelf(["data"]);
+ * const readings = shelf.readings.find(({ id }) => id === "udma-iboa-25C")!;
+ * const measured = withInteraction(shelf, interactionFrom(readings));
+ * interactionOn(measured, "IBOA", "UDMA")?.pair; // → ["UDMA", "IBOA"]
+ * interactionOn(measured, "IBOA", "TEGDMA"); // → undefined
+ * ```
+ */
 export function interactionOn(shelf: Shelf, first: string, second: string): Interaction | undefined {
   return shelf.interactions.find(
     ({ pair: [a, b] }) => (a === first && b === second) || (a === second && b === first),
   );
 }
 
-/** The shelf with one more interaction, in place of an older one of the same pair. */
+/**
+ * The shelf with one more interaction, in place of an older one of the same pair.
+ * @example
+ * ```ts
+ * import { interactionOn, withInteraction } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const G = { value: -0.9, u: 0.05, source: "fit to seven blends", status: "measured here" as const };
+ * const shelf = withInteraction(readShelf(["data"]), { pair: ["UDMA", "IBOA"], basis: "mass", G });
+ * interactionOn(shelf, "UDMA", "IBOA")?.G.value; // → -0.9
+ * ```
+ */
 export function withInteraction(shelf: Shelf, interaction: Interaction): Shelf {
   const older = interactionOn(shelf, ...interaction.pair);
   return { ...shelf, interactions: [...shelf.interactions.filter((one) => one !== older), interaction] };

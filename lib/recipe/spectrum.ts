@@ -22,7 +22,19 @@ export interface Spectrum {
   readonly values: readonly number[];
 }
 
-/** Reads a spectrum file. @throws InputError with file, line and field. */
+/**
+ * Reads a spectrum file.
+ * @throws InputError with file, line and field.
+ * @example
+ * ```ts
+ * import { parseJson, readSpectrum } from "resinwright";
+ * const file = {
+ *   id: "lamp", quantity: "relativePower", title: "the lamp at the window", medium: "spectrometer, calibrated", relativeU: 0.05,
+ *   source: "one reading at the window", status: "measured here", wavelengths_nm: [395, 405, 415], values: [0, 1, 0],
+ * };
+ * readSpectrum(parseJson(JSON.stringify(file), "lamp.json")).wavelengths_nm; // → [395, 405, 415]
+ * ```
+ */
 export function readSpectrum(document: JsonDocument): Spectrum {
   const spectrum = readDocument(spectrumSchema, document);
   const { wavelengths_nm: nodes, values } = spectrum;

@@ -50,13 +50,56 @@ export const fieldUnits: Readonly<Record<string, FieldUnit>> = {
   pct: { label: "%", mathjs: "percent" },
 };
 
+/**
+ * The numeric fields without a unit, and what each means. A fraction runs from 0 to 1; percent stands only in `..._pct`.
+ * Fields such as `value`, `low` or `x` take the unit of what they belong to.
+ */
+export const bareFields: Readonly<Record<string, string>> = {
+  massFraction: "mass of a component over mass of the whole",
+  massFractions: "mass fractions, one a component or a blend",
+  moleFraction: "amount of a component over amount of the whole",
+  moleFractions: "mole fractions, one a component",
+  volumeFraction: "volume of a component over volume of the whole, volumes taken as additive",
+  fractions: "fractions on the basis named beside them",
+  share: "a part of a whole, 0 to 1: of draws, of doubt, of a pair's mass",
+  partsPerHundred: "grams for each hundred grams of diluents and oligomers",
+  functionality: "polymerisable double bonds in a molecule",
+  refractiveIndex: "refractive index at the sodium line",
+  conversion: "double bonds reacted over double bonds at the start",
+  gelConversion: "conversion at which the resin holds as a solid",
+  radicalsPerPhoton: "chain-starting radicals per photon absorbed by the initiator",
+  oxygenPerRadical: "oxygen molecules used per radical started, while oxygen lasts",
+  diffusivityFactor: "factor on the oxygen diffusivity of the two-thirds law",
+  oxygenFraction: "mole fraction of oxygen in a gas",
+  gasOxygenFraction: "mole fraction of oxygen in the gas under the film",
+  cureDepthPerLayer: "cure depth over layer thickness",
+  neverCuresShare: "share of the draws in which the resin never cures",
+  G: "Grunberg–Nissan interaction, on the basis named beside it",
+  unmeasuredInteraction: "Grunberg–Nissan interaction of a pair nobody has measured",
+  lnPrefactor: "A of ln(viscosity / mPa s) = A + B/T",
+  lnPrefactorStandardError: "standard error of A",
+  averageDeviation: "mean of |calculated / measured - 1|",
+  residualStandardDeviation: "of ln viscosity",
+  relativeU: "standard uncertainty as a fraction of the value",
+  u: "standard uncertainty (k = 1), in the unit of the value",
+  level: "probability that an interval holds the value",
+};
+
 /** The ending of a field name (`"um"` of `layerThickness_um`), or undefined where the name carries no unit. */
 export function unitEndingOf(field: string): string | undefined {
   const ending = field.slice(field.lastIndexOf("_") + 1);
   return field.includes("_") && ending in fieldUnits ? ending : undefined;
 }
 
-/** The unit of a field as tables and figures show it: `"µm"` for `layerThickness_um`, `""` for a field without unit. */
+/**
+ * The unit of a field as tables and figures show it: `"µm"` for `layerThickness_um`, `""` for a field without unit.
+ * @example
+ * ```ts
+ * import { unitLabel } from "resinwright";
+ * unitLabel("layerThickness_um"); // → "µm"
+ * unitLabel("massFraction"); // → ""
+ * ```
+ */
 export function unitLabel(field: string): string {
   const ending = unitEndingOf(field);
   return ending === undefined ? "" : fieldUnits[ending]!.label;
