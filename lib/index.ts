@@ -1,7 +1,7 @@
 // The public door of resinwright: everything here runs in Node and in a browser. Reading files is in "resinwright/files".
 
 export { InputError } from "./door.js";
-export type { Interval, SourcedValue, SourceStatus, Warning } from "./result.js";
+export type { Interval, SourcedValue, SourceStatus, UsedSource, Warning } from "./result.js";
 
 export { readQuantity, unitLabel, fieldUnits, type FieldUnit } from "./recipe/units.js";
 export { hasCasCheckDigit, molarMassOfFormula } from "./recipe/identity.js";
@@ -42,6 +42,7 @@ export {
   readRecipe,
   withMassFraction,
   withRatio,
+  withShares,
   type Component,
   type CompositionRow,
   type FigureReader,
@@ -65,6 +66,7 @@ export * from "./models/viscosity.js";
 export * from "./models/light.js";
 export * from "./models/cure.js";
 export * from "./models/oxygen.js";
+export * from "./models/network.js";
 export * from "./models/separation.js";
 
 export type { DoubtShare, DrawOptions } from "./assess/doubt.js";
@@ -74,7 +76,8 @@ export { viscosityOf } from "./assess/viscosity.js";
 export { penetrationDepthOf } from "./assess/light.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
-export { calibrate, interactionFrom } from "./decide/calibrate.js";
+export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";

@@ -34,6 +34,13 @@ export interface Interval {
   readonly level: number;
 }
 
+/** A source a result rests on: of which figure, where it was read, and the ground it stands on. */
+export interface UsedSource {
+  readonly figure: string;
+  readonly source: string;
+  readonly status: SourceStatus;
+}
+
 /** Something a reader has to know before using a result. `code` is stable for scripts; `message` is for people. */
 export interface Warning {
   readonly code: string;

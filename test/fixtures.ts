@@ -54,6 +54,16 @@ function flatSpectrum(id: string, value: number, quantity: "molarAbsorption_Lmol
   return { ...common, wavelengths_nm: [380, 400, 420], values: [value, value, value] };
 }
 
+const filler: Ingredient = {
+  ...initiator,
+  id: "SAND",
+  name: "a filler",
+  role: "filler",
+  density_gcm3: at25(2),
+  radicalsPerPhoton: undefined,
+  spectrum: undefined,
+};
+
 export const shelf: Shelf = {
   ingredients: new Map(
     [
@@ -62,6 +72,7 @@ export const shelf: Shelf = {
       liquid("MID", 100, 300, 1),
       initiator,
       absorber,
+      filler,
     ].map((one) => [one.id, one]),
   ),
   lots: new Map([
@@ -92,9 +103,12 @@ export const shelf: Shelf = {
     diffusivityFactor: sure(1, 0.5),
     propagation_m3mols: sure(25, 5),
     termination_m3mols: sure(1250, 250),
+    oxygenCapture_m3mols: sure(5e5, 1e5),
     gelConversion: sure(0.1, 0.02),
     backgroundAbsorption_percm: sure(1, 0.5),
     unmeasuredInteraction: sure(0, 1.1),
+    packingLimit: sure(0.6, 0.03),
+    intrinsicViscosity: sure(2.5, 0.2),
   },
 };
 
@@ -116,6 +130,7 @@ export const brief: Brief = {
   },
   crossSection_mm2: 100,
   liftSpeed_mms: 1,
+  betweenLayers: { dark_s: 5, freshFraction: 0.7 },
   targets: {},
   avoid: [],
 };

@@ -2,10 +2,10 @@
 
 import { propertyNames, type PropertyName, type Target } from "../recipe/brief.js";
 import type { Ingredient } from "../recipe/ingredient.js";
-import type { Warning } from "../result.js";
+import type { UsedSource, Warning } from "../result.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
-import { startDraws, type DrawOptions, type Draws } from "./doubt.js";
+import { distinctSources, startDraws, type DrawOptions, type Draws } from "./doubt.js";
 import { drawPenetrationDepth } from "./light.js";
 import { drawDeadZone, drawInductionTime, type DeadZoneEstimate } from "./oxygen.js";
 import { judge, type Drawn, type Property, type Verdict } from "./property.js";
@@ -24,7 +24,7 @@ export interface Assessment {
   /** Every warning once. */
   readonly warnings: readonly Warning[];
   /** Every source this run used, once. */
-  readonly sources: readonly string[];
+  readonly sources: readonly UsedSource[];
   readonly draws: number;
   readonly seed: number;
   readonly level: number;
@@ -37,10 +37,11 @@ export interface Assessment {
  * @throws InputError naming formulation, ingredient and figure of whatever is missing.
  * @example
  * ```ts
- * import { assess } from "resinwright";
+ * import { assess, calibrate } from "resinwright";
  * import { openBrief } from "resinwright/files";
- * const { verdicts } = assess(openBrief("data/briefs/flow-cell.json"));
- * verdicts.map(({ title, outcome }) => `${title}: ${outcome}`);
+ * const { verdicts, properties } = assess(calibrate(openBrief("data/briefs/flow-cell.json")));
+ * properties.viscosity_mPas.unit; // → "mPa s"
+ * `${verdicts[0].title}: ${verdicts[0].outcome}`; // → "viscosity at print temperature: meets"
  * ```
  */
 export function assess(input: Case & DrawOptions): Assessment {
@@ -60,7 +61,7 @@ export function assess(input: Case & DrawOptions): Assessment {
     verdicts,
     avoided: avoidedIn(input),
     warnings: distinctWarnings(all.flatMap(({ warnings }) => warnings)),
-    sources: [...new Set(all.flatMap(({ sources }) => sources))].sort(),
+    sources: distinctSources(all.flatMap(({ sources }) => sources)),
     draws: draws.count,
     seed: draws.seed,
     level: draws.level,
@@ -71,6 +72,14 @@ export function assess(input: Case & DrawOptions): Assessment {
  * The verdict on one property alone: for sweeps and maps, where a whole assessment of every point would be waste.
  * @param input - The case, the `property` and its `target`; draw options as for {@link assess}.
  * @throws InputError as {@link assess}.
+ * @example
+ * ```ts
+ * import { calibrate, verdictOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
+ * verdictOf({ ...work, property: "viscosity_mPas", target: { min: 100, max: 600 } }).outcome; // → "meets"
+ * verdictOf({ ...work, property: "viscosity_mPas", target: { max: 50 } }).outcome; // → "fails"
+ * ```
  */
 export function verdictOf(input: Case & DrawOptions & { property: PropertyName; target: Target }): Verdict {
   const draws = startDraws(input);

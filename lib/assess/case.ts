@@ -82,9 +82,12 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   diffusivityFactor: "oxygen diffusivity against the two-thirds law",
   propagation_m3mols: "propagation rate constant",
   termination_m3mols: "termination rate constant",
+  oxygenCapture_m3mols: "oxygen capture rate constant",
   gelConversion: "gel conversion",
   backgroundAbsorption_percm: "absorption of the resin itself",
   unmeasuredInteraction: "interaction of an unmeasured pair",
+  packingLimit: "packing limit of the particles",
+  intrinsicViscosity: "intrinsic viscosity of the particles",
 };
 
 /** A photon starts at most two radicals; a gel holds before nine bonds in ten have reacted. */

@@ -28,6 +28,19 @@ export interface WorkingCurveEstimate {
  * `cureDepthPerLayer` layers deep. An estimate to plan the first cure-depth series with, not a setting to print with.
  * @throws InputError as {@link penetrationDepthOf}; when no initiator absorbs the light.
  * @source Models: {@link inductionTime}, {@link steadyConversionTime}, {@link exposureForDepth}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { cureDepth, workingCurveOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const { penetrationDepth_um, criticalExposure_mJcm2, layerExposure_mJcm2 } = workingCurveOf(work);
+ * // The exposure of a layer cures 1.5 layers of 50 µm deep, as the brief asks.
+ * cureDepth({
+ *   exposure_mJcm2: layerExposure_mJcm2.value,
+ *   penetrationDepth_um: penetrationDepth_um.value,
+ *   criticalExposure_mJcm2: criticalExposure_mJcm2.value,
+ * }); // → 75.000
+ * ```
  */
 export function workingCurveOf(input: Case & DrawOptions): WorkingCurveEstimate {
   const draws = startDraws(input);
@@ -51,7 +64,8 @@ interface CureFigures {
   readonly layerTime_s: number;
 }
 
-function cureModel(input: Case): (read: Read) => CureFigures {
+/** The working curve's figures as a function of what the draws read. @internal */
+export function cureModel(input: Case): (read: Read) => CureFigures {
   const { brief, shelf } = input;
   const radicals = radicalModel(input);
   const constant = (name: "propagation_m3mols" | "termination_m3mols" | "gelConversion") =>

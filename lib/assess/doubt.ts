@@ -5,7 +5,7 @@ import { checkNumber } from "../door.js";
 import { normalQuantile } from "../numerics/distributions.js";
 import { latinHypercube } from "../numerics/sampling.js";
 import { coverageInterval, rankCorrelation } from "../numerics/summary.js";
-import type { Interval, SourcedValue } from "../result.js";
+import type { Interval, SourcedValue, UsedSource } from "../result.js";
 
 /**
  * An input with its doubt. The label tells inputs apart: two uses of one label are the same physical quantity and move together.
@@ -115,9 +115,15 @@ export function doubtShares(
   return raw.map(({ label, share }) => ({ label, share: share / total })).sort((a, b) => b.share - a.share);
 }
 
-/** The sources of the inputs a run read, each once: what it is the source of, the source, the ground it stands on. */
-export function sourcesOf(inputs: readonly Uncertain[]): string[] {
-  return [...new Set(inputs.map(({ label, source, status }) => `${label}: ${source} (${status})`))].sort();
+/** The sources of the inputs a run read, by figure. */
+export function sourcesOf(inputs: readonly Uncertain[]): UsedSource[] {
+  return distinctSources(inputs.map(({ label, source, status }) => ({ figure: label, source, status })));
+}
+
+/** Each source of each figure once, by figure. */
+export function distinctSources(sources: readonly UsedSource[]): UsedSource[] {
+  const distinct = new Map(sources.map((one) => [`${one.figure}: ${one.source}`, one]));
+  return [...distinct].sort(([a], [b]) => (a < b ? -1 : 1)).map(([, one]) => one);
 }
 
 function drawColumn(input: Uncertain, count: number, seed: number): Float64Array {

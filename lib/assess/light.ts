@@ -36,6 +36,17 @@ export interface LightInResin {
  * This is the optical depth; the slope of a measured working curve is another quantity and can differ.
  * @throws InputError when an initiator or absorber has no spectrum, molar mass or density, or a spectrum does not cover the light.
  * @source Models: {@link absorptionCoefficient}, {@link penetrationDepth}, {@link spectrumMean}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { penetrationDepthOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const depth = penetrationDepthOf(work);
+ * depth.unit; // → "µm"
+ * // The depth the light reaches is a matter of the spectrum, not of how bright it is.
+ * const light = { ...work.brief.light, irradiance_mWcm2: { ...work.brief.light.irradiance_mWcm2, value: 16 } };
+ * penetrationDepthOf({ ...work, brief: { ...work.brief, light } }).value === depth.value; // → true
+ * ```
  */
 export function penetrationDepthOf(input: Case & DrawOptions): Property {
   return drawPenetrationDepth(input, startDraws(input)).property;
@@ -163,13 +174,8 @@ function absorptionAtWavelength({ id, wavelengths_nm, values }: Spectrum, wavele
 
 /** One factor moves a whole spectrum: what is uncertain is mostly its scale (concentration, path). */
 function scaleOf(id: string, { relativeU, source, status }: Spectrum): Uncertain {
-  const label = `absorption of ${id}`;
-  const made = scales.get(label + source) ?? uncertain(label, { value: 1, u: relativeU, source, status });
-  scales.set(label + source, made);
-  return made;
+  return uncertain(`absorption of ${id}`, { value: 1, u: relativeU, source, status });
 }
-
-const scales = new Map<string, Uncertain>();
 
 function lightWarnings({ formulation, brief, shelf }: Case): Warning[] {
   const warnings: Warning[] = [];

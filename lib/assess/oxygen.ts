@@ -40,6 +40,17 @@ export type DeadZoneEstimate = (Property & { readonly neverCuresShare: number })
  * two-thirds power of viscosity allows. Steady state, no flow: layers shorter than a few induction times never reach it.
  * @throws InputError as {@link viscosityOf} and {@link penetrationDepthOf}; when the film is unknown.
  * @source Models: {@link deadZone}, {@link diffusivityFromViscosity}, {@link filmPermeance}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { deadZoneOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * deadZoneOf(work).outcome; // → "value"
+ * const nitrogen = { ...work.brief.window, gasOxygenFraction: 0 };
+ * const zone = deadZoneOf({ ...work, brief: { ...work.brief, window: nitrogen } });
+ * zone.outcome === "value" && zone.value; // → 0
+ * zone.warnings.map(({ code }) => code); // → ["no-oxygen-below"]
+ * ```
  */
 export function deadZoneOf(input: Case & DrawOptions): DeadZoneEstimate {
   return drawDeadZone(input, startDraws(input)).property;
@@ -62,7 +73,8 @@ export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate>
     doubt: doubtShares(ranked, inputs, draws),
     sources: sourcesOf(inputs),
   };
-  if (stated.outcome === "never-cures") return { values, property: { ...common, outcome: "never-cures", share } };
+  if (stated.outcome === "never-cures")
+    return { values, property: { ...common, outcome: "never-cures", share } };
   const interval = intervalOf({ stated: stated.thickness_um, values: cured, level: draws.level });
   return { values, property: { ...common, outcome: "value", ...interval, neverCuresShare: share } };
 }
@@ -114,6 +126,12 @@ function inductionModel(input: Case) {
 }
 
 function deadZoneModel(input: Case) {
+  const oxygen = oxygenModel(input);
+  return (read: Read) => deadZone(oxygen(read));
+}
+
+/** Oxygen at this window in this light, as a function of what the draws read: what every model of it starts from. @internal */
+export function oxygenModel(input: Case) {
   const { brief, shelf } = input;
   const { window } = brief;
   const radicals = radicalModel(input);
@@ -128,6 +146,7 @@ function deadZoneModel(input: Case) {
   });
   return (read: Read) => {
     const drawn = radicals(read);
+    const { solubility_molm3Pa } = drawn;
     const diffusivity_m2s =
       read(diffusivityFactor) *
       diffusivityFromViscosity({ viscosity_mPas: viscosity(read), temperature_C: brief.temperature_C });
@@ -135,18 +154,16 @@ function deadZoneModel(input: Case) {
       permeability_barrer: read(permeability),
       thickness_um: read(filmThickness),
     });
-    const transferCoefficient_ms = filmTransferCoefficient({
-      permeance_molm2sPa,
-      solubility_molm3Pa: drawn.solubility_molm3Pa,
-    });
-    return deadZone({
+    const transferCoefficient_ms = filmTransferCoefficient({ permeance_molm2sPa, solubility_molm3Pa });
+    return {
       diffusivity_m2s,
-      saturation_molm3: drawn.solubility_molm3Pa * gasOxygen_Pa,
+      saturation_molm3: solubility_molm3Pa * gasOxygen_Pa,
+      freshOxygen_molm3: airSaturation(solubility_molm3Pa),
       radicalGeneration_molm3s: drawn.radicalGeneration_molm3s,
       oxygenPerRadical: drawn.oxygenPerRadical,
       napierianAbsorption_percm: drawn.napierianAbsorption_percm,
       filmEquivalentThickness_um: filmEquivalentThickness({ diffusivity_m2s, transferCoefficient_ms }),
-    });
+    };
   };
 }
 

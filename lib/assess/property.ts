@@ -2,7 +2,7 @@
 
 import type { PropertyName, Target } from "../recipe/brief.js";
 import { unitLabel } from "../recipe/units.js";
-import type { Interval, Warning } from "../result.js";
+import type { Interval, UsedSource, Warning } from "../result.js";
 import {
   doubtShares,
   intervalOf,
@@ -21,7 +21,7 @@ export interface Property extends Interval {
   readonly outcome: "value";
   readonly warnings: readonly Warning[];
   readonly doubt: readonly DoubtShare[];
-  readonly sources: readonly string[];
+  readonly sources: readonly UsedSource[];
 }
 
 /** The resin never cures in steady light: the window brings oxygen faster than the light can burn it. */
@@ -34,7 +34,7 @@ export interface NeverCures {
   readonly share: number;
   readonly warnings: readonly Warning[];
   readonly doubt: readonly DoubtShare[];
-  readonly sources: readonly string[];
+  readonly sources: readonly UsedSource[];
 }
 
 /** Whether a target is met: by at least `level` of the draws, by at most 1 - `level` of them, or in between. */

@@ -5,28 +5,42 @@ import {
   andradeFromReference,
   andradeViscosity,
   grunbergNissan,
+  kriegerDougherty,
   type MixingBasis,
 } from "../models/viscosity.js";
-import { composition, isLiquid, type Component } from "../recipe/formulation.js";
+import { composition, isLiquid, type Component, type FigureReader } from "../recipe/formulation.js";
+import type { Ingredient } from "../recipe/ingredient.js";
 import { interactionOn, type Shelf } from "../recipe/shelf.js";
 import type { Warning } from "../result.js";
-import { componentsIn, figureOf, figureReader, uncertain, type Case } from "./case.js";
+import { componentsIn, constantOf, figureOf, figureReader, uncertain, type Case } from "./case.js";
 import { startDraws, type DrawOptions, type Read, type Uncertain } from "./doubt.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
 /** Below this share of the mass, what is dissolved in the liquid is taken not to change its viscosity. */
 const SOLUTES_LEFT_OUT = 0.05;
+/** What is dispersed in the liquid as particles. */
+const DISPERSED = ["pigment", "filler"] as const;
 /** Further than this from the temperature a viscosity was measured at, the two-constant law is an extrapolation. */
 const TEMPERATURE_REACH_K = 30;
 
 /**
  * Viscosity of the formulation at the brief's temperature, mPa s.
  *
- * Diluents and oligomers mix by Grunberg–Nissan; initiator, absorber and other solutes take no part. A pair with a measured
+ * Diluents and oligomers mix by Grunberg–Nissan; initiator, absorber and other solutes take no part; pigment and filler
+ * thicken the mixture by Krieger–Dougherty. A pair with a measured
  * interaction uses it, on its own basis. A pair without one carries G = 0 with the spread published for fitted G. Where no
  * pair is measured the basis itself is in doubt: fractions run from mass to mole (w / M^k, k from 0 to 1).
  * @throws InputError when there is no liquid, a liquid has no viscosity or activation, or interactions of two bases meet.
  * @source Models: {@link grunbergNissan}, {@link andradeViscosity}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const viscosity = viscosityOf(openBrief("data/briefs/flow-cell.json"));
+ * viscosity.unit; // → "mPa s"
+ * viscosity.low < viscosity.value && viscosity.value < viscosity.high; // → true
+ * viscosity.warnings[0].code; // → "interaction-unmeasured"
+ * ```
  */
 export function viscosityOf(input: Case & DrawOptions): Property {
   return drawViscosity(input, startDraws(input)).property;
@@ -55,6 +69,7 @@ export function viscosityModel({ formulation, brief, shelf }: Case): (read: Read
   }));
   const { basis, pairs } = interactionsOf(where, liquids, shelf);
   const fractionsOf = mixingFractions(formulation, liquids, basis);
+  const thickening = solidsFactor(where, { formulation, brief, shelf });
   return (read) => {
     const viscosities_mPas = laws.map(({ viscosity, activation, referenceTemperature_C }) =>
       andradeViscosity({
@@ -73,13 +88,43 @@ export function viscosityModel({ formulation, brief, shelf }: Case): (read: Read
       G: read(G),
       basis: mixingBasis,
     }));
-    return grunbergNissan({
-      fractions: fractionsOf(read),
-      viscosities_mPas,
-      basis: mixingBasis,
-      interactions,
-    });
+    const fractions = fractionsOf(read);
+    return (
+      thickening(read) * grunbergNissan({ fractions, viscosities_mPas, basis: mixingBasis, interactions })
+    );
   };
+}
+
+/** Pigment and filler thicken the liquid by Krieger–Dougherty; 1 where there are none. */
+function solidsFactor(where: string, { formulation, shelf }: Case): (read: Read) => number {
+  const solids = componentsIn(formulation, DISPERSED).map(({ ingredient }) => ingredient);
+  if (massOf(componentsIn(formulation, DISPERSED)) === 0) return () => 1;
+  const limit = constantOf(shelf.constants, "packingLimit");
+  const intrinsic = constantOf(shelf.constants, "intrinsicViscosity");
+  const stated = solidFraction(formulation, solids);
+  const trusted = limit.value - 4 * limit.u;
+  if (stated > trusted) {
+    throw new InputError(
+      `${where}: ${solids.map(({ id }) => id).join(", ")} fill ${stated.toPrecision(2)} of the volume; up to ${trusted.toPrecision(2)} can be assessed (four u below the packing limit ${limit.value}); measure the viscosity of this suspension`,
+    );
+  }
+  return (read) =>
+    kriegerDougherty({
+      solidFraction: solidFraction(formulation, solids, figureReader(read)),
+      packingLimit: read(limit),
+      intrinsicViscosity: read(intrinsic),
+    });
+}
+
+function solidFraction(
+  formulation: Case["formulation"],
+  solids: readonly Ingredient[],
+  read?: FigureReader,
+): number {
+  const { rows } = composition(formulation, read);
+  return rows
+    .filter(({ ingredient }) => solids.includes(ingredient))
+    .reduce((sum, row) => sum + row.volumeFraction, 0);
 }
 
 interface Pair {
@@ -200,11 +245,11 @@ function viscosityWarnings({ formulation, brief, shelf }: Case): Warning[] {
       message: `Initiator, absorber and other solutes are ${(100 * solutes).toPrecision(2)} % of the mass; above ${100 * SOLUTES_LEFT_OUT} % their effect on viscosity is no longer small, and it is not in this number.`,
     });
   }
-  const dispersed = componentsIn(formulation, ["pigment", "filler"]);
+  const dispersed = componentsIn(formulation, DISPERSED);
   if (dispersed.length > 0) {
     warnings.push({
-      code: "solids-left-out",
-      message: `${dispersed.map(({ ingredient }) => ingredient.id).join(", ")} thickens the resin; this is the viscosity of the liquid without it.`,
+      code: "solids-estimated",
+      message: `${dispersed.map(({ ingredient }) => ingredient.id).join(", ")} thickens the resin as hard particles would. Clusters, an adsorbed layer and shear thinning are not in this number; measure it at 10 to 50 per second.`,
     });
   }
   return warnings;

@@ -1,6 +1,6 @@
 // What was measured corrects what was guessed: readings on the shelf become interactions and neat viscosities.
 
-import { fitGrunbergNissan } from "../models/viscosity.js";
+import { fitBlend, fitGrunbergNissan, type BlendFit } from "../models/viscosity.js";
 import type { Case } from "../assess/case.js";
 import type { Interaction } from "../recipe/interaction.js";
 import type { Ingredient } from "../recipe/ingredient.js";
@@ -13,13 +13,22 @@ import type { AtTemperature } from "../recipe/sourced.js";
  * viscosities held at their readings.
  * @throws InputError as {@link fitGrunbergNissan}.
  * @source Model: {@link fitGrunbergNissan}.
+ * @example
+ * ```ts
+ * import { interactionFrom } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const readings = readShelf(["data"]).readings.find(({ id }) => id === "udma-iboa-25C")!;
+ * const { G, basis } = interactionFrom(readings);
+ * G.value; // → -0.90
+ * basis; // → "mass"
+ * ```
  */
 export function interactionFrom({ id, pair, temperature_C, ...readings }: BlendReadings): Interaction {
   const { massFractions, viscosities_mPas, source, status } = readings;
   const fit = fitGrunbergNissan({
     fractions: massFractions,
     viscosities_mPas,
-    pureViscosities_mPas: [neat(readings, 1), neat(readings, 0)],
+    pureViscosities_mPas: [neatViscosity(readings, 1), neatViscosity(readings, 0)],
     basis: "mass",
   });
   return {
@@ -31,9 +40,46 @@ export function interactionFrom({ id, pair, temperature_C, ...readings }: BlendR
 }
 
 /**
+ * What the readings of two liquids say about themselves: the fit with neat liquids as readings like the others, its scatter,
+ * readings that stand out, and whether one interaction is enough.
+ * @throws InputError as {@link fitBlend}.
+ * @source Model: {@link fitBlend}.
+ * @example
+ * ```ts
+ * import { fitReadings } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * const readings = readShelf(["data"]).readings.find(({ id }) => id === "udma-iboa-25C")!;
+ * fitReadings(readings).adequacy.verdict; // → "adequate"
+ * ```
+ */
+export function fitReadings({
+  massFractions,
+  viscosities_mPas,
+  temperature_C,
+  relativeU,
+}: BlendReadings): BlendFit {
+  const readings = massFractions.map((share, i) => ({
+    fractions: [share, 1 - share],
+    temperature_C,
+    viscosity_mPas: viscosities_mPas[i]!,
+    ...(relativeU > 0 ? { relativeU } : {}),
+  }));
+  return fitBlend({ readings, basis: "mass", terms: 1, level: 0.95 });
+}
+
+/**
  * The case with every measured pair of liquids corrected: interactions fitted to the readings on the shelf, and neat
  * viscosities as read, in place of the typical ones. A lot's own figure stands.
  * @throws InputError as {@link interactionFrom}.
+ * @example
+ * ```ts
+ * import { calibrate, interactionOn } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
+ * const [udma, iboa] = work.formulation.components;
+ * [udma.ingredient.viscosity_mPas?.value.toFixed(0), iboa.ingredient.viscosity_mPas?.value.toFixed(2)]; // → ["9640", "8.52"]
+ * interactionOn(work.shelf, "UDMA", "IBOA")?.basis; // → "mass"
+ * ```
  */
 export function calibrate<C extends Case>(work: C): C {
   let { shelf } = work;
@@ -57,14 +103,14 @@ export function calibrate<C extends Case>(work: C): C {
 
 type Readings = Pick<BlendReadings, "massFractions" | "viscosities_mPas">;
 
-/** The geometric mean of the readings at one end: viscosities scatter as a factor. */
-function neat({ massFractions, viscosities_mPas }: Readings, end: 0 | 1): number {
+/** The neat liquid at one end, mPa s: the geometric mean of its readings, since viscosities scatter as a factor. @internal */
+export function neatViscosity({ massFractions, viscosities_mPas }: Readings, end: 0 | 1): number {
   const logs = viscosities_mPas.filter((_, i) => massFractions[i] === end).map(Math.log);
   return Math.exp(logs.reduce((sum, one) => sum + one, 0) / logs.length);
 }
 
 function neatFigure(readings: BlendReadings, end: 0 | 1): AtTemperature {
-  const value = neat(readings, end);
+  const value = neatViscosity(readings, end);
   const { relativeU, source, status, temperature_C, id } = readings;
   return { value, u: relativeU * value, source: `${id}: ${source}`, status, temperature_C };
 }

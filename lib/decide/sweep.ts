@@ -84,16 +84,27 @@ export function evenSteps({
   return Array.from({ length: count }, (_, i) => Number(at(i / (count - 1)).toPrecision(12)));
 }
 
-/** A number for each place of a grid: one row for each `y`, one number for each `x`, as a contour figure takes them. */
-export function mapOver({
+/**
+ * A number (or null, where there is no such recipe) for each place of a grid: one row for each `y`, one number for each `x`, as a contour figure takes them.
+ * @example
+ * ```ts
+ * import { mapOver, stefanForce } from "resinwright";
+ * const lift = { viscosity_mPas: 300, crossSection_mm2: 320 };
+ * const pull = (gap_um: number, liftSpeed_mms: number) => stefanForce({ ...lift, gap_um, liftSpeed_mms });
+ * const pulls_N = mapOver({ x: [50, 100, 200], y: [1, 2], at: pull });
+ * [pulls_N.length, pulls_N[0].length]; // → [2, 3]
+ * pulls_N[1][0] / pulls_N[0][0]; // → 2.000
+ * ```
+ */
+export function mapOver<T extends number | null>({
   x,
   y,
   at,
 }: {
   x: readonly number[];
   y: readonly number[];
-  at: (x: number, y: number) => number;
-}): number[][] {
+  at: (x: number, y: number) => T;
+}): T[][] {
   return y.map((row) => x.map((column) => at(column, row)));
 }
 
@@ -102,6 +113,13 @@ export function mapOver({
  * `present`; where there is none, the point whose value lies deepest within the target or least outside it.
  * @returns The point and whether its interval `fits`.
  * @throws InputError when the curve has no point.
+ * @example
+ * ```ts
+ * import { nearestWithin } from "resinwright";
+ * const curve = { x: [0.5, 0.6, 0.7], y: [180, 400, 900], low: [140, 310, 700], high: [230, 520, 1200], never: [] };
+ * const chosen = nearestWithin({ curve, target: { min: 100, max: 600 }, present: 0.7 });
+ * chosen; // → { x: 0.6, y: 400, low: 310, high: 520, fits: true }
+ * ```
  */
 export function nearestWithin({
   curve,

@@ -38,6 +38,9 @@ export interface FigureContent {
   readonly table: TableContent;
 }
 
+/** How the Markdown of a decision begins; the index repeats what follows it. */
+export const decisionMark = "**Decided.** ";
+
 /** What a cell can show beside text and pictures. */
 export type Content = FigureContent | TableContent;
 
@@ -84,7 +87,7 @@ export function tableHtml(table: TableContent, label = ""): string {
   );
   const body = table.rows.map((row) => `<tr>${row.map((cell, i) => cellHtml(table, cell, i)).join("")}</tr>`);
   return [
-    `<table${table.columns.length > 5 ? ` class="many"` : ""}>`,
+    `<table${tableClass(table)}>`,
     `<caption><span>${before}${escapeHtml(table.caption)}</span></caption>`,
     `<thead><tr>${head.join("")}</tr></thead>`,
     `<tbody>${body.join("\n")}</tbody></table>`,
@@ -152,3 +155,10 @@ const figureSchema = z.strictObject({
   layout: z.looseObject({}),
   table: tableSchema,
 });
+
+/** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
+function tableClass({ columns, rows }: TableContent): string {
+  const classes = [columns.length > 5 && "many", columns.length > 8 && "crowded", rows.length > 12 && "long"];
+  const named = classes.filter((name) => name !== false);
+  return named.length === 0 ? "" : ` class="${named.join(" ")}"`;
+}

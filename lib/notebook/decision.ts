@@ -1,7 +1,9 @@
 // The end of a notebook: what was decided, shown and appended to the lab record.
 
 import { appendRecord } from "../lab/record.js";
+import { checkRecord } from "../lab/record/kinds.js";
 import type { Case } from "../assess/case.js";
+import { decisionMark } from "./content.js";
 import { numberText } from "./digits.js";
 import { showMarkdown, showTable } from "./show.js";
 import { tableOf } from "./table.js";
@@ -37,7 +39,7 @@ export function decide({
   statement: string;
   figures: Readonly<Record<string, number | string>>;
 }): void {
-  const folder = process.env["RESINWRIGHT_RECORDS"] ?? "../records";
+  const folder = process.env["RESINWRIGHT_RECORDS"] || "../records";
   const record = {
     kind: "decision" as const,
     from,
@@ -46,15 +48,22 @@ export function decide({
     statement,
     figures,
   };
+  // Checked and shown before it is written: a record that cannot be or is not read by anybody leaves nothing behind.
+  checkRecord(record);
+  showMarkdown(decisionMark + statement);
   const { file, record: written } = appendRecord({ folder, record });
-  showMarkdown(`**Decided.** ${statement}`);
+  const rows = Object.entries(figures).map(([figure, value]) => ({
+    figure,
+    value: typeof value === "number" ? numberText(value) : value,
+  }));
   showTable(
     tableOf({
       caption: "What was appended to the lab record",
-      rows: Object.entries({ ...figures, written: written.at, file }).map(([figure, value]) => ({
-        figure,
-        value: typeof value === "number" ? numberText(value) : value,
-      })),
+      rows: [
+        ...rows,
+        { figure: "written at", value: written.at },
+        { figure: "in the file", value: file.replace(/([0-9a-f]{12})[0-9a-f]{20,}/, "$1…") },
+      ],
     }),
   );
 }

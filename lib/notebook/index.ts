@@ -32,6 +32,7 @@ export { intervalText, numberText } from "./digits.js";
 export {
   gasText,
   lightText,
+  sharePercent,
   targetBand,
   targetRegion,
   targetText,
@@ -45,6 +46,7 @@ export {
   formulationTable,
   hazardTable,
   propertyTable,
+  readingTable,
   sourceTable,
   valueText,
   verdictText,
@@ -52,6 +54,7 @@ export {
   type FigureRow,
 } from "./views.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
+export { layerTable, profileFigure } from "./layers.js";
 export { decide } from "./decision.js";
 
 export type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";

@@ -4,7 +4,7 @@
 import { readFile } from "node:fs/promises";
 import { z } from "zod";
 import { InputError } from "../door.js";
-import { parseJson } from "./json.js";
+import { parseJson } from "../recipe/document.js";
 
 /** What a cell gave while it ran: text it printed, or something it displayed, by MIME type. */
 export type Output =
@@ -35,7 +35,7 @@ export interface Notebook {
  * @throws InputError naming the file and the line or cell: not JSON, not a notebook, another kernel, stored outputs, a cell that would be skipped.
  */
 export async function readNotebook(file: string): Promise<Notebook> {
-  const stored = parseJson({ text: await readText(file), where: file });
+  const stored = parseJson(await readText(file), file).value;
   const result = notebookSchema.safeParse(stored);
   if (!result.success) throw new InputError(`${file}: ${describe(result.error.issues[0]!)}`);
   const { cells, metadata } = result.data;

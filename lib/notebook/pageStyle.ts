@@ -100,6 +100,7 @@ figcaption .name { color: var(--ink); }
 .list li { margin: 0; padding-block: 1.25rem; border-top: 1px solid var(--rule); }
 .list a { font-size: 1.125rem; font-weight: 600; }
 .list p { margin: 0.375rem 0 0; color: var(--muted); }
+.list .decided { color: var(--ink); }
 
 @media (min-width: 75rem) {
   .bar, .page, .foot { margin-left: max(50% - 22.5rem, 18rem); }
@@ -128,13 +129,15 @@ figcaption .name { color: var(--ink); }
   h1, h2, h3, h4, h5, h6, caption { break-after: avoid; }
   h2 { margin-top: 2rem; }
   figure, table, tr, img, .formula, blockquote { break-inside: avoid; }
+  .long { break-inside: auto; }
   thead { display: table-header-group; }
   .scroll { overflow: visible; }
   pre { white-space: pre-wrap; overflow-wrap: anywhere; }
   table { max-width: 100%; font-size: 9pt; }
   th, td { padding-right: 0.75rem; }
   .many { font-size: 8pt; }
-  .many th, .many td { padding-right: 0.375rem; white-space: normal; overflow-wrap: anywhere; }
+  .crowded { font-size: 7pt; }
+  .crowded th, .crowded td { padding-right: 0.375rem; white-space: normal; overflow-wrap: anywhere; }
   * { print-color-adjust: exact; }
 }
 `;

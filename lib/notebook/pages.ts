@@ -29,11 +29,13 @@ export async function renderNotebook(given: {
 }
 
 /**
- * Renders the page that lists all others, in the order given.
+ * Renders the page that lists all others, in the order given, with what each decided, under a title and a paragraph.
  * @example
  * ```ts
  * import { renderIndex } from "resinwright/notebook";
  * const html = await renderIndex({
+ *   title: "Camera housings",
+ *   introduction: "Printed in-house.",
  *   pages: [{ file: "01-viscosity.html", title: "Does it flow?", summary: "At 25 °C, yes." }],
  *   origin: { brief: "flow-cell.json", libraryVersion: "0.1.0", nodeVersion: "20.20.2", date: "2026-01-05" },
  * });
@@ -43,6 +45,8 @@ export async function renderNotebook(given: {
 export async function renderIndex(given: {
   readonly pages: readonly IndexEntry[];
   readonly origin: Origin;
+  readonly title: string;
+  readonly introduction: string;
 }): Promise<string> {
   return (await import("./render.js")).renderIndex(given);
 }

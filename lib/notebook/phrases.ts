@@ -80,7 +80,20 @@ export function targetText({ min, max }: Target): string {
  */
 export function withinText(target: Target | undefined, share: number): string {
   if (target === undefined) return "with no target set for it";
-  return `within its target (${targetText(target)}) in ${Math.round(100 * share)} % of the draws`;
+  return `within its target (${targetText(target)}) in ${sharePercent(share)} % of the draws`;
+}
+
+/**
+ * A share in whole percent, rounded towards one half, so that "95 %" is not said of what falls short of it.
+ * @example
+ * ```ts
+ * import { sharePercent } from "resinwright/notebook";
+ * sharePercent(0.9496); // → 94
+ * sharePercent(0.001); // → 1
+ * ```
+ */
+export function sharePercent(share: number): number {
+  return share >= 0.5 ? Math.floor(100 * share + 1e-9) : Math.ceil(100 * share - 1e-9);
 }
 
 /**

@@ -5,7 +5,7 @@ import type { Case } from "../assess/case.js";
 import type { DeadZoneEstimate } from "../assess/oxygen.js";
 import type { NeverCures, Property } from "../assess/property.js";
 import { viscosityOf } from "../assess/viscosity.js";
-import { interactionFrom } from "../decide/calibrate.js";
+import { interactionFrom, neatViscosity } from "../decide/calibrate.js";
 import { evenSteps } from "../decide/sweep.js";
 import { stefanForce, suctionLimit } from "../models/separation.js";
 import { grunbergNissan } from "../models/viscosity.js";
@@ -17,40 +17,36 @@ import { lineFigure } from "./figure/line.js";
 import { shareFigure } from "./figure/share.js";
 
 /**
- * Every property with a target, as a multiple of the target's limit (the upper one where there are two).
- * @throws InputError when the brief sets no target.
+ * Every property with a target, as a multiple of the target's limit (the upper one where there are two); undefined where
+ * there is nothing to draw, because no target is set or the resin never cures.
  * @example
  * ```ts
  * import { assess } from "resinwright";
  * import { openBrief } from "resinwright/files";
  * import { targetFigure } from "resinwright/notebook";
- * const figure = targetFigure(assess(openBrief("data/briefs/flow-cell.json")));
- * figure.caption; // → "Each property against its target. flow-cell-a under flow-cell."
+ * const figure = targetFigure(assess(openBrief("data/briefs/flow-cell.json")))!;
+ * figure.caption; // → "Each property against its target. Formulation flow-cell-a under the brief flow-cell."
  * figure.table.rows[2][4]; // → "at most 1"
  * ```
  */
-export function targetFigure(assessment: Assessment): FigureContent {
+export function targetFigure(assessment: Assessment): FigureContent | undefined {
   const rows = assessment.verdicts.flatMap(
     ({ property: name, title, target: { min, max } }): IntervalRow[] => {
       const property = assessment.properties[name];
-      if (property.outcome === "never-cures") return [];
-      const limit = max ?? min!;
+      const limit = max ?? min;
+      if (property.outcome === "never-cures" || limit === undefined || limit === 0) return [];
       const { value, low, high, level } = property;
-      return [
-        {
-          label: title,
-          value: value / limit,
-          low: low / limit,
-          high: high / limit,
-          level,
-          target: [min === undefined ? undefined : min / limit, max === undefined ? undefined : 1],
-        },
+      const target: IntervalRow["target"] = [
+        min === undefined ? undefined : min / limit,
+        max === undefined ? undefined : 1,
       ];
+      return [{ label: title, value: value / limit, low: low / limit, high: high / limit, level, target }];
     },
   );
+  if (rows.length === 0) return undefined;
   return intervalFigure({
     caption: "Each property against its target",
-    conditions: `${assessment.formulation} under ${assessment.brief}`,
+    conditions: `Formulation ${assessment.formulation} under the brief ${assessment.brief}`,
     axis: { label: "multiple of the target's limit" },
     rows,
   });
@@ -75,19 +71,20 @@ export function hardestToCall({ verdicts, properties }: Assessment): Property | 
 }
 
 /**
- * Which inputs carry the doubt in a property, the eight largest.
+ * Which inputs carry the doubt in a property, the eight largest; undefined where there is no doubt to share out.
  * @example
  * ```ts
  * import { viscosityOf } from "resinwright";
  * import { openBrief } from "resinwright/files";
  * import { doubtFigure } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
- * const figure = doubtFigure(viscosityOf(work), "flow-cell-a at 28 °C");
- * figure.caption; // → "What carries the doubt in the viscosity at print temperature. flow-cell-a at 28 °C."
+ * const figure = doubtFigure(viscosityOf(work), "Flow-cell resin at 28 °C")!;
+ * figure.caption; // → "What carries the doubt in the viscosity at print temperature. Flow-cell resin at 28 °C."
  * ```
  */
-export function doubtFigure(property: Property | NeverCures, conditions: string): FigureContent {
+export function doubtFigure(property: Property | NeverCures, conditions: string): FigureContent | undefined {
   const rows = property.doubt.slice(0, 8);
+  if (rows.length === 0) return undefined;
   return shareFigure({ caption: `What carries the doubt in the ${property.title}`, conditions, rows });
 }
 
@@ -106,13 +103,12 @@ export function doubtFigure(property: Property | NeverCures, conditions: string)
 export function blendFigure(readings: BlendReadings): FigureContent {
   const [first, second] = readings.pair;
   const { G, basis } = interactionFrom(readings);
-  const neat = (end: number) => readings.viscosities_mPas[readings.massFractions.indexOf(end)]!;
   const x = evenSteps({ from: 0, to: 1, count: 41 });
   const rule = (value: number) =>
     x.map((share) =>
       grunbergNissan({
         fractions: [share, 1 - share],
-        viscosities_mPas: [neat(1), neat(0)],
+        viscosities_mPas: [neatViscosity(readings, 1), neatViscosity(readings, 0)],
         basis,
         interactions: [{ first: 0, second: 1, G: value, basis }],
       }),
@@ -151,7 +147,7 @@ export function liftFigure(work: Case, zone: DeadZoneEstimate): FigureContent {
   const limit_N = suctionLimit({ crossSection_mm2, pressure_Pa: 101325 });
   return lineFigure({
     caption: "Pull on the largest cross-section against the gap it starts from",
-    conditions: `rigid disc of ${numberText(crossSection_mm2)} mm² lifted at ${numberText(liftSpeed_mms)} mm/s, ${work.formulation.title} at ${numberText(temperature_C)} °C`,
+    conditions: `Rigid disc of ${numberText(crossSection_mm2)} mm² lifted at ${numberText(liftSpeed_mms)} mm/s, ${work.formulation.title} at ${numberText(temperature_C)} °C`,
     x: { label: "gap", unit: "µm", logarithmic: true },
     y: { label: "pull", unit: "N", logarithmic: true, range: [limit_N / 1000, 30 * limit_N] },
     bands: [

@@ -1,11 +1,12 @@
 // The program behind `npm start`: runs all notebooks with one brief and leaves their pages in rendered/.
 // Pages are written only once every notebook has passed and been rendered, so that no half-made set is ever seen.
 
-import { mkdirSync, readdirSync, readFileSync, renameSync, rmSync, writeFileSync } from "node:fs";
+import { mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import path from "node:path";
 import { InputError } from "../door.js";
-import { parseJson } from "./json.js";
+import type { Brief } from "../recipe/brief.js";
+import { readWorkbench } from "../recipe/files.js";
 import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
 import type { Origin } from "./page.js";
 import { renderIndex, renderNotebook } from "./render.js";
@@ -24,24 +25,24 @@ export async function start(given: {
   readonly printError: (line: string) => void;
 }): Promise<0 | 1 | 2> {
   const { words, folder, print, printError } = given;
-  let task: { brief: string; files: string[] };
+  let task: { file: string; brief: Brief; files: string[] };
   try {
-    task = { brief: checkedBrief(folder, words), files: notebooksIn(folder) };
+    task = { ...checkedBrief(folder, words), files: notebooksIn(folder) };
   } catch (error) {
     printError(messageOf(error));
     return 2;
   }
-  const { brief, files } = task;
+  const { file, brief, files } = task;
   const records = process.env["RESINWRIGHT_RECORDS"] ?? path.join(folder, "records");
   try {
     const runs = await runNotebooks({
       files,
-      environment: { RESINWRIGHT_BRIEF: brief, RESINWRIGHT_RECORDS: records },
+      environment: { RESINWRIGHT_BRIEF: file, RESINWRIGHT_RECORDS: records },
       onProgress: (progress) => print(progressLine(progress)),
     });
     const failures = runs.flatMap((run) => (run.outcome === "failed" ? [run.failure.message] : []));
     if (failures.length > 0) throw new Error(failures.join("\n"));
-    const written = writePages(folder, pagesOf(runs, { brief, records, folder }));
+    const written = writePages(folder, pagesOf(runs, brief, { file, records, folder }));
     print(["Pages:", ...written.map((file) => `  ${path.relative(folder, file)}`)].join("\n"));
     return 0;
   } catch (error) {
@@ -50,25 +51,16 @@ export async function start(given: {
   }
 }
 
-function checkedBrief(folder: string, words: readonly string[]): string {
+/** Reads the brief with its formulation and its shelf, so that a mistake in any of their files is told before a notebook runs. */
+function checkedBrief(folder: string, words: readonly string[]): { file: string; brief: Brief } {
   const [named = defaultBrief, ...others] = words;
   if (others.length > 0) {
     throw new InputError(
       `npm start: ${words.length} arguments given; it must be one brief; name one file after --`,
     );
   }
-  const brief = path.resolve(folder, named);
-  let text: string;
-  try {
-    text = readFileSync(brief, "utf8");
-  } catch (error) {
-    const code = (error as NodeJS.ErrnoException).code;
-    throw new InputError(
-      `brief ${named}: it cannot be read (${code}); name a file: npm start -- ${defaultBrief}`,
-    );
-  }
-  parseJson({ text, where: `brief ${named}` });
-  return brief;
+  const file = path.resolve(folder, named);
+  return { file, brief: readWorkbench(file).brief };
 }
 
 function notebooksIn(folder: string): string[] {
@@ -90,13 +82,17 @@ function progressLine({ file, cell, cells, elapsed_s }: Progress): string {
   return `${path.basename(file, ".ipynb")}  ${where}  ${elapsed_s.toFixed(1)} s`;
 }
 
+/** Paths of this machine: the brief's file, the records, the workbench. */
+interface Places {
+  readonly file: string;
+  readonly records: string;
+  readonly folder: string;
+}
+
 /** The pages by file name, with the index last. */
-function pagesOf(
-  runs: readonly NotebookRun[],
-  places: { brief: string; records: string; folder: string },
-): Map<string, string> {
+function pagesOf(runs: readonly NotebookRun[], brief: Brief, places: Places): Map<string, string> {
   const origin: Origin = {
-    brief: path.basename(places.brief),
+    brief: path.basename(places.file),
     libraryVersion: libraryVersion(),
     nodeVersion: process.versions.node,
     date: new Date().toISOString().slice(0, 10),
@@ -108,18 +104,15 @@ function pagesOf(
   }));
   return new Map([
     ...pages.map(({ file, html }) => [file, html] as const),
-    ["index.html", renderIndex({ pages, origin })],
+    ["index.html", renderIndex({ pages, origin, title: brief.title, introduction: brief.scenario })],
   ]);
 }
 
 // Where this machine keeps its files is nothing a colleague needs to know.
-function withoutPaths(
-  notebook: Notebook,
-  { brief, records, folder }: { brief: string; records: string; folder: string },
-): Notebook {
+function withoutPaths(notebook: Notebook, { file, records, folder }: Places): Notebook {
   const clean = (text: string): string =>
     text
-      .replaceAll(brief, path.basename(brief))
+      .replaceAll(file, path.basename(file))
       .replaceAll(records, path.basename(records))
       .replaceAll(folder + path.sep, "")
       .replaceAll(folder, ".");

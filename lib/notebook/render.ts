@@ -5,6 +5,7 @@ import { readFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import path from "node:path";
 import { codeHtml } from "./code.js";
+import { decisionMark } from "./content.js";
 import { escapeHtml } from "./html.js";
 import { inlineHtml, markdownHtml, plainText, splitTitle, type Heading } from "./markdown.js";
 import type { CodeCell, Notebook } from "./notebookFile.js";
@@ -16,6 +17,8 @@ import { pageScript } from "./pageScript.js";
 export interface Page {
   readonly title: string;
   readonly summary: string;
+  /** What the notebook decided, in plain words, if it did. */
+  readonly decision?: string;
   readonly html: string;
 }
 
@@ -24,6 +27,7 @@ export interface IndexEntry {
   readonly file: string;
   readonly title: string;
   readonly summary: string;
+  readonly decision?: string;
 }
 
 /**
@@ -56,20 +60,27 @@ export function renderNotebook(given: { readonly notebook: Notebook; readonly or
     note: number === 0 ? "" : `<p class="print-only">${printNote}</p>\n`,
     scripts: counts.figures > 0 ? [figureLibrary(), pageScript] : [pageScript],
   });
-  return { title: plainText(titleHtml), summary: firstParagraph(body), html };
+  return { title: plainText(titleHtml), summary: firstParagraph(body), decision: decisionOf(notebook), html };
 }
 
-/** Renders the page that lists all others, in the order given. */
+/** Renders the page that lists all others, in the order given, with what each decided. */
 export function renderIndex(given: {
   readonly pages: readonly IndexEntry[];
   readonly origin: Origin;
+  readonly title: string;
+  readonly introduction: string;
 }): string {
-  const items = given.pages.map(({ file, title, summary }) => {
+  const items = given.pages.map(({ file, title, summary, decision }) => {
     const words = summary === "" ? "" : `<p>${escapeHtml(summary)}</p>`;
-    return `<li><a href="${escapeHtml(encodeURIComponent(file))}">${escapeHtml(title)}</a>${words}</li>`;
+    const decided =
+      decision === undefined
+        ? ""
+        : `<p class="decided"><strong>Decided.</strong> ${escapeHtml(decision)}</p>`;
+    return `<li><a href="${escapeHtml(encodeURIComponent(file))}">${escapeHtml(title)}</a>${words}${decided}</li>`;
   });
-  const main = `<h1>Notebooks</h1>\n<ol class="list">\n${items.join("\n")}\n</ol>`;
-  return pageHtml({ title: "Notebooks", main, origin: given.origin });
+  const heading = `<h1>${escapeHtml(given.title)}</h1>\n<p>${escapeHtml(given.introduction)}</p>`;
+  const main = `${heading}\n<ol class="list">\n${items.join("\n")}\n</ol>`;
+  return pageHtml({ title: given.title, main, origin: given.origin });
 }
 
 const printNote =
@@ -93,6 +104,14 @@ function contentsHtml(headings: readonly Heading[]): string {
     return `<li${deeper}><a href="#${escapeHtml(encodeURIComponent(anchor))}">${escapeHtml(plainText(html))}</a></li>`;
   });
   return `<div class="contents-place"><nav class="contents" aria-label="Contents"><p>Contents</p>\n<ol>\n${items.join("\n")}\n</ol></nav></div>`;
+}
+
+function decisionOf({ cells }: Notebook): string | undefined {
+  const outputs = cells.flatMap((cell) => (cell.kind === "code" ? cell.outputs : []));
+  const said = outputs.flatMap((output) =>
+    output.kind === "display" ? (output.data["text/markdown"] ?? []) : [],
+  );
+  return said.findLast((text) => text.startsWith(decisionMark))?.slice(decisionMark.length);
 }
 
 function firstParagraph(body: readonly string[]): string {

@@ -9,7 +9,7 @@ import { embed, tableHtml, type FigureContent, type TableContent } from "./conte
 import { escapeHtml } from "./html.js";
 
 /**
- * Shows a figure in the cell that calls it, with its caption and the table behind it.
+ * Shows a figure in the cell that calls it, with its caption and the table behind it; nothing where there was nothing to draw.
  * @throws InputError outside a notebook.
  * @example
  * ```ts
@@ -22,7 +22,8 @@ import { escapeHtml } from "./html.js";
  * typeof cell; // → "function"
  * ```
  */
-export function showFigure(figure: FigureContent): void {
+export function showFigure(figure: FigureContent | undefined): void {
+  if (figure === undefined) return;
   display("showFigure", embed(figure) + liveFigure(figure));
 }
 

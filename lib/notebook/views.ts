@@ -6,10 +6,12 @@ import { propertyNames, type Brief } from "../recipe/brief.js";
 import { composition, type Formulation } from "../recipe/formulation.js";
 import type { Ingredient, IngredientFigures } from "../recipe/ingredient.js";
 import { unitEndingOf, unitLabel } from "../recipe/units.js";
-import type { SourcedValue } from "../result.js";
+import type { BlendReadings } from "../recipe/readings.js";
+import type { SourcedValue, UsedSource } from "../result.js";
+import { fitReadings } from "../decide/calibrate.js";
 import type { TableContent } from "./content.js";
 import { intervalText, numberText } from "./digits.js";
-import { gasText, targetText } from "./phrases.js";
+import { gasText, sharePercent, targetText } from "./phrases.js";
 import { tableOf } from "./table.js";
 
 /**
@@ -189,6 +191,37 @@ export function propertyTable(caption: string, properties: readonly (Property | 
 }
 
 /**
+ * Readings of two liquids' blends against their fit, one a row; a reading that stands out is named.
+ * @example
+ * ```ts
+ * import { readShelf } from "resinwright/files";
+ * import { readingTable } from "resinwright/notebook";
+ * const readings = readShelf(["data"]).readings.find(({ id }) => id === "udma-iboa-25C")!;
+ * readingTable(readings).rows.length; // → 9
+ * ```
+ */
+export function readingTable(readings: BlendReadings): TableContent {
+  const { residuals, outliers, adequacy } = fitReadings(readings);
+  return tableOf({
+    caption: `Readings of ${readings.pair.join(" with ")} at ${numberText(readings.temperature_C)} °C against one interaction: ${adequacy.verdict}; ${adequacy.reason}`,
+    rows: readings.massFractions.map((massFraction, i) => ({
+      mass_pct: 100 * massFraction,
+      viscosity_mPas: readings.viscosities_mPas[i],
+      fitted_mPas: readings.viscosities_mPas[i]! / Math.exp(residuals[i]!),
+      deviation_pct: numberText(100 * Math.expm1(residuals[i]!), 2),
+      note: outliers.includes(i) ? "stands out: measure it again" : null,
+    })),
+    columns: [
+      { key: "mass_pct", name: readings.pair[0], unit: "mass %" },
+      { key: "viscosity_mPas", name: "read" },
+      { key: "fitted_mPas", name: "fitted", digits: 3 },
+      { key: "deviation_pct", name: "off by", align: "right" },
+      { key: "note", align: "left" },
+    ],
+  });
+}
+
+/**
  * What to know before using the numbers, one warning a row.
  * @example
  * ```ts
@@ -247,22 +280,40 @@ export function hazardTable(formulation: Formulation): TableContent {
 }
 
 /**
- * The sources this run used, each with what it is the source of and the ground it stands on.
+ * The sources that results rest on; figures that share one stand together.
  * @example
  * ```ts
  * import { sourceTable } from "resinwright/notebook";
- * const table = sourceTable(["density of IBOA: pycnometer (25 mL) at 25 °C (measured here)"]);
- * table.rows; // → [["density of IBOA", "measured here", "pycnometer (25 mL) at 25 °C"]]
+ * const read = { source: "pycnometer (25 mL) at 25 °C", status: "measured here" } as const;
+ * const table = sourceTable([{ figure: "density of IBOA", ...read }, { figure: "density of HDDA", ...read }]);
+ * table.rows; // → [["density of IBOA, HDDA", "measured here", "pycnometer (25 mL) at 25 °C"]]
  * ```
  */
-export function sourceTable(sources: readonly string[]): TableContent {
+export function sourceTable(sources: readonly UsedSource[]): TableContent {
+  const figuresOf = new Map<string, UsedSource & { figures: Set<string> }>();
+  for (const one of sources) {
+    const key = `${one.status}: ${one.source}`;
+    const known = figuresOf.get(key) ?? { ...one, figures: new Set<string>() };
+    figuresOf.set(key, { ...known, figures: known.figures.add(one.figure) });
+  }
   return tableOf({
     caption: "Sources of the figures this page used",
-    rows: sources.map((line) => {
-      const [, figure, source, status] = /^(.*?): (.*) \(([^()]*)\)$/s.exec(line)!;
-      return { figure, status, source };
-    }),
+    rows: [...figuresOf.values()].map(({ figures, status, source }) => ({
+      figure: listed([...figures]),
+      status,
+      source,
+    })),
   });
+}
+
+/** "density of IBOA", "density of HDDA" as "density of IBOA, HDDA". */
+function listed(figures: readonly string[]): string {
+  const byQuantity = new Map<string, string[]>();
+  for (const figure of figures) {
+    const [, quantity, whose] = /^(.* of )(\S+)$/.exec(figure) ?? [figure, figure, ""];
+    byQuantity.set(quantity!, [...(byQuantity.get(quantity!) ?? []), whose!]);
+  }
+  return [...byQuantity].map(([quantity, whose]) => quantity + whose.join(", ")).join("; ");
 }
 
 /**
@@ -293,7 +344,7 @@ export function valueText(property: Property | NeverCures): string {
  * ```
  */
 export function verdictText({ outcome, share }: Verdict): string {
-  return `${outcome} (${Math.round(100 * share)} % of draws)`;
+  return `${outcome} (${sharePercent(share)} % of draws)`;
 }
 
 function sourcedText(field: string, { value, u }: SourcedValue): string {

@@ -73,6 +73,8 @@ export interface Brief {
   readonly crossSection_mm2: number;
   /** Speed at which the plate leaves the window. */
   readonly liftSpeed_mms: number;
+  /** What happens between two layers: how long it stays dark, and which share of the resin in the gap is fresh afterwards. */
+  readonly betweenLayers: { readonly dark_s: number; readonly freshFraction: number };
   readonly targets: Readonly<Partial<Record<PropertyName, Target>>>;
   readonly avoid: readonly Avoid[];
 }
@@ -80,14 +82,14 @@ export interface Brief {
 /**
  * Reads a brief file.
  * @throws InputError with file, line and field; when the light has both a spectrum and a wavelength or neither; when a
- * target's `min` is above its `max`.
+ * target's `min` is not below its `max`.
  * @example
  * ```ts
- * import { readFileSync } from "node:fs";
  * import { parseJson, readBrief } from "resinwright";
- * const file = "data/briefs/flow-cell.json";
- * const brief = readBrief(parseJson(readFileSync(file, "utf8"), file));
- * brief.targets.viscosity_mPas; // → { min: 100, max: 600 }
+ * import { openBrief } from "resinwright/files";
+ * const { brief } = openBrief("data/briefs/flow-cell.json");
+ * const warmer = { ...brief, id: "flow-cell-warm", temperature_C: "95 °F" };
+ * readBrief(parseJson(JSON.stringify(warmer), "warmer.json")).temperature_C; // → 35
  * ```
  */
 export function readBrief(document: JsonDocument): Brief {
@@ -100,9 +102,9 @@ export function readBrief(document: JsonDocument): Brief {
     );
   }
   for (const [property, { min, max }] of Object.entries(brief.targets)) {
-    if (min !== undefined && max !== undefined && min > max) {
+    if (min !== undefined && max !== undefined && min >= max) {
       throw new InputError(
-        `${document.where}: targets.${property} has min ${min} above max ${max}; swap them`,
+        `${document.where}: targets.${property} runs from ${min} to ${max}; min must be below max`,
       );
     }
   }
@@ -142,6 +144,10 @@ const briefSchema = strict({
   }),
   crossSection_mm2: quantity("crossSection_mm2", { above: 0 }),
   liftSpeed_mms: quantity("liftSpeed_mms", { above: 0 }),
+  betweenLayers: strict({
+    dark_s: quantity("dark_s", { min: 0, max: 600 }),
+    freshFraction: z.number().min(0).max(1),
+  }),
   targets: strict(targetShape),
   avoid: z.array(
     strict({

@@ -17,12 +17,18 @@ export interface ResinConstants {
   readonly propagation_m3mols: SourcedValue;
   /** Termination kt in d[R]/dt = -2 kt [R]². */
   readonly termination_m3mols: SourcedValue;
+  /** Capture of a radical by oxygen, kO. */
+  readonly oxygenCapture_m3mols: SourcedValue;
   /** Double-bond conversion at which the resin holds as a solid. */
   readonly gelConversion: SourcedValue;
   /** Napierian absorption of the resin without initiator and absorber. */
   readonly backgroundAbsorption_percm: SourcedValue;
   /** Grunberg–Nissan G of a pair of liquids that nobody has measured. */
   readonly unmeasuredInteraction: SourcedValue;
+  /** Volume fraction of pigment and filler at which a suspension no longer flows. */
+  readonly packingLimit: SourcedValue;
+  /** Intrinsic viscosity of the particles: 2.5 for spheres, more for other shapes. */
+  readonly intrinsicViscosity: SourcedValue;
 }
 
 /**
@@ -30,11 +36,11 @@ export interface ResinConstants {
  * @throws InputError with file, line and field.
  * @example
  * ```ts
- * import { readFileSync } from "node:fs";
  * import { parseJson, readConstants } from "resinwright";
- * const file = "data/constants/resin.json";
- * const { unmeasuredInteraction } = readConstants(parseJson(readFileSync(file, "utf8"), file));
- * unmeasuredInteraction.value; // → 0
+ * import { readShelf } from "resinwright/files";
+ * const gelConversion = { value: 0.12, u: 0.02, source: "our own bench", status: "measured here" };
+ * const file = { ...readShelf(["data"]).constants, gelConversion };
+ * readConstants(parseJson(JSON.stringify(file), "resin.json")).gelConversion.value; // → 0.12
  * ```
  */
 export function readConstants(document: JsonDocument): ResinConstants {
@@ -47,7 +53,10 @@ const constantsSchema: z.ZodType<ResinConstants> = strict({
   diffusivityFactor: sourced("diffusivityFactor", { above: 0 }),
   propagation_m3mols: sourced("propagation_m3mols", { above: 0 }),
   termination_m3mols: sourced("termination_m3mols", { above: 0 }),
+  oxygenCapture_m3mols: sourced("oxygenCapture_m3mols", { above: 0 }),
   gelConversion: sourced("gelConversion", { above: 0, max: 0.9 }),
   backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { min: 0 }),
   unmeasuredInteraction: sourced("unmeasuredInteraction"),
+  packingLimit: sourced("packingLimit", { above: 0.1, max: 0.9 }),
+  intrinsicViscosity: sourced("intrinsicViscosity", { min: 2.5, max: 20 }),
 });

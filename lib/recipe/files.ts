@@ -37,7 +37,11 @@ export interface Workbench {
  * ```
  */
 export function openBrief(file: string): Workbench {
-  const path = process.env["RESINWRIGHT_BRIEF"] ?? file;
+  return readWorkbench(process.env["RESINWRIGHT_BRIEF"] ?? file);
+}
+
+/** As {@link openBrief}, whatever the environment says. @internal */
+export function readWorkbench(path: string): Workbench {
   const brief = readBrief(readJson(path));
   const beside = (name: string) => join(dirname(path), name);
   const shelf = readShelf(brief.shelf.map(beside));

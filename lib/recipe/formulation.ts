@@ -329,17 +329,34 @@ export function withRatio(
   { id, against, share }: { id: string; against: string; share: number },
 ): Formulation {
   checkNumber(share, { where: `formulation "${formulation.id}"`, field: "share", min: 0, max: 1 });
-  requirePresent(formulation, id);
-  requirePresent(formulation, against);
-  const both = massFractionOf(formulation, id) + massFractionOf(formulation, against);
-  return reweigh(
-    formulation,
-    new Map([
-      [id, share * both],
-      [against, (1 - share) * both],
-    ]),
-    1,
-  );
+  return withShares(formulation, { [id]: share, [against]: 1 - share });
+}
+
+/**
+ * The formulation with several ingredients shared out anew between them: of their common mass each gets its share.
+ * @throws InputError when one is not in the formulation, a share is not from 0 to 1, or they do not add up to 1 within 1e-9.
+ * @example
+ * ```ts
+ * import { massFractionOf, withShares } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const changed = withShares(formulation, { UDMA: 0.5, IBOA: 0.25, TEGDMA: 0.25 });
+ * massFractionOf(changed, "UDMA"); // → 0.493
+ * ```
+ */
+export function withShares(formulation: Formulation, shares: Readonly<Record<string, number>>): Formulation {
+  const where = `formulation "${formulation.id}"`;
+  const ids = Object.keys(shares);
+  for (const id of ids) {
+    requirePresent(formulation, id);
+    checkNumber(shares[id], { where, field: `share of ${id}`, min: 0, max: 1 });
+  }
+  const total = sum(Object.values(shares));
+  if (Math.abs(total - 1) > 1e-9) {
+    throw new InputError(`${where}: shares add up to ${Number(total.toPrecision(8))}; they must add up to 1`);
+  }
+  const common = sum(ids.map((id) => massFractionOf(formulation, id)));
+  return reweigh(formulation, new Map(ids.map((id) => [id, shares[id]! * common])), 1);
 }
 
 /** Volume that a component takes up in a gram of the formulation, cm³. */

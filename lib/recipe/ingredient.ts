@@ -88,7 +88,7 @@ export interface Lot {
  * const viscosity_mPas = {
  *   value: "9 cP", u: "2 cP", temperature_C: "77 °F", source: "supplier's sheet", status: "from memory",
  * };
- * const file = { id: "IBOA", name: "isobornyl acrylate", cas: "5888-33-5", role: "diluent", state: "liquid", viscosity_mPas };
+ * const file = { id: "IBOA", name: "isobornyl acrylate", role: "diluent", state: "liquid", viscosity_mPas };
  * const { viscosity_mPas: read } = readIngredient(parseJson(JSON.stringify(file), "iboa.json"));
  * [read?.value, read?.temperature_C]; // → [9, 25]
  * ```

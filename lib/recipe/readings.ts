@@ -27,7 +27,8 @@ export interface BlendReadings {
  * ```ts
  * import { parseJson, readBlendReadings } from "resinwright";
  * const file = {
- *   id: "udma-iboa", pair: ["UDMA", "IBOA"], temperature_C: 25, relativeU: 0.03, source: "cone and plate", status: "measured here",
+ *   id: "udma-iboa", pair: ["UDMA", "IBOA"], temperature_C: 25, relativeU: 0.03,
+ *   source: "cone and plate", status: "measured here",
  *   massFractions: [1, 0.7, 0.4, 0], viscosities_mPas: ["9.6 Pa s", 970, 114, 8.5],
  * };
  * readBlendReadings(parseJson(JSON.stringify(file), "udma-iboa.json")).viscosities_mPas; // → [9600, 970, 114, 8.5]

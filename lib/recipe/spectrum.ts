@@ -29,8 +29,9 @@ export interface Spectrum {
  * ```ts
  * import { parseJson, readSpectrum } from "resinwright";
  * const file = {
- *   id: "lamp", quantity: "relativePower", title: "the lamp at the window", medium: "spectrometer, calibrated", relativeU: 0.05,
- *   source: "one reading at the window", status: "measured here", wavelengths_nm: [395, 405, 415], values: [0, 1, 0],
+ *   id: "lamp", quantity: "relativePower", title: "the lamp at the window",
+ *   medium: "calibrated detector", relativeU: 0.05, source: "one reading at the window", status: "measured here",
+ *   wavelengths_nm: [395, 405, 415], values: [0, 1, 0],
  * };
  * readSpectrum(parseJson(JSON.stringify(file), "lamp.json")).wavelengths_nm; // → [395, 405, 415]
  * ```

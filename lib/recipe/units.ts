@@ -23,6 +23,9 @@ export const fieldUnits: Readonly<Record<string, FieldUnit>> = {
   pers: { label: "s⁻¹", mathjs: "s^-1" },
   g: { label: "g", mathjs: "g" },
   gcm3: { label: "g/cm³", mathjs: "g cm^-3" },
+  Jg: { label: "J/g", mathjs: "J g^-1" },
+  JgK: { label: "J/(g K)", mathjs: "J g^-1 K^-1" },
+  cm3mol: { label: "cm³/mol", mathjs: "cm^3 mol^-1" },
   gmol: { label: "g/mol", mathjs: "g mol^-1" },
   molL: { label: "mol/L", mathjs: "mol L^-1" },
   molm3: { label: "mol/m³", mathjs: "mol m^-3" },
@@ -48,41 +51,6 @@ export const fieldUnits: Readonly<Record<string, FieldUnit>> = {
   MPa: { label: "MPa", mathjs: "MPa" },
   N: { label: "N", mathjs: "N" },
   pct: { label: "%", mathjs: "percent" },
-};
-
-/**
- * The numeric fields without a unit, and what each means. A fraction runs from 0 to 1; percent stands only in `..._pct`.
- * Fields such as `value`, `low` or `x` take the unit of what they belong to.
- */
-export const bareFields: Readonly<Record<string, string>> = {
-  massFraction: "mass of a component over mass of the whole",
-  massFractions: "mass fractions, one a component or a blend",
-  moleFraction: "amount of a component over amount of the whole",
-  moleFractions: "mole fractions, one a component",
-  volumeFraction: "volume of a component over volume of the whole, volumes taken as additive",
-  fractions: "fractions on the basis named beside them",
-  share: "a part of a whole, 0 to 1: of draws, of doubt, of a pair's mass",
-  partsPerHundred: "grams for each hundred grams of diluents and oligomers",
-  functionality: "polymerisable double bonds in a molecule",
-  refractiveIndex: "refractive index at the sodium line",
-  conversion: "double bonds reacted over double bonds at the start",
-  gelConversion: "conversion at which the resin holds as a solid",
-  radicalsPerPhoton: "chain-starting radicals per photon absorbed by the initiator",
-  oxygenPerRadical: "oxygen molecules used per radical started, while oxygen lasts",
-  diffusivityFactor: "factor on the oxygen diffusivity of the two-thirds law",
-  oxygenFraction: "mole fraction of oxygen in a gas",
-  gasOxygenFraction: "mole fraction of oxygen in the gas under the film",
-  cureDepthPerLayer: "cure depth over layer thickness",
-  neverCuresShare: "share of the draws in which the resin never cures",
-  G: "Grunberg–Nissan interaction, on the basis named beside it",
-  unmeasuredInteraction: "Grunberg–Nissan interaction of a pair nobody has measured",
-  lnPrefactor: "A of ln(viscosity / mPa s) = A + B/T",
-  lnPrefactorStandardError: "standard error of A",
-  averageDeviation: "mean of |calculated / measured - 1|",
-  residualStandardDeviation: "of ln viscosity",
-  relativeU: "standard uncertainty as a fraction of the value",
-  u: "standard uncertainty (k = 1), in the unit of the value",
-  level: "probability that an interval holds the value",
 };
 
 /** The ending of a field name (`"um"` of `layerThickness_um`), or undefined where the name carries no unit. */

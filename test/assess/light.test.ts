@@ -48,7 +48,7 @@ describe("penetrationDepthOf", () => {
   it("shows the nominal wavelength as a warning and its doubt in the sources", () => {
     const result = depth({ THIN: 99, PI: 1 }, nominal(400, 3));
     expect(result.warnings.map(({ code }) => code)).toEqual(["nominal-wavelength"]);
-    expect(result.sources.join()).toContain("wavelength of the light");
+    expect(result.sources.map(({ figure }) => figure)).toContain("wavelength of the light");
   });
 
   it("refuses light that a spectrum does not cover", () => {

@@ -66,6 +66,20 @@ describe("viscosityOf", () => {
     expect(loaded.warnings[0]!.message).toContain("6.0 % of the mass; above 5 %");
   });
 
+  // Krieger & Dougherty 1959 by hand: 20 g of 2 g/cm³ in 80 g of 1 g/cm³ fill 1/9 of the volume.
+  it("thickens with filler by its volume, and says what it leaves out", () => {
+    const filled = viscosity({ THIN: 80, SAND: 20 });
+    expect(filled.value).toBeCloseTo(10 * (1 - 1 / 9 / 0.6) ** (-2.5 * 0.6), 8);
+    expect(codes(filled)).toEqual(["solids-estimated"]);
+    expect(filled.sources.map(({ figure }) => figure)).toContain("packing limit of the particles");
+  });
+
+  it("refuses a suspension too near its packing limit", () => {
+    expect(() => viscosity({ THIN: 30, SAND: 70 })).toThrow(
+      'formulation "test": SAND fill 0.54 of the volume; up to 0.48 can be assessed (four u below the packing limit 0.6); measure the viscosity of this suspension',
+    );
+  });
+
   it("carries a wide interval and a warning for pairs that nobody measured", () => {
     const guessed = viscosity({ THIN: 50, THICK: 50 });
     const measured = viscosity(
@@ -97,8 +111,16 @@ describe("viscosityOf", () => {
   it("names the sources it used and no others", () => {
     const { sources } = viscosity({ THIN: 100 });
     expect(sources).toEqual([
-      "viscosity activation of THIN: round number chosen for a test (invented for the demo)",
-      "viscosity of THIN: round number chosen for a test (invented for the demo)",
+      {
+        figure: "viscosity activation of THIN",
+        source: "round number chosen for a test",
+        status: "invented for the demo",
+      },
+      {
+        figure: "viscosity of THIN",
+        source: "round number chosen for a test",
+        status: "invented for the demo",
+      },
     ]);
   });
 

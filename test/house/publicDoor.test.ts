@@ -1,32 +1,22 @@
 import { describe, expect, it } from "vitest";
-import { bareFields, unitEndingOf } from "../../lib/recipe/units.js";
+import { bareFields } from "../../lib/recipe/bareFields.js";
+import { unitEndingOf } from "../../lib/recipe/units.js";
 import { publicNames } from "./publicDoor.js";
 
 const names = publicNames();
 const functions = names.filter(({ kind }) => kind === "function");
 
-// Names that carry no quantity of their own: places in a list or figure, counts, settings of a run.
-const placesAndCounts = [
-  ...[
-    "value",
-    "values",
-    "low",
-    "high",
-    "min",
-    "max",
-    "x",
-    "y",
-    "from",
-    "to",
-    "range",
-    "levels",
-    "over",
-    "present",
-    "never",
-    "spectrum",
-  ],
-  ...["first", "second", "cell", "cells", "points", "shape", "count", "digits", "draws", "seed", "parallel"],
-];
+// Names that carry no quantity of their own: places in a list or figure, counts, settings of a run, statistics of a fit.
+const placesAndCounts = `
+  value values low high min max x y from to range levels over present never spectrum first second repeat
+  cell cells points shape count digits draws seed parallel layer layers baseLayers transitionLayers fromLayer toLayer
+  linearUpTo liquids terms dimensions state start stepLimit tolerance iterations accepted rejected reach
+  parameters coefficients standardErrors residuals leverage scores outliers response weights remainingStep
+  degreesOfFreedom degreesAbove degreesBelow ratio probability leastProbability chance runs expectedRuns positive negative
+  diagonal lower upper right
+`
+  .trim()
+  .split(/\s+/);
 
 describe("the public door", () => {
   it("opens on functions, types and a few lists", () => {

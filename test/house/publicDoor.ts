@@ -65,7 +65,7 @@ function numericFieldsOf(
   const found = new Set<string>();
   const collect = (type: ts.Type, depth: number) => {
     for (const part of type.isUnion() ? type.types : [type]) {
-      if (depth > 3 || part.flags & (ts.TypeFlags.Primitive | ts.TypeFlags.TypeParameter)) continue;
+      if (depth > 3 || !(part.flags & ts.TypeFlags.Object)) continue;
       const element = checker.getIndexTypeOfType(part, ts.IndexKind.Number);
       if (element !== undefined) {
         collect(element, depth + 1);

@@ -120,10 +120,16 @@ describe("tableHtml", () => {
     expect(html).toContain(`class="right">450 (300 to 610)<`);
   });
 
-  it("marks a table of many columns, which print sets smaller", () => {
+  it("marks a table of many columns, which a screen gives more room and print sets smaller", () => {
     const columns = Array.from({ length: 9 }, () => ({ name: "x", align: "left" }) as const);
-    expect(tableHtml({ ...table, columns, rows: [] })).toMatch(/^<table class="many">/);
-    expect(tableHtml({ ...table, columns: columns.slice(1), rows: [] })).toMatch(/^<table>/);
+    expect(tableHtml({ ...table, columns, rows: [] })).toMatch(/^<table class="many crowded">/);
+    expect(tableHtml({ ...table, columns: columns.slice(3), rows: [] })).toMatch(/^<table class="many">/);
+    expect(tableHtml({ ...table, columns: columns.slice(4), rows: [] })).toMatch(/^<table>/);
+  });
+
+  it("marks a long table, which print may break between pages", () => {
+    const rows = Array.from({ length: 13 }, () => table.rows[0]!);
+    expect(tableHtml({ ...table, rows })).toMatch(/^<table class="long">/);
   });
 
   it("keeps hostile text as text", () => {

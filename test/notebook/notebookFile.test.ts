@@ -1,7 +1,6 @@
 import { writeFileSync } from "node:fs";
 import path from "node:path";
 import { describe, expect, it } from "vitest";
-import { parseJson } from "../../lib/notebook/json.js";
 import { readNotebook } from "../../lib/notebook/notebookFile.js";
 import { notebookJson, scratchFolder } from "./scratch.js";
 
@@ -27,11 +26,11 @@ describe("readNotebook", () => {
     cells: [{ cell_type: "code", source: "1", outputs: [], ...changes }],
   });
   it.each([
-    ["text", "no notebook", /n\.ipynb: line 1 is not JSON \(.+\); correct that line$/],
+    ["text", "no notebook", /n\.ipynb, line 1, column \d+: this is not valid JSON: /],
     [
       "a broken line",
       notebookJson(["1"]).replace(`"outputs":`, `\n\n"outputs"`),
-      /n\.ipynb: line 3 is not JSON/,
+      /n\.ipynb, line 3, column \d+: this is not valid JSON: /,
     ],
     ["a list", "[]", /n\.ipynb: the file: .+; it must be a notebook of format 4$/],
     ["an old format", notebookJson(["1"], { nbformat: 3 }), /n\.ipynb: nbformat: .+ a notebook of format 4$/],
@@ -67,27 +66,5 @@ describe("readNotebook", () => {
     await expect(readNotebook("nowhere/n.ipynb")).rejects.toThrow(
       "nowhere/n.ipynb: the notebook cannot be read (ENOENT)",
     );
-  });
-});
-
-describe("parseJson", () => {
-  it.each([
-    ["{", 1],
-    ["[1,\n2", 2],
-    ["[1,\n2\n}", 3],
-    ["[1,\n  x]", 2],
-    [`{\n"a": 1,\n"b": oops,\n"c": 1, "long": "more and more text"}`, 3],
-    [`{"some": "long text before it",\n\n\n"b": oops}`, 4],
-    [`{\n"a": 1\n"b": 2\n}`, 3],
-    [`["a\nb"]`, 1],
-    ["", 1],
-  ])("names the line of what is wrong in %j", (text, line) => {
-    expect(() => parseJson({ text, where: "brief x.json" })).toThrow(
-      new RegExp(`^brief x\\.json: line ${line} is not JSON \\(.+\\); correct that line$`),
-    );
-  });
-
-  it("gives what the text holds", () => {
-    expect(parseJson({ text: ` {"a": [1, null]} `, where: "x" })).toEqual({ a: [1, null] });
   });
 });

@@ -1,5 +1,6 @@
 import { spawn } from "node:child_process";
 import {
+  cpSync,
   existsSync,
   mkdirSync,
   mkdtempSync,
@@ -36,10 +37,13 @@ const twoNotebooks = {
   ],
 };
 
-const workbench = (notebooks: Record<string, string[]>, brief = `{"name":"thin walls"}`) => {
+const demo = JSON.parse(readFileSync("data/briefs/flow-cell.json", "utf8")) as object;
+const briefCalled = (title: string) => JSON.stringify({ ...demo, title });
+
+const workbench = (notebooks: Record<string, string[]>, brief = briefCalled("Thin walls")) => {
   const folder = scratchFolder();
   mkdirSync(path.join(folder, "notebooks"));
-  mkdirSync(path.join(folder, "data", "briefs"), { recursive: true });
+  cpSync("data", path.join(folder, "data"), { recursive: true });
   writeFileSync(path.join(folder, "data", "briefs", "flow-cell.json"), brief);
   for (const [name, cells] of Object.entries(notebooks))
     writeNotebook(cells, path.join(folder, "notebooks"), name);
@@ -79,7 +83,8 @@ describe("start", () => {
     const [flow, light, index] = ["01-flow.html", "02-light.html", "index.html"].map((name) =>
       rendered(folder, name),
     );
-    expect(flow).toContain("{&quot;name&quot;:&quot;thin walls&quot;}");
+    expect(flow).toContain("&quot;title&quot;:&quot;Thin walls&quot;");
+    expect(index).toContain("<h1>Thin walls</h1>");
     expect(flow).toContain(">flow-cell.json records notebooks</pre>");
     expect(light).toContain("<strong>Figure 1.</strong> A line");
     expect(index).toMatch(
@@ -98,24 +103,31 @@ describe("start", () => {
 
   it("takes the brief it is given", async () => {
     const folder = workbench({ "01-flow.ipynb": twoNotebooks["01-flow.ipynb"] });
-    writeFileSync(path.join(folder, "other.json"), `{"name":"clear lens"}`);
-    expect((await run(folder, "other.json")).code).toBe(0);
-    expect(rendered(folder, "01-flow.html")).toContain("clear lens");
+    writeFileSync(path.join(folder, "data/briefs/other.json"), briefCalled("Clear lens"));
+    expect((await run(folder, "data/briefs/other.json")).code).toBe(0);
+    expect(rendered(folder, "01-flow.html")).toContain("Clear lens");
     expect(rendered(folder, "01-flow.html")).toContain("<p>Brief other.json");
   });
 
   it.each([
-    [
-      "a brief that is not there",
-      ["no.json"],
-      "{}",
-      /^brief no\.json: it cannot be read \(ENOENT\); name a file: npm start -- data/,
-    ],
+    ["a brief that is not there", ["no.json"], "{}", /no\.json: cannot be read \(ENOENT\); check the path$/],
     [
       "a brief that is not JSON",
       [],
       "{\n  name: 1\n}",
-      /^brief data\/briefs\/flow-cell\.json: line 2 is not JSON \(.+\)/,
+      /data\/briefs\/flow-cell\.json, line 2, column 3: this is not valid JSON: /,
+    ],
+    [
+      "a brief with a wrong field",
+      [],
+      JSON.stringify({ ...demo, layerThickness_um: -5 }, null, 1),
+      /flow-cell\.json, line \d+: layerThickness_um is -5; it must be at least 1$/,
+    ],
+    [
+      "a brief whose formulation is not there",
+      [],
+      JSON.stringify({ ...demo, formulation: "../formulations/none.json" }),
+      /data\/formulations\/none\.json: cannot be read \(ENOENT\); check the path$/,
     ],
     [
       "two briefs",

@@ -12,6 +12,7 @@ const origin = {
   nodeVersion: "20.20.2",
   date: "2026-01-05",
 };
+const emptyIndex = { pages: [], origin, title: "A brief", introduction: "Of nothing." };
 const hostile = `</script><script>alert(1)</script>"><img src=x onerror=alert(1)>`;
 
 const notebook = (...cells: Notebook["cells"]): Notebook => ({ file: "notebooks/07-trial_run.ipynb", cells });
@@ -86,7 +87,7 @@ describe("renderNotebook, the page", () => {
   it("is the same through the public door", async () => {
     const given = { notebook: notebook(prose("# A")), origin };
     expect(await pages.renderNotebook(given)).toEqual(renderNotebook(given));
-    expect(await pages.renderIndex({ pages: [], origin })).toBe(renderIndex({ pages: [], origin }));
+    expect(await pages.renderIndex(emptyIndex)).toBe(renderIndex(emptyIndex));
   });
 });
 
@@ -224,7 +225,17 @@ describe("renderNotebook, safety", () => {
       "form-action 'none'",
     ]);
     expect(everywhere.indexOf("http-equiv")).toBeLessThan(everywhere.indexOf("<style"));
-    expect(renderIndex({ pages: [], origin })).toContain("script-src 'none'");
+    expect(renderIndex(emptyIndex)).toContain("script-src 'none'");
+  });
+});
+
+describe("a decision", () => {
+  it("is taken from the Markdown that says so, the last one if there are several", () => {
+    const said = (text: string) => shown(display("text/markdown", text));
+    expect(
+      page(said("**Decided.** First."), said("Then."), said("**Decided.** Print at 30 °C.")).decision,
+    ).toBe("Print at 30 °C.");
+    expect(page(prose("**Decided.** In prose, not computed.")).decision).toBeUndefined();
   });
 });
 
@@ -233,12 +244,17 @@ describe("renderIndex", () => {
     const index = renderIndex({
       pages: [
         { file: "02-b c.html", title: hostile, summary: hostile },
-        { file: "01-a.html", title: "A", summary: "" },
+        { file: "01-a.html", title: "A", summary: "", decision: hostile },
       ],
       origin,
+      title: hostile,
+      introduction: hostile,
     });
+    expect(index).toContain(`<h1>&lt;/script&gt;`);
     expect(index).toContain(`<a href="02-b%20c.html">&lt;/script&gt;`);
-    expect(index).toContain(`<li><a href="01-a.html">A</a></li>`);
+    expect(index).toContain(
+      `<li><a href="01-a.html">A</a><p class="decided"><strong>Decided.</strong> &lt;/script&gt;`,
+    );
     expect(index.indexOf("02-b")).toBeLessThan(index.indexOf("01-a"));
     expect(index).not.toMatch(/<script|<img/);
     expect(index).toContain("run 2026-01-05");

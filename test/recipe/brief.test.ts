@@ -11,8 +11,7 @@ const read = (change: (draft: Record<string, never>) => void) => {
 const set = (path: string[], value: unknown) => (draft: Record<string, never>) => {
   const last = path.at(-1)!;
   const holder = path.slice(0, -1).reduce((at, key) => at[key] as never, draft) as Record<string, unknown>;
-  if (value === undefined) delete holder[last];
-  else holder[last] = value;
+  holder[last] = value;
 };
 
 describe("readBrief", () => {
@@ -60,7 +59,7 @@ describe("readBrief", () => {
     [
       ["targets"],
       { deadZone_um: { min: 50, max: 5 } },
-      "targets.deadZone_um has min 50 above max 5; swap them",
+      "targets.deadZone_um runs from 50 to 5; min must be below max",
     ],
     [["avoid"], [{ reason: "because" }], "avoid[0] must name either an ingredient or a hazard"],
   ])("refuses %j = %j", (path, value, message) => {

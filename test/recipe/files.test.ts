@@ -30,7 +30,7 @@ const base = () => readShelf([join(folder, "base")]);
 describe("readShelf", () => {
   it("reads what the folders hold", () => {
     const { ingredients, spectra, films } = base();
-    expect([...ingredients.keys()].sort()).toEqual(["AB", "MID", "PI", "THICK", "THIN"]);
+    expect([...ingredients.keys()].sort()).toEqual(["AB", "MID", "PI", "SAND", "THICK", "THIN"]);
     expect([spectra.size, films.size]).toEqual([3, 1]);
   });
 
@@ -39,7 +39,7 @@ describe("readShelf", () => {
     write("mine/ingredients/thin.json", own);
     const { ingredients } = readShelf([join(folder, "base"), join(folder, "mine")]);
     expect(ingredients.get("THIN")!.name).toBe("our own");
-    expect(ingredients.size).toBe(5);
+    expect(ingredients.size).toBe(6);
   });
 
   it("lets a later interaction of the same pair come first, whichever way round it is named", () => {

@@ -11,6 +11,7 @@ import {
   readRecipe,
   withMassFraction,
   withRatio,
+  withShares,
   type Part,
 } from "../../lib/recipe/formulation.js";
 import { formulationOf, shelf } from "../fixtures.js";
@@ -150,6 +151,20 @@ describe("changing a formulation", () => {
     expect(massFractionOf(changed, "THIN")).toBeCloseTo(0.2, 14);
     expect(massFractionOf(changed, "THICK")).toBeCloseTo(0.6, 14);
     expect(massFractionOf(changed, "MID")).toBeCloseTo(0.2, 14);
+  });
+
+  it("shares out three ingredients and leaves the rest", () => {
+    const four = formulationOf({ THIN: 40, THICK: 30, MID: 20, PI: 10 });
+    const changed = withShares(four, { THIN: 0.5, THICK: 0.3, MID: 0.2 });
+    expect(
+      ["THIN", "THICK", "MID", "PI"].map((id) => Number(massFractionOf(changed, id).toPrecision(12))),
+    ).toEqual([0.45, 0.27, 0.18, 0.1]);
+    expect(() => withShares(four, { THIN: 0.5, MID: 0.6 })).toThrow(
+      'formulation "test": shares add up to 1.1; they must add up to 1',
+    );
+    expect(() => withShares(four, { THIN: -0.5, MID: 1.5 })).toThrow(
+      "share of THIN is -0.5; it must be a number from 0 to 1",
+    );
   });
 
   it("raises an ingredient from nothing", () => {

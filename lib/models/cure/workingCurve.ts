@@ -3,7 +3,7 @@ import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js"
 
 /** The two parameters of a working curve. */
 export interface WorkingCurve {
-  /** Dp: depth gained each time the exposure grows by a factor e, above 0, um. */
+  /** Dp: depth gained each time the exposure grows by a factor e, above 0, um. Not the optical depth, `opticalDepth_um`. */
   readonly penetrationDepth_um: number;
   /** Ec: the exposure that just begins to gel the resin at the window, above 0, mJ/cm2. */
   readonly criticalExposure_mJcm2: number;

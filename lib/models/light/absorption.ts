@@ -145,11 +145,7 @@ export function molarAbsorptionFromSpecificAbsorbance(input: {
 }): number {
   const where = "molarAbsorptionFromSpecificAbsorbance";
   checkNumbers(where, input, { specificAbsorbance_dLgcm: notNegative, molarMass_gmol: molarMass });
-  return finite(
-    where,
-    "the molar absorption",
-    (input.specificAbsorbance_dLgcm * input.molarMass_gmol) / 10,
-  );
+  return finite(where, "the molar absorption", (input.specificAbsorbance_dLgcm * input.molarMass_gmol) / 10);
 }
 
 /**

@@ -86,7 +86,8 @@ export function interpolateSpectrum(input: {
   return (1 - share) * values[above - 1]! + share * values[above]!;
 }
 
-function checkNodes(where: string, field: string, nodes: NumberList, atLeast: number): void {
+/** Refuses nodes that do not rise. @internal */
+export function checkNodes(where: string, field: string, nodes: NumberList, atLeast: number): void {
   checkList(where, field, nodes, { atLeast });
   for (let k = 1; k < nodes.length; k++) {
     if (nodes[k]! <= nodes[k - 1]!) {

@@ -67,7 +67,7 @@ export type DeadZone =
  * ```
  */
 export function deadZone(input: DeadZoneInput): DeadZone {
-  checkInput(input);
+  if (!isUsual(input)) checkInput(input);
   const zone = steadyZone({
     D: input.diffusivity_m2s,
     saturation: input.saturation_molm3,
@@ -76,14 +76,42 @@ export function deadZone(input: DeadZoneInput): DeadZone {
     alpha: 100 * input.napierianAbsorption_percm,
     l: 1e-6 * input.filmEquivalentThickness_um,
   });
-  for (const [field, value] of Object.entries(zone)) {
-    if (field !== "outcome")
-      checkNumber(value, { where, field, advice: "an input is beyond any real resin or light" });
-  }
+  if (!isStated(zone)) checkZone(zone);
   return zone;
 }
 
 const where = "deadZone";
+
+/** True for input that `checkInput` passes. Draws by the thousand go by here, without the cost of naming each field. */
+function isUsual(input: DeadZoneInput): boolean {
+  const { diffusivity_m2s, saturation_molm3, radicalGeneration_molm3s, oxygenPerRadical } = input;
+  const { napierianAbsorption_percm, filmEquivalentThickness_um } = input;
+  return (
+    isBetween(diffusivity_m2s, Number.MIN_VALUE, Number.MAX_VALUE) &&
+    isBetween(saturation_molm3, 0, Number.MAX_VALUE) &&
+    isBetween(radicalGeneration_molm3s, Number.MIN_VALUE, Number.MAX_VALUE) &&
+    isBetween(oxygenPerRadical, Number.MIN_VALUE, Number.MAX_VALUE) &&
+    isBetween(napierianAbsorption_percm, 0, 1e6) &&
+    isBetween(filmEquivalentThickness_um, 0, Number.MAX_VALUE)
+  );
+}
+
+const isBetween = (value: unknown, min: number, max: number): boolean =>
+  typeof value === "number" && value >= min && value <= max;
+
+const isStated = (zone: DeadZone): boolean =>
+  zone.outcome === "dead-zone"
+    ? Number.isFinite(zone.thickness_um) &&
+      Number.isFinite(zone.wallOxygen_molm3) &&
+      Number.isFinite(zone.flux_molm2s)
+    : Number.isFinite(zone.neededRadicalGeneration_molm3s);
+
+function checkZone(zone: DeadZone): void {
+  for (const [field, value] of Object.entries(zone)) {
+    if (field !== "outcome")
+      checkNumber(value, { where, field, advice: "an input is beyond any real resin or light" });
+  }
+}
 
 function checkInput(input: DeadZoneInput): void {
   checkNumbers(where, input, {
@@ -131,13 +159,46 @@ function thicknessInUniformLight(delta0: number, l: number): number {
  */
 function frontPosition(given: Readonly<Record<"film" | "share" | "uniform", number>>): number {
   const { film, share, uniform } = given;
-  const excess = (x: number): number =>
-    x < 1
-      ? burnt(x) - film * Math.expm1(-x) - (1 + film) * share
-      : (1 + film) * (1 - share) - (1 + x + film) * Math.exp(-x);
+  const x = excess(1, film, share) >= 0 ? nearRoot(film, share, uniform) : farRoot(film, share, uniform);
+  if (x > 0) return x;
   let high = 2 * uniform;
-  while (excess(high) <= 0) high *= 2;
-  return findRoot({ f: excess, low: 0.999 * uniform, high, where });
+  while (excess(high, film, share) <= 0) high *= 2;
+  return findRoot({ f: (z) => excess(z, film, share), low: 0.999 * uniform, high, where });
+}
+
+function excess(x: number, film: number, share: number): number {
+  return x < 1
+    ? burnt(x) - film * Math.expm1(-x) - (1 + film) * share
+    : (1 + film) * (1 - share) - (1 + x + film) * Math.exp(-x);
+}
+
+/** Halley's method on `excess` for a root below 1, from the first terms of its expansion; NaN if it strays. */
+function nearRoot(film: number, share: number, uniform: number): number {
+  let x = Math.min(uniform * (1 + (uniform * (uniform / 3 + film / 2)) / (uniform + film)), 1);
+  for (let step = 0; step < 8; step++) {
+    const slope = x + film;
+    const newton = (excess(x, film, share) * Math.exp(x)) / slope;
+    const change = newton / (1 - (newton * (1 - slope)) / (2 * slope));
+    x -= change;
+    if (!(x >= 0.999 * uniform && x < 1.5)) return NaN;
+    if (Math.abs(change) <= 1e-6 * x) return x;
+  }
+  return NaN;
+}
+
+/**
+ * Newton's method for a root above 1 on the logarithm of the balance, x - ln(1 + x + film) + ln((1 + film) (1 - share)): it bends
+ * upwards everywhere, so that every step after the first comes from above. NaN if it strays.
+ */
+function farRoot(film: number, share: number, uniform: number): number {
+  const left = Math.log((1 + film) * (1 - share));
+  let x = Math.max(uniform, 1);
+  for (let step = 0; step < 60; step++) {
+    const change = ((x - Math.log(1 + x + film) + left) * (1 + x + film)) / (x + film);
+    x -= change;
+    if (Math.abs(change) <= 1e-9 * x) return x;
+  }
+  return NaN;
 }
 
 /** 1 - (1 + x) e^-x; for small x by the series of e^-x (e^x - 1 - x), whose terms are all positive. */

@@ -128,25 +128,43 @@ export function fitAndrade(readings: {
 
 const fitWhere = "fitAndrade";
 
-const kelvin = (temperature_C: number): number => temperature_C + 273.15;
+/** Absolute temperature, K. @internal */
+export const kelvin = (temperature_C: number): number => temperature_C + 273.15;
 
-/** Repeats at one temperature may scatter; only a temperature whose readings all lie above the last one's is refused. */
 function checkFalls(temperatures_C: NumberList, viscosities_mPas: NumberList): void {
+  checkTwoTemperatures(fitWhere, temperatures_C);
+  const rise = findRise(temperatures_C, viscosities_mPas);
+  if (rise !== undefined) {
+    throw new InputError(`${fitWhere}: ${rise}; check both, or leave out the one that is wrong`);
+  }
+}
+
+/**
+ * Refuses readings that are all at one temperature.
+ * @throws InputError naming it.
+ * @internal
+ */
+export function checkTwoTemperatures(where: string, temperatures_C: NumberList): void {
+  const first = temperatures_C[0]!;
+  if (Array.from(temperatures_C).every((t) => t === first)) {
+    throw new InputError(`${where}: all readings are at ${first} °C; measure at two temperatures or more`);
+  }
+}
+
+/**
+ * The first place where a viscosity does not fall with temperature, in words; undefined where all fall. Repeats at one
+ * temperature may scatter: only a temperature whose readings all lie above the last one's counts.
+ * @internal
+ */
+export function findRise(temperatures_C: NumberList, viscosities_mPas: NumberList): string | undefined {
   const rows = Array.from(temperatures_C, (t, row) => ({ row, t, eta: viscosities_mPas[row]! }));
   rows.sort((a, b) => a.t - b.t || a.eta - b.eta);
-  if (rows[0]!.t === rows.at(-1)!.t) {
-    throw new InputError(
-      `${fitWhere}: all readings are at ${rows[0]!.t} °C; measure at two temperatures or more`,
-    );
-  }
   for (let i = 1; i < rows.length; i++) {
     const [before, after] = [rows[i - 1]!, rows[i]!];
     if (after.t > before.t && after.eta >= before.eta) {
       const say = ({ row, t, eta }: typeof before): string => `reading ${row} (${t} °C, ${eta} mPas)`;
-      throw new InputError(
-        `${fitWhere}: the viscosity does not fall from ${say(before)} to ${say(after)}; ` +
-          "check both, or leave out the one that is wrong",
-      );
+      return `the viscosity does not fall from ${say(before)} to ${say(after)}`;
     }
   }
+  return undefined;
 }

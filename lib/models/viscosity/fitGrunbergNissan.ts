@@ -1,16 +1,6 @@
 // The Grunberg-Nissan interaction of two liquids from viscosities measured along their binary line.
-import { fraction, InputError, positive } from "../../door.js";
-import { linearLeastSquares } from "../../numerics/linear.js";
-import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
-import { checkBasis, type MixingBasis } from "./grunbergNissan.js";
-
-/** Viscosities of blends of two liquids, and of the two liquids themselves. */
-export interface BinaryViscosities {
-  readonly fractions: NumberList;
-  readonly viscosities_mPas: NumberList;
-  readonly pureViscosities_mPas: readonly [number, number];
-  readonly basis: MixingBasis;
-}
+import { averageDeviation, fitTerms, interiorOf, type BinaryViscosities } from "./fitRedlichKister.js";
+import type { MixingBasis } from "./grunbergNissan.js";
 
 /** The fitted interaction, how well it is known, and how well one number describes the line. */
 export interface GrunbergNissanFit {
@@ -39,7 +29,8 @@ export interface GrunbergNissanFit {
  * G = sum a b / sum a^2, s^2 = sum (b - G a)^2 / (n - 1), u = s / sqrt(sum a^2).
  *
  * Assumes one relative error for all readings. A fit in eta itself gives another G when the pure viscosities lie far
- * apart. When the deviations change sign slowly along the line, one G is not enough: look at `averageDeviation`.
+ * apart. When the deviations change sign slowly along the line, one G is not enough: look at `averageDeviation`, and
+ * use {@link fitRedlichKister}, which looks for that.
  * @throws InputError on fewer than 2 blends between the pure ends, all blends at one composition, a fraction outside
  * 0 to 1, a viscosity not above 0, or lists of different lengths.
  * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0; least squares of one
@@ -58,48 +49,14 @@ export interface GrunbergNissanFit {
  * ```
  */
 export function fitGrunbergNissan(blends: BinaryViscosities): GrunbergNissanFit {
-  checkBlends(blends);
-  const { basis, pureViscosities_mPas, viscosities_mPas } = blends;
-  const [lnEta1, lnEta2] = pureViscosities_mPas.map(Math.log) as [number, number];
-  const interior = Array.from(blends.fractions, (x1, k) => ({
-    x1,
-    lnEta: Math.log(viscosities_mPas[k]!),
-  })).filter(({ x1 }) => x1 > 0 && x1 < 1);
-  checkSpread(interior.map(({ x1 }) => x1));
-  const fit = linearLeastSquares({
-    design: interior.map(({ x1 }) => [x1 * (1 - x1)]),
-    response: interior.map(({ x1, lnEta }) => lnEta - x1 * lnEta1 - (1 - x1) * lnEta2),
-  });
-  const deviations = fit.residuals.map((r) => Math.abs(Math.exp(-r) - 1));
+  const interior = interiorOf("fitGrunbergNissan", blends, 1);
+  const fit = fitTerms(interior, blends.pureViscosities_mPas, 1);
   return {
     G: fit.coefficients[0]!,
     u: fit.standardErrors[0]!,
-    basis,
+    basis: blends.basis,
     residualStandardDeviation: fit.residualStandardDeviation,
-    averageDeviation: deviations.reduce((sum, d) => sum + d, 0) / deviations.length,
+    averageDeviation: averageDeviation(fit.residuals),
     points: interior.length,
   };
-}
-
-const where = "fitGrunbergNissan";
-
-function checkBlends({ fractions, viscosities_mPas, pureViscosities_mPas, basis }: BinaryViscosities): void {
-  checkBasis(where, basis);
-  checkList(where, "fractions", fractions, fraction);
-  checkList(where, "viscosities_mPas", viscosities_mPas, positive);
-  checkSameLength(where, { fractions, viscosities_mPas });
-  checkList(where, "pureViscosities_mPas", pureViscosities_mPas, { ...positive, atLeast: 2 });
-}
-
-function checkSpread(interior: readonly number[]): void {
-  if (interior.length < 2) {
-    throw new InputError(
-      `${where}: ${interior.length} of the fractions lie between 0 and 1; at least 2 blends must be measured`,
-    );
-  }
-  if (interior.every((x1) => x1 === interior[0])) {
-    throw new InputError(
-      `${where}: all blends have the fraction ${interior[0]}; measure at least two different compositions`,
-    );
-  }
 }

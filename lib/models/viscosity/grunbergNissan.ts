@@ -79,20 +79,32 @@ function checkMixture({ fractions, viscosities_mPas, basis, interactions }: Grun
   checkFractions(where, "fractions", fractions);
   checkList(where, "viscosities_mPas", viscosities_mPas, positive);
   checkSameLength(where, { fractions, viscosities_mPas });
+  checkInteractions(where, interactions, { basis, components: fractions.length });
+}
+
+/**
+ * Refuses interactions that do not belong to the mixture.
+ * @throws InputError on one that is on another basis, of a component with itself, given twice, or of none that is there.
+ */
+export function checkInteractions(
+  where: string,
+  interactions: readonly PairInteraction[],
+  { basis, components }: { readonly basis: MixingBasis; readonly components: number },
+): void {
   const seen = new Set<string>();
   interactions.forEach((pair, k) => {
-    const field = `interactions[${k}]`;
-    checkNumber(pair.G, { where, field: `${field}.G` });
-    checkPair(field, pair, fractions.length);
+    const field = `${where}: interactions[${k}]`;
+    checkNumber(pair.G, { where, field: `interactions[${k}].G` });
+    checkPair(field, pair, components);
     if (pair.basis !== basis) {
       throw new InputError(
-        `${where}: ${field} was found on the ${pair.basis} basis and the fractions are on the ${basis} basis; ` +
+        `${field} was found on the ${pair.basis} basis and the fractions are on the ${basis} basis; ` +
           `convert the fractions or fit G again on the ${basis} basis`,
       );
     }
     const key = [pair.first, pair.second].sort((a, b) => a - b).join(" and ");
     if (seen.has(key)) {
-      throw new InputError(`${where}: ${field} gives components ${key} a second time; give each pair once`);
+      throw new InputError(`${field} gives components ${key} a second time; give each pair once`);
     }
     seen.add(key);
   });
@@ -102,13 +114,13 @@ function checkPair(field: string, { first, second }: PairInteraction, components
   for (const [end, index] of Object.entries({ first, second })) {
     if (!Number.isInteger(index) || index < 0 || index >= components) {
       throw new InputError(
-        `${where}: ${field}.${end} is ${show(index)}; it must be the place of a component, 0 to ${components - 1}`,
+        `${field}.${end} is ${show(index)}; it must be the place of a component, 0 to ${components - 1}`,
       );
     }
   }
   if (first === second) {
     throw new InputError(
-      `${where}: ${field} pairs component ${first} with itself; a component has no interaction with itself`,
+      `${field} pairs component ${first} with itself; a component has no interaction with itself`,
     );
   }
 }

@@ -20,7 +20,10 @@ describe("units of permeation", () => {
   });
 
   it("has 21227.59 Pa of oxygen in dry air at 101325 Pa", () => {
-    expect(oxygenPartialPressure({ oxygenFraction: 0.2095, pressure_Pa: 101_325 })).toBeCloseTo(21227.5875, 4);
+    expect(oxygenPartialPressure({ oxygenFraction: 0.2095, pressure_Pa: 101_325 })).toBeCloseTo(
+      21227.5875,
+      4,
+    );
     expect(oxygenPartialPressure({ oxygenFraction: 0, pressure_Pa: 101_325 })).toBe(0);
   });
 });

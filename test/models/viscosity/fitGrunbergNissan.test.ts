@@ -6,18 +6,7 @@ import {
   moleToMassFractions,
   type MixingBasis,
 } from "../../../lib/models/viscosity.js";
-import { readTable } from "../../reference/readTable.js";
-
-interface Isotherm {
-  readonly x1: readonly number[];
-  readonly eta: readonly number[];
-  readonly pure: readonly [number, number];
-}
-
-function isotherm(file: string, temperature_K: string): Isotherm {
-  const { x1, [`eta_${temperature_K}`]: eta } = readTable(`viscosity/${file}.csv`);
-  return { x1: x1!, eta: eta!, pure: [eta![x1!.indexOf(1)]!, eta![x1!.indexOf(0)]!] };
-}
+import { readIsotherm, type Isotherm } from "./readIsotherm.js";
 
 function fit(
   { x1, eta, pure }: Isotherm,
@@ -88,7 +77,7 @@ describe("fitGrunbergNissan", () => {
     { file: "1-octanol__hexadecane", T: "298.15", G: -0.95038, u: 0.0144, s: 0.00933, AAD: 0.77, points: 14 },
     { file: "1-octanol__hexadecane", T: "308.15", G: -0.87412, u: 0.0186, s: 0.01206, AAD: 0.98, points: 14 },
   ])("fits $file at $T K", ({ file, T, G, u, s, AAD, points }) => {
-    const found = fit(isotherm(file, T));
+    const found = fit(readIsotherm(file, T));
     expect(Math.abs(found.G - G)).toBeLessThan(2e-5);
     expect(Math.abs(found.u - u)).toBeLessThan(6e-5);
     expect(Math.abs(found.residualStandardDeviation - s)).toBeLessThan(2e-5);
@@ -99,14 +88,14 @@ describe("fitGrunbergNissan", () => {
   it("gives a G that belongs to its basis: what is ideal by mass is far from it by mole, and the reverse", () => {
     // Bajic, Zivkovic, Serbanovic, Kijevcanin, Thermochim. Acta 562 (2013) 42-55, doi 10.1016/j.tca.2013.03.025,
     // 298.15 K; figures by an independent program, printed to 0.01 % and 5 decimals. Molar masses from atomic weights.
-    const diol = isotherm("12-propanediol__butyl-lactate", "298.15");
+    const diol = readIsotherm("12-propanediol__butyl-lactate", "298.15");
     const [byMole, byMass] = [fit(diol), fit(diol, "mass", [76.094, 146.184])];
     expect(Math.abs(byMole.G - -1.67317)).toBeLessThan(2e-5);
     expect(Math.abs(byMass.G - -0.01104)).toBeLessThan(2e-5);
     expect(Math.abs(100 * byMole.idealDeviation - 36.87)).toBeLessThan(0.02);
     expect(Math.abs(100 * byMass.idealDeviation - 0.78)).toBeLessThan(0.02);
 
-    const alcohol = isotherm("1-propanol__butyl-lactate", "298.15");
+    const alcohol = readIsotherm("1-propanol__butyl-lactate", "298.15");
     expect(Math.abs(100 * fit(alcohol).idealDeviation - 0.61)).toBeLessThan(0.02);
     expect(Math.abs(100 * fit(alcohol, "mass", [60.095, 146.184]).idealDeviation - 9.27)).toBeLessThan(0.02);
   });

@@ -1,6 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { fitGrunbergNissan, grunbergNissan, type PairInteraction } from "../../../lib/models/viscosity.js";
+import { robustScores } from "../../../lib/numerics/runs.js";
 import { readBlocks } from "../../reference/readTable.js";
 
 const viscosity = fc.double({ min: 0.1, max: 1e5, noNaN: true });
@@ -127,16 +128,16 @@ describe("grunbergNissan, published tables", () => {
       basis: "mole",
     }).G;
 
-  const averageDeviation = (rows: number[][], interactions: PairInteraction[]): number => {
-    const deviations = rows.map(([x1, x2, eta]) => {
-      const calculated = grunbergNissan({
-        fractions: [x1!, x2!, 1 - x1! - x2!],
-        viscosities_mPas: [pure.pentanone, pure.butanol, pure.acetate],
-        basis: "mole",
-        interactions,
-      });
-      return Math.abs(calculated / eta! - 1);
+  const predicted = ([x1, x2]: number[], interactions: PairInteraction[]): number =>
+    grunbergNissan({
+      fractions: [x1!, x2!, 1 - x1! - x2!],
+      viscosities_mPas: [pure.pentanone, pure.butanol, pure.acetate],
+      basis: "mole",
+      interactions,
     });
+
+  const averageDeviation = (rows: number[][], interactions: PairInteraction[]): number => {
+    const deviations = rows.map((row) => Math.abs(predicted(row, interactions) / row[2]! - 1));
     return deviations.reduce((sum, d) => sum + d, 0) / deviations.length;
   };
 
@@ -155,6 +156,11 @@ describe("grunbergNissan, published tables", () => {
     expect(sound).toHaveLength(38);
     expect(Math.abs(100 * averageDeviation(sound, interactions) - 4.94)).toBeLessThan(0.02);
     expect(Math.abs(100 * averageDeviation(ternary!, []) - 34.6)).toBeLessThan(0.05);
+    // Its robust score is above 10, and the next is 5.2, by the same program.
+    const residuals = ternary!.map((row) => Math.log(row[2]! / predicted(row, interactions)));
+    const sizes = robustScores(residuals).map(Math.abs);
+    expect(sizes.flatMap((size, i) => (size > 10 ? [ternary![i]![2]] : []))).toEqual([1.784]);
+    expect([...sizes].sort((a, b) => b - a)[1]).toBeCloseTo(5.2, 1);
   });
 
   it("agrees with a worked example of the ideal rule, styrene and toluene 50/50 at 20 °C: 0.67 mPa s", () => {

@@ -1,0 +1,157 @@
+// Layers printed one after the other, followed in time: what the steady dead zone cannot say. Whether each layer gels, when,
+// what stays liquid at the window, how far it is cured where it meets the layer before, and what the next one starts from.
+
+import { checkNumber } from "../door.js";
+import { exposeLayers, type LayerExposure } from "../models/oxygen.js";
+import type { Interval, UsedSource, Warning } from "../result.js";
+import { constantOf, type Case } from "./case.js";
+import { cureModel } from "./cure.js";
+import { intervalOf, propagate, sourcesOf, startDraws, type DrawOptions, type Read } from "./doubt.js";
+import { oxygenModel } from "./oxygen.js";
+
+/** One layer of a series: shares and intervals over the draws, and the run at the stated figures. */
+export interface LayerEstimate {
+  /** 1 for the first. */
+  readonly layer: number;
+  /** Share of the draws in which it gels. */
+  readonly gelsShare: number;
+  /** Light until conversion begins; undefined where it does not at the stated figures. */
+  readonly inductionTime_s?: Interval;
+  /** Light until the first resin has gelled. */
+  readonly gelTime_s?: Interval;
+  /** Thickness at the window that has not gelled when the light goes off. */
+  readonly deadZone_um?: Interval;
+  /** Conversion where the layer meets the one before: its green strength. */
+  readonly interfaceConversion: Interval;
+  readonly meanConversion: Interval;
+  /** Profiles and times at the stated figures. */
+  readonly stated: LayerExposure;
+}
+
+/** A series of layers under a brief. */
+export interface LayerSeries {
+  readonly exposure_s: number;
+  readonly layers: readonly LayerEstimate[];
+  readonly warnings: readonly Warning[];
+  readonly sources: readonly UsedSource[];
+}
+
+/** What may be set for a series beside the brief. */
+export interface SeriesOptions extends DrawOptions {
+  /** How many layers, 1 to 50; 3 unless given. */
+  readonly layers?: number;
+  /** Light on each layer; the estimated time of the working curve unless given. */
+  readonly exposure_s?: number;
+  /** When to read profiles, counted from the start of the dark time before the light. */
+  readonly times_s?: readonly number[];
+}
+
+/**
+ * Prints layers in the model: dark, light, lift, each layer with what the one before has left in the gap.
+ *
+ * Oxygen diffuses in and is burnt by radicals that adjust at once ({@link exposeLayers}); before each light the brief's dark
+ * time passes, and its fresh share of the gap is new resin. The first gap is one layer thickness. 60 draws unless more are
+ * asked for: each is a whole transient run.
+ * @throws InputError as {@link deadZoneOf}; when layers, exposure or times are out of range.
+ * @source Models: {@link exposeLayers}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { layersOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const series = layersOf({ ...openBrief("data/briefs/flow-cell.json"), layers: 2, exposure_s: 8 });
+ * series.layers.map(({ stated }) => stated.outcome).join(" "); // → "gels gels"
+ * ```
+ */
+export function layersOf(input: Case & SeriesOptions): LayerSeries {
+  const { draws = 60, layers = 3 } = input;
+  checkNumber(layers, { where: "layersOf", field: "layers", min: 1, max: 50 });
+  const started = startDraws({ ...input, draws });
+  const model = seriesModel(input);
+  const { stated, outcomes, inputs } = propagate(model, started);
+  const estimates = stated.series.map((run, k): LayerEstimate => {
+    const runs = outcomes.map(({ series }) => series[k]!);
+    const interval = (of: (run: LayerExposure) => number | undefined) => {
+      const [value, values] = [of(run), runs.map(of).filter((one) => one !== undefined)];
+      const enough = values.length >= Math.max(runs.length / 2, 2 / (1 - started.level));
+      return value === undefined || !enough
+        ? undefined
+        : intervalOf({ stated: value, values, level: started.level });
+    };
+    return {
+      layer: k + 1,
+      gelsShare: runs.filter(({ outcome }) => outcome === "gels").length / runs.length,
+      inductionTime_s: interval(({ inductionTime_s }) => lightTime(inductionTime_s, input)),
+      gelTime_s: interval(({ gelTime_s }) => lightTime(gelTime_s, input)),
+      deadZone_um: interval(({ end }) => end.deadZone.byGel_um),
+      interfaceConversion: interval(({ end }) => end.interfaceConversion)!,
+      meanConversion: interval(({ end }) => end.meanConversion)!,
+      stated: run,
+    };
+  });
+  return {
+    exposure_s: stated.exposure_s,
+    layers: estimates,
+    warnings: seriesWarnings(estimates),
+    sources: sourcesOf(inputs),
+  };
+}
+
+function seriesModel(input: Case & SeriesOptions) {
+  const { brief, shelf, layers = 3, times_s } = input;
+  const oxygen = oxygenModel(input);
+  const cure = cureModel(input);
+  const constant = (
+    name: "propagation_m3mols" | "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion",
+  ) => constantOf(shelf.constants, name);
+  // The plan is one plan: every draw gets the exposure that the stated figures ask for.
+  const exposure_s = input.exposure_s ?? cure(({ value }) => value).layerTime_s;
+  const { dark_s, freshFraction } = brief.betweenLayers;
+  const schedule = [
+    ...(dark_s > 0 ? [{ duration_s: dark_s, relativeIrradiance: 0 }] : []),
+    { duration_s: exposure_s, relativeIrradiance: 1 },
+  ];
+  return (read: Read) => {
+    const { filmEquivalentThickness_um, freshOxygen_molm3, ...drawn } = oxygen(read);
+    const series = exposeLayers({
+      ...drawn,
+      oxygen_molm3: freshOxygen_molm3,
+      window: { film: "resists", filmEquivalentThickness_um },
+      propagation_m3mols: read(constant("propagation_m3mols")),
+      termination_m3mols: read(constant("termination_m3mols")),
+      oxygenCapture_m3mols: read(constant("oxygenCapture_m3mols")),
+      gelConversion: read(constant("gelConversion")),
+      gapThickness_um: brief.layerThickness_um,
+      layerThickness_um: brief.layerThickness_um,
+      schedule,
+      layers,
+      freshFraction,
+      ...(times_s === undefined ? {} : { times_s }),
+    });
+    return { exposure_s, series };
+  };
+}
+
+/** Times are counted from the start of the dark; a chemist counts light. */
+function lightTime(time_s: number | undefined, { brief }: Case): number | undefined {
+  return time_s === undefined ? undefined : time_s - brief.betweenLayers.dark_s;
+}
+
+function seriesWarnings(layers: readonly LayerEstimate[]): Warning[] {
+  const warnings: Warning[] = [];
+  const liquid = layers.filter(({ gelsShare }) => gelsShare < 0.95);
+  if (liquid.length > 0) {
+    const named = liquid
+      .map(({ layer, gelsShare }) => `layer ${layer} in ${Math.floor(100 * gelsShare)} %`)
+      .join(", ");
+    warnings.push({
+      code: "may-stay-liquid",
+      message: `Not every draw gels: ${named}. Expose longer, or measure a cure-depth series first.`,
+    });
+  }
+  warnings.push({
+    code: "series-estimated",
+    message:
+      "Rate constants are those of the class, from memory. The lift is taken to mix the gap at once; no heat, no bleaching, no flow while the light is on.",
+  });
+  return warnings;
+}

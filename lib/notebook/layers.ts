@@ -1,0 +1,88 @@
+// How a series of layers is shown: one row a layer, and profiles from the window up.
+
+import type { LayerEstimate, LayerSeries } from "../assess/layers.js";
+import type { FigureContent, TableContent } from "./content.js";
+import { numberText } from "./digits.js";
+import { lineFigure } from "./figure/line.js";
+import { sharePercent } from "./phrases.js";
+import { tableOf } from "./table.js";
+
+/**
+ * A series as a table: whether each layer gels, when, what stays liquid, how far it is cured where it meets the one before.
+ * @example
+ * ```ts
+ * import { layersOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { layerTable } from "resinwright/notebook";
+ * const table = layerTable(layersOf({ ...openBrief("data/briefs/flow-cell.json"), layers: 2, exposure_s: 8 }));
+ * table.rows.map(([layer]) => layer); // → [1, 2]
+ * ```
+ */
+export function layerTable({ exposure_s, layers }: LayerSeries): TableContent {
+  return tableOf({
+    caption: `Layers one after the other, ${numberText(exposure_s, 3)} s of light each, with 95 % intervals`,
+    rows: layers.map((one) => ({
+      layer: one.layer,
+      gels: `${sharePercent(one.gelsShare)} % of draws`,
+      gelTime_s: one.gelTime_s,
+      deadZone_um: one.deadZone_um,
+      meeting: one.interfaceConversion,
+      mean: one.meanConversion,
+    })),
+    columns: [
+      { key: "layer", align: "left" },
+      { key: "gels" },
+      { key: "gelTime_s", name: "gels after" },
+      { key: "deadZone_um", name: "left liquid" },
+      { key: "meeting", name: "conversion at the layer before" },
+      { key: "mean", name: "mean conversion" },
+    ],
+  });
+}
+
+/**
+ * Profiles of one layer from the window up, at the stated figures, one line for each time that was asked for.
+ * @param layer - One layer of a series run with `times_s`.
+ * @param quantity - Double-bond conversion or oxygen.
+ * @param conditions - What stands under the figure.
+ * @param dark_s - Dark time before the light, taken off the times so that they count light.
+ * @example
+ * ```ts
+ * import { layersOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { profileFigure } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const { dark_s } = work.brief.betweenLayers;
+ * const { layers } = layersOf({ ...work, layers: 1, exposure_s: 6, times_s: [dark_s + 2, dark_s + 4] });
+ * const figure = profileFigure({ layer: layers[0]!, quantity: "conversion", conditions: "Flow-cell resin", dark_s });
+ * figure.caption; // → "Conversion in layer 1 from the window up. Flow-cell resin."
+ * ```
+ */
+export function profileFigure({
+  layer,
+  quantity,
+  conditions,
+  dark_s,
+}: {
+  layer: LayerEstimate;
+  quantity: "conversion" | "oxygen_molm3";
+  conditions: string;
+  dark_s: number;
+}): FigureContent {
+  const readings = [...layer.stated.readings, layer.stated.end].slice(0, 6);
+  const name = quantity === "conversion" ? "Conversion" : "Oxygen";
+  return lineFigure({
+    caption: `${name} in layer ${layer.layer} from the window up`,
+    conditions,
+    x: { label: "distance from the window", unit: "µm" },
+    y:
+      quantity === "conversion"
+        ? { label: "conversion", range: [0, 1] }
+        : { label: "oxygen", unit: "mol/m³" },
+    series: readings.map((reading) => ({
+      name: `after ${numberText(reading.time_s - dark_s, 2)} s of light`,
+      x: reading.depths_um,
+      y: reading[quantity],
+    })),
+  });
+}

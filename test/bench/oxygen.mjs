@@ -1,0 +1,97 @@
+// How fast the oxygen models are, in three ratios that hold on any machine: a transient layer against SciPy's LSODA with a banded
+// Jacobian at the same accuracy (needs python3-scipy; says so where it is missing), the cost of twice the cells and of more layers, and
+// ten thousand closed-form dead zones. Build first: npm run build. Exits with 1 where a limit is missed.
+import { spawnSync } from "node:child_process";
+import { fileURLToPath } from "node:url";
+import { deadZone, exposeLayer, exposeLayers } from "resinwright";
+
+// Round numbers for checking, not a material: 20 um of dead zone in even light without film, induction time 2 s.
+const layer = {
+  radicalGeneration_molm3s: 0.5,
+  napierianAbsorption_percm: 100,
+  diffusivity_m2s: 1e-10,
+  oxygenPerRadical: 1,
+  oxygenCapture_m3mols: 5e5,
+  propagation_m3mols: 25,
+  termination_m3mols: 2500,
+  gapThickness_um: 100,
+  oxygen_molm3: 1,
+  saturation_molm3: 1,
+  window: { film: "resists", filmEquivalentThickness_um: 0 },
+  schedule: [{ duration_s: 10, relativeIrradiance: 1 }],
+  gelConversion: 0.2,
+};
+
+function state(ok, text) {
+  console.log(`${ok ? "ok  " : "FAIL"} ${text}`);
+  if (!ok) process.exitCode = 1;
+}
+
+/** Time of the fastest of `rounds` runs, ms: the one the machine disturbed least. */
+function fastest(run, rounds) {
+  let best = Infinity;
+  for (let k = 0; k < rounds; k++) {
+    const start = performance.now();
+    run();
+    best = Math.min(best, performance.now() - start);
+  }
+  return best;
+}
+
+// Mean conversion and depth of 20 % at 5 and 10 s, converged by an independent program.
+const reference = [0.1614726, 22.02874, 0.5368637, 21.04434];
+const transient = () => exposeLayer({ ...layer, times_s: [5, 10] });
+const found = transient().readings.flatMap(({ meanConversion, deadZone: { byGel_um } }) => [
+  meanConversion,
+  byGel_um,
+]);
+const error = Math.max(...found.map((value, i) => Math.abs(value / reference[i] - 1)));
+state(
+  error < 1e-3,
+  `layer of 10 s, as exposeLayer does it unasked: error ${error.toExponential(1)} (limit 1e-3)`,
+);
+
+// The two take turns, so that whatever else the machine does slows both.
+const script = fileURLToPath(new URL("./oxygen_lsoda.py", import.meta.url));
+let [ours, theirs] = [fastest(transient, 30), Infinity];
+let words = "";
+for (let turn = 0; turn < 3; turn++) {
+  const { stdout, status } = spawnSync("/usr/bin/python3", [script], { encoding: "utf8" });
+  if (status !== 0) break;
+  const { scipy, cells, rtol, atol, ms } = JSON.parse(stdout);
+  theirs = Math.min(theirs, ms);
+  ours = Math.min(ours, fastest(transient, 30));
+  words = `SciPy ${scipy} LSODA banded, ${cells} cells, rtol ${rtol}, atol ${atol}: ${theirs.toFixed(1)} ms`;
+}
+console.log(`     exposeLayer with its error estimate: ${ours.toFixed(2)} ms`);
+if (words === "") console.log("     python3-scipy is not here; the comparison with LSODA is left out");
+else {
+  const ratio = theirs / ours;
+  state(ratio >= 15, `${words}, ${ratio.toFixed(0)} times as long (limit 15)`);
+}
+
+const closed = fastest(() => {
+  for (let k = 0; k < 10_000; k++)
+    deadZone({
+      diffusivity_m2s: 1e-10,
+      saturation_molm3: 1,
+      radicalGeneration_molm3s: 0.4 + k * 1e-5,
+      oxygenPerRadical: 1,
+      napierianAbsorption_percm: 100,
+      filmEquivalentThickness_um: 10,
+    });
+}, 20);
+state(closed < 10, `10000 closed-form dead zones: ${closed.toFixed(1)} ms (limit 10 ms)`);
+
+// Cost by cells: all else equal, twice the cells may take a little over twice the time.
+const times = [400, 800, 1600].map((cells) => fastest(() => exposeLayer({ ...layer, cells }), 12));
+for (const [few, many, growth] of [
+  [400, 800, times[1] / times[0]],
+  [800, 1600, times[2] / times[1]],
+])
+  state(growth < 2.5, `from ${few} to ${many} cells: ${growth.toFixed(2)} times as long (limit 2.5)`);
+
+const print = (layers) => () =>
+  exposeLayers({ ...layer, gapThickness_um: 50, layers, layerThickness_um: 50, freshFraction: 0.8 });
+const perLayer = fastest(print(40), 6) / fastest(print(20), 8) / 2;
+state(perLayer < 1.25, `40 layers against 20: ${perLayer.toFixed(2)} times the time a layer (limit 1.25)`);

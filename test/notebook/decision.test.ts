@@ -1,0 +1,103 @@
+import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { readRecords } from "../../lib/lab/record.js";
+import { decide } from "../../lib/notebook/decision.js";
+import { showMarkdown, showTable } from "../../lib/notebook/show.js";
+import { brief, formulationOf, shelf } from "../fixtures.js";
+
+vi.mock("../../lib/notebook/show.js", () => ({ showMarkdown: vi.fn(), showTable: vi.fn() }));
+
+let folder: string;
+beforeEach(() => {
+  folder = mkdtempSync(join(tmpdir(), "decisions-"));
+  vi.stubEnv("RESINWRIGHT_RECORDS", folder);
+});
+afterEach(() => {
+  vi.unstubAllEnvs();
+  vi.clearAllMocks();
+  rmSync(folder, { recursive: true });
+});
+
+const work = { formulation: formulationOf({ THIN: 60, THICK: 40 }), brief, shelf };
+const statement = "Mix four parts of THICK with six of THIN.";
+const figures = { share: 0.4, viscosity_mPas: 412.3456, film: "OPEN" };
+const decideIt = (change = {}) => decide({ work, from: "02", statement, figures, ...change });
+
+describe("decide", () => {
+  it("appends one record: what was decided, by whom, about what, with its figures whole", () => {
+    decideIt();
+    const names = readdirSync(folder);
+    expect(names).toHaveLength(1);
+    const record = JSON.parse(readFileSync(join(folder, names[0]!), "utf8")) as {
+      at: string;
+      figures: object;
+    };
+    expect(record).toMatchObject({
+      kind: "decision",
+      from: "02",
+      brief: "test",
+      formulation: "test",
+      statement,
+    });
+    expect(record.figures).toEqual(figures);
+    expect(new Date(record.at).toISOString()).toBe(record.at);
+  });
+
+  it("shows the statement, then what was appended and to which file", () => {
+    decideIt();
+    const [record] = readRecords(folder);
+    expect(vi.mocked(showMarkdown).mock.calls).toEqual([[`**Decided.** ${statement}`]]);
+    expect(vi.mocked(showTable).mock.calls).toHaveLength(1);
+    const [[table]] = vi.mocked(showTable).mock.calls as [Parameters<typeof showTable>];
+    expect(table.caption).toBe("What was appended to the lab record");
+    expect(table.rows).toEqual([
+      ["share", "0.4"],
+      ["viscosity_mPas", "412.3"],
+      ["film", "OPEN"],
+      ["written at", record!.at],
+      ["in the file", expect.stringMatching(/^\d{4}-.*-[0-9a-f]{12}….json$/)],
+    ]);
+  });
+
+  it("writes nothing where no notebook shows it", () => {
+    vi.mocked(showMarkdown).mockImplementationOnce(() => {
+      throw new Error("no notebook is running here");
+    });
+    expect(() => decideIt()).toThrow("no notebook is running here");
+    expect(readdirSync(folder)).toEqual([]);
+  });
+
+  it("adds a record each time and leaves the earlier one alone", () => {
+    decideIt();
+    const [first] = readdirSync(folder);
+    const before = readFileSync(join(folder, first!), "utf8");
+    decideIt({ statement: "Mix half and half." });
+    expect(readFileSync(join(folder, first!), "utf8")).toBe(before);
+    expect(readRecords(folder)).toHaveLength(2);
+  });
+
+  it.each([
+    [{ statement: " " }, "record: statement is empty; say what was decided or found"],
+    [{ figures: { share: NaN } }, "record: figures.share is NaN; a record holds finite numbers or text"],
+  ])("refuses %j, writes nothing and shows nothing", (change, message) => {
+    expect(() => decideIt(change)).toThrow(message);
+    expect(readdirSync(folder)).toEqual([]);
+    expect(showMarkdown).not.toHaveBeenCalled();
+    expect(showTable).not.toHaveBeenCalled();
+  });
+
+  it("keeps records beside the notebooks' folder unless told where", () => {
+    vi.stubEnv("RESINWRIGHT_RECORDS", undefined);
+    const started = process.cwd();
+    mkdirSync(join(folder, "notebooks"));
+    process.chdir(join(folder, "notebooks"));
+    try {
+      decideIt();
+    } finally {
+      process.chdir(started);
+    }
+    expect(readRecords(join(folder, "records"))).toHaveLength(1);
+  });
+});

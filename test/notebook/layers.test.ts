@@ -1,0 +1,55 @@
+import { describe, expect, it } from "vitest";
+import { layersOf } from "../../lib/assess/layers.js";
+import { embed } from "../../lib/notebook/content.js";
+import { layerTable, profileFigure } from "../../lib/notebook/layers.js";
+import { brief, formulationOf, shelf } from "../fixtures.js";
+
+const formulation = formulationOf({ THIN: 60, THICK: 38.9, PI: 1, AB: 0.1 });
+const series = layersOf({
+  formulation,
+  brief,
+  shelf,
+  draws: 40,
+  layers: 2,
+  exposure_s: 12,
+  times_s: [8, 11],
+});
+
+describe("layerTable", () => {
+  it("has a row a layer, with units, and says what gels", () => {
+    const table = layerTable(series);
+    expect(table.caption).toBe("Layers one after the other, 12 s of light each, with 95 % intervals");
+    expect(table.columns.map(({ name, unit }) => [name, unit])).toEqual([
+      ["layer", undefined],
+      ["gels", undefined],
+      ["gels after", "s"],
+      ["left liquid", "µm"],
+      ["conversion at the layer before", undefined],
+      ["mean conversion", undefined],
+    ]);
+    expect(table.rows.map(([layer]) => layer)).toEqual([1, 2]);
+    expect(table.rows[0]![1]).toMatch(/^\d+ % of draws$/);
+  });
+
+  it("shows no time for what never gels", () => {
+    const dim = layersOf({ formulation, brief, shelf, draws: 40, layers: 1, exposure_s: 0.01 });
+    expect(layerTable(dim).rows[0]!.slice(0, 3)).toEqual([1, "0 % of draws", null]);
+  });
+});
+
+describe("profileFigure", () => {
+  it("draws the times asked for and the end, counted in light, and holds the numbers drawn", () => {
+    const layer = series.layers[1]!;
+    const figure = profileFigure({
+      layer,
+      quantity: "oxygen_molm3",
+      conditions: "A test",
+      dark_s: brief.betweenLayers.dark_s,
+    });
+    const names = (figure.data as { name: string }[]).map(({ name }) => name);
+    expect(names).toEqual(["after 3 s of light", "after 6 s of light", "after 12 s of light"]);
+    expect(figure.caption).toBe("Oxygen in layer 2 from the window up. A test.");
+    expect(figure.table.rows).toHaveLength(layer.stated.end.depths_um.length);
+    expect(() => embed(figure)).not.toThrow();
+  });
+});

@@ -1,0 +1,51 @@
+// Reads the transient reference solutions and holds a layer's readings to them.
+import { readFileSync } from "node:fs";
+import { depthsAtLevel, valueAtDepth } from "../../../lib/numerics/profile.js";
+import type { LayerReading } from "../../../lib/models/oxygen.js";
+
+type Values = Readonly<Record<string, { readonly value: number; readonly grid_rel_change: number }>>;
+
+const file = JSON.parse(readFileSync(new URL("./transient-reference.json", import.meta.url), "utf8")) as {
+  readonly cases: Readonly<Record<string, Readonly<Record<string, Values>>>>;
+};
+
+/** Round numbers for checking, not a material: 20 um of dead zone in even light without film, induction time 2 s. */
+export const P0 = {
+  radicalGeneration_molm3s: 0.5,
+  napierianAbsorption_percm: 100,
+  diffusivity_m2s: 1e-10,
+  oxygenPerRadical: 1,
+  oxygenCapture_m3mols: 5e5,
+  propagation_m3mols: 25,
+  termination_m3mols: 2500,
+  gapThickness_um: 100,
+  oxygen_molm3: 1,
+  saturation_molm3: 1,
+  gelConversion: 0.2,
+} as const;
+
+/** The moments of a case, s, and its values by name. */
+export function transientCase(name: string): { times_s: number[]; at: (time_s: number) => Values } {
+  const values = file.cases[name]!;
+  return {
+    times_s: Object.keys(values).map((key) => Number(key.slice(2))),
+    at: (time_s) => values[`t=${time_s}`]!,
+  };
+}
+
+/** What a reading has under the name of a reference value: `C@20`, `meanX`, `zX=0.2#0`; NaN where it has none. */
+export function named(reading: LayerReading, name: string): number {
+  const { depths_um } = reading;
+  const profile = { C: reading.oxygen_molm3, X: reading.conversion, R: reading.radicals_molm3 };
+  const [, letter, depth] = /^([CXR])@(\d+)$/.exec(name) ?? [];
+  if (letter !== undefined)
+    return valueAtDepth({ depths_um, values: profile[letter as "C"], depth_um: Number(depth) });
+  const [, quantity, level, place] = /^z([CX])=([\d.]+)#(\d)$/.exec(name) ?? [];
+  if (quantity !== undefined) {
+    const values = profile[quantity as "C"];
+    return depthsAtLevel({ depths_um, values, level: Number(level) })[Number(place)] ?? NaN;
+  }
+  if (name === "meanC") return reading.meanOxygen_molm3;
+  if (name === "meanX") return reading.meanConversion;
+  return name === "flux" ? reading.flux_molm2s : NaN;
+}
