@@ -16,6 +16,8 @@ export default tseslint.config(
   },
   {
     files: ["**/*.js", "**/*.mjs"],
-    languageOptions: { globals: { console: "readonly", process: "readonly", performance: "readonly", URL: "readonly" } },
+    languageOptions: {
+      globals: { console: "readonly", process: "readonly", performance: "readonly", URL: "readonly" },
+    },
   },
 );

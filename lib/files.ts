@@ -1,4 +1,5 @@
 // The door for programs that run in Node: reads briefs, formulations and shelves from disc, and keeps the lab record.
 
 export { readFormulation, readShelf, openBrief, readNumberFile, type Workbench } from "./recipe/files.js";
-export { appendRecord, readRecords, type LabRecord } from "./lab/record.js";
+export { readSafetyRules } from "./lab/hazards/files.js";
+export * from "./lab/record.js";

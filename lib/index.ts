@@ -60,6 +60,15 @@ export {
 } from "./recipe/brief.js";
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
 export { readNumberTable } from "./recipe/table.js";
+export {
+  readRheometerTable,
+  type RejectedRow,
+  type RheometerReading,
+  type RheometerTable,
+} from "./recipe/rheometer.js";
+export { compareEndPoints } from "./recipe/endPoints.js";
+export { readJcamp } from "./recipe/jcamp.js";
+export { readSpectrumTable, type MeasuredSpectrum, type SpectrumColumn } from "./recipe/spectrumTable.js";
 
 export * from "./numerics.js";
 export * from "./models/viscosity.js";
@@ -81,3 +90,6 @@ export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
+
+export * from "./lab/batch.js";
+export * from "./lab/hazards.js";

@@ -55,6 +55,7 @@ export {
 } from "./views.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
 export { layerTable, profileFigure } from "./layers.js";
+export { handlingTable, screeningTable } from "./safety.js";
 export { decide } from "./decision.js";
 
 export type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";

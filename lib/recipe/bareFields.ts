@@ -79,4 +79,11 @@ export const bareFields: Readonly<Record<string, string>> = {
   constants: "C1 to C5 of the five-constant viscosity equation",
   readingStandardDeviation: "of ln viscosity of a new reading",
   repeatability: "standard deviation of ln viscosity of repeats",
+  accuracy: "allowed relative error of a component's mass fraction",
+  weighingAccuracy: "allowed relative error of one weighing",
+  tolerance: "allowed relative error",
+  relativeChange: "change over the value before",
+  growth: "new mass over planned mass of a batch",
+  plannedMassFraction: "mass fraction that was planned",
+  k: "ratio of the Gordon–Taylor equation",
 };

@@ -118,24 +118,26 @@ function differenceWarnings(end: End): Warning[] {
   const [furthest] = off.sort((a, b) => beyond(b) - beyond(a));
   if (furthest === undefined) return [];
   const { reading, ln, u } = furthest;
-  const others = off.length > 1 ? `; so do ${off.length - 1} more of its readings` : "";
   const message =
     `neat ${end.id} reads ${shown(reading)}; the catalogue has ${digits(reading.viscosity_mPas / Math.exp(ln))} mPa s there ` +
-    `within a factor of ${digits(Math.exp(COVERAGE * u))} (three combined standard uncertainties)${others}; ` +
-    "check bottle, unit and temperature, and where they hold, enter the reading as a lot's";
+    `within a factor of ${digits(Math.exp(COVERAGE * u))} (three combined standard uncertainties); readings so far off: ` +
+    `${off.length} of ${end.neat.length}; check bottle, unit and temperature, and where they hold, enter the reading as a lot's`;
   return [{ code: "neat-differs", message }];
 }
 
 function gapWarnings({ id, neat, ingredient, relativeU }: End, shelf: Pick<Shelf, "ingredients">): Warning[] {
-  const warn = (message: string) => [{ code: "not-compared", message: `${message}; not compared` }];
-  if (ingredient === undefined)
-    return warn(unknownName("shelf", "ingredient", id, [...shelf.ingredients.keys()]));
+  const start = "not compared with the catalogue";
+  const warn = (message: string) => [{ code: "not-compared", message: `${start}: ${message}` }];
+  if (ingredient === undefined) {
+    const message = unknownName(start, "ingredient", id, [...shelf.ingredients.keys()]);
+    return [{ code: "not-compared", message }];
+  }
   if (neat.length === 0) return warn(`no reading of neat ${id}`);
-  if (ingredient.viscosity_mPas === undefined) return warn(`${id} has no viscosity_mPas in the catalogue`);
+  if (ingredient.viscosity_mPas === undefined) return warn(`${id} has no viscosity_mPas`);
   const left = neat.length - differences({ id, neat, relativeU }, ingredient).length;
   if (left === 0) return [];
   return warn(
-    `${id} has no viscosityActivation_K in the catalogue, and ${left} of its neat readings are not at ` +
+    `${id} has no viscosityActivation_K, and ${left} of its ${neat.length} neat readings not taken at ` +
       `${ingredient.viscosity_mPas.temperature_C} °C`,
   );
 }

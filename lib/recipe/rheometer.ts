@@ -35,8 +35,8 @@ export interface RheometerTable {
  * Reads a table of viscosities of blends, in the shape that {@link fitBlend} takes as `readings`.
  *
  * - `text`: the first line that is no comment names the columns as `name (unit)`: one column a liquid, `UDMA (mass %)` or
- *   `UDMA (mass fraction)`; `temperature (°C)`, or K or °F; `viscosity (mPa s)`, or another unit of viscosity; and where
- *   known `shear rate (1/s)` and `repeat`, a whole number, whose entries may be empty.
+ *   `UDMA (mass fraction)`; `temperature (°C)`, or K or °F, above -100 and at most 200 °C; `viscosity (mPa s)`, or another
+ *   unit of viscosity; and where known `shear rate (1/s)` and `repeat`, a whole number, whose entries may be empty.
  * - `where`: names the file in errors.
  *
  * Columns are separated by tabs, else semicolons, else commas, as the first line is. With tabs or semicolons numbers may
@@ -126,9 +126,10 @@ const quantities = [
 type Quantity = (typeof quantities)[number];
 const knownNames = [...quantities.map(({ name }) => name), "repeat"];
 
-const allowed: Readonly<Record<Column["field"], { min: number; above?: boolean }>> = {
+/** Of temperatures as {@link readBlendReadings}: kelvin under °C stand out. */
+const allowed: Readonly<Record<Column["field"], { min: number; above?: boolean; max?: number }>> = {
   massFraction: notNegative,
-  temperature_C: { min: -273.15, above: true },
+  temperature_C: { min: -100, above: true, max: 200 },
   viscosity_mPas: positive,
   shearRate_pers: positive,
   repeat: notNegative,
@@ -182,9 +183,9 @@ function columnOf(place: string, label: string, number: number): Column {
   const share = /^mass[\s-]*(%|fraction)$/i.exec(unit)?.[1];
   if (share !== undefined) return { label, field: "massFraction", unit: share.toLowerCase(), liquid: name };
   const near = nearestName(name, knownNames);
-  const hint = near === undefined ? `known: ${knownNames.join(", ")}` : `did you mean "${near}"?`;
+  const hint = near === undefined ? `known: ${knownNames.join(", ")}.` : `did you mean "${near}"?`;
   throw new InputError(
-    `${place}: unknown column "${label}"; ${hint}; a liquid is written "${name} (mass %)" or "${name} (mass fraction)"`,
+    `${place}: unknown column "${label}"; ${hint} A liquid is written "${name} (mass %)" or "${name} (mass fraction)"`,
   );
 }
 

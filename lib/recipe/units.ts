@@ -23,6 +23,7 @@ export const fieldUnits: Readonly<Record<string, FieldUnit>> = {
   pers: { label: "s⁻¹", mathjs: "s^-1" },
   g: { label: "g", mathjs: "g" },
   gcm3: { label: "g/cm³", mathjs: "g cm^-3" },
+  perkg: { label: "kg⁻¹", mathjs: "kg^-1" },
   Jg: { label: "J/g", mathjs: "J g^-1" },
   JgK: { label: "J/(g K)", mathjs: "J g^-1 K^-1" },
   cm3mol: { label: "cm³/mol", mathjs: "cm^3 mol^-1" },

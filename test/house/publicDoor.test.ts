@@ -13,7 +13,7 @@ const placesAndCounts = `
   linearUpTo liquids terms dimensions state start stepLimit tolerance iterations accepted rejected reach
   parameters coefficients standardErrors residuals leverage scores outliers response weights remainingStep
   degreesOfFreedom degreesAbove degreesBelow ratio probability leastProbability chance runs expectedRuns positive negative
-  diagonal lower upper right
+  diagonal lower upper right row line loads enoughFor repeats cost total
 `
   .trim()
   .split(/\s+/);

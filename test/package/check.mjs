@@ -20,11 +20,15 @@ function check(name, act) {
     console.log(`FAIL ${name}\n${error.stdout ?? ""}${error.stderr ?? ""}${error.message}`);
   }
 }
-const run = (command, words, cwd = folder) => execFileSync(command, words, { cwd, encoding: "utf8", stdio: "pipe" });
+const run = (command, words, cwd = folder) =>
+  execFileSync(command, words, { cwd, encoding: "utf8", stdio: "pipe" });
 const bin = (name) => resolve("node_modules/.bin", name);
 
 run("npm", ["pack", "--silent", "--pack-destination", folder], resolve("lib"));
-const tarball = join(folder, readdirSync(folder).find((name) => name.endsWith(".tgz")));
+const tarball = join(
+  folder,
+  readdirSync(folder).find((name) => name.endsWith(".tgz")),
+);
 const user = join(folder, "user");
 
 check("publint", () => run(bin("publint"), ["run", "--strict", tarball]));

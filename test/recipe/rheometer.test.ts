@@ -16,10 +16,10 @@ const refusal = (text: string): string => {
   }
   return "not refused";
 };
-/** `text` reads as these numbers in the columns THICK, THIN, temperature and viscosity. */
 const HEADER = "THICK (mass %),THIN (mass %),temperature (°C),viscosity (mPa s)";
 const withRows = (...rows: string[]) => [HEADER, ...rows].join("\n");
 const GOOD = "50,50,25,300";
+const THIN = "0,100,25,10";
 
 describe("readRheometerTable", () => {
   it("reads liquids and conditions from columns in any order, and counts rows as the file does", () => {
@@ -35,6 +35,14 @@ describe("readRheometerTable", () => {
       rejected: [],
     });
     expect(read(text).readings[1]).not.toHaveProperty("shearRate_pers");
+  });
+
+  it("reads any line ends, and a byte-order mark before a quoted name", () => {
+    const text = `"THICK (mass %)"${withRows(GOOD, THIN).slice("THICK (mass %)".length)}`;
+    const plain = read(text);
+    expect(plain.readings).toHaveLength(2);
+    for (const end of ["\r\n", "\r"]) expect(read(text.replaceAll("\n", end))).toEqual(plain);
+    expect(read(`\uFEFF${text}`)).toEqual(plain);
   });
 
   it("takes names with brackets and, quoted or under another separator, with commas", () => {
@@ -157,7 +165,11 @@ describe("readRheometerTable, rows it rejects", () => {
     ["50,50,,300", 'column "temperature (°C)" is empty; write what was measured'],
     [
       "50,50,-300,300",
-      'column "temperature (°C)": temperature_C is -300; it must be a finite number above -273.15',
+      'column "temperature (°C)": temperature_C is -300; it must be a number above -100 and at most 200',
+    ],
+    [
+      "50,50,298.15,300",
+      'column "temperature (°C)": temperature_C is 298.15; it must be a number above -100 and at most 200',
     ],
     ["100,,25,300", 'column "THIN (mass %)" is empty; write 0 for a liquid that is not in it'],
     [
@@ -240,15 +252,15 @@ describe("readRheometerTable, what it refuses", () => {
     ],
     [
       HEADER.replace("viscosity", "viscocity"),
-      `${place}unknown column "viscocity (mPa s)"; did you mean "viscosity"?; a liquid is written "viscocity (mass %)" or "viscocity (mass fraction)"`,
+      `${place}unknown column "viscocity (mPa s)"; did you mean "viscosity"? A liquid is written "viscocity (mass %)" or "viscocity (mass fraction)"`,
     ],
     [
       `${HEADER},torque (N m)`,
-      `${place}unknown column "torque (N m)"; ${known}; a liquid is written "torque (mass %)" or "torque (mass fraction)"`,
+      `${place}unknown column "torque (N m)"; ${known}. A liquid is written "torque (mass %)" or "torque (mass fraction)"`,
     ],
     [
       HEADER.replace("THIN (mass %)", "THIN (mol %)"),
-      `${place}unknown column "THIN (mol %)"; ${known}; a liquid is written "THIN (mass %)" or "THIN (mass fraction)"`,
+      `${place}unknown column "THIN (mol %)"; ${known}. A liquid is written "THIN (mass %)" or "THIN (mass fraction)"`,
     ],
     [`${HEADER},`, `${place}column 5 has no name; name it or take it out`],
     [
@@ -327,7 +339,6 @@ describe("compareEndPoints", () => {
     ...shelf,
     ingredients: new Map([...shelf.ingredients, [id, { ...shelf.ingredients.get(id)!, ...change }]]),
   });
-  const THIN = "0,100,25,10";
   const lnU = Math.sqrt(Math.log(1.01));
   const inverseT = 1 / 313.15 - 1 / 298.15;
 
@@ -365,7 +376,7 @@ describe("compareEndPoints", () => {
         code: "neat-differs",
         message:
           "neat THICK reads 2000 mPa s at 25 °C (row 4); the catalogue has 10000 mPa s there within a factor of 1.349 " +
-          "(three combined standard uncertainties); so do 1 more of its readings; check bottle, unit and temperature, and " +
+          "(three combined standard uncertainties); readings so far off: 2 of 3; check bottle, unit and temperature, and " +
           "where they hold, enter the reading as a lot's",
       },
     ]);
@@ -397,20 +408,20 @@ describe("compareEndPoints", () => {
       expect(new Set(warnings.map(({ code }) => code))).toEqual(new Set(["not-compared"]));
       return warnings.map(({ message }) => message);
     };
-    expect(messages([THIN])).toEqual(["no reading of neat THICK; not compared"]);
+    expect(messages([THIN])).toEqual(["not compared with the catalogue: no reading of neat THICK"]);
     const bare = { viscosity_mPas: undefined };
     expect(messages(["100,0,25,1", THIN], { on: shelfWith("THICK", bare) })).toEqual([
-      "THICK has no viscosity_mPas in the catalogue; not compared",
+      "not compared with the catalogue: THICK has no viscosity_mPas",
     ]);
     const still = shelfWith("THICK", { viscosityActivation_K: undefined });
     expect(messages(["100,0,30,1", "100,0,25,10000", THIN], { on: still })).toEqual([
-      "THICK has no viscosityActivation_K in the catalogue, and 1 of its neat readings are not at 25 °C; not compared",
+      "not compared with the catalogue: THICK has no viscosityActivation_K, and 1 of its 2 neat readings not taken at 25 °C",
     ]);
-    const table = read(withRows(THIN).replace("THICK", "THIKC"));
+    const table = read(withRows(THIN).replace("THICK", "THICKK"));
     expect(compareEndPoints({ table, shelf })).toEqual([
       {
         code: "not-compared",
-        message: 'shelf: unknown ingredient "THIKC"; did you mean "THICK"?; not compared',
+        message: 'not compared with the catalogue: unknown ingredient "THICKK"; did you mean "THICK"?',
       },
     ]);
   });

@@ -11,7 +11,7 @@ export interface MasterStage {
   readonly carrier_g: number;
 }
 
-/** How to make and dose a master batch. */
+/** How to make and dose a master batch. Whether the ingredient dissolves at such a share is not known here: try a little first. */
 export interface MasterBatch {
   readonly label: string;
   readonly solute: Ingredient;

@@ -50,8 +50,7 @@ export function flagMixture({
 }): HazardFlag[] {
   const reached = limits
     .map((rule) => ({ rule, ...contentOf(rule, formulation) }))
-    // A sum of fractions that is the limit but for rounding noise has reached it.
-    .filter(({ rule, content_pct }) => content_pct >= rule.limit_pct * (1 - 1e-9));
+    .filter(({ rule, content_pct }) => content_pct >= rule.limit_pct);
   const ids = reached.map(({ rule }) => rule.id);
   return reached
     .filter(({ rule }) => !rule.unless?.some((id) => ids.includes(id)))
@@ -87,8 +86,9 @@ function contentOf(
   }
   const contributors = [...substances.values()].sort((a, b) => b.counts_pct - a.counts_pct);
   const counts = contributors.map(({ counts_pct }) => counts_pct);
-  const content_pct = rule.how === "single" ? (counts[0] ?? 0) : counts.reduce((sum, one) => sum + one, 0);
-  return { content_pct, contributors };
+  const content = rule.how === "single" ? (counts[0] ?? 0) : counts.reduce((sum, one) => sum + one, 0);
+  // Nine digits: fractions and weights that add up to the limit but for rounding noise have reached it.
+  return { content_pct: Number(content.toPrecision(9)), contributors };
 }
 
 function contributorOf(

@@ -27,7 +27,7 @@ export interface HazardScreening {
   /** Statements of ingredients that no rule here judges in a mixture, such as flammability, which is measured. */
   readonly notJudged: readonly { readonly code: string; readonly ingredients: readonly string[] }[];
   readonly regulatory: readonly RegulatoryNote[];
-  readonly temperatureRise: TemperatureRise;
+  readonly temperatureRise_K: TemperatureRise;
   readonly storage: readonly HandlingNote[];
   readonly protection: readonly HandlingNote[];
   readonly law: readonly HandlingNote[];
@@ -77,7 +77,7 @@ export function screenHazards({
     regulatory: rules.regulatory.filter(({ cas }) =>
       present.some(({ ingredient }) => ingredient.cas === cas),
     ),
-    temperatureRise: temperatureRiseOf({ formulation, heats: rules.heats, ...options }),
+    temperatureRise_K: temperatureRiseOf({ formulation, heats: rules.heats, ...options }),
     storage: ofKind("storage"),
     protection: ofKind("protection"),
     law: ofKind("law"),

@@ -40,17 +40,18 @@ export interface SpectralAbsorber {
 export function absorptionSpectrum(input: {
   readonly absorbers: readonly SpectralAbsorber[];
   readonly backgrounds_percm: NumberList;
-}): number[] {
+}): Float64Array {
   const where = "absorptionSpectrum";
   const { absorbers, backgrounds_percm } = input;
   checkList(where, "backgrounds_percm", backgrounds_percm, notNegative);
-  const alpha = Array.from(backgrounds_percm);
+  const alpha = Float64Array.from(backgrounds_percm);
   absorbers.forEach(({ molarAbsorptions_Lmolcm: eps, concentration_molL: c }, i) => {
     const field = `absorbers[${i}]`;
     checkNumber(c, { where, field: `${field}.concentration_molL`, ...notNegative });
     checkList(where, `${field}.molarAbsorptions_Lmolcm`, eps, notNegative);
     checkSameLength(where, { backgrounds_percm, [`${field}.molarAbsorptions_Lmolcm`]: eps });
-    for (let k = 0; k < alpha.length; k++) alpha[k]! += Math.LN10 * eps[k]! * c;
+    const napierian = Math.LN10 * c;
+    for (let k = 0; k < alpha.length; k++) alpha[k]! += napierian * eps[k]!;
   });
   checkList(where, "the absorption", alpha, { advice: "an input is beyond any real substance" });
   return alpha;
@@ -127,25 +128,39 @@ export function checkLitResin(
   checkSameLength(where, { "engine.shares": engine.shares, napierianAbsorptions_percm });
 }
 
+/** Light at a depth: ln T, the local absorption, and the variance of the absorption over the light left there. @internal */
+export interface Decay {
+  readonly lnTransmitted: number;
+  readonly absorption_percm: number;
+  readonly variance_percm2: number;
+}
+
 /**
- * ln T and the local absorption at a depth in cm. The least absorption is taken out of the exponents, so that light many
- * optical depths down does not vanish from the sums.
+ * The decay at a depth in cm. The least absorption is taken out of the exponents, so that light many optical depths down does
+ * not vanish from the sums.
  * @internal
  */
 export function decayAt(
   { engine: { shares }, napierianAbsorptions_percm: alpha }: LitResin,
   z: number,
-): { readonly lnTransmitted: number; readonly absorption_percm: number } {
+): Decay {
   let least = Infinity;
   for (let k = 0; k < shares.length; k++) if (shares[k]! > 0 && alpha[k]! < least) least = alpha[k]!;
-  let [light, absorbed] = [0, 0];
+  let [light, first, second] = [0, 0, 0];
   for (let k = 0; k < shares.length; k++) {
+    if (shares[k] === 0) continue;
     const excess = alpha[k]! - least;
-    const left = shares[k]! === 0 ? 0 : shares[k]! * Math.exp(-excess * z);
+    const left = shares[k]! * Math.exp(-excess * z);
     light += left;
-    absorbed += excess * left;
+    first += excess * left;
+    second += excess * excess * left;
   }
-  return { lnTransmitted: Math.log(light) - least * z, absorption_percm: least + absorbed / light };
+  const mean = first / light;
+  return {
+    lnTransmitted: Math.log(light) - least * z,
+    absorption_percm: least + mean,
+    variance_percm2: Math.max(second / light - mean * mean, 0),
+  };
 }
 
 const um_per_cm = 1e4;

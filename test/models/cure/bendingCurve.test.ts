@@ -2,11 +2,17 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import {
   broadCureDepth,
+  broadCureDepthMap,
   broadExposureForDepth,
   cureDepth,
   fitWorkingCurve,
 } from "../../../lib/models/cure.js";
-import { broadTransmittedFraction, lightEngine, localOpticalDepth } from "../../../lib/models/light.js";
+import {
+  absorptionSpectrum,
+  broadTransmittedFraction,
+  lightEngine,
+  localOpticalDepth,
+} from "../../../lib/models/light.js";
 import { filmUnder } from "../light/measuredFilms.js";
 
 const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
@@ -102,6 +108,10 @@ describe("the bending working curve", () => {
   it("starts at the critical exposure", () => {
     expect(broadCureDepth({ ...resin, exposure_mJcm2: 5 })).toBe(0);
     expect(broadCureDepth({ ...resin, exposure_mJcm2: 0 })).toBe(0);
+    // The next exposure above it that a number can hold, and some that differ from it by less than the sums round.
+    for (const factor of [1 + 2e-16, 1 + 1e-15, 1 + 1e-13]) {
+      expect(broadCureDepth({ ...resin, exposure_mJcm2: 5 * factor })).toBeLessThan(1e-10);
+    }
     expect(broadExposureForDepth({ ...resin, cureDepth_um: 0 })).toBeCloseTo(5, 12);
   });
 
@@ -128,5 +138,69 @@ describe("the bending working curve", () => {
     ],
   ])("%s", (call, message) => {
     expect(call).toThrow(message);
+  });
+});
+
+describe("broadCureDepthMap", () => {
+  const wavelengths_nm = Array.from({ length: 41 }, (_, k) => 390 + k);
+  const map = {
+    engine: lightEngine({
+      wavelengths_nm,
+      spectrum: wavelengths_nm.map((nm) => Math.exp(-(((nm - 408) / 9) ** 2))),
+    }),
+    initiatorAbsorptions_Lmolcm: wavelengths_nm.map((nm) => 800 * Math.exp(-(nm - 390) / 15)),
+    absorberAbsorptions_Lmolcm: wavelengths_nm.map((nm) => 9000 + 30 * (nm - 400)),
+    backgrounds_percm: wavelengths_nm.map(() => 0.5),
+    initiatorLevels_molL: [0.001, 0.003, 0.01, 0.02, 0.021],
+    absorberLevels_molL: [0, 1e-4, 2e-4, 5e-4, 0.002, 0.0021, 0.01, 0],
+    criticalExposures_mJcm2: [150, 50, 15, 7.5, 7.4],
+    exposure_mJcm2: 60,
+  };
+
+  it("is broadCureDepth at every place, whatever the spacing and order of the levels", () => {
+    const depths = broadCureDepthMap(map);
+    expect(depths.map((row) => row.length)).toEqual([8, 8, 8, 8, 8]);
+    map.initiatorLevels_molL.forEach((ci, i) => {
+      map.absorberLevels_molL.forEach((ca, j) => {
+        const napierianAbsorptions_percm = absorptionSpectrum({
+          absorbers: [
+            { molarAbsorptions_Lmolcm: map.initiatorAbsorptions_Lmolcm, concentration_molL: ci },
+            { molarAbsorptions_Lmolcm: map.absorberAbsorptions_Lmolcm, concentration_molL: ca },
+          ],
+          backgrounds_percm: map.backgrounds_percm,
+        });
+        const alone = broadCureDepth({
+          engine: map.engine,
+          napierianAbsorptions_percm,
+          exposure_mJcm2: 60,
+          criticalExposure_mJcm2: map.criticalExposures_mJcm2[i]!,
+        });
+        expect(Math.abs(depths[i]![j]! - alone)).toBeLessThanOrEqual(1e-9 * alone);
+      });
+    });
+    // 0.001 mol/L needs 150 mJ/cm2 and gets 60.
+    expect(depths[0]).toEqual([0, 0, 0, 0, 0, 0, 0, 0]);
+  });
+
+  it.each([
+    [
+      { criticalExposures_mJcm2: [1, 2] },
+      "broadCureDepthMap: initiatorLevels_molL holds 5, criticalExposures_mJcm2 holds 2; the lists must be of the same length",
+    ],
+    [
+      { backgrounds_percm: wavelengths_nm.map(() => 0) },
+      "broadCureDepthMap: backgrounds_percm[0] is 0; it must be a finite number above 0; without absorption light has no penetration depth; include the background of the resin",
+    ],
+    [
+      { absorberLevels_molL: [0, -1] },
+      "broadCureDepthMap: absorberLevels_molL[1] is -1; it must be a finite number of at least 0",
+    ],
+    [
+      { absorberAbsorptions_Lmolcm: [1] },
+      "broadCureDepthMap: engine.shares holds 41, initiatorAbsorptions_Lmolcm holds 41, absorberAbsorptions_Lmolcm holds 1, backgrounds_percm holds 41; the lists must be of the same length",
+    ],
+    [{ exposure_mJcm2: 0 }, "broadCureDepthMap: exposure_mJcm2 is 0; it must be a finite number above 0"],
+  ])("refuses %j", (change, message) => {
+    expect(() => broadCureDepthMap({ ...map, ...change })).toThrow(message);
   });
 });

@@ -3,7 +3,7 @@
 Writes second-opinion.json beside itself. Run with Debian's python3-scipy; the versions used stand in the file.
 The tests read the file only; they need no Python.
 
-  python3 second_opinion.py
+  python3 second_opinion.py && npx prettier --write second-opinion.json
 """
 
 import json
