@@ -26,6 +26,7 @@ export {
   filmOn,
   ingredientOn,
   interactionOn,
+  interactionsOn,
   spectrumOn,
   withInteraction,
   type Shelf,

@@ -10,8 +10,9 @@ import {
 } from "../models/viscosity.js";
 import { composition, isLiquid, type Component, type FigureReader } from "../recipe/formulation.js";
 import type { Ingredient } from "../recipe/ingredient.js";
-import { interactionOn, type Shelf } from "../recipe/shelf.js";
+import { interactionsOn } from "../recipe/shelf.js";
 import type { Warning } from "../result.js";
+import { interactionAt } from "./interaction.js";
 import { componentsIn, constantOf, figureOf, figureReader, uncertain, type Case } from "./case.js";
 import { startDraws, type DrawOptions, type Read, type Uncertain } from "./doubt.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
@@ -28,7 +29,7 @@ const TEMPERATURE_REACH_K = 30;
  *
  * Diluents and oligomers mix by Grunberg–Nissan; initiator, absorber and other solutes take no part; pigment and filler
  * thicken the mixture by Krieger–Dougherty. A pair with a measured
- * interaction uses it, on its own basis. A pair without one carries G = 0 with the spread published for fitted G. Where no
+ * interaction uses it, on its own basis, brought to print temperature. A pair without one carries G = 0 with the spread published for fitted G. Where no
  * pair is measured the basis itself is in doubt: fractions run from mass to mole (w / M^k, k from 0 to 1).
  * @throws InputError when there is no liquid, a liquid has no viscosity or activation, or interactions of two bases meet.
  * @source Models: {@link grunbergNissan}, {@link andradeViscosity}. Propagation: JCGM 101:2008.
@@ -67,7 +68,7 @@ export function viscosityModel({ formulation, brief, shelf }: Case): (read: Read
     ),
     referenceTemperature_C: ingredient.viscosity_mPas!.temperature_C,
   }));
-  const { basis, pairs } = interactionsOf(where, liquids, shelf);
+  const { basis, pairs } = interactionsOf(where, liquids, { shelf, brief });
   const fractionsOf = mixingFractions(formulation, liquids, basis);
   const thickening = solidsFactor(where, { formulation, brief, shelf });
   return (read) => {
@@ -131,38 +132,39 @@ interface Pair {
   readonly first: number;
   readonly second: number;
   readonly G: Uncertain;
-  readonly measuredAt_C?: number;
   readonly measured: boolean;
+  readonly warnings: readonly Warning[];
 }
 
 function interactionsOf(
   where: string,
   liquids: readonly Component[],
-  shelf: Shelf,
+  { shelf, brief }: Pick<Case, "shelf" | "brief">,
 ): { basis?: MixingBasis; pairs: Pair[] } {
   const pairs: Pair[] = [];
   let basis: MixingBasis | undefined;
   liquids.forEach(({ ingredient: { id: a } }, first) => {
     liquids.slice(first + 1).forEach(({ ingredient: { id: b } }, offset) => {
       const second = first + 1 + offset;
-      const known = interactionOn(shelf, a, b);
-      if (known === undefined) {
+      const known = interactionsOn(shelf, a, b);
+      if (known.length === 0) {
         const G = uncertain(
           `unmeasured interaction of ${a} and ${b}`,
           shelf.constants.unmeasuredInteraction,
           "signed",
         );
-        pairs.push({ first, second, G, measured: false });
+        pairs.push({ first, second, G, measured: false, warnings: [] });
         return;
       }
-      if (basis !== undefined && basis !== known.basis) {
+      const here = interactionAt({ known, temperature_C: brief.temperature_C });
+      if (basis !== undefined && basis !== here.basis) {
         throw new InputError(
-          `${where}: the interaction of ${a} and ${b} is on a ${known.basis} basis, others on a ${basis} basis; fit all of them on one basis`,
+          `${where}: the interaction of ${a} and ${b} is on a ${here.basis} basis, others on a ${basis} basis; fit all of them on one basis`,
         );
       }
-      basis = known.basis;
-      const G = uncertain(`interaction of ${a} and ${b}`, known.G, "signed");
-      pairs.push({ first, second, G, measured: true, measuredAt_C: known.temperature_C });
+      basis = here.basis;
+      const G = uncertain(`interaction of ${a} and ${b}`, here.G, "signed");
+      pairs.push({ first, second, G, measured: true, warnings: here.warnings });
     });
   });
   return { basis, pairs };
@@ -207,7 +209,7 @@ const basisExponent = uncertain(
 
 function viscosityWarnings({ formulation, brief, shelf }: Case): Warning[] {
   const liquids = formulation.components.filter(isLiquid);
-  const { basis, pairs } = interactionsOf(`formulation "${formulation.id}"`, liquids, shelf);
+  const { basis, pairs } = interactionsOf(`formulation "${formulation.id}"`, liquids, { shelf, brief });
   const named = (pair: Pair) =>
     `${liquids[pair.first]!.ingredient.id}–${liquids[pair.second]!.ingredient.id}`;
   const warnings: Warning[] = [];
@@ -219,15 +221,7 @@ function viscosityWarnings({ formulation, brief, shelf }: Case): Warning[] {
       message: `No measured interaction for ${unmeasured.join(", ")}: G = 0 with the published spread${basisDoubt}. Five viscosities across the ratio settle it.`,
     });
   }
-  const distant = pairs.filter(
-    ({ measuredAt_C: at }) => at !== undefined && Math.abs(at - brief.temperature_C) > 15,
-  );
-  if (distant.length > 0) {
-    warnings.push({
-      code: "interaction-other-temperature",
-      message: `Interaction of ${distant.map(named).join(", ")} measured more than 15 K away from ${brief.temperature_C} °C; G drifts with temperature.`,
-    });
-  }
+  warnings.push(...pairs.flatMap((pair) => pair.warnings));
   const far = liquids.filter(({ ingredient }) => {
     const at = ingredient.viscosity_mPas?.temperature_C;
     return at !== undefined && Math.abs(at - brief.temperature_C) > TEMPERATURE_REACH_K;

@@ -71,7 +71,7 @@ export function readShelf(folders: readonly string[]): Shelf {
     new Map(parts.flatMap((part) => [...part[key]] as [string, never][])) as Shelf[K];
   const interactions = new Map<string, Interaction>();
   for (const one of parts.flatMap((part) => part.interactions))
-    interactions.set([...one.pair].sort().join(" "), one);
+    interactions.set([...one.pair].sort().join(" ") + String(one.temperature_C), one);
   return {
     ingredients: merged("ingredients"),
     lots: merged("lots"),

@@ -83,13 +83,26 @@ export function filmOn(shelf: Shelf, where: string, id: string): Film {
  * ```
  */
 export function interactionOn(shelf: Shelf, first: string, second: string): Interaction | undefined {
-  return shelf.interactions.find(
+  return interactionsOn(shelf, first, second)[0];
+}
+
+/**
+ * All measured interactions of two liquids, one a temperature, in whichever order the liquids are named.
+ * @example
+ * ```ts
+ * import { interactionsOn } from "resinwright";
+ * import { readShelf } from "resinwright/files";
+ * interactionsOn(readShelf(["data"]), "UDMA", "IBOA").length; // → 0
+ * ```
+ */
+export function interactionsOn(shelf: Shelf, first: string, second: string): Interaction[] {
+  return shelf.interactions.filter(
     ({ pair: [a, b] }) => (a === first && b === second) || (a === second && b === first),
   );
 }
 
 /**
- * The shelf with one more interaction, in place of an older one of the same pair.
+ * The shelf with one more interaction, in place of an older one of the same pair at the same temperature.
  * @example
  * ```ts
  * import { interactionOn, withInteraction } from "resinwright";
@@ -100,7 +113,9 @@ export function interactionOn(shelf: Shelf, first: string, second: string): Inte
  * ```
  */
 export function withInteraction(shelf: Shelf, interaction: Interaction): Shelf {
-  const older = interactionOn(shelf, ...interaction.pair);
+  const older = interactionsOn(shelf, ...interaction.pair).find(
+    ({ temperature_C }) => temperature_C === interaction.temperature_C,
+  );
   return { ...shelf, interactions: [...shelf.interactions.filter((one) => one !== older), interaction] };
 }
 

@@ -207,7 +207,7 @@ describe("frameOf and tableOfFrame", () => {
     [
       "what is no cell",
       () => frameOf([{ a: interval }]),
-      "frameOf: row 1: a is a object; it must be text, a number, true or false",
+      "frameOf: row 1: a is an object; it must be text, a number, true or false",
     ],
     [
       "a unit for no column",
