@@ -67,12 +67,12 @@ fitBlend({ ...table, terms: 2 });
 const first = performance.now() - cold;
 
 console.log(
-  `prepareBlend   ${BLENDS} blends of ${LIQUIDS} liquids: ${(together - filling).toFixed(0)} ms (limit 250),`,
+  `${together - filling > 250 ? "FAIL" : "ok  "} prepareBlend: ${BLENDS} blends of ${LIQUIDS} liquids: ${(together - filling).toFixed(0)} ms (limit 250),`,
 );
 console.log(
   `               ${filling.toFixed(0)} ms more to make the fractions; mean ln eta ${(sum / BLENDS).toFixed(4)}`,
 );
 console.log(`grunbergNissan ${BLENDS / 100} of the same: ${plain.toFixed(0)} ms`);
 console.log(
-  `fitBlend       15 readings: ${(fitting / fits).toFixed(3)} ms each, ${first.toFixed(2)} ms for one alone (limit 2)`,
+  `${fitting / fits > 2 ? "FAIL" : "ok  "} fitBlend: 15 readings: ${(fitting / fits).toFixed(3)} ms each, ${first.toFixed(2)} ms for one alone (limit 2)`,
 );
