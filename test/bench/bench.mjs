@@ -21,5 +21,7 @@ for (const name of others.sort()) {
 
 const failed = told.filter((line) => line.startsWith("FAIL"));
 console.log(failed.join("\n"));
-console.log(`${told.filter((line) => line.startsWith("ok")).length} within their limits, ${failed.length} not`);
+console.log(
+  `${told.filter((line) => line.startsWith("ok")).length} within their limits, ${failed.length} not`,
+);
 process.exit(failed.length === 0 ? 0 : 1);
