@@ -44,7 +44,7 @@ export interface Verdict {
   readonly unit: string;
   readonly target: Target;
   readonly outcome: "meets" | "fails" | "cannot tell";
-  /** Share of the draws within the target, 0 to 1 (the conformance probability of JCGM 106:2012). */
+  /** Share of the draws within the target, 0 to 1 (the conformance probability of JCGM 106:2012, from memory). */
   readonly share: number;
 }
 

@@ -6,7 +6,7 @@ import { InputError } from "../door.js";
  * Whether a CAS number carries the right check digit: the sum of position (from the right) times digit, modulo 10.
  *
  * A right digit does not prove that the number belongs to the substance; compare name, number and molar mass together.
- * @source CAS Registry, "Check Digit Verification of CAS Registry Numbers" (rule common to all registry numbers).
+ * @source CAS Registry, "Check Digit Verification of CAS Registry Numbers" (citation from memory).
  * @example
  * ```ts
  * import { hasCasCheckDigit } from "resinwright";
@@ -25,7 +25,7 @@ export function hasCasCheckDigit(cas: string): boolean {
  * Molar mass in g/mol of a formula such as `C13H20O2`, from standard atomic weights.
  * @throws InputError for text that is not a formula or an element that is not listed.
  * @source Prohaska et al., Standard atomic weights of the elements 2021, Pure Appl. Chem. 94 (2022) 573, doi
- * 10.1515/pac-2019-0603, abridged conventional values.
+ * 10.1515/pac-2019-0603, abridged conventional values (weights and citation from memory).
  * @example
  * ```ts
  * import { molarMassOfFormula } from "resinwright";

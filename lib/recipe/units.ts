@@ -128,7 +128,7 @@ math.createUnit({
   cP: { definition: "1 mPa s", aliases: ["centipoise"] },
   poise: { definition: "100 mPa s" },
 });
-// Stern 1968: 1 barrer = 1e-10 cm³(STP) cm cm⁻² s⁻¹ cmHg⁻¹, here as an amount of substance.
+// Stern 1968 (from memory): 1 barrer = 1e-10 cm³(STP) cm cm⁻² s⁻¹ cmHg⁻¹, here as an amount of substance.
 math.createUnit("barrer", "3.346402e-16 mol m^-1 s^-1 Pa^-1");
 math.createUnit("percent");
 

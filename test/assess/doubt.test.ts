@@ -21,7 +21,7 @@ const add = (values: number[]) => values.reduce((a, b) => a + b, 0);
 const four = (spread: Uncertain["spread"]) => ["a", "b", "c", "d"].map((label) => input(label, 0, 1, spread));
 
 describe("propagate", () => {
-  // JCGM 101:2008, 9.2.2: four normal inputs with u = 1 add up to a 95 % interval of ±3.92.
+  // JCGM 101:2008, 9.2.2 (from memory; the figure is 1.96 times 2): four normal inputs with u = 1 add up to a 95 % interval of ±3.92.
   // 20 000 draws place a 97.5 % quantile of a standard deviation of 2 within 0.06 (two standard errors).
   it("gives the additive normal example of JCGM 101", () => {
     const { low, high } = run(four("signed"), add);
@@ -29,7 +29,7 @@ describe("propagate", () => {
     expect(Math.abs(low + 3.92)).toBeLessThan(0.06);
   });
 
-  // JCGM 101:2008, 9.2.3: the same with uniform inputs, exactly ±2√3 (2 - (3/5)^(1/4)) = ±3.88.
+  // JCGM 101:2008, 9.2.3 (from memory; the closed form is exact): the same with uniform inputs, exactly ±2√3 (2 - (3/5)^(1/4)) = ±3.88.
   it("gives the additive uniform example of JCGM 101", () => {
     const exact = 2 * Math.sqrt(3) * (2 - 0.6 ** 0.25);
     const { low, high } = run(four("flat"), add);
