@@ -13,28 +13,29 @@ import {
   type Read,
 } from "./doubt.js";
 
-/** A property of a formulation under a brief: an interval, what to know before using it, where the doubt and the figures come from. */
-export interface Property extends Interval {
+/** What every answer for a property says, whatever the outcome. */
+interface Answer {
   readonly property: PropertyName;
   readonly title: string;
   readonly unit: string;
-  readonly outcome: "value";
+  /** What to know before using it. */
   readonly warnings: readonly Warning[];
+  /** Which inputs carry the doubt. */
   readonly doubt: readonly DoubtShare[];
+  /** Where the figures come from that this answer used. */
   readonly sources: readonly UsedSource[];
 }
 
+/** A property of a formulation under a brief: an interval, with its warnings, the inputs behind its doubt and its sources. */
+export interface Property extends Interval, Answer {
+  readonly outcome: "value";
+}
+
 /** The resin never cures in steady light: the window brings oxygen faster than the light can burn it. */
-export interface NeverCures {
-  readonly property: PropertyName;
-  readonly title: string;
-  readonly unit: string;
+export interface NeverCures extends Answer {
   readonly outcome: "never-cures";
   /** Share of the draws in which it does not cure, 0 to 1. */
   readonly share: number;
-  readonly warnings: readonly Warning[];
-  readonly doubt: readonly DoubtShare[];
-  readonly sources: readonly UsedSource[];
 }
 
 /** Whether a target is met: by at least `level` of the draws, by at most 1 - `level` of them, or in between. */

@@ -10,7 +10,8 @@ export type XoshiroState = readonly [number, number, number, number];
  *
  * - `state`: four whole numbers from 0 to 2^32 - 1, not all zero.
  * @throws InputError when a word is not a 32-bit whole number, or all are zero.
- * @source D. Blackman, S. Vigna, ACM Transactions on Mathematical Software 47 (2021) 36, doi 10.1145/3460772.
+ * @source D. Blackman, S. Vigna, ACM Transactions on Mathematical Software 47 (2021) 36, doi 10.1145/3460772 (from
+ * memory).
  * @example
  * ```ts
  * import { xoshiro128 } from "resinwright";
@@ -44,7 +45,8 @@ export function xoshiro128({ state }: { readonly state: XoshiroState }): () => n
  *   function that is one-to-one, so no seed gives the forbidden state of four zeros.
  * @throws InputError when the seed is not a whole number in that range.
  * @source xoshiro128** as in `xoshiro128`; seed spread by the 32-bit finaliser of MurmurHash3 (A. Appleby, public
- * domain) over a Weyl sequence, as G. L. Steele, D. Lea, C. H. Flood, OOPSLA 2014, doi 10.1145/2660193.2660195.
+ * domain) over a Weyl sequence, as G. L. Steele, D. Lea, C. H. Flood, OOPSLA 2014, doi 10.1145/2660193.2660195
+ * (from memory).
  * @example
  * ```ts
  * import { seededUniform } from "resinwright";
@@ -71,7 +73,8 @@ export function seededUniform({ seed }: { readonly seed: number }): () => number
  * each of the `draws` equal strata of each column holds exactly one number. Values are never 0 nor 1. Columns are
  * shuffled independently of each other; their correlation is of the order of 1/sqrt(draws).
  * @throws InputError when an argument is not a whole number in its range.
- * @source M. D. McKay, R. J. Beckman, W. J. Conover, Technometrics 21 (1979) 239-245, doi 10.1080/00401706.1979.10489755.
+ * @source M. D. McKay, R. J. Beckman, W. J. Conover, Technometrics 21 (1979) 239-245, doi 10.1080/00401706.1979.10489755
+ * (from memory).
  * @example
  * ```ts
  * import { latinHypercube } from "resinwright";

@@ -18,7 +18,8 @@ export interface CoverageInterval {
  *
  * With h = (n - 1) probability, counted from 0: (1 - f) x[floor h] + f x[floor h + 1], f = h - floor h.
  * @throws InputError when the list is empty, not in rising order, or holds something that is not a finite number.
- * @source R. J. Hyndman, Y. Fan, The American Statistician 50 (1996) 361-365, doi 10.1080/00031305.1996.10473566.
+ * @source R. J. Hyndman, Y. Fan, The American Statistician 50 (1996) 361-365, doi 10.1080/00031305.1996.10473566
+ * (from memory).
  * @example
  * ```ts
  * import { quantile } from "resinwright";
@@ -76,7 +77,7 @@ export function coverageInterval(values: NumberList, level: number): CoverageInt
  *
  * - `a`, `b`: two lists of the same length, at least 2 finite numbers each, neither of them constant.
  * @throws InputError when the lengths differ, there are fewer than 2 numbers, or all of one list are equal.
- * @source C. Spearman, American Journal of Psychology 15 (1904) 72-101, doi 10.2307/1412159.
+ * @source C. Spearman, American Journal of Psychology 15 (1904) 72-101, doi 10.2307/1412159 (from memory).
  * @example
  * ```ts
  * import { rankCorrelation } from "resinwright";

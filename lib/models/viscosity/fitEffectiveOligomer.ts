@@ -51,7 +51,7 @@ export interface EffectiveOligomer {
  * blends within it, not the neat oligomer.
  * @throws InputError on fewer than 3 dilutions, all at one composition, a fraction outside 0 to 1, a viscosity not above 0,
  * or lists of different lengths.
- * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0; linear regression.
+ * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory); linear regression.
  * @example
  * ```ts
  * import { fitEffectiveOligomer } from "resinwright";

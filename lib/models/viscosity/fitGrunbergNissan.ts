@@ -33,7 +33,7 @@ export interface GrunbergNissanFit {
  * use {@link fitRedlichKister}, which looks for that.
  * @throws InputError on fewer than 2 blends between the pure ends, all blends at one composition, a fraction outside
  * 0 to 1, a viscosity not above 0, or lists of different lengths.
- * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0; least squares of one
+ * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory); least squares of one
  * coefficient through the origin.
  * @example
  * ```ts

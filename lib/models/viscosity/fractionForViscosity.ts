@@ -40,7 +40,7 @@ export type FractionAnswer =
  *
  * Assumes a G that does not depend on composition.
  * @throws InputError when a viscosity is not above 0, the bases differ, or every fraction gives the viscosity wanted.
- * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0, solved for x.
+ * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory), solved for x.
  * @example
  * ```ts
  * import { fractionForViscosity } from "resinwright";

@@ -37,7 +37,7 @@ export interface GrunbergNissanMixture {
  * published binaries one fitted G leaves 2 % (median); no G at all leaves 8 % (median) and 35 % in one case of ten.
  * @throws InputError on fractions that do not add up, a viscosity not above 0, lists of different lengths, an
  * interaction on another basis, of a component with itself, given twice, or naming a component that is not there.
- * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0; the sum over pairs as B. E.
+ * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory); the sum over pairs as B. E.
  * Poling, J. M. Prausnitz, J. P. O'Connell, The Properties of Gases and Liquids, 5th ed. 2001, chapter 9 (from memory).
  * @example
  * ```ts

@@ -16,7 +16,7 @@ export type PreparedBlend = (fractions: NumberList) => number;
  * ln eta = sum_i x_i (ln eta_i + sum_{j<i} x_j G_ij): the same rule, with the logarithms and the table of G worked out
  * beforehand. The function checks its fractions as `grunbergNissan` does; it may be called with one array changed in place.
  * @throws InputError as {@link grunbergNissan}, here for the liquids and in the function for the fractions.
- * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0.
+ * @source L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory).
  * @example
  * ```ts
  * import { prepareBlend } from "resinwright";

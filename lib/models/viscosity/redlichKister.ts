@@ -32,7 +32,7 @@ export interface BinaryBlend {
  * @throws InputError when the fraction is not 0 to 1, a viscosity is not above 0, there are no or more than three terms,
  * or the interaction is on another basis.
  * @source O. Redlich, A. T. Kister, Ind. Eng. Chem. 40 (1948) 345-348, doi 10.1021/ie50458a036 (from memory): the
- * polynomial; L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0: the rule it extends.
+ * polynomial; L. Grunberg, A. H. Nissan, Nature 164 (1949) 799-800, doi 10.1038/164799b0 (doi from memory): the rule it extends.
  * @example
  * ```ts
  * import { redlichKisterViscosity } from "resinwright";

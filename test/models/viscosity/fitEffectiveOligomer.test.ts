@@ -71,6 +71,36 @@ describe("fitEffectiveOligomer", () => {
     expect(fit.warnings.map(({ code }) => code)).toContain("far-from-neat");
   });
 
+  it("agrees with an independent least-squares program on published dilutions", () => {
+    // The same readings, mole fractions 0.3004 to 0.9001, by numpy.linalg.lstsq (NumPy 2.4.6) on the columns x1 and x1 x2:
+    // printed to 8 or 9 digits, so 1e-6 of each number holds (0.0211774 has six).
+    const { x1, eta, pure } = readIsotherm("12-propanediol__butyl-lactate", "298.15");
+    const used = x1.flatMap((x, i) => (x > 0.25 && x < 0.95 ? [i] : []));
+    const fit = fitEffectiveOligomer({
+      fractions: used.map((i) => x1[i]!),
+      viscosities_mPas: used.map((i) => eta[i]!),
+      diluentViscosity_mPas: pure[1],
+      basis: "mole",
+      level: 0.95,
+    });
+    const { covariance, leverage } = fit;
+    const found = [
+      Math.log(fit.oligomerViscosity_mPas.value),
+      fit.G.value,
+      fit.residualStandardDeviation,
+      Math.sqrt(covariance[0][0]),
+      Math.sqrt(covariance[1][1]),
+      covariance[0][1],
+      ...leverage,
+    ];
+    const expected = [
+      3.68444844, -1.43582423, 0.018325018, 0.0211774, 0.06474511, -0.00117362586, 0.23057927, 0.26168691,
+      0.2402635, 0.19323617, 0.17740712, 0.27960729, 0.61721974,
+    ];
+    expect(found.length).toBe(expected.length);
+    found.forEach((value, i) => expect(Math.abs(value / expected[i]! - 1)).toBeLessThan(1e-6));
+  });
+
   it("says how much each dilution decides: leverages of two coefficients add up to 2", () => {
     const fit = fitEffectiveOligomer(good);
     expect(fit.leverage.reduce((sum, h) => sum + h, 0)).toBeCloseTo(2, 10);
