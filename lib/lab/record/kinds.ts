@@ -115,7 +115,7 @@ export function checkRecord(record: NewRecord): void {
   const rules = Object.hasOwn(kinds, record.kind) ? kinds[record.kind] : undefined;
   if (rules === undefined) {
     throw new InputError(
-      `${where}: kind is ${show(record.kind)}; it must be one of ${Object.keys(kinds).join(", ")}`,
+      `${where}: kind is ${show(record.kind)}; it must be one of ${recordKinds.join(", ")}`,
     );
   }
   checkFields("", record, rules);
@@ -261,6 +261,9 @@ const kinds: Readonly<Record<NewRecord["kind"], Rules>> = {
   decision: { ...common, brief: text, formulation: text, dataHash: optional(dataHash), figures },
   amendment: { ...common, amends: id, corrections: someFigures },
 };
+
+/** Every kind of record, in the order work goes. */
+export const recordKinds = Object.keys(kinds) as readonly NewRecord["kind"][];
 
 function checkFields(prefix: string, value: object, rules: Rules): void {
   refuseUnknownKeys(prefix === "" ? where : `${where}: ${prefix.slice(0, -1)}`, value, Object.keys(rules));
