@@ -3,6 +3,7 @@
 export { appendRecord } from "./record/append.js";
 export { exportRecords } from "./record/export.js";
 export { listRecords, readRecords, type RecordEntry, type RecordList } from "./record/list.js";
+export { libraryVersion } from "./record/version.js";
 export { verifyRecords, type RecordCheck } from "./record/verify.js";
 export type { RecordProblem } from "./record/folder.js";
 export type {

@@ -3,7 +3,7 @@
 
 import { z } from "zod";
 import { InputError } from "../door.js";
-import { numberText } from "./digits.js";
+import { cellText } from "./digits.js";
 import { escapeHtml } from "./html.js";
 
 /** One column of a table: its name, the unit of its numbers, and the side its cells are set to. */
@@ -99,19 +99,12 @@ function columnTitle({ name, unit }: TableColumn): string {
 }
 
 function cellHtml({ columns, rowHeader }: TableContent, cell: string | number | null, i: number): string {
-  const text = cell === null ? "–" : typeof cell === "number" ? numberCell(cell) : escapeHtml(cell);
+  const text = escapeHtml(cellText(cell));
   // A registry number or a short name without spaces is not broken at its hyphens.
   const whole = typeof cell === "string" && /^\S{1,20}$/.test(cell) ? " whole" : "";
   const look = columns[i]!.align + whole;
   if (i === 0 && rowHeader) return `<th scope="row" class="${look}">${text}</th>`;
   return `<td class="${look}">${text}</td>`;
-}
-
-// Whole numbers are counts or years, and stay whole.
-function numberCell(value: number): string {
-  return Number.isInteger(value) && Math.abs(value) < 1e6
-    ? String(value).replace("-", "−")
-    : numberText(value);
 }
 
 function refuseNotFinite(value: unknown, where: string): void {

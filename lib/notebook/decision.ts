@@ -1,5 +1,6 @@
 // The end of a notebook: what was decided, shown and appended to the lab record.
 
+import { dataHashOf } from "../lab/dataHash.js";
 import { appendRecord } from "../lab/record.js";
 import { checkRecord } from "../lab/record/kinds.js";
 import type { Case } from "../assess/case.js";
@@ -10,7 +11,8 @@ import { tableOf } from "./table.js";
 
 /**
  * Shows a decision with the figures behind it and appends it to the lab record, in the folder that the environment variable
- * `RESINWRIGHT_RECORDS` names or else `../records`.
+ * `RESINWRIGHT_RECORDS` names or else `../records`. The record and the page name the version of the library and the hash of the
+ * data used ({@link dataHashOf}).
  * @param input - The case decided on; `from`, the notebook; the `statement`; `figures`, numbers or short text with units in
  * their names.
  * @throws InputError when the statement is empty or a figure is not finite; outside a notebook.
@@ -45,6 +47,7 @@ export function decide({
     from,
     brief: work.brief.id,
     formulation: work.formulation.id,
+    dataHash: dataHashOf(work),
     statement,
     figures,
   };
@@ -61,9 +64,16 @@ export function decide({
       caption: "What was appended to the lab record",
       rows: [
         ...rows,
+        { figure: "computed by", value: `resinwright ${written.libraryVersion}` },
+        { figure: "from the data", value: shortHashes(record.dataHash) },
         { figure: "written at", value: written.at },
-        { figure: "in the file", value: file.replace(/([0-9a-f]{12})[0-9a-f]{20,}/, "$1…") },
+        { figure: "in the file", value: shortHashes(file) },
       ],
     }),
   );
+}
+
+/** On a page twelve digits tell hashes apart; the record holds all of them. */
+function shortHashes(text: string): string {
+  return text.replace(/([0-9a-f]{12})[0-9a-f]{52}/g, "$1…");
 }

@@ -55,6 +55,13 @@ export function intervalText(interval: { value: number; low: number; high: numbe
   return withPower(`${v} (${l} to ${h})`, power);
 }
 
+/** A cell as people read it. Whole numbers are counts or years, and stay whole. */
+export function cellText(cell: string | number | null): string {
+  if (cell === null) return "–";
+  if (typeof cell === "string") return cell;
+  return Number.isInteger(cell) && Math.abs(cell) < 1e6 ? String(cell).replace("-", "−") : numberText(cell);
+}
+
 /** The power of ten of the first digit once `value` is rounded to `digits` digits: 2 for 99.9 at two digits. */
 function exponentOf(value: number, digits: number): number {
   return Number(value.toExponential(digits - 1).split("e")[1]);

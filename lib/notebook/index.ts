@@ -57,6 +57,7 @@ export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } fro
 export { layerTable, profileFigure } from "./layers.js";
 export { handlingTable, screeningTable } from "./safety.js";
 export { decide } from "./decision.js";
+export { recordFrame } from "./recordFrame.js";
 
 export type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
 export type { Origin } from "./page.js";

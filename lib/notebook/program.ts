@@ -1,10 +1,10 @@
 // The program behind `npm start`: runs all notebooks with one brief and leaves their pages in rendered/.
 // Pages are written only once every notebook has passed and been rendered, so that no half-made set is ever seen.
 
-import { mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
-import { createRequire } from "node:module";
+import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { InputError } from "../door.js";
+import { libraryVersion } from "../lab/record.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
 import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
@@ -14,26 +14,57 @@ import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
 
 const defaultBrief = path.join("data", "briefs", "flow-cell.json");
 
+/** Where a run is told of: progress and pages on one side, what went wrong on the other. */
+interface Telling {
+  readonly print: (line: string) => void;
+  readonly printError: (line: string) => void;
+}
+
 /**
  * Runs the notebooks of the workbench in `folder` with the brief named first in `words`, and writes their pages.
  * Returns the exit code: 0 done, 1 a notebook failed, 2 there was nothing to start with.
  */
-export async function start(given: {
-  readonly words: readonly string[];
-  readonly folder: string;
-  readonly print: (line: string) => void;
-  readonly printError: (line: string) => void;
-}): Promise<0 | 1 | 2> {
-  const { words, folder, print, printError } = given;
-  let task: { file: string; brief: Brief; files: string[] };
+export async function start(
+  given: Telling & { readonly words: readonly string[]; readonly folder: string },
+): Promise<0 | 1 | 2> {
+  const [brief = defaultBrief, ...others] = given.words;
+  if (others.length > 0) {
+    given.printError(
+      `npm start: ${given.words.length} arguments given; it must be one brief; name one file after --`,
+    );
+    return 2;
+  }
+  return renderAll({ ...given, brief });
+}
+
+/**
+ * Runs `notebooks`, or else all in `folder`, with a brief, and writes their pages into the folder `to`; paths are taken from `folder`.
+ * Returns the exit code as {@link start}.
+ */
+export async function renderAll(
+  given: Telling & {
+    readonly folder: string;
+    readonly brief: string;
+    readonly notebooks?: readonly string[];
+    readonly to?: string;
+  },
+): Promise<0 | 1 | 2> {
+  const { folder, print, printError } = given;
+  const file = path.resolve(folder, given.brief);
+  let task: { brief: Brief; files: string[] };
   try {
-    task = { ...checkedBrief(folder, words), files: notebooksIn(folder) };
+    // Read with its formulation and its shelf, so that a mistake in any of their files is told before a notebook runs.
+    const { brief } = readWorkbench(file);
+    task = {
+      brief,
+      files: given.notebooks === undefined ? notebooksIn(folder) : named(given.notebooks, folder),
+    };
   } catch (error) {
     printError(messageOf(error));
     return 2;
   }
-  const { file, brief, files } = task;
-  const records = process.env["RESINWRIGHT_RECORDS"] ?? path.join(folder, "records");
+  const { brief, files } = task;
+  const records = path.resolve(folder, process.env["RESINWRIGHT_RECORDS"] || "records");
   try {
     const runs = await runNotebooks({
       files,
@@ -42,7 +73,8 @@ export async function start(given: {
     });
     const failures = runs.flatMap((run) => (run.outcome === "failed" ? [run.failure.message] : []));
     if (failures.length > 0) throw new Error(failures.join("\n"));
-    const written = writePages(folder, pagesOf(runs, brief, { file, records, folder }));
+    const home = path.resolve(folder, given.to ?? "rendered");
+    const written = writePages(home, pagesOf(runs, brief, { file, records, folder }));
     print(["Pages:", ...written.map((file) => `  ${path.relative(folder, file)}`)].join("\n"));
     return 0;
   } catch (error) {
@@ -51,16 +83,21 @@ export async function start(given: {
   }
 }
 
-/** Reads the brief with its formulation and its shelf, so that a mistake in any of their files is told before a notebook runs. */
-function checkedBrief(folder: string, words: readonly string[]): { file: string; brief: Brief } {
-  const [named = defaultBrief, ...others] = words;
-  if (others.length > 0) {
-    throw new InputError(
-      `npm start: ${words.length} arguments given; it must be one brief; name one file after --`,
-    );
-  }
-  const file = path.resolve(folder, named);
-  return { file, brief: readWorkbench(file).brief };
+/** The files of notebooks named one by one; each leaves a page of its own. */
+function named(notebooks: readonly string[], folder: string): string[] {
+  const pages = new Set(["index"]);
+  return notebooks.map((name) => {
+    const file = path.resolve(folder, name);
+    if (!name.endsWith(".ipynb") || !existsSync(file))
+      throw new InputError(`${name}: is no notebook that can be read; name an .ipynb file`);
+    const page = path.basename(name, ".ipynb");
+    if (pages.has(page))
+      throw new InputError(
+        `${name}: there would be two pages ${page}.html; rename the notebook or leave it out`,
+      );
+    pages.add(page);
+    return file;
+  });
 }
 
 function notebooksIn(folder: string): string[] {
@@ -128,13 +165,8 @@ function withoutPaths(notebook: Notebook, { file, records, folder }: Places): No
   return { file: path.relative(folder, notebook.file), cells: notebook.cells.map(cleanCell) };
 }
 
-function libraryVersion(): string {
-  return (createRequire(import.meta.url)("resinwright/package.json") as { version: string }).version;
-}
-
 // A page appears under its name only when whole; if one cannot be written, none is replaced.
-function writePages(folder: string, pages: ReadonlyMap<string, string>): string[] {
-  const home = path.join(folder, "rendered");
+function writePages(home: string, pages: ReadonlyMap<string, string>): string[] {
   mkdirSync(home, { recursive: true });
   const written = [...pages].map(([name, html]) => ({ file: path.join(home, name), html }));
   const unfinished = (file: string) => `${file}.${process.pid}.part`;

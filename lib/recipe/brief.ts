@@ -27,6 +27,9 @@ export const propertyNames: readonly PropertyName[] = [
   "inductionTime_s",
 ];
 
+/** Within these a brief may ask for a resin temperature. */
+export const printTemperatures_C = { min: 0, max: 120 } as const;
+
 /** From `min` to `max`, either of which may be absent, in the unit the property's name ends in. */
 export interface Target {
   readonly min?: number;
@@ -128,7 +131,7 @@ const briefSchema = strict({
   scenario: z.string().min(3),
   formulation: z.string().min(1),
   shelf: z.array(z.string().min(1)).min(1).default([".."]),
-  temperature_C: quantity("temperature_C", { min: 0, max: 120 }),
+  temperature_C: quantity("temperature_C", printTemperatures_C),
   layerThickness_um: quantity("layerThickness_um", { min: 1, max: 500 }),
   cureDepthPerLayer: z.number().min(1).max(5),
   light: strict({

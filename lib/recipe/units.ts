@@ -1,7 +1,9 @@
 // Units at the door: people write "450 cP" or "77 °F", mathjs reads them once, and inside there are only numbers in the unit a
 // field's name ends in. The list of those endings stands here, once.
 
-import { create, unitDependencies, createUnitDependencies, type Unit } from "mathjs";
+import type { Unit } from "mathjs";
+// The same package in one file: loading its thousand modules takes a second, and every program of this library waits for it.
+import mathjs from "mathjs/lib/browser/math.js";
 import { InputError, nearestName, show } from "../door.js";
 
 /** What a field-name ending means: the unit as people write it in tables, and as mathjs reads it. */
@@ -115,7 +117,7 @@ export function toFieldUnit(field: string, given: unknown): number {
     throw new InputError(`is ${show(given)}; it must be ${allowed}`);
   }
   const read = parseUnit(given, unit);
-  const value = read.equalBase(math.unit(1, unit.mathjs)) ? read.toNumber(unit.mathjs) : NaN;
+  const value = read.equalBase(units().unit(1, unit.mathjs)) ? read.toNumber(unit.mathjs) : NaN;
   if (!Number.isFinite(value)) {
     throw new InputError(`is ${show(given)}; it must be a quantity that converts to ${unit.label}`);
   }
@@ -123,14 +125,21 @@ export function toFieldUnit(field: string, given: unknown): number {
   return Number(value.toPrecision(12));
 }
 
-const math = create({ unitDependencies, createUnitDependencies });
-math.createUnit({
-  cP: { definition: "1 mPa s", aliases: ["centipoise"] },
-  poise: { definition: "100 mPa s" },
-});
-// Stern 1968 (from memory): 1 barrer = 1e-10 cm³(STP) cm cm⁻² s⁻¹ cmHg⁻¹, here as an amount of substance.
-math.createUnit("barrer", "3.346402e-16 mol m^-1 s^-1 Pa^-1");
-math.createUnit("percent");
+let made: ReturnType<typeof mathjs.create> | undefined;
+
+/** Made when the first text with a unit is read: files that hold numbers only never wait for it. */
+function units() {
+  if (made !== undefined) return made;
+  made = mathjs.create();
+  made.createUnit({
+    cP: { definition: "1 mPa s", aliases: ["centipoise"] },
+    poise: { definition: "100 mPa s" },
+  });
+  // Stern 1968 (from memory): 1 barrer = 1e-10 cm³(STP) cm cm⁻² s⁻¹ cmHg⁻¹, here as an amount of substance.
+  made.createUnit("barrer", "3.346402e-16 mol m^-1 s^-1 Pa^-1");
+  made.createUnit("percent");
+  return made;
+}
 
 function parseUnit(given: string, wanted: FieldUnit): Unit {
   const text = given
@@ -145,7 +154,7 @@ function parseUnit(given: string, wanted: FieldUnit): Unit {
     throw new InputError(`is ${show(given)} without a unit; write for instance "${text} ${wanted.label}"`);
   }
   try {
-    return math.unit(text);
+    return units().unit(text);
   } catch {
     const word = /[a-z]+/i.exec(text.replace(/^[-+\d.e\s]+/i, ""))?.[0] ?? "";
     const near = nearestName(word, unitWords);

@@ -2,6 +2,7 @@ import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync } from "node:
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { dataHashOf } from "../../lib/lab/dataHash.js";
 import { readRecords } from "../../lib/lab/record.js";
 import { decide } from "../../lib/notebook/decision.js";
 import { showMarkdown, showTable } from "../../lib/notebook/show.js";
@@ -21,6 +22,7 @@ afterEach(() => {
 });
 
 const work = { formulation: formulationOf({ THIN: 60, THICK: 40 }), brief, shelf };
+const { version } = JSON.parse(readFileSync("lib/package.json", "utf8")) as { version: string };
 const statement = "Mix four parts of THICK with six of THIN.";
 const figures = { share: 0.4, viscosity_mPas: 412.3456, film: "OPEN" };
 const decideIt = (change = {}) => decide({ work, from: "02", statement, figures, ...change });
@@ -40,6 +42,7 @@ describe("decide", () => {
       brief: "test",
       formulation: "test",
       statement,
+      dataHash: dataHashOf(work),
     });
     expect(record.figures).toEqual(figures);
     expect(new Date(record.at).toISOString()).toBe(record.at);
@@ -56,6 +59,8 @@ describe("decide", () => {
       ["share", "0.4"],
       ["viscosity_mPas", "412.3"],
       ["film", "OPEN"],
+      ["computed by", `resinwright ${version}`],
+      ["from the data", `${dataHashOf(work).slice(0, 12)}…`],
       ["written at", record!.at],
       ["in the file", expect.stringMatching(/^\d{4}-.*-[0-9a-f]{12}….json$/)],
     ]);

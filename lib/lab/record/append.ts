@@ -5,6 +5,7 @@ import { resolve } from "node:path";
 import { InputError } from "../../door.js";
 import { fileOf, idOf, namesIn, readRecordFile, writeOnce } from "./folder.js";
 import { checkRecord, type NewRecord, type Written } from "./kinds.js";
+import { libraryVersion } from "./version.js";
 
 /**
  * Appends a record to a folder as a new file; a record that stands is never touched.
@@ -39,11 +40,16 @@ export function appendRecord<R extends NewRecord>({
 }: {
   folder: string;
   record: R;
-}): { id: string; file: string; record: R & Written } {
+}): { id: string; file: string; record: R & Required<Written> } {
   checkRecord(record);
   const after = newestIn(folder);
   if (record.kind === "amendment") requireRecord(folder, record.amends);
-  const added: Written = { at: new Date().toISOString(), nonce: randomBytes(8).toString("hex"), after };
+  const added = {
+    at: new Date().toISOString(),
+    nonce: randomBytes(8).toString("hex"),
+    after,
+    libraryVersion: libraryVersion(),
+  };
   const written = { ...added, ...record };
   const { id, file, text } = fileOf(written);
   writeOnce({ folder, file, text });

@@ -31,6 +31,8 @@ export interface RecipeRecord extends Common {
 export interface BatchRecord extends Common {
   readonly kind: "batch";
   readonly formulation: string;
+  /** What it was weighed out from, by {@link dataHashOf}. */
+  readonly dataHash?: string;
   /** The name on the bottle. */
   readonly batch: string;
   readonly lines: readonly {
@@ -70,6 +72,8 @@ export interface DecisionRecord extends Common {
   readonly kind: "decision";
   readonly brief: string;
   readonly formulation: string;
+  /** What the figures were computed from, by {@link dataHashOf}. */
+  readonly dataHash?: string;
   readonly figures: Figures;
 }
 
@@ -93,6 +97,8 @@ export interface Written {
   readonly nonce: string;
   /** Ids of the newest records it was written on: what ties the record together. */
   readonly after: readonly string[];
+  /** Of this library, when it wrote the record; absent in records older than this field. */
+  readonly libraryVersion?: string;
 }
 
 /** A record as it stands. */
@@ -103,10 +109,13 @@ export type LabRecord = NewRecord & Written;
  * @throws InputError naming the field, what was given and what is allowed.
  */
 export function checkRecord(record: NewRecord): void {
-  const rules = kinds[record.kind] as Rules | undefined;
+  if (typeof record !== "object" || record === null || Array.isArray(record)) {
+    throw new InputError(`${where}: this is ${show(record)}; it must be one record, an object with its kind`);
+  }
+  const rules = Object.hasOwn(kinds, record.kind) ? kinds[record.kind] : undefined;
   if (rules === undefined) {
     throw new InputError(
-      `${where}: kind is ${show(record.kind)}; it must be one of ${Object.keys(kinds).join(", ")}`,
+      `${where}: kind is ${show(record.kind)}; it must be one of ${recordKinds.join(", ")}`,
     );
   }
   checkFields("", record, rules);
@@ -209,6 +218,13 @@ const id: Rule = (field, value) => {
   throw new InputError(`${where}: ${field} is ${show(value)}; it must be the id of a record, 64 hex digits`);
 };
 
+const dataHash: Rule = (field, value) => {
+  if (typeof value === "string" && /^[0-9a-f]{64}$/.test(value)) return;
+  throw new InputError(
+    `${where}: ${field} is ${show(value)}; it must be 64 hex digits, as dataHashOf gives them`,
+  );
+};
+
 const mass = number(notNegative);
 const common: Rules = { kind: text, from: text, statement, brief: optional(text) };
 
@@ -221,6 +237,7 @@ const kinds: Readonly<Record<NewRecord["kind"], Rules>> = {
   batch: {
     ...common,
     formulation: text,
+    dataHash: optional(dataHash),
     batch: text,
     lines: listOf(shape({ ingredient: text, lot: anyText, target_g: mass, actual_g: mass })),
   },
@@ -241,9 +258,12 @@ const kinds: Readonly<Record<NewRecord["kind"], Rules>> = {
     conditions: figures,
     figures,
   },
-  decision: { ...common, brief: text, formulation: text, figures },
+  decision: { ...common, brief: text, formulation: text, dataHash: optional(dataHash), figures },
   amendment: { ...common, amends: id, corrections: someFigures },
 };
+
+/** Every kind of record, in the order work goes. */
+export const recordKinds = Object.keys(kinds) as readonly NewRecord["kind"][];
 
 function checkFields(prefix: string, value: object, rules: Rules): void {
   refuseUnknownKeys(prefix === "" ? where : `${where}: ${prefix.slice(0, -1)}`, value, Object.keys(rules));

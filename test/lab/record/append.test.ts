@@ -24,6 +24,17 @@ describe("appendRecord", () => {
     expect(written.map(({ kind }) => kind)).toEqual(["recipe", "batch", "measurement", "print", "decision"]);
   });
 
+  it("names the version of the library, and keeps the hash of the data where one is given", () => {
+    const { version } = JSON.parse(readFileSync("lib/package.json", "utf8")) as { version: string };
+    const dataHash = "0123456789abcdef".repeat(4);
+    for (const record of [decision("one"), oneOfEach[1]!])
+      expect(append({ ...record, dataHash } as NewRecord).record).toMatchObject({
+        libraryVersion: version,
+        dataHash,
+      });
+    expect(append(decision("no data")).record).not.toHaveProperty("dataHash");
+  });
+
   it("names the file by time and hash, and is written on the newest records", () => {
     vi.useFakeTimers({ now: new Date("2026-01-02T03:04:05.006Z") });
     const first = append(decision("one"));
@@ -111,6 +122,18 @@ describe("appendRecord", () => {
       "a key unknown",
       { ...measurement, repeat: [1] },
       'record: unknown field "repeat"; did you mean "repeats"?',
+    ],
+    [
+      "a kind that every object has",
+      { ...plain, kind: "toString" },
+      'record: kind is "toString"; it must be',
+    ],
+    ["no record", [plain], "record: this is a list; it must be one record, an object with its kind"],
+    ["a version of its own", { ...plain, libraryVersion: "9" }, 'record: unknown field "libraryVersion"'],
+    [
+      "a hash that is none",
+      { ...plain, dataHash: "abc" },
+      'record: dataHash is "abc"; it must be 64 hex digits, as dataHashOf gives them',
     ],
     ["a time of its own", { ...plain, at: "2020-01-01" }, 'record: unknown field "at"'],
     [

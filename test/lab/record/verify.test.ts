@@ -44,6 +44,15 @@ describe("a sound folder", () => {
     expect(verify()).toMatchObject({ sound: true, count: 1, problems: [] });
   });
 
+  it("may hold records from before they named the library's version and the data", () => {
+    const old = { ...decision("old"), at: "2025-12-01T08:00:00.000Z", nonce: "00", after: [] };
+    const { file, id, text } = fileOf(old);
+    writeFileSync(join(folder.path, file), text);
+    append("new");
+    expect(verify()).toMatchObject({ sound: true, count: 2, problems: [] });
+    expect(listRecords(folder.path).entries[0]).toMatchObject({ id, record: old });
+  });
+
   it("may have been checked out with the line endings of another system", () => {
     const one = append("one");
     writeFileSync(pathOf(one), readFileSync(pathOf(one), "utf8").replaceAll("\n", "\r\n"));

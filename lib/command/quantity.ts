@@ -1,0 +1,26 @@
+// The quantities that options give, with any unit that converts.
+
+import { checkNumber, InputError, type NumberRule } from "../door.js";
+import { toFieldUnit } from "../recipe/units.js";
+
+/**
+ * Reads the quantity of an option into the unit that `field` ends in.
+ * @throws InputError naming the option.
+ */
+export function quantityOf({
+  act,
+  option,
+  field,
+  given,
+  ...range
+}: { act: string; option: string; field: string; given: string } & Omit<
+  NumberRule,
+  "where" | "field"
+>): number {
+  try {
+    return checkNumber(toFieldUnit(field, given), { where: act, field: `--${option}`, ...range });
+  } catch (error) {
+    if (!(error instanceof InputError)) throw error;
+    throw error.message.startsWith("is ") ? new InputError(`${act}: --${option} ${error.message}`) : error;
+  }
+}
