@@ -2,14 +2,13 @@
 // Pages are written only once every notebook has passed and been rendered, so that no half-made set is ever seen.
 
 import { mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
-import { createRequire } from "node:module";
 import path from "node:path";
 import { InputError } from "../door.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
 import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
-import type { Origin } from "./page.js";
-import { renderIndex, renderNotebook } from "./render.js";
+import { originOf } from "./origin.js";
+import { renderIndex, renderNotebook, renderSheet } from "./render.js";
 import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
 
 const defaultBrief = path.join("data", "briefs", "flow-cell.json");
@@ -89,21 +88,25 @@ interface Places {
   readonly folder: string;
 }
 
-/** The pages by file name, with the index last. */
+/**
+ * The pages by file name, sheets after the notebooks, with the index last.
+ * @throws InputError when two sheets would have one name.
+ */
 function pagesOf(runs: readonly NotebookRun[], brief: Brief, places: Places): Map<string, string> {
-  const origin: Origin = {
-    brief: path.basename(places.file),
-    libraryVersion: libraryVersion(),
-    nodeVersion: process.versions.node,
-    date: new Date().toISOString().slice(0, 10),
-  };
+  const origin = originOf(places.file);
   const notebooks = runs.flatMap((run) => (run.outcome === "passed" ? [run.notebook] : []));
   const pages = notebooks.map((notebook) => ({
     file: `${path.basename(notebook.file, ".ipynb")}.html`,
     ...renderNotebook({ notebook: withoutPaths(notebook, places), origin }),
   }));
+  const sheets = pages.flatMap((page) => page.sheets);
+  const names = sheets.map(({ name }) => name);
+  const twice = names.find((name, i) => names.indexOf(name) !== i);
+  if (twice !== undefined)
+    throw new InputError(`two sheets are named "${twice}"; give one of them another name in showSheet`);
   return new Map([
     ...pages.map(({ file, html }) => [file, html] as const),
+    ...sheets.flatMap((content) => [...renderSheet({ content, origin })]),
     ["index.html", renderIndex({ pages, origin, title: brief.title, introduction: brief.scenario })],
   ]);
 }
@@ -126,10 +129,6 @@ function withoutPaths(notebook: Notebook, { file, records, folder }: Places): No
   const cleanCell = (cell: CodeCell | MarkdownCell) =>
     cell.kind === "code" ? { ...cell, outputs: cell.outputs.map(cleanOutput) } : cell;
   return { file: path.relative(folder, notebook.file), cells: notebook.cells.map(cleanCell) };
-}
-
-function libraryVersion(): string {
-  return (createRequire(import.meta.url)("resinwright/package.json") as { version: string }).version;
 }
 
 // A page appears under its name only when whole; if one cannot be written, none is replaced.
