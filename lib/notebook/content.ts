@@ -1,10 +1,11 @@
-// What a cell hands over when it shows a figure or a table: plain data inside a script element that never runs.
+// What a cell hands over when it shows a figure, a table or a weigh-out sheet: plain data inside a script element that never runs.
 // The live notebook shows the HTML that follows it; the rendered page reads the data and draws it itself.
 
 import { z } from "zod";
 import { InputError } from "../door.js";
 import { cellText } from "./digits.js";
 import { escapeHtml } from "./html.js";
+import { sheetSchema, type SheetContent } from "./sheet/content.js";
 
 /** One column of a table: its name, the unit of its numbers, and the side its cells are set to. */
 export interface TableColumn {
@@ -42,7 +43,7 @@ export interface FigureContent {
 export const decisionMark = "**Decided.** ";
 
 /** What a cell can show beside text and pictures. */
-export type Content = FigureContent | TableContent;
+export type Content = FigureContent | TableContent | SheetContent;
 
 /**
  * The script element that carries `content` to the rendered page.
@@ -62,8 +63,8 @@ export function toJson(value: object, name: string): string {
 }
 
 /**
- * The figure or table that `html` begins with, or undefined if it is any other HTML.
- * @throws InputError if the script element is there but does not hold a figure or a table.
+ * The content that `html` begins with, or undefined if it is any other HTML.
+ * @throws InputError if the script element is there but does not hold a figure, a table or a sheet.
  */
 export function extract(html: string): Content | undefined {
   const found = /^\s*<script type="application\/json" data-resinwright="([^"]*)">([^<]*)<\/script>/.exec(
@@ -71,9 +72,12 @@ export function extract(html: string): Content | undefined {
   );
   if (found === null) return undefined;
   const [, kind = "", json = ""] = found;
-  const schema = kind === "figure" ? figureSchema : kind === "table" ? tableSchema : undefined;
-  if (schema === undefined) throw new InputError(`output: unknown content "${kind}"; known: figure, table`);
-  const result = schema.safeParse(parseQuietly(json));
+  if (!Object.hasOwn(contentSchemas, kind)) {
+    throw new InputError(
+      `output: unknown content "${kind}"; known: ${Object.keys(contentSchemas).join(", ")}`,
+    );
+  }
+  const result = contentSchemas[kind as Content["kind"]].safeParse(parseQuietly(json));
   if (result.success) return result.data;
   const { path, message } = result.error.issues[0]!;
   throw new InputError(`output ${kind}: ${path.length > 0 ? path.join(".") : "the data"}: ${message}`);
@@ -148,6 +152,12 @@ const figureSchema = z.strictObject({
   layout: z.looseObject({}),
   table: tableSchema,
 });
+
+const contentSchemas: Readonly<Record<Content["kind"], z.ZodType<Content>>> = {
+  figure: figureSchema,
+  table: tableSchema,
+  sheet: sheetSchema,
+};
 
 /** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
 function tableClass({ columns, rows }: TableContent): string {

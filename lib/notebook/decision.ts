@@ -1,8 +1,9 @@
-// The end of a notebook: what was decided, shown and appended to the lab record.
+// The end of a notebook: what was decided, and what was made, shown and appended to the lab record.
 
 import { dataHashOf } from "../lab/dataHash.js";
 import { appendRecord } from "../lab/record.js";
-import { checkRecord } from "../lab/record/kinds.js";
+import { checkRecord, type BatchRecord, type DecisionRecord } from "../lab/record/kinds.js";
+import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Case } from "../assess/case.js";
 import { decisionMark } from "./content.js";
 import { numberText } from "./digits.js";
@@ -41,19 +42,78 @@ export function decide({
   statement: string;
   figures: Readonly<Record<string, number | string>>;
 }): void {
-  const folder = process.env["RESINWRIGHT_RECORDS"] || "../records";
-  const record = {
-    kind: "decision" as const,
-    from,
-    brief: work.brief.id,
-    formulation: work.formulation.id,
-    dataHash: dataHashOf(work),
-    statement,
+  const { brief, formulation } = work;
+  showAndAppend({
+    said: decisionMark + statement,
+    record: {
+      kind: "decision",
+      from,
+      brief: brief.id,
+      formulation: formulation.id,
+      dataHash: dataHashOf(work),
+      statement,
+      figures,
+    },
     figures,
-  };
-  // Checked and shown before it is written: a record that cannot be or is not read by anybody leaves nothing behind.
+  });
+}
+
+/**
+ * Shows and appends a batch as it was weighed, portion by portion with lots, as {@link decide} does a decision.
+ * @param input - The case as planned; `from`, the notebook; the `batch`; the `statement`.
+ * @throws InputError when the statement is empty; outside a notebook.
+ * @example
+ * ```ts
+ * import { openBatch, openBrief } from "resinwright/files";
+ * import { recordBatch } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const batch = openBatch({ ...work, draws: 200 })!;
+ * const cell = () => recordBatch({ work, from: "06-weigh-it-out", batch, statement: "TEGDMA poured over its mark." });
+ * typeof cell; // → "function"
+ * ```
+ */
+export function recordBatch({
+  work,
+  from,
+  batch: { weighed, made },
+  statement,
+}: {
+  work: Case;
+  from: string;
+  batch: ReturnedBatch;
+  statement: string;
+}): void {
+  const { brief, formulation } = work;
+  const { lines, total_g } = made;
+  showAndAppend({
+    said: statement,
+    record: {
+      kind: "batch",
+      from,
+      brief: brief.id,
+      formulation: formulation.id,
+      dataHash: dataHashOf(work),
+      statement,
+      batch: weighed.id,
+      lines,
+    },
+    figures: { batch: weighed.id, portions: lines.length, total_g },
+  });
+}
+
+/** Checked and shown before it is written: a record that cannot be or is not read by anybody leaves nothing behind. */
+function showAndAppend({
+  said,
+  record,
+  figures,
+}: {
+  said: string;
+  record: (BatchRecord | DecisionRecord) & { readonly dataHash: string };
+  figures: Readonly<Record<string, number | string>>;
+}): void {
   checkRecord(record);
-  showMarkdown(decisionMark + statement);
+  showMarkdown(said);
+  const folder = process.env["RESINWRIGHT_RECORDS"] || "../records";
   const { file, record: written } = appendRecord({ folder, record });
   const rows = Object.entries(figures).map(([figure, value]) => ({
     figure,

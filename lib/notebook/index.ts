@@ -1,7 +1,7 @@
 // The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
 
 export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
-export { showFigure, showMarkdown, showTable } from "./show.js";
+export { showFigure, showMarkdown, showSheet, showTable } from "./show.js";
 
 export { lineFigure, type LineFigure, type Series } from "./figure/line.js";
 export {
@@ -56,8 +56,21 @@ export {
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
 export { layerTable, profileFigure } from "./layers.js";
 export { handlingTable, screeningTable } from "./safety.js";
-export { decide } from "./decision.js";
 export { recordFrame } from "./recordFrame.js";
+export {
+  batchDecision,
+  changeTable,
+  madeTable,
+  masterBatchTable,
+  rescueTable,
+  rescueText,
+  weighedTable,
+  weighOutTable,
+} from "./batch.js";
+export { sheetOf, weighOutPage, type SheetInput } from "./sheet.js";
+export type { SheetContent, SheetMasterBatch, SheetPortion } from "./sheet/content.js";
+export type { Paper } from "./sheet/style.js";
+export { decide, recordBatch } from "./decision.js";
 
 export type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
 export type { Origin } from "./page.js";

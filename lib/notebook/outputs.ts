@@ -6,13 +6,16 @@ import { extract, tableHtml, toJson, type Content, type FigureContent } from "./
 import { escapeHtml } from "./html.js";
 import { markdownHtml, type Heading } from "./markdown.js";
 import type { Output } from "./notebookFile.js";
+import type { SheetContent } from "./sheet/content.js";
+import { sheetLinks } from "./sheet/page.js";
 
-/** What is counted over a page: figures, tables and pictures shown so far, and headings. */
+/** What is counted over a page: figures, tables and pictures shown so far, headings, and the sheets it goes with. */
 export interface Counts {
   figures: number;
   tables: number;
   pictures: number;
   readonly headings: Heading[];
+  readonly sheets: SheetContent[];
 }
 
 /**
@@ -43,6 +46,10 @@ function contentOf(html: string, where: string): Content | undefined {
 }
 
 function contentHtml(content: Content, counts: Counts): string {
+  if (content.kind === "sheet") {
+    counts.sheets.push(content);
+    return `<p>To print and write on: ${sheetLinks(content)}</p>\n`;
+  }
   if (content.kind === "figure") return figureHtml(content, ++counts.figures);
   return scrolling(tableHtml(content, `Table ${++counts.tables}.`), `Table ${counts.tables}`);
 }

@@ -15,7 +15,10 @@ export interface Origin {
   readonly date: string;
 }
 
-/** A page around `main`; `scripts` stand at its end and are the only ones that run. `title` is plain text. */
+/**
+ * A page around `main`; `scripts` stand at its end and are the only ones that run. `title` is plain text; `style` comes after the
+ * style of every page.
+ */
 export function pageHtml(given: {
   readonly title: string;
   readonly main: string;
@@ -23,9 +26,10 @@ export function pageHtml(given: {
   readonly bar?: string;
   readonly note?: string;
   readonly mainClass?: string;
+  readonly style?: string;
   readonly scripts?: readonly string[];
 }): string {
-  const { title, main, origin, bar = "", note = "", mainClass = "page", scripts = [] } = given;
+  const { title, main, origin, bar = "", note = "", mainClass = "page", style = "", scripts = [] } = given;
   return `<!doctype html>
 <html lang="en">
 <head>
@@ -34,7 +38,7 @@ export function pageHtml(given: {
 <meta name="viewport" content="width=device-width, initial-scale=1">
 <meta name="referrer" content="no-referrer">
 <title>${escapeHtml(title)}</title>
-<style>${pageStyle}</style>
+<style>${pageStyle}${style}</style>
 </head>
 <body>
 <a class="skip" href="#main">Skip to the text</a>

@@ -4,12 +4,11 @@
 import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { InputError } from "../door.js";
-import { libraryVersion } from "../lab/record.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
 import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
-import type { Origin } from "./page.js";
-import { renderIndex, renderNotebook } from "./render.js";
+import { originOf } from "./origin.js";
+import { renderIndex, renderNotebook, renderSheet } from "./render.js";
 import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
 
 const defaultBrief = path.join("data", "briefs", "flow-cell.json");
@@ -126,21 +125,25 @@ interface Places {
   readonly folder: string;
 }
 
-/** The pages by file name, with the index last. */
+/**
+ * The pages by file name, sheets after the notebooks, with the index last.
+ * @throws InputError when two sheets would have one name.
+ */
 function pagesOf(runs: readonly NotebookRun[], brief: Brief, places: Places): Map<string, string> {
-  const origin: Origin = {
-    brief: path.basename(places.file),
-    libraryVersion: libraryVersion(),
-    nodeVersion: process.versions.node,
-    date: new Date().toISOString().slice(0, 10),
-  };
+  const origin = originOf(places.file);
   const notebooks = runs.flatMap((run) => (run.outcome === "passed" ? [run.notebook] : []));
   const pages = notebooks.map((notebook) => ({
     file: `${path.basename(notebook.file, ".ipynb")}.html`,
     ...renderNotebook({ notebook: withoutPaths(notebook, places), origin }),
   }));
+  const sheets = pages.flatMap((page) => page.sheets);
+  const names = sheets.map(({ name }) => name);
+  const twice = names.find((name, i) => names.indexOf(name) !== i);
+  if (twice !== undefined)
+    throw new InputError(`two sheets are named "${twice}"; give one of them another name in showSheet`);
   return new Map([
     ...pages.map(({ file, html }) => [file, html] as const),
+    ...sheets.flatMap((content) => [...renderSheet({ content, origin })]),
     ["index.html", renderIndex({ pages, origin, title: brief.title, introduction: brief.scenario })],
   ]);
 }

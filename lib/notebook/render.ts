@@ -12,6 +12,9 @@ import type { CodeCell, Notebook } from "./notebookFile.js";
 import { outputHtml, type Counts } from "./outputs.js";
 import { pageHtml, type Origin } from "./page.js";
 import { pageScript } from "./pageScript.js";
+import type { SheetContent } from "./sheet/content.js";
+import { papers, sheetFile, sheetHtml, sheetLinks } from "./sheet/page.js";
+import type { Paper } from "./sheet/style.js";
 
 /** A page: its title and first paragraph in plain words, and the whole of it as HTML. */
 export interface Page {
@@ -19,6 +22,8 @@ export interface Page {
   readonly summary: string;
   /** What the notebook decided, in plain words, if it did. */
   readonly decision?: string;
+  /** The weigh-out sheets it shows. */
+  readonly sheets: readonly SheetContent[];
   readonly html: string;
 }
 
@@ -28,6 +33,7 @@ export interface IndexEntry {
   readonly title: string;
   readonly summary: string;
   readonly decision?: string;
+  readonly sheets?: readonly SheetContent[];
 }
 
 /**
@@ -43,7 +49,7 @@ export function renderNotebook(given: { readonly notebook: Notebook; readonly or
   const { title = escapeMarkdown(name), rest } =
     first?.kind === "markdown" ? splitTitle(first.source) : { rest: undefined };
   const titleHtml = inlineHtml({ source: title, where: notebook.file });
-  const counts: Counts = { figures: 0, tables: 0, pictures: 0, headings: [] };
+  const counts: Counts = { figures: 0, tables: 0, pictures: 0, headings: [], sheets: [] };
   let number = 0;
   const body = notebook.cells.map((cell, i) => {
     if (cell.kind === "code") return codeCellHtml(cell, ++number, notebook.file, counts);
@@ -60,7 +66,28 @@ export function renderNotebook(given: { readonly notebook: Notebook; readonly or
     note: number === 0 ? "" : `<p class="print-only">${printNote}</p>\n`,
     scripts: counts.figures > 0 ? [figureLibrary(), pageScript] : [pageScript],
   });
-  return { title: plainText(titleHtml), summary: firstParagraph(body), decision: decisionOf(notebook), html };
+  return {
+    title: plainText(titleHtml),
+    summary: firstParagraph(body),
+    decision: decisionOf(notebook),
+    sheets: counts.sheets,
+    html,
+  };
+}
+
+/** Renders a sheet on every paper, by file name; the pages link to the others of the same folder. */
+export function renderSheet(given: {
+  readonly content: SheetContent;
+  readonly origin: Origin;
+}): Map<string, string> {
+  const { content, origin } = given;
+  const bar = `<header class="bar"><a href="index.html">All notebooks</a> · ${sheetLinks(content)}</header>`;
+  return new Map(
+    (Object.keys(papers) as Paper[]).map((paper) => [
+      sheetFile(content, paper),
+      sheetHtml({ content, paper, origin, bar }),
+    ]),
+  );
 }
 
 /** Renders the page that lists all others, in the order given, with what each decided. */
@@ -70,13 +97,14 @@ export function renderIndex(given: {
   readonly title: string;
   readonly introduction: string;
 }): string {
-  const items = given.pages.map(({ file, title, summary, decision }) => {
+  const items = given.pages.map(({ file, title, summary, decision, sheets = [] }) => {
     const words = summary === "" ? "" : `<p>${escapeHtml(summary)}</p>`;
     const decided =
       decision === undefined
         ? ""
         : `<p class="decided"><strong>Decided.</strong> ${escapeHtml(decision)}</p>`;
-    return `<li><a href="${escapeHtml(encodeURIComponent(file))}">${escapeHtml(title)}</a>${words}${decided}</li>`;
+    const toPrint = sheets.map((sheet) => `<p class="sheets">${sheetLinks(sheet)}</p>`).join("");
+    return `<li><a href="${escapeHtml(encodeURIComponent(file))}">${escapeHtml(title)}</a>${words}${decided}${toPrint}</li>`;
   });
   const heading = `<h1>${escapeHtml(given.title)}</h1>\n<p>${escapeHtml(given.introduction)}</p>`;
   const main = `${heading}\n<ol class="list">\n${items.join("\n")}\n</ol>`;

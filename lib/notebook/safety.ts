@@ -1,6 +1,6 @@
 // How a hazard screening is shown: what the mixture may be, what rules say of its substances, how to keep and handle it.
 
-import type { HazardScreening } from "../lab/hazards.js";
+import type { HazardFlag, HazardScreening } from "../lab/hazards.js";
 import type { TableContent } from "./content.js";
 import { intervalText, numberText } from "./digits.js";
 import { tableOf } from "./table.js";
@@ -17,22 +17,17 @@ import { tableOf } from "./table.js";
  * table.rows[0][0]; // → "if all of it cures at once"
  * ```
  */
-export function screeningTable({
-  caution,
-  flags,
-  regulatory,
-  temperatureRise_K,
-  notChecked,
-}: HazardScreening): TableContent {
+export function screeningTable(screening: HazardScreening): TableContent {
+  const { caution, flags, regulatory, notChecked } = screening;
   const rows = [
     {
       about: "if all of it cures at once",
-      finding: `warms by ${intervalText(temperatureRise_K)} K without cooling: keep amounts small, out of the light, and never in a closed vessel`,
+      finding: riseText(screening),
       source: "double bonds and heats of polymerisation",
     },
     ...flags.map((flag) => ({
       about: `${flag.statement} ${flag.title}`,
-      finding: `${flag.outcome === "reached" ? "reaches" : "may reach"} the generic limit of ${numberText(flag.limit_pct, 2)} % with ${numberText(flag.content_pct, 2)} %${flag.condition === undefined ? "" : `, ${flag.condition}`}`,
+      finding: flagText(flag),
       source: `${flag.source} (${flag.date}; ${flag.status})`,
     })),
     ...regulatory.map(({ substance, region, fact, date, source, status }) => ({
@@ -43,6 +38,18 @@ export function screeningTable({
     ...notChecked.map((id) => ({ about: id, finding: "nobody has checked its hazards", source: null })),
   ];
   return tableOf({ caption: `Screening of the mixture. ${caution}`, rows });
+}
+
+/** How hot the resin gets if all of it cures at once, and what to do about it. */
+export function riseText({ temperatureRise_K }: HazardScreening): string {
+  return `warms by ${intervalText(temperatureRise_K)} K without cooling: keep amounts small, out of the light, and never in a closed vessel`;
+}
+
+/** Which limit a mixture reaches, and with how much. */
+export function flagText({ outcome, limit_pct, content_pct, condition }: HazardFlag): string {
+  const reaches = outcome === "reached" ? "reaches" : "may reach";
+  const given = condition === undefined ? "" : `, ${condition}`;
+  return `${reaches} the generic limit of ${numberText(limit_pct, 2)} % with ${numberText(content_pct, 2)} %${given}`;
 }
 
 /**

@@ -1,4 +1,4 @@
-// Shows a figure or a table in a notebook: the data for the rendered page, then what a running notebook displays itself.
+// Shows a figure, a table or a weigh-out sheet in a notebook: the data for the rendered page, then what a running notebook displays itself.
 // The only file that knows tslab; it asks for it when something is shown, so the library also loads without a kernel.
 
 import { randomUUID } from "node:crypto";
@@ -7,6 +7,10 @@ import type * as Tslab from "tslab";
 import { InputError } from "../door.js";
 import { embed, tableHtml, type FigureContent, type TableContent } from "./content.js";
 import { escapeHtml } from "./html.js";
+import { originOf } from "./origin.js";
+import { sheetOf, type SheetInput } from "./sheet.js";
+import { papers, sheetFile, sheetHtml } from "./sheet/page.js";
+import type { Paper } from "./sheet/style.js";
 
 /**
  * Shows a figure in the cell that calls it, with its caption and the table behind it; nothing where there was nothing to draw.
@@ -28,7 +32,7 @@ export function showFigure(figure: FigureContent | undefined): void {
 }
 
 /**
- * Shows a table in the cell that calls it.
+ * Shows a table in the cell that calls it; nothing where there is none.
  * @throws InputError outside a notebook.
  * @example
  * ```ts
@@ -37,8 +41,37 @@ export function showFigure(figure: FigureContent | undefined): void {
  * typeof cell; // → "function"
  * ```
  */
-export function showTable(table: TableContent): void {
+export function showTable(table: TableContent | undefined): void {
+  if (table === undefined) return;
   display("showTable", embed(table) + tableHtml(table));
+}
+
+/**
+ * Shows the weigh-out sheet of a batch in the cell that calls it: as links to its pages for A4 and Letter, which `npm start` writes
+ * beside the notebook's page and a running notebook offers to save.
+ * @param input - As {@link sheetOf}; `file`, that of the brief.
+ * @throws InputError as {@link sheetOf}; outside a notebook.
+ * @example
+ * ```ts
+ * import { screenHazards, weighOut } from "resinwright";
+ * import { openBrief, readSafetyRules } from "resinwright/files";
+ * import { showSheet } from "resinwright/notebook";
+ * const { brief, formulation, file } = openBrief("data/briefs/flow-cell.json");
+ * const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
+ * const sheet = weighOut({ formulation, batch_g: 500, balance });
+ * const screening = screenHazards({ formulation, rules: readSafetyRules("data/rules") });
+ * const cell = () => showSheet({ sheet, screening, brief, file });
+ * typeof cell; // → "function"
+ * ```
+ */
+export function showSheet({ file, ...input }: SheetInput & { readonly file: string }): void {
+  const content = sheetOf(input);
+  const origin = originOf(file);
+  const links = (Object.keys(papers) as Paper[]).map((paper) => {
+    const html = Buffer.from(sheetHtml({ content, paper, origin })).toString("base64");
+    return `<a download="${sheetFile(content, paper)}" href="data:text/html;base64,${html}">${papers[paper]}</a>`;
+  });
+  display("showSheet", `${embed(content)}<p>Save the weigh-out sheet to print it: ${links.join(" · ")}</p>`);
 }
 
 /**

@@ -170,7 +170,8 @@ function byId<T extends { id: string }>(
   return found;
 }
 
-function documentsIn(folder: string, kind: string): JsonDocument[] {
+/** The JSON documents of one folder of a shelf, by file name; none where it does not exist. @internal */
+export function documentsIn(folder: string, kind: string): JsonDocument[] {
   const place = join(folder, kind);
   if (!existsSync(place)) return [];
   const names = readdirSync(place).filter((name) => name.endsWith(".json"));

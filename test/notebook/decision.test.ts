@@ -3,8 +3,10 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { dataHashOf } from "../../lib/lab/dataHash.js";
+import { asMade, weighOut } from "../../lib/lab/batch.js";
 import { readRecords } from "../../lib/lab/record.js";
-import { decide } from "../../lib/notebook/decision.js";
+import type { TableContent } from "../../lib/notebook/content.js";
+import { decide, recordBatch } from "../../lib/notebook/decision.js";
 import { showMarkdown, showTable } from "../../lib/notebook/show.js";
 import { brief, formulationOf, shelf } from "../fixtures.js";
 
@@ -53,7 +55,7 @@ describe("decide", () => {
     const [record] = readRecords(folder);
     expect(vi.mocked(showMarkdown).mock.calls).toEqual([[`**Decided.** ${statement}`]]);
     expect(vi.mocked(showTable).mock.calls).toHaveLength(1);
-    const [[table]] = vi.mocked(showTable).mock.calls as [Parameters<typeof showTable>];
+    const [[table]] = vi.mocked(showTable).mock.calls as [[TableContent]];
     expect(table.caption).toBe("What was appended to the lab record");
     expect(table.rows).toEqual([
       ["share", "0.4"],
@@ -104,5 +106,57 @@ describe("decide", () => {
       process.chdir(started);
     }
     expect(readRecords(join(folder, "records"))).toHaveLength(1);
+  });
+});
+
+describe("recordBatch", () => {
+  const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
+  const sheet = weighOut({ formulation: work.formulation, batch_g: 1000, balance });
+  const weighings = [
+    { line: 1, mass_g: 599.5, lot: "T-22" },
+    { line: 2, mass_g: 400.25 },
+  ];
+  const made = asMade({ sheet, weighings });
+  const weighed = {
+    id: "T-1",
+    formulation: "test",
+    batch_g: 1000,
+    balance,
+    weighings: [],
+    source: "round numbers",
+    status: "invented for the demo" as const,
+  };
+  const plan = { outcome: "within", total_g: made.total_g } as const;
+  const recordIt = (said = "Weighed as batch T-1.") =>
+    recordBatch({ work, from: "06", batch: { weighed, sheet, made, plan }, statement: said });
+
+  it("appends the batch portion by portion with its lots, and shows that it did", () => {
+    recordIt();
+    const [record, ...others] = readRecords(folder);
+    expect(others).toEqual([]);
+    expect(record).toMatchObject({
+      kind: "batch",
+      from: "06",
+      brief: "test",
+      formulation: "test",
+      batch: "T-1",
+      statement: "Weighed as batch T-1.",
+      lines: [
+        { ingredient: "THIN", lot: "T-22", target_g: 600, actual_g: 599.5 },
+        { ingredient: "THICK", lot: "", target_g: 400, actual_g: 400.25 },
+      ],
+    });
+    expect(vi.mocked(showMarkdown).mock.calls).toEqual([["Weighed as batch T-1."]]);
+    const [[table]] = vi.mocked(showTable).mock.calls as [[TableContent]];
+    expect(table.rows.slice(0, 3)).toEqual([
+      ["batch", "T-1"],
+      ["portions", "2"],
+      ["total_g", "999.8"],
+    ]);
+  });
+
+  it("writes nothing that says nothing", () => {
+    expect(() => recordIt(" ")).toThrow("record: statement is empty; say what was decided or found");
+    expect(readdirSync(folder)).toEqual([]);
   });
 });
