@@ -48,11 +48,10 @@ export {
   propertyTable,
   readingTable,
   sourceTable,
-  valueText,
-  verdictText,
   warningTable,
   type FigureRow,
 } from "./views.js";
+export { valueText, verdictText } from "./verdicts.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
 export { layerTable, profileFigure } from "./layers.js";
 export { handlingTable, screeningTable } from "./safety.js";
