@@ -5,6 +5,8 @@ import { z } from "zod";
 import { InputError } from "../door.js";
 import { numberText } from "./digits.js";
 import { escapeHtml } from "./html.js";
+import type { PanelContent } from "./panel/panel.js";
+import type { SummaryContent } from "./summary.js";
 
 /** One column of a table: its name, the unit of its numbers, and the side its cells are set to. */
 export interface TableColumn {
@@ -42,7 +44,7 @@ export interface FigureContent {
 export const decisionMark = "**Decided.** ";
 
 /** What a cell can show beside text and pictures. */
-export type Content = FigureContent | TableContent;
+export type Content = FigureContent | TableContent | PanelContent | SummaryContent;
 
 /**
  * The script element that carries `content` to the rendered page.
@@ -62,8 +64,8 @@ export function toJson(value: object, name: string): string {
 }
 
 /**
- * The figure or table that `html` begins with, or undefined if it is any other HTML.
- * @throws InputError if the script element is there but does not hold a figure or a table.
+ * The content that `html` begins with, or undefined if it is any other HTML.
+ * @throws InputError if the script element is there but does not hold what it says.
  */
 export function extract(html: string): Content | undefined {
   const found = /^\s*<script type="application\/json" data-resinwright="([^"]*)">([^<]*)<\/script>/.exec(
@@ -71,8 +73,10 @@ export function extract(html: string): Content | undefined {
   );
   if (found === null) return undefined;
   const [, kind = "", json = ""] = found;
-  const schema = kind === "figure" ? figureSchema : kind === "table" ? tableSchema : undefined;
-  if (schema === undefined) throw new InputError(`output: unknown content "${kind}"; known: figure, table`);
+  const schema = new Map(Object.entries(schemas)).get(kind);
+  if (schema === undefined) {
+    throw new InputError(`output: unknown content "${kind}"; known: ${Object.keys(schemas).join(", ")}`);
+  }
   const result = schema.safeParse(parseQuietly(json));
   if (result.success) return result.data;
   const { path, message } = result.error.issues[0]!;
@@ -155,6 +159,42 @@ const figureSchema = z.strictObject({
   layout: z.looseObject({}),
   table: tableSchema,
 });
+
+const rowSchema = z.strictObject({
+  property: z.string(),
+  unit: z.string(),
+  value: z.string(),
+  target: z.string().nullable(),
+  verdict: z.string().nullable(),
+});
+
+// What is in the case of a panel is checked by the models that compute with it, in the page.
+const panelSchema = z.strictObject({
+  kind: z.literal("panel"),
+  work: z.looseObject({}) as unknown as z.ZodType<PanelContent["work"]>,
+  start: z.strictObject({
+    rows: z.array(rowSchema),
+    warnings: z.array(z.string()),
+    draws: z.number(),
+    level: z.number(),
+  }),
+});
+
+const summarySchema = z.strictObject({
+  kind: z.literal("summary"),
+  asked: z.array(z.string()),
+  formulation: z.array(z.string()),
+  decided: z.string(),
+  rows: z.array(rowSchema),
+  cautions: z.array(z.string()),
+});
+
+const schemas: Readonly<Record<Content["kind"], z.ZodType<Content>>> = {
+  figure: figureSchema,
+  table: tableSchema,
+  panel: panelSchema,
+  summary: summarySchema,
+};
 
 /** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
 function tableClass({ columns, rows }: TableContent): string {

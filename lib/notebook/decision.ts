@@ -5,11 +5,11 @@ import { checkRecord } from "../lab/record/kinds.js";
 import type { Case } from "../assess/case.js";
 import { decisionMark } from "./content.js";
 import { numberText } from "./digits.js";
-import { showMarkdown, showTable } from "./show.js";
+import { showMarkdown, showSummary, showTable } from "./show.js";
 import { tableOf } from "./table.js";
 
 /**
- * Shows a decision with the figures behind it and appends it to the lab record, in the folder that the environment variable
+ * Shows a decision with the figures behind it, heads the page with it, and appends it to the lab record, in the folder that the environment variable
  * `RESINWRIGHT_RECORDS` names or else `../records`.
  * @param input - The case decided on; `from`, the notebook; the `statement`; `figures`, numbers or short text with units in
  * their names.
@@ -51,6 +51,7 @@ export function decide({
   // Checked and shown before it is written: a record that cannot be or is not read by anybody leaves nothing behind.
   checkRecord(record);
   showMarkdown(decisionMark + statement);
+  showSummary({ work, decided: statement });
   const { file, record: written } = appendRecord({ folder, record });
   const rows = Object.entries(figures).map(([figure, value]) => ({
     figure,

@@ -1,7 +1,12 @@
 // The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
 
 export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
-export { showFigure, showMarkdown, showTable } from "./show.js";
+export type { PanelContent } from "./panel/panel.js";
+export type { PlainCase } from "./panel/plainCase.js";
+export type { Reading } from "./panel/reading.js";
+export type { SummaryContent } from "./summary.js";
+export type { AssessmentRow } from "./verdicts.js";
+export { showFigure, showMarkdown, showPanel, showTable } from "./show.js";
 
 export { lineFigure, type LineFigure, type Series } from "./figure/line.js";
 export {

@@ -317,9 +317,10 @@ export function withMassFractions(
       `${where}: the mass fractions of ${ids.join(", ")} add up to ${Number(total.toPrecision(8))}; together they must be at most 1`,
     );
   }
-  const before = sum(ids.map((id) => massFractionOf(formulation, id)));
-  if (before === 1)
+  const others = formulation.components.filter(({ ingredient }) => !ids.includes(ingredient.id));
+  if (others.every(({ massFraction }) => massFraction === 0))
     throw new InputError(`${where}: ${ids.join(", ")} is alone in it; there is nothing to make up the rest`);
+  const before = sum(ids.map((id) => massFractionOf(formulation, id)));
   return reweigh(formulation, new Map(Object.entries(massFractions)), (1 - total) / (1 - before));
 }
 
