@@ -7,7 +7,9 @@ export default tseslint.config(
   ...tseslint.configs.strict,
   {
     files: ["**/*.ts"],
-    languageOptions: { parserOptions: { project: "./tsconfig.json" } },
+    languageOptions: {
+      parserOptions: { project: ["./tsconfig.json", "./lib/notebook/panel/page/tsconfig.json"] },
+    },
     rules: {
       "@typescript-eslint/no-floating-promises": "error",
       "@typescript-eslint/no-non-null-assertion": "off",

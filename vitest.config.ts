@@ -4,5 +4,6 @@ export default defineConfig({
   test: {
     include: ["test/**/*.test.ts"],
     testTimeout: 60_000,
+    hookTimeout: 60_000,
   },
 });

@@ -3,13 +3,13 @@
 export { InputError } from "./door.js";
 export type { Interval, SourcedValue, SourceStatus, UsedSource, Warning } from "./result.js";
 
-export { readQuantity, unitLabel, fieldUnits, type FieldUnit } from "./recipe/units.js";
+export { unitLabel, fieldUnits, type FieldUnit } from "./recipe/units.js";
+export { readQuantity } from "./recipe/quantity.js";
 export { hasCasCheckDigit, molarMassOfFormula } from "./recipe/identity.js";
 export { parseJson, type JsonDocument } from "./recipe/document.js";
 export {
   readIngredient,
   readLot,
-  withLot,
   roles,
   type Ingredient,
   type IngredientFigures,
@@ -17,6 +17,7 @@ export {
   type Lot,
   type Role,
 } from "./recipe/ingredient.js";
+export { withLot } from "./recipe/lot.js";
 export type { AtTemperature } from "./recipe/sourced.js";
 export { readSpectrum, type Spectrum } from "./recipe/spectrum.js";
 export { readFilm, type Film } from "./recipe/film.js";
@@ -40,8 +41,8 @@ export {
   largestOf,
   mainPair,
   massFractionOf,
-  readRecipe,
   withMassFraction,
+  withMassFractions,
   withRatio,
   withShares,
   type Component,
@@ -51,14 +52,9 @@ export {
   type Part,
   type Recipe,
 } from "./recipe/formulation.js";
-export {
-  readBrief,
-  propertyNames,
-  type Avoid,
-  type Brief,
-  type PropertyName,
-  type Target,
-} from "./recipe/brief.js";
+export { readRecipe } from "./recipe/recipe.js";
+export { readBrief, type Avoid, type Brief, type PropertyName, type Target } from "./recipe/brief.js";
+export { propertyNames } from "./recipe/propertyNames.js";
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
 export { readNumberTable } from "./recipe/table.js";
 export {

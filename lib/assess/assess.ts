@@ -1,7 +1,8 @@
 // Every property of one formulation under one brief, from the same draws, with a verdict for each target.
 
-import { propertyNames, type PropertyName, type Target } from "../recipe/brief.js";
+import type { PropertyName, Target } from "../recipe/brief.js";
 import type { Ingredient } from "../recipe/ingredient.js";
+import { propertyNames } from "../recipe/propertyNames.js";
 import type { UsedSource, Warning } from "../result.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
@@ -45,8 +46,21 @@ export interface Assessment {
  * ```
  */
 export function assess(input: Case & DrawOptions): Assessment {
+  const steps = assessing(input);
+  for (;;) {
+    const { done, value } = steps.next();
+    if (done) return value;
+  }
+}
+
+/** As {@link assess}, with a pause after each property, in which a page can answer its reader. @internal */
+export function* assessing(input: Case & DrawOptions): Generator<PropertyName, Assessment> {
   const draws = startDraws(input);
-  const drawn = propertyNames.map((name) => drawers[name](input, draws));
+  const drawn: Drawn<Property | DeadZoneEstimate>[] = [];
+  for (const name of propertyNames) {
+    drawn.push(drawers[name](input, draws));
+    yield name;
+  }
   const verdicts = drawn.flatMap((one) => {
     const target = input.brief.targets[one.property.property];
     return target === undefined ? [] : [judge(one, target, draws.level)];

@@ -1,7 +1,7 @@
 // The quantities that options give, with any unit that converts.
 
 import { checkNumber, InputError, type NumberRule } from "../door.js";
-import { toFieldUnit } from "../recipe/units.js";
+import { toFieldUnit } from "../recipe/quantity.js";
 
 /**
  * Reads the quantity of an option into the unit that `field` ends in.

@@ -7,7 +7,7 @@ import type { TableContent } from "./content.js";
 import { numberText } from "./digits.js";
 import { targetText } from "./phrases.js";
 import { tableOf } from "./table.js";
-import { valueText } from "./views.js";
+import { valueText } from "./verdicts.js";
 
 /**
  * The portions of a batch in the order to add them, with target, limits and cost.

@@ -5,7 +5,9 @@ import { z } from "zod";
 import { InputError } from "../door.js";
 import { cellText } from "./digits.js";
 import { escapeHtml } from "./html.js";
+import type { PanelContent } from "./panel/panel.js";
 import { sheetSchema, type SheetContent } from "./sheet/content.js";
+import type { SummaryContent } from "./summary.js";
 
 /** One column of a table: its name, the unit of its numbers, and the side its cells are set to. */
 export interface TableColumn {
@@ -43,7 +45,7 @@ export interface FigureContent {
 export const decisionMark = "**Decided.** ";
 
 /** What a cell can show beside text and pictures. */
-export type Content = FigureContent | TableContent | SheetContent;
+export type Content = FigureContent | TableContent | SheetContent | PanelContent | SummaryContent;
 
 /**
  * The script element that carries `content` to the rendered page.
@@ -64,7 +66,7 @@ export function toJson(value: object, name: string): string {
 
 /**
  * The content that `html` begins with, or undefined if it is any other HTML.
- * @throws InputError if the script element is there but does not hold a figure, a table or a sheet.
+ * @throws InputError if the script element is there but does not hold what it says.
  */
 export function extract(html: string): Content | undefined {
   const found = /^\s*<script type="application\/json" data-resinwright="([^"]*)">([^<]*)<\/script>/.exec(
@@ -72,12 +74,11 @@ export function extract(html: string): Content | undefined {
   );
   if (found === null) return undefined;
   const [, kind = "", json = ""] = found;
-  if (!Object.hasOwn(contentSchemas, kind)) {
-    throw new InputError(
-      `output: unknown content "${kind}"; known: ${Object.keys(contentSchemas).join(", ")}`,
-    );
+  const schema = new Map(Object.entries(schemas)).get(kind);
+  if (schema === undefined) {
+    throw new InputError(`output: unknown content "${kind}"; known: ${Object.keys(schemas).join(", ")}`);
   }
-  const result = contentSchemas[kind as Content["kind"]].safeParse(parseQuietly(json));
+  const result = schema.safeParse(parseQuietly(json));
   if (result.success) return result.data;
   const { path, message } = result.error.issues[0]!;
   throw new InputError(`output ${kind}: ${path.length > 0 ? path.join(".") : "the data"}: ${message}`);
@@ -153,10 +154,41 @@ const figureSchema = z.strictObject({
   table: tableSchema,
 });
 
-const contentSchemas: Readonly<Record<Content["kind"], z.ZodType<Content>>> = {
+const rowSchema = z.strictObject({
+  property: z.string(),
+  unit: z.string(),
+  value: z.string(),
+  target: z.string().nullable(),
+  verdict: z.string().nullable(),
+});
+
+// What is in the case of a panel is checked by the models that compute with it, in the page.
+const panelSchema = z.strictObject({
+  kind: z.literal("panel"),
+  work: z.looseObject({}) as unknown as z.ZodType<PanelContent["work"]>,
+  start: z.strictObject({
+    rows: z.array(rowSchema),
+    warnings: z.array(z.string()),
+    draws: z.number(),
+    level: z.number(),
+  }),
+});
+
+const summarySchema = z.strictObject({
+  kind: z.literal("summary"),
+  asked: z.array(z.string()),
+  formulation: z.array(z.string()),
+  decided: z.string(),
+  rows: z.array(rowSchema),
+  cautions: z.array(z.string()),
+});
+
+const schemas: Readonly<Record<Content["kind"], z.ZodType<Content>>> = {
   figure: figureSchema,
   table: tableSchema,
+  panel: panelSchema,
   sheet: sheetSchema,
+  summary: summarySchema,
 };
 
 /** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */

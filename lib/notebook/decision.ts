@@ -7,13 +7,13 @@ import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Case } from "../assess/case.js";
 import { decisionMark } from "./content.js";
 import { numberText } from "./digits.js";
-import { showMarkdown, showTable } from "./show.js";
+import { showMarkdown, showSummary, showTable } from "./show.js";
 import { tableOf } from "./table.js";
 
 /**
- * Shows a decision with the figures behind it and appends it to the lab record, in the folder that the environment variable
- * `RESINWRIGHT_RECORDS` names or else `../records`. The record and the page name the version of the library and the hash of the
- * data used ({@link dataHashOf}).
+ * Shows a decision with the figures behind it, heads the page with it, and appends it to the lab record, in the folder that the
+ * environment variable `RESINWRIGHT_RECORDS` names or else `../records`. The record and the page name the version of the library
+ * and the hash of the data used ({@link dataHashOf}).
  * @param input - The case decided on; `from`, the notebook; the `statement`; `figures`, numbers or short text with units in
  * their names.
  * @throws InputError when the statement is empty or a figure is not finite; outside a notebook.
@@ -44,7 +44,10 @@ export function decide({
 }): void {
   const { brief, formulation } = work;
   showAndAppend({
-    said: decisionMark + statement,
+    say: () => {
+      showMarkdown(decisionMark + statement);
+      showSummary({ work, decided: statement });
+    },
     record: {
       kind: "decision",
       from,
@@ -86,7 +89,7 @@ export function recordBatch({
   const { brief, formulation } = work;
   const { lines, total_g } = made;
   showAndAppend({
-    said: statement,
+    say: () => showMarkdown(statement),
     record: {
       kind: "batch",
       from,
@@ -103,16 +106,16 @@ export function recordBatch({
 
 /** Checked and shown before it is written: a record that cannot be or is not read by anybody leaves nothing behind. */
 function showAndAppend({
-  said,
+  say,
   record,
   figures,
 }: {
-  said: string;
+  say: () => void;
   record: (BatchRecord | DecisionRecord) & { readonly dataHash: string };
   figures: Readonly<Record<string, number | string>>;
 }): void {
   checkRecord(record);
-  showMarkdown(said);
+  say();
   const folder = process.env["RESINWRIGHT_RECORDS"] || "../records";
   const { file, record: written } = appendRecord({ folder, record });
   const rows = Object.entries(figures).map(([figure, value]) => ({

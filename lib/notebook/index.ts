@@ -1,7 +1,12 @@
 // The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
 
 export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
-export { showFigure, showMarkdown, showSheet, showTable } from "./show.js";
+export type { PanelContent } from "./panel/panel.js";
+export type { PlainCase } from "./panel/plainCase.js";
+export type { Reading } from "./panel/reading.js";
+export type { SummaryContent } from "./summary.js";
+export type { AssessmentRow } from "./verdicts.js";
+export { showFigure, showMarkdown, showPanel, showSheet, showTable } from "./show.js";
 
 export { lineFigure, type LineFigure, type Series } from "./figure/line.js";
 export {
@@ -48,11 +53,10 @@ export {
   propertyTable,
   readingTable,
   sourceTable,
-  valueText,
-  verdictText,
   warningTable,
   type FigureRow,
 } from "./views.js";
+export { valueText, verdictText } from "./verdicts.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
 export { layerTable, profileFigure } from "./layers.js";
 export { handlingTable, screeningTable } from "./safety.js";

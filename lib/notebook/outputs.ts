@@ -1,4 +1,4 @@
-// What a cell gave, as HTML of a page: figures, tables, text, prose and pictures; anything else as text.
+// What a cell gave, as HTML of a page: figures, tables, panels, text, prose and pictures; anything else as text.
 // Nothing a cell writes reaches the page as HTML of its own.
 
 import { InputError } from "../door.js";
@@ -6,13 +6,15 @@ import { extract, tableHtml, toJson, type Content, type FigureContent } from "./
 import { escapeHtml } from "./html.js";
 import { markdownHtml, type Heading } from "./markdown.js";
 import type { Output } from "./notebookFile.js";
+import type { PanelContent } from "./panel/panel.js";
 import type { SheetContent } from "./sheet/content.js";
 import { sheetLinks } from "./sheet/page.js";
 
-/** What is counted over a page: figures, tables and pictures shown so far, headings, and the sheets it goes with. */
+/** What is counted over a page: figures, tables, panels and pictures shown so far, headings, and the sheets it goes with. */
 export interface Counts {
   figures: number;
   tables: number;
+  panels: number;
   pictures: number;
   readonly headings: Heading[];
   readonly sheets: SheetContent[];
@@ -27,7 +29,7 @@ export function outputHtml(given: { output: Output; where: string; counts: Count
   if (output.kind === "text") return textHtml(output.text);
   const { data } = output;
   const html = data["text/html"];
-  const content = html === undefined ? undefined : contentOf(html, where);
+  const content = html === undefined ? undefined : contentIn(html, where);
   if (content !== undefined) return contentHtml(content, counts);
   if (data["image/svg+xml"] !== undefined) return svgHtml(data["image/svg+xml"], counts);
   if (data["image/png"] !== undefined) return pngHtml(data["image/png"], where, counts);
@@ -37,7 +39,8 @@ export function outputHtml(given: { output: Output; where: string; counts: Count
   return textHtml(data["text/plain"] ?? Object.values(data).join("\n"));
 }
 
-function contentOf(html: string, where: string): Content | undefined {
+/** The content that HTML of a cell carries, or undefined. @throws InputError naming `where`. */
+export function contentIn(html: string, where: string): Content | undefined {
   try {
     return extract(html);
   } catch (error) {
@@ -51,6 +54,9 @@ function contentHtml(content: Content, counts: Counts): string {
     return `<p>To print and write on: ${sheetLinks(content)}</p>\n`;
   }
   if (content.kind === "figure") return figureHtml(content, ++counts.figures);
+  if (content.kind === "panel") return panelHtml(content, ++counts.panels);
+  // The card stands at the head of the page, not here.
+  if (content.kind === "summary") return "";
   return scrolling(tableHtml(content, `Table ${++counts.tables}.`), `Table ${counts.tables}`);
 }
 
@@ -71,6 +77,14 @@ function figureHtml(
 <p id="${id}-words">${escapeHtml(alternativeText)}</p>
 ${scrolling(tableHtml(table), `Data behind figure ${number}`)}</details>
 </figure>
+`;
+}
+
+function panelHtml(content: PanelContent, number: number): string {
+  return `<section class="panel" id="resinwright-panel-${number}" aria-label="Panel ${number}">
+<script type="application/json">${toJson(content, "panel")}</script>
+<noscript><p>This panel computes in the page. It needs a browser that may run scripts; everything else on this page stands without.</p></noscript>
+</section>
 `;
 }
 

@@ -1,6 +1,7 @@
-// The only code a page runs of its own: it draws the figures, redraws them to fit, and lets the keyboard reach what scrolls.
+// The code every page runs: it draws the figures, redraws them to fit, lets the keyboard reach what scrolls, and copies tables.
 // Kept as text, since it runs in the reader's browser and its hash stands in the page's security policy.
 
+import { copyScript } from "./copyScript.js";
 import { darkPalette, lightPalette } from "./palette.js";
 
 // A4 less its margins, in CSS pixels.
@@ -63,4 +64,4 @@ export const pageScript = `"use strict";
   document.addEventListener("toggle", reachScrolling, true);
   fit();
 })();
-`;
+${copyScript}`;

@@ -96,6 +96,43 @@ figcaption { margin-top: 0.5rem; font-size: 0.875rem; line-height: 1.5; color: v
 figcaption p { margin: 0 0 0.375rem; }
 figcaption .name { color: var(--ink); }
 
+button { font: inherit; font-size: 0.875rem; line-height: 1.4; padding: 0.25rem 0.75rem; color: var(--accent); background: var(--paper); border: 1px solid var(--muted); border-radius: 4px; cursor: pointer; }
+button:hover { border-color: var(--accent); text-decoration: underline; }
+button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: var(--muted); }
+.scroll:has(> table):has(+ .copy) { margin-bottom: 0; }
+.copy { margin: 0 0 1.5rem; }
+.copy button { font-size: 0.75rem; padding: 0.125rem 0.5rem; color: var(--muted); border-color: var(--rule); }
+.copy button:hover { color: var(--accent); border-color: var(--accent); }
+
+.card { margin: 0 0 2rem; padding: 1rem 1.25rem; background: var(--shade); border-top: 3px solid var(--accent); border-radius: 0 0 4px 4px; }
+.card dl { display: grid; grid-template-columns: 6.5rem 1fr; gap: 0 1rem; margin: 0; }
+.card dt { grid-column: 1; font-size: 0.875rem; font-weight: 600; line-height: 1.7; }
+.card dd { grid-column: 2; margin: 0; }
+.card dd + dd { font-size: 0.875rem; color: var(--muted); }
+.card dd + dt, .card dd + dt + dd { margin-top: 0.5rem; }
+.card .scroll:has(> table) { margin: 1rem 0 0; }
+.card .copy { margin-bottom: 1rem; }
+.card .cautions { margin: 0; padding-left: 1.25rem; font-size: 0.875rem; }
+
+.panel { margin: 1.5rem 0 2rem; padding: 1rem 1.25rem; border: 1px solid var(--rule); border-radius: 4px; }
+.control { display: grid; grid-template-columns: minmax(8rem, 13rem) minmax(6rem, 1fr) auto; gap: 0 1rem; align-items: center; padding-block: 0.375rem; }
+.control label { font-size: 0.9375rem; line-height: 1.35; }
+.control input[type="range"] { width: 100%; min-height: 1.75rem; margin: 0; accent-color: var(--accent); cursor: pointer; }
+.amount { display: flex; gap: 0.5rem; align-items: baseline; min-width: 10.5rem; }
+.amount input { width: 5.5rem; font: inherit; font-size: 0.9375rem; font-variant-numeric: tabular-nums; padding: 0.125rem 0.375rem; color: var(--ink); background: var(--paper); border: 1px solid var(--muted); border-radius: 4px; }
+.at-start { grid-column: 2 / -1; font-size: 0.8125rem; color: var(--muted); }
+.panel .buttons { display: flex; flex-wrap: wrap; gap: 0.5rem 0.75rem; align-items: center; margin: 0.75rem 0 1rem; }
+.panel .buttons [role="status"] { margin: 0; }
+.panel td.value { white-space: nowrap; }
+.panel-status { font-size: 0.9375rem; }
+.refusal { padding-left: 0.75rem; border-left: 3px solid var(--ink); font-weight: 600; }
+.refusal:empty { display: none; }
+.panel .caution { padding-left: 0.75rem; border-left: 3px solid var(--accent); font-size: 0.9375rem; }
+.panel-warnings ul { font-size: 0.875rem; }
+.panel-recipe label { display: block; font-size: 0.875rem; }
+.panel-recipe textarea { width: 100%; margin: 0.25rem 0; padding: 0.5rem; font: 0.8125rem/1.5 ui-monospace, monospace; color: var(--ink); background: var(--shade); border: 1px solid var(--muted); border-radius: 4px; }
+.panel-recipe p { margin: 0; font-size: 0.875rem; }
+
 .list { list-style: none; padding: 0; margin: 2rem 0 0; }
 .list li { margin: 0; padding-block: 1.25rem; border-top: 1px solid var(--rule); }
 .list a { font-size: 1.125rem; font-weight: 600; }
@@ -114,13 +151,23 @@ figcaption .name { color: var(--ink); }
   h2 { font-size: 1.25rem; margin-top: 2.25rem; }
   table { font-size: 0.875rem; }
   th, td { padding-right: 0.875rem; }
+  .card, .panel { padding: 0.75rem; }
+  .card dl { display: block; }
+  .card dd + dt + dd { margin-top: 0; }
+  .control { grid-template-columns: minmax(0, 1fr) auto; gap: 0.25rem 0.75rem; padding-block: 0.625rem; }
+  .control label, .at-start { grid-column: 1 / -1; }
+  .amount { min-width: 9rem; }
+  .amount input { width: 5rem; }
 }
 @media (prefers-reduced-motion: no-preference) { html { scroll-behavior: smooth; } }
 
 @page { size: A4; margin: 18mm 20mm; }
 @media print {
   html { font-size: 10pt; line-height: 1.45; background: #fff; }
-  .bar, .skip, .contents, details { display: none; }
+  .bar, .skip, .contents, .copy, .buttons, .panel input[type="range"], details:not(.panel-warnings) { display: none; }
+  .panel-warnings summary { list-style: none; }
+  .card, .control, .caution { break-inside: avoid; }
+  .amount input { border: 0; padding: 0; }
   .print-only { display: block; }
   .bar, .page, .foot { width: 100%; padding-block: 0; }
   .foot { margin-top: 2rem; padding-top: 0.5rem; }

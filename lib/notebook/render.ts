@@ -9,12 +9,14 @@ import { decisionMark } from "./content.js";
 import { escapeHtml } from "./html.js";
 import { inlineHtml, markdownHtml, plainText, splitTitle, type Heading } from "./markdown.js";
 import type { CodeCell, Notebook } from "./notebookFile.js";
-import { outputHtml, type Counts } from "./outputs.js";
+import { contentIn, outputHtml, type Counts } from "./outputs.js";
 import { pageHtml, type Origin } from "./page.js";
 import { pageScript } from "./pageScript.js";
 import type { SheetContent } from "./sheet/content.js";
 import { papers, sheetFile, sheetHtml, sheetLinks } from "./sheet/page.js";
 import type { Paper } from "./sheet/style.js";
+import type { SummaryContent } from "./summary.js";
+import { summaryHtml } from "./summaryHtml.js";
 
 /** A page: its title and first paragraph in plain words, and the whole of it as HTML. */
 export interface Page {
@@ -49,7 +51,7 @@ export function renderNotebook(given: { readonly notebook: Notebook; readonly or
   const { title = escapeMarkdown(name), rest } =
     first?.kind === "markdown" ? splitTitle(first.source) : { rest: undefined };
   const titleHtml = inlineHtml({ source: title, where: notebook.file });
-  const counts: Counts = { figures: 0, tables: 0, pictures: 0, headings: [], sheets: [] };
+  const counts: Counts = { figures: 0, tables: 0, panels: 0, pictures: 0, headings: [], sheets: [] };
   let number = 0;
   const body = notebook.cells.map((cell, i) => {
     if (cell.kind === "code") return codeCellHtml(cell, ++number, notebook.file, counts);
@@ -62,9 +64,13 @@ export function renderNotebook(given: { readonly notebook: Notebook; readonly or
     origin,
     bar: `<header class="bar"><a href="index.html">All notebooks</a></header>`,
     mainClass: contents === "" ? "page" : "page has-contents",
-    main: `<h1>${titleHtml}</h1>\n${contents}\n${body.join("\n")}`,
+    main: `<h1>${titleHtml}</h1>\n${cardOf(notebook)}\n${contents}\n${body.join("\n")}`,
     note: number === 0 ? "" : `<p class="print-only">${printNote}</p>\n`,
-    scripts: counts.figures > 0 ? [figureLibrary(), pageScript] : [pageScript],
+    scripts: [
+      ...(counts.figures > 0 ? [figureLibrary()] : []),
+      ...(counts.panels > 0 ? [panelScript()] : []),
+      pageScript,
+    ],
   });
   return {
     title: plainText(titleHtml),
@@ -147,8 +153,30 @@ function firstParagraph(body: readonly string[]): string {
   return found === null ? "" : plainText(found[1]!).replace(/\s+/g, " ").trim();
 }
 
+function cardOf({ file, cells }: Notebook): string {
+  const summaries = cells.flatMap((cell): SummaryContent[] => {
+    const outputs = cell.kind === "code" ? cell.outputs : [];
+    return outputs.flatMap((output) => {
+      const html = output.kind === "display" ? output.data["text/html"] : undefined;
+      const content = html === undefined ? undefined : contentIn(html, file);
+      return content?.kind === "summary" ? [content] : [];
+    });
+  });
+  const last = summaries.at(-1);
+  return last === undefined ? "" : summaryHtml(last);
+}
+
 function figureLibrary(): string {
-  const file = createRequire(import.meta.url).resolve("plotly.js-cartesian-dist-min");
+  return scriptText(createRequire(import.meta.url).resolve("plotly.js-cartesian-dist-min"));
+}
+
+/** The panel's script, which `npm run build` bundles. */
+function panelScript(): string {
+  const library = createRequire(import.meta.url).resolve("resinwright/package.json");
+  return scriptText(path.join(path.dirname(library), "dist", "panel", "panel.js"));
+}
+
+function scriptText(file: string): string {
   return readFileSync(file, "utf8").replaceAll("</script", "<\\/script");
 }
 

@@ -1,16 +1,20 @@
-// Shows a figure, a table or a weigh-out sheet in a notebook: the data for the rendered page, then what a running notebook displays itself.
+// Shows figures, tables, panels, weigh-out sheets and prose in a notebook: the data for the rendered page, then what a running
+// notebook displays itself.
 // The only file that knows tslab; it asks for it when something is shown, so the library also loads without a kernel.
 
 import { randomUUID } from "node:crypto";
 import { createRequire } from "node:module";
 import type * as Tslab from "tslab";
+import type { Case } from "../assess/case.js";
 import { InputError } from "../door.js";
 import { embed, tableHtml, type FigureContent, type TableContent } from "./content.js";
 import { escapeHtml } from "./html.js";
+import { panelOf } from "./panel/panel.js";
 import { originOf } from "./origin.js";
 import { sheetOf, type SheetInput } from "./sheet.js";
 import { papers, sheetFile, sheetHtml } from "./sheet/page.js";
 import type { Paper } from "./sheet/style.js";
+import { summaryOf } from "./summary.js";
 
 /**
  * Shows a figure in the cell that calls it, with its caption and the table behind it; nothing where there was nothing to draw.
@@ -87,6 +91,30 @@ export function showSheet({ file, ...input }: SheetInput & { readonly file: stri
 export function showMarkdown(text: string): void {
   display("showMarkdown", text, "markdown");
 }
+
+/**
+ * Shows controls for ratio, initiator, absorber, light and temperature that recompute every property in the rendered page, with
+ * this library. A live notebook says where the panel works.
+ * @throws InputError as `assess`; outside a notebook.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { showPanel } from "resinwright/notebook";
+ * const cell = () => showPanel(openBrief("data/briefs/flow-cell.json"));
+ * typeof cell; // → "function"
+ * ```
+ */
+export function showPanel(work: Case): void {
+  display("showPanel", embed(panelOf(work)) + livePanel);
+}
+
+/** Heads the rendered page with a card of what was asked and decided; a live notebook shows nothing. @internal */
+export function showSummary(given: { work: Case; decided: string }): void {
+  display("showSummary", embed(summaryOf(given)));
+}
+
+const livePanel =
+  "<p>The panel works on the rendered page: run <code>npm start</code> and open <code>rendered/index.html</code>.</p>";
 
 /**
  * The kernel runs the copy of tslab it finds from the notebook's folder upwards, and `require` gives that very copy as

@@ -1,18 +1,20 @@
 // The tables every notebook needs: a brief, a formulation, the figures behind it, an assessment, cautions, sources.
 
 import type { Assessment } from "../assess/assess.js";
-import { propertyTitles, type NeverCures, type Property, type Verdict } from "../assess/property.js";
-import { propertyNames, type Brief } from "../recipe/brief.js";
+import { propertyTitles, type NeverCures, type Property } from "../assess/property.js";
+import type { Brief } from "../recipe/brief.js";
 import { composition, type Formulation } from "../recipe/formulation.js";
 import type { Ingredient, IngredientFigures } from "../recipe/ingredient.js";
+import { propertyNames } from "../recipe/propertyNames.js";
 import { unitEndingOf, unitLabel } from "../recipe/units.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import type { SourcedValue, UsedSource } from "../result.js";
 import { fitReadings } from "../decide/calibrate.js";
 import type { TableContent } from "./content.js";
-import { intervalText, numberText } from "./digits.js";
-import { gasText, sharePercent, targetText } from "./phrases.js";
+import { numberText } from "./digits.js";
+import { gasText, targetText } from "./phrases.js";
 import { tableOf } from "./table.js";
+import { assessmentRows, valueText } from "./verdicts.js";
 
 /**
  * A brief as a table: the printer, the conditions, the targets, what to avoid.
@@ -149,20 +151,9 @@ export interface FigureRow {
  * ```
  */
 export function assessmentTable(assessment: Assessment): TableContent {
-  const verdicts = new Map(assessment.verdicts.map((verdict) => [verdict.property, verdict]));
   return tableOf({
     caption: `Assessment of ${assessment.formulation} under ${assessment.brief}: value and ${numberText(100 * assessment.level)} % interval from ${assessment.draws} draws`,
-    rows: propertyNames.map((name) => {
-      const property = assessment.properties[name];
-      const verdict = verdicts.get(name);
-      return {
-        property: property.title,
-        unit: property.unit,
-        value: valueText(property),
-        target: verdict === undefined ? null : targetText(verdict.target),
-        verdict: verdict === undefined ? null : verdictText(verdict),
-      };
-    }),
+    rows: assessmentRows(assessment),
   });
 }
 
@@ -314,37 +305,6 @@ function listed(figures: readonly string[]): string {
     byQuantity.set(quantity!, [...(byQuantity.get(quantity!) ?? []), whose!]);
   }
   return [...byQuantity].map(([quantity, whose]) => quantity + whose.join(", ")).join("; ");
-}
-
-/**
- * A property as text without its unit: "450 (300 to 610)", or "never cures".
- * @example
- * ```ts
- * import { viscosityOf } from "resinwright";
- * import { openBrief } from "resinwright/files";
- * import { valueText } from "resinwright/notebook";
- * const viscosity = viscosityOf(openBrief("data/briefs/flow-cell.json"));
- * valueText({ ...viscosity, value: 447.3, low: 301.2, high: 612.9 }); // → "450 (300 to 610)"
- * ```
- */
-export function valueText(property: Property | NeverCures): string {
-  return property.outcome === "value" ? intervalText(property) : "never cures";
-}
-
-/**
- * A verdict as text with its share of draws: "meets (98 % of draws)".
- * @example
- * ```ts
- * import { calibrate, verdictOf } from "resinwright";
- * import { openBrief } from "resinwright/files";
- * import { verdictText } from "resinwright/notebook";
- * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
- * const verdict = verdictOf({ ...work, property: "viscosity_mPas", target: { max: 50 } });
- * verdictText(verdict); // → "fails (0 % of draws)"
- * ```
- */
-export function verdictText({ outcome, share }: Verdict): string {
-  return `${outcome} (${sharePercent(share)} % of draws)`;
 }
 
 function sourcedText(field: string, { value, u }: SourcedValue): string {

@@ -4,6 +4,7 @@ import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourcedValue } from "../result.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
+import { propertyNames } from "./propertyNames.js";
 import { idSchema, sourced } from "./sourced.js";
 
 /** The properties a target can be set on; each is assessed for a formulation under a brief. */
@@ -15,17 +16,6 @@ export type PropertyName =
   | "layerTime_s"
   | "deadZone_um"
   | "inductionTime_s";
-
-/** Every property that is assessed, in the order tables show them. */
-export const propertyNames: readonly PropertyName[] = [
-  "viscosity_mPas",
-  "penetrationDepth_um",
-  "criticalExposure_mJcm2",
-  "layerExposure_mJcm2",
-  "layerTime_s",
-  "deadZone_um",
-  "inductionTime_s",
-];
 
 /** Within these a brief may ask for a resin temperature. */
 export const printTemperatures_C = { min: 0, max: 120 } as const;

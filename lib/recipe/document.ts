@@ -3,7 +3,7 @@
 import { parse as parseJsonText, evaluate, type DocumentNode, type ValueNode } from "@humanwhocodes/momoa";
 import { z } from "zod";
 import { InputError, nearestName, show, unknownName } from "../door.js";
-import { toFieldUnit } from "./units.js";
+import { toFieldUnit } from "./quantity.js";
 
 /** A parsed JSON text that remembers where each of its values stood. `where` is the file name used in messages. */
 export interface JsonDocument {

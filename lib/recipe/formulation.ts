@@ -1,11 +1,8 @@
 // A formulation: what goes into the bottle as mass fractions, and the other ways of saying the same.
 
-import { z } from "zod";
 import { checkNumber, InputError, unknownName } from "../door.js";
-import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import type { Ingredient, Role } from "./ingredient.js";
 import { ingredientOn, type Shelf } from "./shelf.js";
-import { idSchema } from "./sourced.js";
 
 /** One line of a formulation file: an ingredient (of a lot, if named) or a blend mixed before, and its share. */
 export interface Part {
@@ -53,21 +50,6 @@ export type FigureReader = (
   ingredient: Ingredient,
   figure: "density_gcm3" | "molarMass_gmol",
 ) => number | undefined;
-
-/**
- * Reads a formulation file.
- * @throws InputError with file, line and field.
- * @example
- * ```ts
- * import { parseJson, readRecipe } from "resinwright";
- * const parts = [{ ingredient: "UDMA", mass_pct: 65 }, { ingredient: "IBOA", mass_pct: 35 }];
- * const recipe = readRecipe(parseJson(JSON.stringify({ id: "two", title: "oligomer and diluent", parts }), "two.json"));
- * recipe.normalise; // → false
- * ```
- */
-export function readRecipe(document: JsonDocument): Recipe {
-  return readDocument(recipeSchema, document);
-}
 
 /**
  * Brings a recipe's parts to mass fractions; blends are taken apart into their ingredients.
@@ -302,13 +284,44 @@ export function withMassFraction(
   formulation: Formulation,
   { id, massFraction }: { id: string; massFraction: number },
 ): Formulation {
+  return withMassFractions(formulation, { [id]: massFraction });
+}
+
+/**
+ * The formulation with several ingredients at other shares, each exactly the one given; the others keep their proportions.
+ * @throws InputError when an ingredient is not in the formulation, a share is not from 0 to 1, or the shares add up to more
+ * than 1; when nothing else is there to make up the rest.
+ * @example
+ * ```ts
+ * import { massFractionOf, withMassFractions } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { formulation } = openBrief("data/briefs/flow-cell.json");
+ * const changed = withMassFractions(formulation, { BAPO: 0.02, BBOT: 0.003 });
+ * [massFractionOf(changed, "BAPO"), massFractionOf(changed, "BBOT")]; // → [0.02, 0.003]
+ * massFractionOf(changed, "UDMA") / massFractionOf(changed, "IBOA"); // → 1.8333
+ * ```
+ */
+export function withMassFractions(
+  formulation: Formulation,
+  massFractions: Readonly<Record<string, number>>,
+): Formulation {
   const where = `formulation "${formulation.id}"`;
-  checkNumber(massFraction, { where, field: "massFraction", min: 0, max: 1 });
-  requirePresent(formulation, id);
-  const before = massFractionOf(formulation, id);
-  if (before === 1)
-    throw new InputError(`${where}: ${id} is alone in it; there is nothing to make up the rest`);
-  return reweigh(formulation, new Map([[id, massFraction]]), (1 - massFraction) / (1 - before));
+  const ids = Object.keys(massFractions);
+  for (const id of ids) {
+    checkNumber(massFractions[id], { where, field: `massFraction of ${id}`, min: 0, max: 1 });
+    requirePresent(formulation, id);
+  }
+  const total = sum(Object.values(massFractions));
+  if (total > 1) {
+    throw new InputError(
+      `${where}: the mass fractions of ${ids.join(", ")} add up to ${Number(total.toPrecision(8))}; together they must be at most 1`,
+    );
+  }
+  const others = formulation.components.filter(({ ingredient }) => !ids.includes(ingredient.id));
+  if (others.every(({ massFraction }) => massFraction === 0))
+    throw new InputError(`${where}: ${ids.join(", ")} is alone in it; there is nothing to make up the rest`);
+  const before = sum(ids.map((id) => massFractionOf(formulation, id)));
+  return reweigh(formulation, new Map(Object.entries(massFractions)), (1 - total) / (1 - before));
 }
 
 /**
@@ -410,19 +423,3 @@ function merge(components: readonly Component[]): Component[] {
 function sum(values: readonly number[]): number {
   return values.reduce((total, value) => total + value, 0);
 }
-
-const recipeSchema: z.ZodType<Recipe> = strict({
-  id: idSchema,
-  title: z.string().min(3),
-  normalise: z.boolean().default(false),
-  parts: z
-    .array(
-      strict({
-        ingredient: idSchema.optional(),
-        lot: idSchema.optional(),
-        blend: z.string().optional(),
-        mass_pct: quantity("mass_pct", { min: 0 }),
-      }),
-    )
-    .min(1),
-}) as unknown as z.ZodType<Recipe>;

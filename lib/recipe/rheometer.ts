@@ -3,7 +3,8 @@
 
 import Papa from "papaparse";
 import { checkNumber, InputError, nearestName, notNegative, positive } from "../door.js";
-import { readQuantity, unitLabel } from "./units.js";
+import { readQuantity } from "./quantity.js";
+import { unitLabel } from "./units.js";
 
 /** One usable row: a blend, its conditions and its viscosity. */
 export interface RheometerReading {

@@ -3,8 +3,9 @@
 import { InputError, unknownName } from "../door.js";
 import type { ResinConstants } from "./constants.js";
 import type { Film } from "./film.js";
-import { withLot, type Ingredient, type Lot } from "./ingredient.js";
+import type { Ingredient, Lot } from "./ingredient.js";
 import type { Interaction } from "./interaction.js";
+import { withLot } from "./lot.js";
 import type { BlendReadings } from "./readings.js";
 import type { Spectrum } from "./spectrum.js";
 

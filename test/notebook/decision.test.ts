@@ -7,10 +7,14 @@ import { asMade, weighOut } from "../../lib/lab/batch.js";
 import { readRecords } from "../../lib/lab/record.js";
 import type { TableContent } from "../../lib/notebook/content.js";
 import { decide, recordBatch } from "../../lib/notebook/decision.js";
-import { showMarkdown, showTable } from "../../lib/notebook/show.js";
+import { showMarkdown, showSummary, showTable } from "../../lib/notebook/show.js";
 import { brief, formulationOf, shelf } from "../fixtures.js";
 
-vi.mock("../../lib/notebook/show.js", () => ({ showMarkdown: vi.fn(), showTable: vi.fn() }));
+vi.mock("../../lib/notebook/show.js", () => ({
+  showMarkdown: vi.fn(),
+  showSummary: vi.fn(),
+  showTable: vi.fn(),
+}));
 
 let folder: string;
 beforeEach(() => {
@@ -54,6 +58,7 @@ describe("decide", () => {
     decideIt();
     const [record] = readRecords(folder);
     expect(vi.mocked(showMarkdown).mock.calls).toEqual([[`**Decided.** ${statement}`]]);
+    expect(vi.mocked(showSummary).mock.calls).toEqual([[{ work, decided: statement }]]);
     expect(vi.mocked(showTable).mock.calls).toHaveLength(1);
     const [[table]] = vi.mocked(showTable).mock.calls as [[TableContent]];
     expect(table.caption).toBe("What was appended to the lab record");

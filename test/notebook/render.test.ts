@@ -1,10 +1,13 @@
 import { createHash } from "node:crypto";
 import { describe, expect, it } from "vitest";
-import { embed, type FigureContent, type TableContent } from "../../lib/notebook/content.js";
+import { embed, type Content, type FigureContent, type TableContent } from "../../lib/notebook/content.js";
 import type { Notebook, Output } from "../../lib/notebook/notebookFile.js";
 import { darkPalette, lightPalette, type Palette } from "../../lib/notebook/palette.js";
 import * as pages from "../../lib/notebook/pages.js";
+import { panelOf } from "../../lib/notebook/panel/panel.js";
 import { renderIndex, renderNotebook } from "../../lib/notebook/render.js";
+import { summaryOf } from "../../lib/notebook/summary.js";
+import { readWorkbench } from "../../lib/recipe/files.js";
 
 const origin = {
   brief: "flow-cell.json",
@@ -36,7 +39,7 @@ const figure: FigureContent = {
   layout: { height: 300 },
   table,
 };
-const html = (content: FigureContent | TableContent) =>
+const html = (content: Content) =>
   display("text/html", `${embed(content)}<div onclick="alert(1)">live fallback</div>`);
 
 describe("renderNotebook, the page", () => {
@@ -159,6 +162,43 @@ describe("renderNotebook, what cells show", () => {
     expect(() => page(prose("a"), prose("$\\frac$"))).toThrow(
       "notebooks/07-trial_run.ipynb, cell 2: formula",
     );
+  });
+});
+
+describe("renderNotebook, the panel and the card", () => {
+  const work = readWorkbench("data/briefs/flow-cell.json");
+  const card = (decided: string) => shown(html(summaryOf({ work, decided })));
+
+  it("puts a panel where the cell shows it, its data inert, its script once", () => {
+    const { html: whole } = page(shown(html(panelOf(work)), html(panelOf(work))));
+    const main = mainOf(whole);
+    expect(main).toContain(`<section class="panel" id="resinwright-panel-1" aria-label="Panel 1">`);
+    expect(main).toContain(`<section class="panel" id="resinwright-panel-2" aria-label="Panel 2">`);
+    expect(main).toContain(`<script type="application/json">{"kind":"panel","work":{"formulation":`);
+    expect(main).toContain(
+      "<noscript><p>This panel computes in the page. It needs a browser that may run scripts;",
+    );
+    expect(main).not.toContain("live fallback");
+    expect([...whole.matchAll(/<script>/g)]).toHaveLength(2);
+    expect(whole.length).toBeLessThan(3e5);
+  });
+
+  it("keeps hostile text in a panel's data inside its element", () => {
+    const formulation = { ...work.formulation, title: hostile };
+    const { html: whole } = page(shown(html(panelOf({ ...work, formulation }))));
+    const main = mainOf(whole);
+    expect(main.match(/<script/g)).toHaveLength(1);
+    expect(main.match(/<\/script/g)).toHaveLength(1);
+    expect(main).not.toContain("<img");
+  });
+
+  it("heads the page with the last card, before the contents, and leaves nothing where the cell stood", () => {
+    const main = mainOf(page(prose("# T\n\n## One"), card("First."), card("Last."), prose("## Two")).html);
+    expect(main.match(/class="card"/g)).toHaveLength(1);
+    expect(main).toContain("<dd>Last.</dd>");
+    expect(main).not.toContain("First.");
+    expect(main.indexOf(`class="card"`)).toBeGreaterThan(main.indexOf("<h1>"));
+    expect(main.indexOf(`class="card"`)).toBeLessThan(main.indexOf("<nav"));
   });
 });
 

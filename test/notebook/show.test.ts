@@ -3,8 +3,9 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { extract } from "../../lib/notebook/content.js";
 import { shareFigure } from "../../lib/notebook/figure/share.js";
 import { startKernel, type Kernel } from "../../lib/notebook/kernel.js";
-import { showFigure, showTable } from "../../lib/notebook/show.js";
+import { showFigure, showPanel, showTable } from "../../lib/notebook/show.js";
 import { tableOf } from "../../lib/notebook/table.js";
+import { readWorkbench } from "../../lib/recipe/files.js";
 
 const shares = {
   caption: "Shares </script>",
@@ -17,6 +18,7 @@ describe("outside a notebook", () => {
   it.each<[string, () => void]>([
     ["showFigure", () => showFigure(shareFigure(shares))],
     ["showTable", () => showTable(tableOf(batches))],
+    ["showPanel", () => showPanel(readWorkbench("data/briefs/flow-cell.json"))],
   ])("%s says so", (name, call) => {
     expect(call).toThrow(
       `${name}: no notebook is running here; call it in a cell of a notebook of this project`,
@@ -30,7 +32,7 @@ describe("in a notebook", () => {
   let kernel: Kernel;
   beforeAll(async () => {
     kernel = await startKernel({ folder: root, environment: {} });
-    const load = ["show", "table", "figure/share"].map(
+    const load = ["show", "table", "figure/share", "../recipe/files"].map(
       (file) => `...require("./lib/dist/notebook/${file}.js")`,
     );
     const run = await kernel.execute({ code: `const library = { ${load.join(", ")} };`, timeLimit_s: 60 });
@@ -63,6 +65,15 @@ describe("in a notebook", () => {
     const html = await htmlOf(`library.showTable(library.tableOf(${JSON.stringify(batches)}));`);
     expect(extract(html)).toEqual(JSON.parse(JSON.stringify(tableOf(batches))));
     expect(html).toContain("<table>");
+  });
+
+  it("a panel arrives as its data and a word on where it works", async () => {
+    const html = await htmlOf(
+      `library.showPanel(library.readWorkbench("${root}data/briefs/flow-cell.json"));`,
+    );
+    expect(extract(html)).toMatchObject({ kind: "panel", work: { brief: { id: "flow-cell" } } });
+    expect(html).toContain("The panel works on the rendered page");
+    expect(html).not.toContain(root);
   });
 
   it("frames load without a word on the error stream", async () => {

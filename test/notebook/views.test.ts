@@ -11,13 +11,13 @@ import {
   propertyTable,
   readingTable,
   sourceTable,
-  valueText,
-  verdictText,
   warningTable,
 } from "../../lib/notebook/views.js";
-import { propertyNames, type Brief } from "../../lib/recipe/brief.js";
+import type { Brief } from "../../lib/recipe/brief.js";
+import { propertyNames } from "../../lib/recipe/propertyNames.js";
 import { openBrief } from "../../lib/recipe/files.js";
 import { composition, formulate } from "../../lib/recipe/formulation.js";
+import { valueText, verdictText } from "../../lib/notebook/verdicts.js";
 import { unitLabel } from "../../lib/recipe/units.js";
 import { sourceStatuses } from "../../lib/result.js";
 import { brief, formulationOf, shelf, sure } from "../fixtures.js";

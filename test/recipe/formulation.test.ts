@@ -1,6 +1,5 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { parseJson } from "../../lib/recipe/document.js";
 import {
   batchMasses,
   composition,
@@ -8,8 +7,8 @@ import {
   largestOf,
   mainPair,
   massFractionOf,
-  readRecipe,
   withMassFraction,
+  withMassFractions,
   withRatio,
   withShares,
   type Part,
@@ -81,15 +80,6 @@ describe("formulate", () => {
   });
 });
 
-describe("readRecipe", () => {
-  it("refuses a negative share with its line", () => {
-    const text = '{"id": "a", "title": "abc",\n "parts": [\n {"ingredient": "THIN", "mass_pct": -5}]}';
-    expect(() => readRecipe(parseJson(text, "a.json"))).toThrow(
-      "a.json, line 3: parts[0].mass_pct is -5; it must be at least 0",
-    );
-  });
-});
-
 describe("composition", () => {
   // Exact by arithmetic: 40 g of 2 g/cm³ with 60 g of 1 g/cm³ fill 20 + 60 cm³.
   it("adds volumes", () => {
@@ -144,6 +134,21 @@ describe("changing a formulation", () => {
     const changed = withMassFraction(base, { id: "MID", massFraction: 0.6 });
     expect(massFractionOf(changed, "MID")).toBeCloseTo(0.6, 14);
     expect(massFractionOf(changed, "THIN") / massFractionOf(changed, "THICK")).toBeCloseTo(5 / 3, 12);
+  });
+
+  it("sets several shares at once, each exactly, and leaves the proportions of the rest", () => {
+    const four = formulationOf({ THIN: 50, THICK: 30, MID: 15, PI: 5 });
+    const changed = withMassFractions(four, { MID: 0.31, PI: 0.07 });
+    expect(massFractionOf(changed, "MID")).toBe(0.31);
+    expect(massFractionOf(changed, "PI")).toBe(0.07);
+    expect(massFractionOf(changed, "THIN") / massFractionOf(changed, "THICK")).toBeCloseTo(5 / 3, 12);
+    expect(sum(changed.components.map(({ massFraction }) => massFraction))).toBeCloseTo(1, 14);
+    expect(() => withMassFractions(four, { MID: 0.6, PI: 0.5 })).toThrow(
+      'formulation "test": the mass fractions of MID, PI add up to 1.1; together they must be at most 1',
+    );
+    expect(() => withMassFractions(four, { MID: -0.1, PI: 0.5 })).toThrow(
+      'formulation "test": massFraction of MID is -0.1; it must be a number from 0 to 1',
+    );
   });
 
   it("shares out two ingredients and leaves the rest", () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { fieldUnits, readQuantity, unitEndingOf, unitLabel } from "../../lib/recipe/units.js";
+import { readQuantity } from "../../lib/recipe/quantity.js";
+import { fieldUnits, unitEndingOf, unitLabel } from "../../lib/recipe/units.js";
 
 const read = (field: string, given: unknown) => readQuantity({ where: "brief.json", field, given });
 

@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { orderOfAddition, weighOut } from "../../../lib/lab/batch.js";
-import { withLot } from "../../../lib/recipe/ingredient.js";
+import { withLot } from "../../../lib/recipe/lot.js";
 import { formulationOf, shelf } from "../../fixtures.js";
 
 const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
