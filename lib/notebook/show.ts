@@ -1,12 +1,11 @@
 // Shows a figure or a table in a notebook: the data for the rendered page, then what a running notebook displays itself.
 // The only file that knows tslab; it asks for it when something is shown, so the library also loads without a kernel.
 
-import { randomUUID } from "node:crypto";
 import { createRequire } from "node:module";
 import type * as Tslab from "tslab";
 import { InputError } from "../door.js";
-import { embed, tableHtml, type FigureContent, type TableContent } from "./content.js";
-import { escapeHtml } from "./html.js";
+import { embed, type FigureContent, type TableContent } from "./content.js";
+import { liveFigure, liveTable } from "./live.js";
 
 /**
  * Shows a figure in the cell that calls it, with its caption and the table behind it; nothing where there was nothing to draw.
@@ -38,7 +37,7 @@ export function showFigure(figure: FigureContent | undefined): void {
  * ```
  */
 export function showTable(table: TableContent): void {
-  display("showTable", embed(table) + tableHtml(table));
+  display("showTable", embed(table) + liveTable(table));
 }
 
 /**
@@ -69,39 +68,3 @@ function display(shower: string, text: string, kind: "html" | "markdown" = "html
     );
   }
 }
-
-function liveFigure(figure: FigureContent): string {
-  const id = `figure-${randomUUID()}`;
-  return [
-    `<figure id="${id}" style="margin:0">`,
-    `<div role="img" aria-label="${escapeHtml(figure.alternativeText)}"></div>`,
-    `<figcaption>${escapeHtml(figure.caption)}</figcaption>`,
-    `<details><summary style="display:list-item">Data behind this figure</summary>${tableHtml(figure.table)}</details>`,
-    `</figure>`,
-    `<script>(${drawLive})(document.getElementById("${id}"));</script>`,
-  ].join("\n");
-}
-
-/**
- * Runs in the browser of a live notebook. plotly is loaded once a page, from the notebook server; while it loads,
- * `define` is out of sight, or plotly would hand itself to the notebook's module loader instead of the page.
- */
-const drawLive = `function (figure) {
-  const page = window;
-  page.plotlyLoaded ??= new Promise((resolve, reject) => {
-    const { define } = page;
-    page.define = undefined;
-    const script = document.createElement("script");
-    script.src = (document.body.dataset.baseUrl ?? "/") + "files/node_modules/plotly.js-dist/plotly.js";
-    const restored = (next) => () => { page.define = define; next(); };
-    script.onload = restored(resolve);
-    script.onerror = restored(reject);
-    document.head.append(script);
-  });
-  const target = figure.firstElementChild;
-  const { data, layout } = JSON.parse(figure.previousElementSibling.textContent);
-  page.plotlyLoaded.then(
-    () => page.Plotly.newPlot(target, data, layout, { displayModeBar: false, responsive: true }),
-    () => { target.textContent = "The figure could not be drawn here; its numbers stand below."; },
-  );
-}`;
