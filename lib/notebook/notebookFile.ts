@@ -1,7 +1,9 @@
 // A notebook as it is stored: read, checked, and reduced to what running and rendering need.
 // Stored notebooks have no outputs, so that a page only ever shows what this run computed.
 
+import { readdirSync } from "node:fs";
 import { readFile } from "node:fs/promises";
+import path from "node:path";
 import { z } from "zod";
 import { InputError } from "../door.js";
 import { parseJson } from "../recipe/document.js";
@@ -28,6 +30,24 @@ export interface CodeCell {
 export interface Notebook {
   readonly file: string;
   readonly cells: readonly (MarkdownCell | CodeCell)[];
+}
+
+/**
+ * The notebooks of the workbench in `folder`, in the order of their names.
+ * @throws InputError if there are none.
+ */
+export function notebooksIn(folder: string): string[] {
+  const home = path.join(folder, "notebooks");
+  let names: string[] = [];
+  try {
+    names = readdirSync(home).filter((name) => name.endsWith(".ipynb"));
+  } catch {
+    // No folder is told like an empty one.
+  }
+  if (names.length === 0) {
+    throw new InputError("notebooks: no .ipynb file in this folder; start in the folder of the workbench");
+  }
+  return names.sort().map((name) => path.join(home, name));
 }
 
 /**

@@ -2,6 +2,7 @@
 // Kept as text, since it runs in the reader's browser and its hash stands in the page's security policy.
 
 import { copyScript } from "./copyScript.js";
+import { figureLook } from "./figureLook.js";
 import { darkPalette, lightPalette } from "./palette.js";
 
 // A4 less its margins, in CSS pixels.
@@ -18,22 +19,14 @@ export const pageScript = `"use strict";
     plot: figure.querySelector(".plot"),
     ...JSON.parse(figure.querySelector("script").textContent),
   }));
+  const figureLook = ${figureLook};
   let printing = false;
 
   const draw = ({ plot, data, layout }) => {
     const colors = prefersDark.matches && !printing ? dark : light;
     const width = printing ? ${printWidth_px} : plot.clientWidth;
-    const axis = { color: colors.muted, gridcolor: colors.rule, zerolinecolor: colors.rule, automargin: true };
-    const own = {
-      width,
-      autosize: false,
-      height: layout.height ?? 420,
-      paper_bgcolor: "transparent",
-      plot_bgcolor: "transparent",
-      font: { size: 13, ...layout.font, family: "system-ui, sans-serif", color: colors.ink },
-      template: { layout: { xaxis: axis, yaxis: axis, margin: { l: 8, r: 16, t: 16, b: 8 } } },
-    };
-    Plotly.react(plot, data, { ...layout, ...own }, config);
+    const look = figureLook(layout, colors);
+    Plotly.react(plot, data, { ...look, width, autosize: false }, config);
   };
   const drawAll = () => figures.forEach(draw);
   const reachScrolling = () => {

@@ -1,12 +1,12 @@
 // The program behind `npm start`: runs all notebooks with one brief and leaves their pages in rendered/.
 // Pages are written only once every notebook has passed and been rendered, so that no half-made set is ever seen.
 
-import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { InputError } from "../door.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
-import type { CodeCell, MarkdownCell, Notebook, Output } from "./notebookFile.js";
+import { notebooksIn, type CodeCell, type MarkdownCell, type Notebook, type Output } from "./notebookFile.js";
 import { originOf } from "./origin.js";
 import { renderIndex, renderNotebook, renderSheet } from "./render.js";
 import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
@@ -97,20 +97,6 @@ function named(notebooks: readonly string[], folder: string): string[] {
     pages.add(page);
     return file;
   });
-}
-
-function notebooksIn(folder: string): string[] {
-  const home = path.join(folder, "notebooks");
-  let names: string[] = [];
-  try {
-    names = readdirSync(home).filter((name) => name.endsWith(".ipynb"));
-  } catch {
-    // No folder is told like an empty one.
-  }
-  if (names.length === 0) {
-    throw new InputError("notebooks: no .ipynb file in this folder; start in the folder of the workbench");
-  }
-  return names.sort().map((name) => path.join(home, name));
 }
 
 function progressLine({ file, cell, cells, elapsed_s }: Progress): string {

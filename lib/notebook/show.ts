@@ -2,15 +2,14 @@
 // notebook displays itself.
 // The only file that knows tslab; it asks for it when something is shown, so the library also loads without a kernel.
 
-import { randomUUID } from "node:crypto";
 import { createRequire } from "node:module";
 import type * as Tslab from "tslab";
 import type { Case } from "../assess/case.js";
 import { InputError } from "../door.js";
-import { embed, tableHtml, type FigureContent, type TableContent } from "./content.js";
-import { escapeHtml } from "./html.js";
-import { panelOf } from "./panel/panel.js";
+import { embed, type FigureContent, type TableContent } from "./content.js";
+import { liveFigure, liveTable } from "./live.js";
 import { originOf } from "./origin.js";
+import { panelOf } from "./panel/panel.js";
 import { sheetOf, type SheetInput } from "./sheet.js";
 import { papers, sheetFile, sheetHtml } from "./sheet/page.js";
 import type { Paper } from "./sheet/style.js";
@@ -47,7 +46,7 @@ export function showFigure(figure: FigureContent | undefined): void {
  */
 export function showTable(table: TableContent | undefined): void {
   if (table === undefined) return;
-  display("showTable", embed(table) + tableHtml(table));
+  display("showTable", embed(table) + liveTable(table));
 }
 
 /**
@@ -130,39 +129,3 @@ function display(shower: string, text: string, kind: "html" | "markdown" = "html
     );
   }
 }
-
-function liveFigure(figure: FigureContent): string {
-  const id = `figure-${randomUUID()}`;
-  return [
-    `<figure id="${id}" style="margin:0">`,
-    `<div role="img" aria-label="${escapeHtml(figure.alternativeText)}"></div>`,
-    `<figcaption>${escapeHtml(figure.caption)}</figcaption>`,
-    `<details><summary style="display:list-item">Data behind this figure</summary>${tableHtml(figure.table)}</details>`,
-    `</figure>`,
-    `<script>(${drawLive})(document.getElementById("${id}"));</script>`,
-  ].join("\n");
-}
-
-/**
- * Runs in the browser of a live notebook. plotly is loaded once a page, from the notebook server; while it loads,
- * `define` is out of sight, or plotly would hand itself to the notebook's module loader instead of the page.
- */
-const drawLive = `function (figure) {
-  const page = window;
-  page.plotlyLoaded ??= new Promise((resolve, reject) => {
-    const { define } = page;
-    page.define = undefined;
-    const script = document.createElement("script");
-    script.src = (document.body.dataset.baseUrl ?? "/") + "files/node_modules/plotly.js-dist/plotly.js";
-    const restored = (next) => () => { page.define = define; next(); };
-    script.onload = restored(resolve);
-    script.onerror = restored(reject);
-    document.head.append(script);
-  });
-  const target = figure.firstElementChild;
-  const { data, layout } = JSON.parse(figure.previousElementSibling.textContent);
-  page.plotlyLoaded.then(
-    () => page.Plotly.newPlot(target, data, layout, { displayModeBar: false, responsive: true }),
-    () => { target.textContent = "The figure could not be drawn here; its numbers stand below."; },
-  );
-}`;
