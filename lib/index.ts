@@ -60,6 +60,13 @@ export {
   type Target,
 } from "./recipe/brief.js";
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
+export {
+  readWindowReadings,
+  type InductionReading,
+  type ReadValue,
+  type UncuredReading,
+  type WindowReadings,
+} from "./recipe/windowReadings.js";
 export { readNumberTable } from "./recipe/table.js";
 export {
   readRheometerTable,
@@ -85,12 +92,20 @@ export type { NeverCures, Property, Verdict } from "./assess/property.js";
 export { viscosityOf } from "./assess/viscosity.js";
 export { penetrationDepthOf } from "./assess/light.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
-export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export type { OxygenCorrection } from "./assess/windowCorrection.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
+export {
+  correctOxygen,
+  learntFromWindow,
+  type LearntFigure,
+  type LearntOxygen,
+  type LearntReading,
+} from "./decide/calibrateOxygen.js";
 
 export * from "./lab/batch.js";
 export * from "./lab/hazards.js";

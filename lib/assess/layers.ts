@@ -100,9 +100,8 @@ function seriesModel(input: Case & SeriesOptions) {
   const { brief, shelf, layers = 3, times_s } = input;
   const oxygen = oxygenModel(input);
   const cure = cureModel(input);
-  const constant = (
-    name: "propagation_m3mols" | "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion",
-  ) => constantOf(shelf.constants, name);
+  const constant = (name: "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion") =>
+    constantOf(shelf.constants, name);
   // The plan is one plan: every draw gets the exposure that the stated figures ask for.
   const exposure_s = input.exposure_s ?? cure(({ value }) => value).layerTime_s;
   const { dark_s, freshFraction } = brief.betweenLayers;
@@ -116,7 +115,6 @@ function seriesModel(input: Case & SeriesOptions) {
       ...drawn,
       oxygen_molm3: freshOxygen_molm3,
       window: { film: "resists", filmEquivalentThickness_um },
-      propagation_m3mols: read(constant("propagation_m3mols")),
       termination_m3mols: read(constant("termination_m3mols")),
       oxygenCapture_m3mols: read(constant("oxygenCapture_m3mols")),
       gelConversion: read(constant("gelConversion")),

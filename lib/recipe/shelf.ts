@@ -7,6 +7,7 @@ import { withLot, type Ingredient, type Lot } from "./ingredient.js";
 import type { Interaction } from "./interaction.js";
 import type { BlendReadings } from "./readings.js";
 import type { Spectrum } from "./spectrum.js";
+import type { WindowReadings } from "./windowReadings.js";
 
 /** All that is known about what can go into a bottle and what the light passes through. */
 export interface Shelf {
@@ -16,6 +17,7 @@ export interface Shelf {
   readonly films: ReadonlyMap<string, Film>;
   readonly interactions: readonly Interaction[];
   readonly readings: readonly BlendReadings[];
+  readonly windowReadings: readonly WindowReadings[];
   readonly constants: ResinConstants;
 }
 
