@@ -51,14 +51,15 @@ export interface LearntOxygen {
 export function correctOxygen<C extends Case>(work: C): C {
   const readings = work.shelf.windowReadings.findLast((one) => holdFor(one, work));
   if (readings === undefined) return work;
-  const { oxygenCorrection: _, ...taken } = work;
+  const { brief, formulation, shelf } = work;
   const { film, filmThickness_um, temperature_C, source, status } = readings;
   const takenOn = {
-    ...taken,
+    formulation,
+    shelf,
     brief: {
-      ...work.brief,
+      ...brief,
       temperature_C,
-      window: { ...work.brief.window, film, filmThickness_um: { ...filmThickness_um, source, status } },
+      window: { ...brief.window, film, filmThickness_um: { ...filmThickness_um, source, status } },
     },
   };
   const ask = questionOf({ takenOn, readings });
