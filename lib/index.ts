@@ -94,9 +94,18 @@ export { penetrationDepthOf } from "./assess/light.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export type { OxygenCorrection } from "./assess/windowCorrection.js";
+export { resistanceOf, type ResistanceEstimate } from "./assess/resistance.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
+export {
+  compareChanges,
+  usualChanges,
+  type Change,
+  type ChangeComparison,
+  type ChangeEffect,
+  type Effect,
+} from "./decide/changes.js";
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
 export {

@@ -157,6 +157,8 @@ export function oxygenModel(input: Case) {
       oxygenPerRadical: drawn.oxygenPerRadical,
       propagation_m3mols: drawn.propagation_m3mols,
       napierianAbsorption_percm: drawn.napierianAbsorption_percm,
+      solubility_molm3Pa,
+      permeance_molm2sPa,
       filmEquivalentThickness_um: filmEquivalentThickness({ diffusivity_m2s, transferCoefficient_ms }),
     };
   };

@@ -49,6 +49,8 @@ export const bareFields: Readonly<Record<string, string>> = {
   curedDiffusivityShare: "oxygen diffusivity in cured resin over that in the liquid",
   filmPartition: "oxygen in the film over oxygen in the resin at equilibrium",
   filmShare: "part of the resistance to oxygen that lies in the film",
+  filmRulesShare: "share of the draws in which the film resists more than the resin",
+  factor: "a quantity after a change over the same before it",
   atWindow: "oxygen at the window over saturation",
   atPart: "oxygen at the part over saturation",
   mean: "oxygen averaged over the gap, over saturation",
