@@ -56,6 +56,13 @@ export { readRecipe } from "./recipe/recipe.js";
 export { readBrief, type Avoid, type Brief, type PropertyName, type Target } from "./recipe/brief.js";
 export { propertyNames } from "./recipe/propertyNames.js";
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
+export {
+  readWindowReadings,
+  type InductionReading,
+  type ReadValue,
+  type UncuredReading,
+  type WindowReadings,
+} from "./recipe/windowReadings.js";
 export { readNumberTable } from "./recipe/table.js";
 export {
   readRheometerTable,
@@ -81,12 +88,29 @@ export type { NeverCures, Property, Verdict } from "./assess/property.js";
 export { viscosityOf } from "./assess/viscosity.js";
 export { penetrationDepthOf } from "./assess/light.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
-export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxygen.js";
+export type { OxygenCorrection } from "./assess/windowCorrection.js";
+export { resistanceOf, type ResistanceEstimate } from "./assess/resistance.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
+export {
+  compareChanges,
+  usualChanges,
+  type Change,
+  type ChangeComparison,
+  type ChangeEffect,
+  type Effect,
+} from "./decide/changes.js";
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
+export {
+  correctOxygen,
+  learntFromWindow,
+  type LearntFigure,
+  type LearntOxygen,
+  type LearntReading,
+} from "./decide/calibrateOxygen.js";
 
 export * from "./lab/batch.js";
 export * from "./lab/hazards.js";

@@ -8,12 +8,15 @@ import type { ResinConstants } from "../recipe/constants.js";
 import type { Shelf } from "../recipe/shelf.js";
 import type { SourcedValue } from "../result.js";
 import type { Read, Uncertain } from "./doubt.js";
+import type { OxygenCorrection } from "./windowCorrection.js";
 
 /** What is asked of every property: this formulation, under this brief, with what the shelf knows. */
 export interface Case {
   readonly formulation: Formulation;
   readonly brief: Brief;
   readonly shelf: Shelf;
+  /** Readings on this window that correct what is said of oxygen; `calibrate` adds it. */
+  readonly oxygenCorrection?: OxygenCorrection;
 }
 
 /** A sourced value under a label, spread as its kind needs, up to `max` where nature sets a limit. */

@@ -68,11 +68,10 @@ interface CureFigures {
 export function cureModel(input: Case): (read: Read) => CureFigures {
   const { brief, shelf } = input;
   const radicals = radicalModel(input);
-  const constant = (name: "propagation_m3mols" | "termination_m3mols" | "gelConversion") =>
-    constantOf(shelf.constants, name);
+  const constant = (name: "termination_m3mols" | "gelConversion") => constantOf(shelf.constants, name);
   return (read) => {
     const drawn = radicals(read);
-    const { radicalGeneration_molm3s, oxygenPerRadical, irradiance_mWcm2 } = drawn;
+    const { radicalGeneration_molm3s, oxygenPerRadical, propagation_m3mols, irradiance_mWcm2 } = drawn;
     const oxygenTime_s = inductionTime({
       oxygen_molm3: airSaturation(drawn.solubility_molm3Pa),
       radicalGeneration_molm3s,
@@ -80,7 +79,7 @@ export function cureModel(input: Case): (read: Read) => CureFigures {
     });
     const gelTime_s = steadyConversionTime({
       conversion: read(constant("gelConversion")),
-      propagation_m3mols: read(constant("propagation_m3mols")),
+      propagation_m3mols,
       termination_m3mols: read(constant("termination_m3mols")),
       radicalGeneration_molm3s,
     });

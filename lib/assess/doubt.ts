@@ -8,7 +8,8 @@ import { coverageInterval, rankCorrelation } from "../numerics/summary.js";
 import type { Interval, SourcedValue, UsedSource } from "../result.js";
 
 /**
- * An input with its doubt. The label tells inputs apart: two uses of one label are the same physical quantity and move together.
+ * An input with its doubt. The label tells inputs apart: two uses of one label are the same physical quantity and move together,
+ * also where two values are stated of it (two settings read with one meter).
  * `positive`: log-normal with `value` as its median; `signed`: normal; `flat`: uniform over value ± √3 u.
  */
 export interface Uncertain extends SourcedValue {
@@ -28,7 +29,7 @@ export interface DrawOptions {
   readonly level?: number;
 }
 
-/** The draws of one run: the same input has the same column wherever it is used. */
+/** The draws of one run: an input has the same column wherever it is used, and inputs of one label the same ranks. */
 export interface Draws {
   readonly count: number;
   readonly seed: number;
@@ -55,10 +56,16 @@ export function startDraws({ draws = 2000, seed = 1, level = 0.95 }: DrawOptions
   checkNumber(draws, { where, field: "draws", min: 20, max: 1e6, advice: "2000 is usual" });
   checkNumber(seed, { where, field: "seed", min: 0, max: 2 ** 32 - 1 });
   checkNumber(level, { where, field: "level", min: 0.5, max: 0.999 });
-  const columns = new Map<string, Float64Array>();
+  const streams = new Map<string, Float64Array>();
+  const columns = new Map<Uncertain, Float64Array>();
+  const stream = (label: string) => {
+    const made = streams.get(label) ?? drawStream(draws, (seed ^ hash(label)) >>> 0);
+    streams.set(label, made);
+    return made;
+  };
   const column = (input: Uncertain) => {
-    const made = columns.get(input.label) ?? drawColumn(input, draws, (seed ^ hash(input.label)) >>> 0);
-    columns.set(input.label, made);
+    const made = columns.get(input) ?? columnOf(input, stream(input.label));
+    columns.set(input, made);
     return made;
   };
   return { count: draws, seed, level, column };
@@ -107,7 +114,7 @@ export function doubtShares(
 ): DoubtShare[] {
   if (values.every((value) => value === values[0])) return [];
   const chance = 9 / draws.count;
-  const raw = inputs
+  const raw = [...new Map(inputs.map((input) => [input.label, input])).values()]
     .filter((input) => input.u > 0)
     .map((input) => ({ label: input.label, share: rankCorrelation(draws.column(input), values) ** 2 }))
     .filter(({ share }) => share > chance);
@@ -126,9 +133,13 @@ export function distinctSources(sources: readonly UsedSource[]): UsedSource[] {
   return [...distinct].sort(([a], [b]) => (a < b ? -1 : 1)).map(([, one]) => one);
 }
 
-function drawColumn(input: Uncertain, count: number, seed: number): Float64Array {
-  const [column] = latinHypercube({ dimensions: 1, draws: count, seed });
-  return column!.map((p) => Math.min(quantileOf(input, p), input.max ?? Infinity));
+/** Probabilities of one label: whatever is stated of it, its draws keep their ranks. */
+function drawStream(count: number, seed: number): Float64Array {
+  return latinHypercube({ dimensions: 1, draws: count, seed })[0]!;
+}
+
+function columnOf(input: Uncertain, stream: Float64Array): Float64Array {
+  return stream.map((p) => Math.min(quantileOf(input, p), input.max ?? Infinity));
 }
 
 function quantileOf({ value, u, spread }: Uncertain, probability: number): number {

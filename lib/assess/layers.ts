@@ -2,11 +2,20 @@
 // what stays liquid at the window, how far it is cured where it meets the layer before, and what the next one starts from.
 
 import { checkNumber } from "../door.js";
-import { exposeLayers, type LayerExposure } from "../models/oxygen.js";
+import { exposeLayers, type LayerExposure, type OxygenWindow } from "../models/oxygen.js";
+import { filmOn } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
-import { constantOf, type Case } from "./case.js";
+import { constantOf, uncertain, type Case } from "./case.js";
 import { cureModel } from "./cure.js";
-import { intervalOf, propagate, sourcesOf, startDraws, type DrawOptions, type Read } from "./doubt.js";
+import {
+  intervalOf,
+  propagate,
+  sourcesOf,
+  startDraws,
+  type DrawOptions,
+  type Draws,
+  type Read,
+} from "./doubt.js";
 import { oxygenModel } from "./oxygen.js";
 
 /** One layer of a series: shares and intervals over the draws, and the run at the stated figures. */
@@ -44,6 +53,8 @@ export interface SeriesOptions extends DrawOptions {
   readonly exposure_s?: number;
   /** When to read profiles, counted from the start of the dark time before the light. */
   readonly times_s?: readonly number[];
+  /** True to follow the oxygen that the film itself holds, where its data say how much; a film that only resists unless given. */
+  readonly filmStores?: boolean;
 }
 
 /**
@@ -66,8 +77,9 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   const { draws = 60, layers = 3 } = input;
   checkNumber(layers, { where: "layersOf", field: "layers", min: 1, max: 50 });
   const started = startDraws({ ...input, draws });
-  const model = seriesModel(input);
-  const { stated, outcomes, inputs } = propagate(model, started);
+  // The draws differ by far more than what their coarser grid leaves out.
+  const { outcomes, inputs } = propagate(seriesModel(input, { cells: 80, tolerance: 1e-3 }), started);
+  const stated = seriesModel(input)(({ value }) => value);
   const estimates = stated.series.map((run, k): LayerEstimate => {
     const runs = outcomes.map(({ series }) => series[k]!);
     const interval = (of: (run: LayerExposure) => number | undefined) => {
@@ -91,18 +103,18 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   return {
     exposure_s: stated.exposure_s,
     layers: estimates,
-    warnings: seriesWarnings(estimates),
+    warnings: [...seriesWarnings(estimates), ...windowWarnings(input)],
     sources: sourcesOf(inputs),
   };
 }
 
-function seriesModel(input: Case & SeriesOptions) {
+function seriesModel(input: Case & SeriesOptions, fineness: { cells?: number; tolerance?: number } = {}) {
   const { brief, shelf, layers = 3, times_s } = input;
   const oxygen = oxygenModel(input);
   const cure = cureModel(input);
-  const constant = (
-    name: "propagation_m3mols" | "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion",
-  ) => constantOf(shelf.constants, name);
+  const window = windowModel(input);
+  const constant = (name: "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion") =>
+    constantOf(shelf.constants, name);
   // The plan is one plan: every draw gets the exposure that the stated figures ask for.
   const exposure_s = input.exposure_s ?? cure(({ value }) => value).layerTime_s;
   const { dark_s, freshFraction } = brief.betweenLayers;
@@ -111,12 +123,12 @@ function seriesModel(input: Case & SeriesOptions) {
     { duration_s: exposure_s, relativeIrradiance: 1 },
   ];
   return (read: Read) => {
-    const { filmEquivalentThickness_um, freshOxygen_molm3, ...drawn } = oxygen(read);
+    const drawn = oxygen(read);
     const series = exposeLayers({
       ...drawn,
-      oxygen_molm3: freshOxygen_molm3,
-      window: { film: "resists", filmEquivalentThickness_um },
-      propagation_m3mols: read(constant("propagation_m3mols")),
+      ...fineness,
+      oxygen_molm3: drawn.freshOxygen_molm3,
+      window: window(read, drawn),
       termination_m3mols: read(constant("termination_m3mols")),
       oxygenCapture_m3mols: read(constant("oxygenCapture_m3mols")),
       gelConversion: read(constant("gelConversion")),
@@ -129,6 +141,73 @@ function seriesModel(input: Case & SeriesOptions) {
     });
     return { exposure_s, series };
   };
+}
+
+/** The film as it resists, or as it also holds oxygen: S of the film is its permeability over its diffusivity. */
+function windowModel({ brief, shelf, filmStores = false }: Case & SeriesOptions) {
+  const film = filmOn(shelf, `brief "${brief.id}"`, brief.window.film);
+  const { oxygenDiffusivity_m2s } = film;
+  if (!filmStores || oxygenDiffusivity_m2s === undefined) {
+    return (
+      _: Read,
+      { filmEquivalentThickness_um }: { filmEquivalentThickness_um: number },
+    ): OxygenWindow => ({
+      film: "resists",
+      filmEquivalentThickness_um,
+    });
+  }
+  const diffusivity = uncertain(`oxygen diffusivity in ${film.id}`, oxygenDiffusivity_m2s);
+  const thickness = uncertain("film thickness", brief.window.filmThickness_um);
+  return (
+    read: Read,
+    { permeance_molm2sPa, solubility_molm3Pa }: { permeance_molm2sPa: number; solubility_molm3Pa: number },
+  ): OxygenWindow => {
+    const filmThickness_um = read(thickness);
+    const filmDiffusivity_m2s = read(diffusivity);
+    const filmSolubility_molm3Pa = (permeance_molm2sPa * 1e-6 * filmThickness_um) / filmDiffusivity_m2s;
+    return {
+      film: "stores",
+      filmThickness_um,
+      filmDiffusivity_m2s,
+      filmPartition: filmSolubility_molm3Pa / solubility_molm3Pa,
+      sealed: false,
+    };
+  };
+}
+
+function windowWarnings({
+  brief,
+  shelf,
+  oxygenCorrection,
+  filmStores = false,
+}: Case & SeriesOptions): Warning[] {
+  const warnings: Warning[] = [...(oxygenCorrection?.warnings ?? [])];
+  const film = filmOn(shelf, `brief "${brief.id}"`, brief.window.film);
+  if (filmStores && film.oxygenDiffusivity_m2s === undefined) {
+    warnings.push({
+      code: "film-store-unknown",
+      message: `Nothing on the shelf says how much oxygen ${film.id} holds, so it only resists here. Add oxygenDiffusivity_m2s to the film to follow its store.`,
+    });
+  }
+  if (brief.window.gasOxygenFraction === 0) {
+    warnings.push({
+      code: "gas-starves",
+      message:
+        "The gas under the film takes oxygen out of the resin: the first layer has its own, later ones less and less, and parts stick to the window.",
+    });
+  }
+  return warnings;
+}
+
+/** Light until the first resin of a first layer has gelled, one a draw, in seconds; NaN where none has within the light. @internal */
+export function drawGelTime(
+  input: Case & SeriesOptions,
+  draws: Draws,
+): { stated: number; values: readonly number[] } {
+  const model = seriesModel({ ...input, layers: 1 }, { cells: 80, tolerance: 1e-3 });
+  const gelTime = (read: Read) => lightTime(model(read).series[0]!.gelTime_s, input) ?? NaN;
+  const { stated, outcomes } = propagate(gelTime, draws);
+  return { stated, values: outcomes };
 }
 
 /** Times are counted from the start of the dark; a chemist counts light. */

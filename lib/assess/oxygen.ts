@@ -1,21 +1,15 @@
 // Oxygen in the resin and through the window: what delays the cure, and how thick a layer stays liquid on the window.
 
-import { InputError } from "../door.js";
 import {
-  oxygenPartialPressure,
   deadZone,
-  diffusivityFromViscosity,
   filmEquivalentThickness,
-  filmPermeance,
   filmTransferCoefficient,
   inductionTime,
-  radicalGeneration,
+  oxygenPartialPressure,
 } from "../models/oxygen.js";
-import { photonFlux } from "../models/light.js";
-import { filmOn } from "../recipe/shelf.js";
 import { unitLabel } from "../recipe/units.js";
 import type { Warning } from "../result.js";
-import { componentsIn, constantOf, uncertain, type Case } from "./case.js";
+import type { Case } from "./case.js";
 import {
   doubtShares,
   intervalOf,
@@ -26,9 +20,9 @@ import {
   type Draws,
   type Read,
 } from "./doubt.js";
-import { lightModel } from "./light.js";
 import { drawProperty, propertyTitles, type Drawn, type NeverCures, type Property } from "./property.js";
-import { viscosityModel } from "./viscosity.js";
+import { correctionModel } from "./windowCorrection.js";
+import { radicalFigures, transportFigures } from "./windowFigures.js";
 
 /** The dead zone of an assessed formulation: a thickness, with the share of draws that never cure, or the "never cures" outcome. */
 export type DeadZoneEstimate = (Property & { readonly neverCuresShare: number }) | NeverCures;
@@ -39,7 +33,7 @@ export type DeadZoneEstimate = (Property & { readonly neverCuresShare: number })
  * Zero-order oxygen sink in light that decays with depth, oxygen fed through the film in series; oxygen diffuses as the
  * two-thirds power of viscosity allows. Steady state, no flow: layers shorter than a few induction times never reach it.
  * @throws InputError as {@link viscosityOf} and {@link penetrationDepthOf}; when the film is unknown.
- * @source Models: {@link deadZone}, {@link diffusivityFromViscosity}, {@link filmPermeance}. Propagation: JCGM 101:2008.
+ * @source Models: {@link deadZone}, `diffusivityFromViscosity`, `filmPermeance`. Propagation: JCGM 101:2008.
  * @example
  * ```ts
  * import { deadZoneOf } from "resinwright";
@@ -79,31 +73,41 @@ export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate>
   return { values, property: { ...common, outcome: "value", ...interval, neverCuresShare: share } };
 }
 
-/** @internal */
-export function drawInductionTime(input: Case, draws: Draws): Drawn {
-  return drawProperty("inductionTime_s", inductionModel(input), [], draws);
+/**
+ * Light until the oxygen dissolved in fresh resin is used up at the window, s, with no supply from below.
+ * @throws InputError as {@link deadZoneOf}.
+ * @source Model: {@link inductionTime}. Propagation: JCGM 101:2008.
+ * @example
+ * ```ts
+ * import { inductionTimeOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * inductionTimeOf(openBrief("data/briefs/flow-cell.json")).unit; // → "s"
+ * ```
+ */
+export function inductionTimeOf(input: Case & DrawOptions): Property {
+  return drawInductionTime(input, startDraws(input)).property;
 }
 
-/** Radicals started at the window, and the oxygen figures that go with them. @internal */
+/** @internal */
+export function drawInductionTime(input: Case, draws: Draws): Drawn {
+  const { warnings = [] } = input.oxygenCorrection ?? {};
+  return drawProperty("inductionTime_s", inductionModel(input), warnings, draws);
+}
+
+/** Radicals started at the window and the oxygen figures that go with them, corrected by what was read on it. @internal */
 export function radicalModel(input: Case) {
-  const { brief, shelf } = input;
-  if (componentsIn(input.formulation, ["photoinitiator"]).length === 0) {
-    throw new InputError(
-      `formulation "${input.formulation.id}": no photoinitiator in it; nothing would start the cure`,
-    );
-  }
-  const light = lightModel(input);
-  const irradiance = uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
+  const figures = radicalFigures(input);
+  const correction = correctionModel(input);
   return (read: Read) => {
-    const inResin = light(read);
-    const irradiance_mWcm2 = read(irradiance);
-    const photonFlux_molm2s = photonFlux({ irradiance_mWcm2, wavelength_nm: inResin.wavelength_nm });
+    const drawn = figures(read);
+    const factors = correction(read);
     return {
-      ...inResin,
-      irradiance_mWcm2,
-      radicalGeneration_molm3s: radicalGeneration({ ...inResin, photonFlux_molm2s }),
-      oxygenPerRadical: read(constantOf(shelf.constants, "oxygenPerRadical")),
-      solubility_molm3Pa: read(constantOf(shelf.constants, "oxygenSolubility_molm3Pa")),
+      ...drawn,
+      factors,
+      radicalGeneration_molm3s: factors.radicalGeneration * drawn.radicalGeneration_molm3s,
+      oxygenPerRadical: factors.oxygenPerRadical * drawn.oxygenPerRadical,
+      solubility_molm3Pa: factors.solubility * drawn.solubility_molm3Pa,
+      propagation_m3mols: factors.propagation * drawn.propagation_m3mols,
     };
   };
 }
@@ -132,28 +136,18 @@ function deadZoneModel(input: Case) {
 
 /** Oxygen at this window in this light, as a function of what the draws read: what every model of it starts from. @internal */
 export function oxygenModel(input: Case) {
-  const { brief, shelf } = input;
-  const { window } = brief;
+  const { window } = input.brief;
   const radicals = radicalModel(input);
-  const viscosity = viscosityModel(input);
-  const film = filmOn(shelf, `brief "${brief.id}"`, window.film);
-  const permeability = uncertain(`oxygen permeability of ${film.id}`, film.oxygenPermeability_barrer);
-  const filmThickness = uncertain("film thickness", window.filmThickness_um);
-  const diffusivityFactor = constantOf(shelf.constants, "diffusivityFactor");
+  const transport = transportFigures(input);
   const gasOxygen_Pa = oxygenPartialPressure({
     oxygenFraction: window.gasOxygenFraction,
     pressure_Pa: window.gasPressure_Pa,
   });
   return (read: Read) => {
-    const drawn = radicals(read);
-    const { solubility_molm3Pa } = drawn;
-    const diffusivity_m2s =
-      read(diffusivityFactor) *
-      diffusivityFromViscosity({ viscosity_mPas: viscosity(read), temperature_C: brief.temperature_C });
-    const permeance_molm2sPa = filmPermeance({
-      permeability_barrer: read(permeability),
-      thickness_um: read(filmThickness),
-    });
+    const { factors, solubility_molm3Pa, ...drawn } = radicals(read);
+    const moved = transport(read);
+    const diffusivity_m2s = factors.diffusivity * moved.diffusivity_m2s;
+    const permeance_molm2sPa = factors.permeance * moved.permeance_molm2sPa;
     const transferCoefficient_ms = filmTransferCoefficient({ permeance_molm2sPa, solubility_molm3Pa });
     return {
       diffusivity_m2s,
@@ -161,14 +155,17 @@ export function oxygenModel(input: Case) {
       freshOxygen_molm3: airSaturation(solubility_molm3Pa),
       radicalGeneration_molm3s: drawn.radicalGeneration_molm3s,
       oxygenPerRadical: drawn.oxygenPerRadical,
+      propagation_m3mols: drawn.propagation_m3mols,
       napierianAbsorption_percm: drawn.napierianAbsorption_percm,
+      solubility_molm3Pa,
+      permeance_molm2sPa,
       filmEquivalentThickness_um: filmEquivalentThickness({ diffusivity_m2s, transferCoefficient_ms }),
     };
   };
 }
 
-function deadZoneWarnings({ brief }: Case, neverCuresShare: number): Warning[] {
-  const warnings: Warning[] = [];
+function deadZoneWarnings({ brief, oxygenCorrection }: Case, neverCuresShare: number): Warning[] {
+  const warnings: Warning[] = [...(oxygenCorrection?.warnings ?? [])];
   if (neverCuresShare > 0) {
     warnings.push({
       code: "may-never-cure",

@@ -7,6 +7,7 @@ import type { Ingredient } from "../recipe/ingredient.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import { withInteraction } from "../recipe/shelf.js";
 import type { AtTemperature } from "../recipe/sourced.js";
+import { correctOxygen } from "./calibrateOxygen.js";
 
 /**
  * The interaction of two liquids from readings of their blends, by least squares in ln viscosity on a mass basis, neat
@@ -69,7 +70,8 @@ export function fitReadings({
 
 /**
  * The case with every measured pair of liquids corrected: interactions fitted to the readings on the shelf, and neat
- * viscosities as read, in place of the typical ones. A lot's own figure stands.
+ * viscosities as read, in place of the typical ones. A lot's own figure stands. Readings on the window correct what is said of
+ * oxygen ({@link correctOxygen}).
  * @throws InputError as {@link interactionFrom}.
  * @example
  * ```ts
@@ -98,7 +100,11 @@ export function calibrate<C extends Case>(work: C): C {
     ingredient: correct(one.ingredient),
   }));
   const ingredients = new Map([...shelf.ingredients].map(([id, ingredient]) => [id, correct(ingredient)]));
-  return { ...work, shelf: { ...shelf, ingredients }, formulation: { ...work.formulation, components } };
+  return correctOxygen({
+    ...work,
+    shelf: { ...shelf, ingredients },
+    formulation: { ...work.formulation, components },
+  });
 }
 
 type Readings = Pick<BlendReadings, "massFractions" | "viscosities_mPas">;

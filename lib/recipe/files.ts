@@ -15,6 +15,7 @@ import type { Shelf } from "./shelf.js";
 import { readBlendReadings } from "./readings.js";
 import { readSpectrum } from "./spectrum.js";
 import { readNumberTable } from "./table.js";
+import { holdsWindowReadings, readWindowReadings } from "./windowReadings.js";
 
 /** A brief with the formulation it starts from and the shelf both stand on. */
 export interface Workbench {
@@ -80,6 +81,7 @@ export function readShelf(folders: readonly string[]): Shelf {
     films: merged("films"),
     interactions: [...interactions.values()],
     readings: parts.flatMap((part) => part.readings),
+    windowReadings: parts.flatMap((part) => part.windowReadings),
     constants,
   };
 }
@@ -140,13 +142,15 @@ function readShelfFolder(folder: string) {
   if (!existsSync(folder))
     throw new InputError(`${shown(folder)}: this shelf folder does not exist; correct "shelf" in the brief`);
   const constantsFile = join(folder, "constants", "resin.json");
+  const measurements = documentsIn(folder, "measurements");
   return {
     ingredients: byId(folder, "ingredients", readIngredient),
     lots: byId(folder, "lots", readLot),
     spectra: byId(folder, "spectra", readSpectrum),
     films: byId(folder, "films", readFilm),
     interactions: documentsIn(folder, "interactions").map(readInteraction),
-    readings: documentsIn(folder, "measurements").map(readBlendReadings),
+    readings: measurements.filter((one) => !holdsWindowReadings(one)).map(readBlendReadings),
+    windowReadings: measurements.filter(holdsWindowReadings).map(readWindowReadings),
     constants: existsSync(constantsFile)
       ? readConstants(readJson(constantsFile))
       : (undefined as ResinConstants | undefined),

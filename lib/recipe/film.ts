@@ -11,6 +11,8 @@ export interface Film {
   readonly name: string;
   readonly cas?: string;
   readonly oxygenPermeability_barrer: SourcedValue;
+  /** Of oxygen in the film itself; with the permeability it says how much oxygen the film holds. */
+  readonly oxygenDiffusivity_m2s?: SourcedValue | undefined;
   readonly note?: string;
 }
 
@@ -34,5 +36,6 @@ const filmSchema: z.ZodType<Film> = strict({
   name: z.string().min(2),
   cas: z.string().optional(),
   oxygenPermeability_barrer: sourced("oxygenPermeability_barrer", { above: 0 }),
+  oxygenDiffusivity_m2s: sourced("oxygenDiffusivity_m2s", { above: 0 }).optional(),
   note: z.string().optional(),
 });

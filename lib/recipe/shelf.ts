@@ -8,6 +8,7 @@ import type { Interaction } from "./interaction.js";
 import { withLot } from "./lot.js";
 import type { BlendReadings } from "./readings.js";
 import type { Spectrum } from "./spectrum.js";
+import type { WindowReadings } from "./windowReadings.js";
 
 /** All that is known about what can go into a bottle and what the light passes through. */
 export interface Shelf {
@@ -17,6 +18,7 @@ export interface Shelf {
   readonly films: ReadonlyMap<string, Film>;
   readonly interactions: readonly Interaction[];
   readonly readings: readonly BlendReadings[];
+  readonly windowReadings: readonly WindowReadings[];
   readonly constants: ResinConstants;
 }
 

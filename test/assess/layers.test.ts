@@ -73,6 +73,35 @@ describe("layersOf", () => {
     ).toBeGreaterThan(1e-3);
   });
 
+  it("follows what the film itself holds, where its data say how much, and says so where they do not", () => {
+    const liquid = (filmStores: boolean, oxygenDiffusivity_m2s?: ReturnType<typeof sure>) => {
+      const films = new Map([["OPEN", { ...shelf.films.get("OPEN")!, oxygenDiffusivity_m2s }]]);
+      const series = layersOf({
+        ...{ formulation, brief, shelf: { ...shelf, films }, draws: 40 },
+        ...{ layers: 1, exposure_s: 30, filmStores },
+      });
+      return { ...series, zone: series.layers[0]!.stated.end.deadZone.byGel_um! };
+    };
+    const plain = liquid(false, sure(4e-9));
+    expect(plain.layers[0]!.stated.end.meanFilmOxygen_molm3).toBeUndefined();
+    const holding = liquid(true, sure(4e-9));
+    expect(holding.layers[0]!.stated.end.meanFilmOxygen_molm3).toBeGreaterThan(0);
+    expect(holding.zone).toBeGreaterThan(plain.zone);
+    // Limit: a film in which oxygen runs through at once holds next to nothing and only resists.
+    expect(liquid(true, sure(4e-4)).zone / plain.zone).toBeCloseTo(1, 2);
+    const unknown = liquid(true);
+    expect(unknown.zone).toBe(plain.zone);
+    expect(unknown.warnings.map(({ code, message }) => [code, message])).toContainEqual([
+      "film-store-unknown",
+      "Nothing on the shelf says how much oxygen OPEN holds, so it only resists here. Add oxygenDiffusivity_m2s to the film to follow its store.",
+    ]);
+  });
+
+  it("warns that a gas without oxygen starves the layers", () => {
+    const { warnings } = run({ layers: 1, exposure_s: 30 }, window(0));
+    expect(warnings.map(({ code }) => code)).toContain("gas-starves");
+  });
+
   it.each([
     [{ layers: 0 }, "layersOf: layers is 0; it must be a number from 1 to 50"],
     [{ layers: 1.5 }, "layers is 1.5; it must be a whole number of at least 1"],

@@ -54,6 +54,20 @@ describe("readShelf", () => {
     expect(interactions.map(({ G }) => G.value)).toEqual([2]);
   });
 
+  it("tells window readings from blend readings by their kind, and refuses a kind it does not know", () => {
+    const window = {
+      ...{ kind: "window", id: "w", formulation: "f", wavelength_nm: 405, temperature_C: 25, film: "OPEN" },
+      filmThickness_um: { value: 100, u: 5 },
+      inductionTimes: [{ until: "first gel", irradiance_mWcm2: 8, time_s: { value: 1, u: 0.1 } }],
+      ...{ source: "a test", status: "measured here" },
+    };
+    write("base/measurements/w.json", window);
+    const { readings, windowReadings } = base();
+    expect([readings, windowReadings.map(({ id }) => id)]).toEqual([[], ["w"]]);
+    write("base/measurements/w.json", { ...window, kind: "windw" });
+    expect(base).toThrow('w.json: unknown kind "windw"; did you mean "window"?');
+  });
+
   it("refuses two files with one id, a missing folder, missing constants, a wrong check digit", () => {
     write("base/ingredients/again.json", rounds.ingredients.get("THIN"));
     expect(base).toThrow(

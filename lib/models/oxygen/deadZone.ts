@@ -2,6 +2,7 @@
 // Closed form for a sink of order zero, with the resistance of the film and the decay of the light.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
+import { burnt } from "./burnt.js";
 
 /** What the dead zone depends on. */
 export interface DeadZoneInput {
@@ -199,14 +200,6 @@ function farRoot(film: number, share: number, uniform: number): number {
     if (Math.abs(change) <= 1e-9 * x) return x;
   }
   return NaN;
-}
-
-/** 1 - (1 + x) e^-x; for small x by the series of e^-x (e^x - 1 - x), whose terms are all positive. */
-function burnt(x: number): number {
-  if (x >= 1) return 1 - (1 + x) * Math.exp(-x);
-  let sum = 0;
-  for (let k = 2, term = (x * x) / 2; sum + term !== sum; k++, term *= x / k) sum += term;
-  return sum * Math.exp(-x);
 }
 
 const zoneOf = (thickness_m: number, wallOxygen_molm3: number, flux_molm2s: number): DeadZone => ({

@@ -29,11 +29,11 @@ export interface LayerConditions extends DeadZoneLevels {
   readonly schedule: readonly ExposureStep[];
   /** Moments to read the column at, 0 to the whole time of the schedule, s. */
   readonly times_s?: readonly number[];
-  /** Cells of the resin, 8 to 20000; 200 unless given. */
+  /** Cells of the resin, 8 to 20000; 160 unless given. */
   readonly cells?: number;
   /** Cells narrow at the window and where the dead zone should end (graded), or all the same (even); graded unless given. */
   readonly grid?: "graded" | "even";
-  /** Error allowed in one step, in conversion and in oxygen over that of the fresh resin, 1e-9 to 0.1; 1e-4 unless given. */
+  /** Error allowed in one step, in conversion and in oxygen over that of the fresh resin, 1e-9 to 0.1; 3e-4 unless given. */
   readonly tolerance?: number;
   /** Steps allowed in the whole schedule; 20000 unless given. */
   readonly stepLimit?: number;
@@ -44,9 +44,9 @@ export const layerDefaults = {
   oxygenLevel: 0.01,
   conversionLevel: 0.05,
   times_s: [] as readonly number[],
-  cells: 200,
+  cells: 160,
   grid: "graded",
-  tolerance: 1e-4,
+  tolerance: 3e-4,
   stepLimit: 20_000,
 } as const;
 

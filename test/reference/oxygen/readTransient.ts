@@ -1,28 +1,18 @@
 // Reads the transient reference solutions and holds a layer's readings to them.
 import { readFileSync } from "node:fs";
 import { depthsAtLevel, valueAtDepth } from "../../../lib/numerics/profile.js";
-import type { LayerReading } from "../../../lib/models/oxygen.js";
+import type { LayerInput, LayerReading } from "../../../lib/models/oxygen.js";
 
 type Values = Readonly<Record<string, { readonly value: number; readonly grid_rel_change: number }>>;
 
-const file = JSON.parse(readFileSync(new URL("./transient-reference.json", import.meta.url), "utf8")) as {
+const file = readJson<{
   readonly cases: Readonly<Record<string, Readonly<Record<string, Values>>>>;
-};
+}>("transient-reference.json");
 
 /** Round numbers for checking, not a material: 20 um of dead zone in even light without film, induction time 2 s. */
-export const P0 = {
-  radicalGeneration_molm3s: 0.5,
-  napierianAbsorption_percm: 100,
-  diffusivity_m2s: 1e-10,
-  oxygenPerRadical: 1,
-  oxygenCapture_m3mols: 5e5,
-  propagation_m3mols: 25,
-  termination_m3mols: 2500,
-  gapThickness_um: 100,
-  oxygen_molm3: 1,
-  saturation_molm3: 1,
-  gelConversion: 0.2,
-} as const;
+export const P0 = readJson<{ readonly layer: Omit<LayerInput, "window" | "schedule"> }>(
+  "round-numbers.json",
+).layer;
 
 /** The moments of a case, s, and its values by name. */
 export function transientCase(name: string): { times_s: number[]; at: (time_s: number) => Values } {
@@ -48,4 +38,8 @@ export function named(reading: LayerReading, name: string): number {
   if (name === "meanC") return reading.meanOxygen_molm3;
   if (name === "meanX") return reading.meanConversion;
   return name === "flux" ? reading.flux_molm2s : NaN;
+}
+
+function readJson<T>(name: string): T {
+  return JSON.parse(readFileSync(new URL(name, import.meta.url), "utf8")) as T;
 }
