@@ -5,8 +5,9 @@ import type { Ingredient } from "../recipe/ingredient.js";
 import type { UsedSource, Warning } from "../result.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
+import { drawPenetrationDepth } from "./depth.js";
 import { distinctSources, startDraws, type DrawOptions, type Draws } from "./doubt.js";
-import { drawPenetrationDepth } from "./light.js";
+import { drawOpticalDepth } from "./light.js";
 import { drawDeadZone, drawInductionTime, type DeadZoneEstimate } from "./oxygen.js";
 import { judge, type Drawn, type Property, type Verdict } from "./property.js";
 import { drawViscosity } from "./viscosity.js";
@@ -90,6 +91,7 @@ const drawers: Readonly<
   Record<PropertyName, (input: Case, draws: Draws) => Drawn<Property | DeadZoneEstimate>>
 > = {
   viscosity_mPas: drawViscosity,
+  opticalDepth_um: drawOpticalDepth,
   penetrationDepth_um: drawPenetrationDepth,
   criticalExposure_mJcm2: (input, draws) => drawCure(input, "criticalExposure_mJcm2", draws),
   layerExposure_mJcm2: (input, draws) => drawCure(input, "layerExposure_mJcm2", draws),

@@ -2,13 +2,11 @@
 // and the exposure a layer needs.
 
 import { exposureForDepth, steadyConversionTime } from "../models/cure.js";
-import { penetrationDepth } from "../models/light.js";
 import { inductionTime } from "../models/oxygen.js";
 import type { PropertyName } from "../recipe/brief.js";
-import type { Warning } from "../result.js";
 import { constantOf, type Case } from "./case.js";
+import { curveEstimated, depthModel, drawPenetrationDepth, layerCureDepth, type DepthAt } from "./depth.js";
 import { startDraws, type DrawOptions, type Draws, type Read } from "./doubt.js";
-import { drawPenetrationDepth } from "./light.js";
 import { airSaturation, radicalModel } from "./oxygen.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
@@ -21,7 +19,7 @@ export interface WorkingCurveEstimate {
 }
 
 /**
- * The estimated working curve: optical penetration depth, critical exposure at the window, exposure and time for one layer.
+ * The estimated working curve: penetration depth, critical exposure at the window, exposure and time for one layer.
  *
  * Critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
  * radicals. Cure depth = penetration depth × ln(exposure / critical exposure). The layer's exposure cures
@@ -55,7 +53,7 @@ export function workingCurveOf(input: Case & DrawOptions): WorkingCurveEstimate 
 /** @internal */
 export function drawCure(input: Case, property: PropertyName & keyof CureFigures, draws: Draws): Drawn {
   const model = cureModel(input);
-  return drawProperty(property, (read) => model(read)[property], cureWarnings, draws);
+  return drawProperty(property, (read) => model(read)[property], curveEstimated, draws);
 }
 
 interface CureFigures {
@@ -64,13 +62,46 @@ interface CureFigures {
   readonly layerTime_s: number;
 }
 
-/** The working curve's figures as a function of what the draws read. @internal */
+/** The working curve's figures for this brief's layer as a function of what the draws read. @internal */
 export function cureModel(input: Case): (read: Read) => CureFigures {
-  const { brief, shelf } = input;
+  const curve = curveModel(input);
+  const cureDepth_um = layerCureDepth(input);
+  return (read) => {
+    const { penetrationDepthAt, criticalExposure_mJcm2, irradiance_mWcm2 } = curve(read);
+    const layerExposure_mJcm2 = exposureForDepth({
+      cureDepth_um,
+      penetrationDepth_um: penetrationDepthAt(cureDepth_um),
+      criticalExposure_mJcm2,
+    });
+    return {
+      criticalExposure_mJcm2,
+      layerExposure_mJcm2,
+      layerTime_s: layerExposure_mJcm2 / irradiance_mWcm2,
+    };
+  };
+}
+
+/** The working curve of one draw, and the light it is for. @internal */
+export interface DrawnCurve {
+  readonly penetrationDepthAt: DepthAt;
+  readonly criticalExposure_mJcm2: number;
+  readonly irradiance_mWcm2: number;
+}
+
+/** The working curve as a function of what the draws read. @internal */
+export function curveModel(input: Case): (read: Read) => DrawnCurve {
+  const depth = depthModel(input);
+  const critical = criticalModel(input);
+  return (read) => ({ penetrationDepthAt: depth(read), ...critical(read) });
+}
+
+/** Light that burns the dissolved oxygen, and light that brings the resin to its gel conversion. */
+function criticalModel(input: Case) {
+  const { shelf } = input;
   const radicals = radicalModel(input);
   const constant = (name: "propagation_m3mols" | "termination_m3mols" | "gelConversion") =>
     constantOf(shelf.constants, name);
-  return (read) => {
+  return (read: Read) => {
     const drawn = radicals(read);
     const { radicalGeneration_molm3s, oxygenPerRadical, irradiance_mWcm2 } = drawn;
     const oxygenTime_s = inductionTime({
@@ -84,24 +115,6 @@ export function cureModel(input: Case): (read: Read) => CureFigures {
       termination_m3mols: read(constant("termination_m3mols")),
       radicalGeneration_molm3s,
     });
-    const criticalExposure_mJcm2 = irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
-    const layerExposure_mJcm2 = exposureForDepth({
-      cureDepth_um: brief.cureDepthPerLayer * brief.layerThickness_um,
-      penetrationDepth_um: penetrationDepth(drawn),
-      criticalExposure_mJcm2,
-    });
-    return {
-      criticalExposure_mJcm2,
-      layerExposure_mJcm2,
-      layerTime_s: layerExposure_mJcm2 / irradiance_mWcm2,
-    };
+    return { irradiance_mWcm2, criticalExposure_mJcm2: irradiance_mWcm2 * (oxygenTime_s + gelTime_s) };
   };
 }
-
-const cureWarnings: readonly Warning[] = [
-  {
-    code: "working-curve-estimated",
-    message:
-      "Estimated from rate constants and dissolved oxygen, not measured. Cure five spots on a glass slide over a factor of ten in exposure before trusting an exposure time.",
-  },
-];

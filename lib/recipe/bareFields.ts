@@ -17,6 +17,7 @@ export const bareFields: Readonly<Record<string, string>> = {
   refractiveIndex: "refractive index at the sodium line",
   conversion: "double bonds reacted over double bonds at the start",
   gelConversion: "conversion at which the resin holds as a solid",
+  slopeFactor: "slope of a working curve over the slope that the absorption gives it",
   radicalsPerPhoton: "chain-starting radicals per photon absorbed by the initiator",
   oxygenPerRadical: "oxygen molecules used per radical started, while oxygen lasts",
   diffusivityFactor: "factor on the oxygen diffusivity of the two-thirds law",
