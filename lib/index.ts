@@ -60,6 +60,12 @@ export {
   type Target,
 } from "./recipe/brief.js";
 export { readBlendReadings, type BlendReadings } from "./recipe/readings.js";
+export {
+  readCureDepths,
+  type CureDepthSeries,
+  type CureDepthSpot,
+  type MeasuredWorkingCurve,
+} from "./recipe/cureDepths.js";
 export { readNumberTable } from "./recipe/table.js";
 export {
   readRheometerTable,
@@ -92,6 +98,7 @@ export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
+export { fitCureDepths, workingCurveFrom } from "./decide/workingCurveFrom.js";
 
 export * from "./lab/batch.js";
 export * from "./lab/hazards.js";

@@ -97,6 +97,8 @@ export const shelf: Shelf = {
   ]),
   interactions: [],
   readings: [],
+  cureDepths: [],
+  workingCurves: [],
   constants: {
     oxygenSolubility_molm3Pa: sure(5e-5, 1e-5),
     oxygenPerRadical: sure(1, 0.2),

@@ -62,6 +62,11 @@ export function componentsIn(formulation: Formulation, roles: readonly Ingredien
   return formulation.components.filter(({ ingredient }) => roles.includes(ingredient.role));
 }
 
+/** How deep the brief wants a layer to cure, µm. */
+export function layerCureDepth({ brief }: Pick<Case, "brief">): number {
+  return brief.cureDepthPerLayer * brief.layerThickness_um;
+}
+
 const inputs = new WeakMap<SourcedValue, Map<string, Uncertain>>();
 
 function inputsOf(stated: SourcedValue): Map<string, Uncertain> {

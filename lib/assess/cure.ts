@@ -1,13 +1,14 @@
-// The working curve of a formulation under a brief, estimated from its ingredients until a cure-depth series is measured,
-// and the exposure a layer needs.
+// The working curve of a formulation under a brief, as a cure-depth series measured it or estimated from the ingredients, and
+// the exposure a layer needs.
 
 import { exposureForDepth, steadyConversionTime } from "../models/cure.js";
 import { inductionTime } from "../models/oxygen.js";
 import type { PropertyName } from "../recipe/brief.js";
-import { constantOf, type Case } from "./case.js";
-import { curveEstimated, depthModel, drawPenetrationDepth, layerCureDepth, type DepthAt } from "./depth.js";
+import { constantOf, layerCureDepth, type Case } from "./case.js";
+import { depthModel, drawPenetrationDepth, type DepthAt } from "./depth.js";
 import { startDraws, type DrawOptions, type Draws, type Read } from "./doubt.js";
-import { airSaturation, radicalModel } from "./oxygen.js";
+import { curveWarnings, measuredFor, readCritical } from "./measuredCurve.js";
+import { airSaturation, irradianceOf, radicalModel } from "./oxygen.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
 /** The two figures of a working curve and the exposure that follows from them for this brief's layer. */
@@ -19,11 +20,12 @@ export interface WorkingCurveEstimate {
 }
 
 /**
- * The estimated working curve: penetration depth, critical exposure at the window, exposure and time for one layer.
+ * The working curve: penetration depth, critical exposure at the window, exposure and time for one layer.
  *
- * Critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
+ * Measured where a cure-depth series of this resin under this light is on the shelf ({@link calibrate}); otherwise estimated:
+ * critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
  * radicals. Cure depth = penetration depth × ln(exposure / critical exposure). The layer's exposure cures
- * `cureDepthPerLayer` layers deep. An estimate to plan the first cure-depth series with, not a setting to print with.
+ * `cureDepthPerLayer` layers deep. The estimate is there to plan the first cure-depth series with, not to print with.
  * @throws InputError as {@link penetrationDepthOf}; when no initiator absorbs the light.
  * @source Models: {@link inductionTime}, {@link steadyConversionTime}, {@link exposureForDepth}. Propagation: JCGM 101:2008.
  * @example
@@ -53,7 +55,7 @@ export function workingCurveOf(input: Case & DrawOptions): WorkingCurveEstimate 
 /** @internal */
 export function drawCure(input: Case, property: PropertyName & keyof CureFigures, draws: Draws): Drawn {
   const model = cureModel(input);
-  return drawProperty(property, (read) => model(read)[property], curveEstimated, draws);
+  return drawProperty(property, (read) => model(read)[property], curveWarnings(input), draws);
 }
 
 interface CureFigures {
@@ -92,22 +94,38 @@ export interface DrawnCurve {
 export function curveModel(input: Case): (read: Read) => DrawnCurve {
   const depth = depthModel(input);
   const critical = criticalModel(input);
-  return (read) => ({ penetrationDepthAt: depth(read), ...critical(read) });
+  const irradiance = irradianceOf(input);
+  return (read) => ({
+    penetrationDepthAt: depth(read),
+    criticalExposure_mJcm2: critical(read),
+    irradiance_mWcm2: read(irradiance),
+  });
+}
+
+/** Measured where a curve of this resin under this light stands on the shelf; carried over by the estimates' ratio or estimated. */
+function criticalModel(input: Case): (read: Read) => number {
+  const measured = measuredFor(input);
+  if (measured === undefined) return estimatedCritical(input, 1);
+  const { curve, differs, formulation, relativeIrradiance } = measured;
+  if (differs.length === 0) return (read) => readCritical(curve, read, input);
+  const here = estimatedCritical(input, 1);
+  const there = estimatedCritical({ ...input, formulation }, relativeIrradiance);
+  return (read) => (readCritical(curve, read, input) * here(read)) / there(read);
 }
 
 /** Light that burns the dissolved oxygen, and light that brings the resin to its gel conversion. */
-function criticalModel(input: Case) {
+function estimatedCritical(input: Case, relativeIrradiance: number): (read: Read) => number {
   const { shelf } = input;
   const radicals = radicalModel(input);
   const constant = (name: "propagation_m3mols" | "termination_m3mols" | "gelConversion") =>
     constantOf(shelf.constants, name);
-  return (read: Read) => {
+  return (read) => {
     const drawn = radicals(read);
-    const { radicalGeneration_molm3s, oxygenPerRadical, irradiance_mWcm2 } = drawn;
+    const radicalGeneration_molm3s = relativeIrradiance * drawn.radicalGeneration_molm3s;
     const oxygenTime_s = inductionTime({
       oxygen_molm3: airSaturation(drawn.solubility_molm3Pa),
       radicalGeneration_molm3s,
-      oxygenPerRadical,
+      oxygenPerRadical: drawn.oxygenPerRadical,
     });
     const gelTime_s = steadyConversionTime({
       conversion: read(constant("gelConversion")),
@@ -115,6 +133,6 @@ function criticalModel(input: Case) {
       termination_m3mols: read(constant("termination_m3mols")),
       radicalGeneration_molm3s,
     });
-    return { irradiance_mWcm2, criticalExposure_mJcm2: irradiance_mWcm2 * (oxygenTime_s + gelTime_s) };
+    return relativeIrradiance * drawn.irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
   };
 }

@@ -25,6 +25,7 @@ import {
   type DrawOptions,
   type Draws,
   type Read,
+  type Uncertain,
 } from "./doubt.js";
 import { lightModel } from "./light.js";
 import { drawProperty, propertyTitles, type Drawn, type NeverCures, type Property } from "./property.js";
@@ -86,14 +87,14 @@ export function drawInductionTime(input: Case, draws: Draws): Drawn {
 
 /** Radicals started at the window, and the oxygen figures that go with them. @internal */
 export function radicalModel(input: Case) {
-  const { brief, shelf } = input;
+  const { shelf } = input;
   if (componentsIn(input.formulation, ["photoinitiator"]).length === 0) {
     throw new InputError(
       `formulation "${input.formulation.id}": no photoinitiator in it; nothing would start the cure`,
     );
   }
   const light = lightModel(input);
-  const irradiance = uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
+  const irradiance = irradianceOf(input);
   return (read: Read) => {
     const inResin = light(read);
     const irradiance_mWcm2 = read(irradiance);
@@ -106,6 +107,11 @@ export function radicalModel(input: Case) {
       solubility_molm3Pa: read(constantOf(shelf.constants, "oxygenSolubility_molm3Pa")),
     };
   };
+}
+
+/** The light at the window. @internal */
+export function irradianceOf({ brief }: Pick<Case, "brief">): Uncertain {
+  return uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
 }
 
 /** Oxygen that fresh resin brings along, mol/m³: it has stood in dry air at 101325 Pa. @internal */

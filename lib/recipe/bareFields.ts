@@ -36,6 +36,7 @@ export const bareFields: Readonly<Record<string, string>> = {
   residualStandardDeviation: "of ln viscosity",
   relativeU: "standard uncertainty as a fraction of the value",
   u: "standard uncertainty (k = 1), in the unit of the value",
+  correlation: "of two errors, -1 to 1",
   level: "probability that an interval holds the value",
   fraction: "a fraction on the basis named beside it",
   solidFraction: "volume of particles over volume of the whole",

@@ -2,9 +2,10 @@
 
 import { existsSync, readdirSync, readFileSync } from "node:fs";
 import { dirname, join, relative, resolve } from "node:path";
-import { InputError } from "../door.js";
+import { InputError, unknownName } from "../door.js";
 import { readBrief, type Brief } from "./brief.js";
 import { readConstants, type ResinConstants } from "./constants.js";
+import { readCureDepths } from "./cureDepths.js";
 import { parseJson, type JsonDocument } from "./document.js";
 import { readFilm } from "./film.js";
 import { formulate, readRecipe, type Formulation } from "./formulation.js";
@@ -79,6 +80,8 @@ export function readShelf(folders: readonly string[]): Shelf {
     films: merged("films"),
     interactions: [...interactions.values()],
     readings: parts.flatMap((part) => part.readings),
+    cureDepths: parts.flatMap((part) => part.cureDepths),
+    workingCurves: [],
     constants,
   };
 }
@@ -145,7 +148,8 @@ function readShelfFolder(folder: string) {
     spectra: byId(folder, "spectra", readSpectrum),
     films: byId(folder, "films", readFilm),
     interactions: documentsIn(folder, "interactions").map(readInteraction),
-    readings: documentsIn(folder, "measurements").map(readBlendReadings),
+    readings: measurementsIn(folder, "blend viscosities").map(readBlendReadings),
+    cureDepths: measurementsIn(folder, "cure depths").map(readCureDepths),
     constants: existsSync(constantsFile)
       ? readConstants(readJson(constantsFile))
       : (undefined as ResinConstants | undefined),
@@ -168,6 +172,17 @@ function byId<T extends { id: string }>(
     found.set(one.id, one);
   }
   return found;
+}
+
+const measurementKinds = ["blend viscosities", "cure depths"] as const;
+
+/** Measurements of one kind; a file that does not say its kind holds viscosities of blends. */
+function measurementsIn(folder: string, kind: (typeof measurementKinds)[number]): JsonDocument[] {
+  return documentsIn(folder, "measurements").filter(({ value, where }) => {
+    const { kind: given = "blend viscosities" } = (value ?? {}) as { kind?: unknown };
+    if ((measurementKinds as readonly unknown[]).includes(given)) return given === kind;
+    throw new InputError(unknownName(where, "kind of measurement", String(given), measurementKinds));
+  });
 }
 
 function documentsIn(folder: string, kind: string): JsonDocument[] {

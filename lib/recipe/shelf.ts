@@ -2,6 +2,7 @@
 
 import { InputError, unknownName } from "../door.js";
 import type { ResinConstants } from "./constants.js";
+import type { CureDepthSeries, MeasuredWorkingCurve } from "./cureDepths.js";
 import type { Film } from "./film.js";
 import { withLot, type Ingredient, type Lot } from "./ingredient.js";
 import type { Interaction } from "./interaction.js";
@@ -16,6 +17,9 @@ export interface Shelf {
   readonly films: ReadonlyMap<string, Film>;
   readonly interactions: readonly Interaction[];
   readonly readings: readonly BlendReadings[];
+  readonly cureDepths: readonly CureDepthSeries[];
+  /** What cure-depth series say once they are fitted; empty until then. */
+  readonly workingCurves: readonly MeasuredWorkingCurve[];
   readonly constants: ResinConstants;
 }
 
