@@ -98,6 +98,21 @@ export { assess, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";
+export { absorberCandidates, absorberFor, type WantedOfAbsorber } from "./decide/absorberFor.js";
+export {
+  initiatorCandidates,
+  initiatorFor,
+  type InitiatorAnswer,
+  type InitiatorSearch,
+} from "./decide/initiatorFor.js";
+export type { LevelAnswer, LevelFound, LevelRefused } from "./decide/level.js";
+export { compareEngines, type EngineComparison } from "./decide/compareEngines.js";
+export {
+  exposurePlanOf,
+  type ExposurePlanEstimate,
+  type PlannedExposure,
+  type PlannedLayers,
+} from "./decide/exposurePlanOf.js";
 export { fitCureDepths, workingCurveFrom } from "./decide/workingCurveFrom.js";
 
 export * from "./lab/batch.js";

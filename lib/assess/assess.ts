@@ -1,8 +1,8 @@
 // Every property of one formulation under one brief, from the same draws, with a verdict for each target.
 
 import { propertyNames, type PropertyName, type Target } from "../recipe/brief.js";
-import type { Ingredient } from "../recipe/ingredient.js";
 import type { UsedSource, Warning } from "../result.js";
+import { avoidReasons } from "./avoided.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
 import { drawPenetrationDepth } from "./depth.js";
@@ -104,17 +104,8 @@ function avoidedIn({ brief, formulation }: Case): { ingredient: string; reason: 
   return formulation.components
     .filter(({ massFraction }) => massFraction > 0)
     .flatMap(({ ingredient }) =>
-      brief.avoid
-        .filter(
-          ({ ingredient: id, hazard }) =>
-            ingredient.id === id || (hazard !== undefined && carries(ingredient, hazard)),
-        )
-        .map(({ reason }) => ({ ingredient: ingredient.id, reason })),
+      avoidReasons(brief, ingredient).map((reason) => ({ ingredient: ingredient.id, reason })),
     );
-}
-
-function carries({ hazards }: Ingredient, code: string): boolean {
-  return (hazards ?? []).some((statement) => statement.code.startsWith(code));
 }
 
 function distinctWarnings(warnings: readonly Warning[]): Warning[] {

@@ -83,6 +83,7 @@ const figureTitles: Readonly<Record<keyof IngredientFigures, string>> = {
   refractiveIndex: "refractive index",
   homopolymerGlassTransition_C: "homopolymer glass transition",
   radicalsPerPhoton: "radicals per photon",
+  solubility_pct: "solubility",
 };
 
 const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
@@ -100,9 +101,10 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   intrinsicViscosity: "intrinsic viscosity of the particles",
 };
 
-/** A photon starts at most two radicals; a gel holds before nine bonds in ten have reacted. */
+/** A photon starts at most two radicals; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
 const limits: Readonly<Partial<Record<keyof IngredientFigures | keyof ResinConstants, number>>> = {
   radicalsPerPhoton: 2,
+  solubility_pct: 100,
   gelConversion: 0.9,
 };
 

@@ -148,17 +148,21 @@ function engineOf({ brief, shelf }: Case): (read: Read) => LightEngine {
 const engines = new WeakMap<Spectrum, LightEngine>();
 
 /** Molar absorption at the nodes of an engine. */
-function absorptionsOn(engine: LightEngine, { id, wavelengths_nm, values }: Spectrum): readonly number[] {
-  const known = onEngine.get(engine)?.get(values);
-  if (known !== undefined) return known;
-  const read = engine.wavelengths_nm.map((wavelength_nm) =>
-    interpolateSpectrum({ nodes_nm: wavelengths_nm, values, wavelength_nm, where: `spectrum "${id}"` }),
-  );
-  onEngine.set(engine, (onEngine.get(engine) ?? new WeakMap<object, readonly number[]>()).set(values, read));
+function absorptionsOn(engine: LightEngine, spectrum: Spectrum): readonly number[] {
+  const known = onEngine.get(engine) ?? new WeakMap<Spectrum, readonly number[]>();
+  onEngine.set(engine, known);
+  const { id, wavelengths_nm: nodes_nm, values } = spectrum;
+  const where = `spectrum "${id}"`;
+  const read =
+    known.get(spectrum) ??
+    engine.wavelengths_nm.map((wavelength_nm) =>
+      interpolateSpectrum({ nodes_nm, values, wavelength_nm, where }),
+    );
+  known.set(spectrum, read);
   return read;
 }
 
-const onEngine = new WeakMap<LightEngine, WeakMap<object, readonly number[]>>();
+const onEngine = new WeakMap<LightEngine, WeakMap<Spectrum, readonly number[]>>();
 
 function substanceOf({ formulation, shelf }: Case, { ingredient, massFraction }: Component) {
   const where = `formulation "${formulation.id}"`;

@@ -370,4 +370,5 @@ const figureFields: readonly (keyof IngredientFigures)[] = [
   "viscosityActivation_K",
   "homopolymerGlassTransition_C",
   "radicalsPerPhoton",
+  "solubility_pct",
 ];

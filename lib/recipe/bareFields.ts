@@ -55,6 +55,7 @@ export const bareFields: Readonly<Record<string, string>> = {
   atPart: "oxygen at the part over saturation",
   mean: "oxygen averaged over the gap, over saturation",
   relativeIrradiance: "irradiance over that at which radicals were counted",
+  reachedShare: "share of the draws in which a level exists, dissolves and does what is wanted",
   gelsShare: "share of the draws in which a layer gels",
   quantumYield: "molecules changed per photon absorbed",
   absorbance: "decadic absorbance",

@@ -62,6 +62,7 @@ describe("files", () => {
     ["refractiveIndex", 43, 65.2788, 5e-5],
     ["homopolymerGlassTransition_C", 34, 2359, 0.5],
     ["radicalsPerPhoton", 6, 5.2, 0.05],
+    ["solubility_pct", 5, 40.3, 0.05],
   ])("%s: %i figures with the sum %f", (figure, count, sum, tolerance) => {
     const values = ingredients.flatMap((one) => one[figure]?.value ?? []);
     expect(values).toHaveLength(count);
