@@ -63,6 +63,12 @@ export {
   type UncuredReading,
   type WindowReadings,
 } from "./recipe/windowReadings.js";
+export {
+  readCureDepths,
+  type CureDepthSeries,
+  type CureDepthSpot,
+  type MeasuredWorkingCurve,
+} from "./recipe/cureDepths.js";
 export { readNumberTable } from "./recipe/table.js";
 export {
   readRheometerTable,
@@ -86,7 +92,8 @@ export type { DoubtShare, DrawOptions } from "./assess/doubt.js";
 export type { Case } from "./assess/case.js";
 export type { NeverCures, Property, Verdict } from "./assess/property.js";
 export { viscosityOf } from "./assess/viscosity.js";
-export { penetrationDepthOf } from "./assess/light.js";
+export { opticalDepthOf } from "./assess/light.js";
+export { penetrationDepthOf } from "./assess/depth.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export type { OxygenCorrection } from "./assess/windowCorrection.js";
@@ -111,6 +118,22 @@ export {
   type LearntOxygen,
   type LearntReading,
 } from "./decide/calibrateOxygen.js";
+export { absorberCandidates, absorberFor, type WantedOfAbsorber } from "./decide/absorberFor.js";
+export {
+  initiatorCandidates,
+  initiatorFor,
+  type InitiatorAnswer,
+  type InitiatorSearch,
+} from "./decide/initiatorFor.js";
+export type { LevelAnswer, LevelFound, LevelRefused } from "./decide/level.js";
+export { compareEngines, type EngineComparison } from "./decide/compareEngines.js";
+export {
+  exposurePlanOf,
+  type ExposurePlanEstimate,
+  type PlannedExposure,
+  type PlannedLayers,
+} from "./decide/exposurePlanOf.js";
+export { fitCureDepths, workingCurveFrom } from "./decide/workingCurveFrom.js";
 
 export * from "./lab/batch.js";
 export * from "./lab/hazards.js";

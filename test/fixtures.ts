@@ -98,6 +98,8 @@ export const shelf: Shelf = {
   interactions: [],
   readings: [],
   windowReadings: [],
+  cureDepths: [],
+  workingCurves: [],
   constants: {
     oxygenSolubility_molm3Pa: sure(5e-5, 1e-5),
     oxygenPerRadical: sure(1, 0.2),
@@ -106,6 +108,7 @@ export const shelf: Shelf = {
     termination_m3mols: sure(1250, 250),
     oxygenCapture_m3mols: sure(5e5, 1e5),
     gelConversion: sure(0.1, 0.02),
+    slopeFactor: sure(1, 0.15),
     backgroundAbsorption_percm: sure(1, 0.5),
     unmeasuredInteraction: sure(0, 1.1),
     packingLimit: sure(0.6, 0.03),

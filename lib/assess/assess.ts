@@ -1,13 +1,14 @@
 // Every property of one formulation under one brief, from the same draws, with a verdict for each target.
 
 import type { PropertyName, Target } from "../recipe/brief.js";
-import type { Ingredient } from "../recipe/ingredient.js";
 import { propertyNames } from "../recipe/propertyNames.js";
 import type { UsedSource, Warning } from "../result.js";
+import { avoidReasons } from "./avoided.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
+import { drawPenetrationDepth } from "./depth.js";
 import { distinctSources, startDraws, type DrawOptions, type Draws } from "./doubt.js";
-import { drawPenetrationDepth } from "./light.js";
+import { drawOpticalDepth } from "./light.js";
 import { drawDeadZone, drawInductionTime, type DeadZoneEstimate } from "./oxygen.js";
 import { judge, type Drawn, type Property, type Verdict } from "./property.js";
 import { drawViscosity } from "./viscosity.js";
@@ -104,6 +105,7 @@ const drawers: Readonly<
   Record<PropertyName, (input: Case, draws: Draws) => Drawn<Property | DeadZoneEstimate>>
 > = {
   viscosity_mPas: drawViscosity,
+  opticalDepth_um: drawOpticalDepth,
   penetrationDepth_um: drawPenetrationDepth,
   criticalExposure_mJcm2: (input, draws) => drawCure(input, "criticalExposure_mJcm2", draws),
   layerExposure_mJcm2: (input, draws) => drawCure(input, "layerExposure_mJcm2", draws),
@@ -116,17 +118,8 @@ function avoidedIn({ brief, formulation }: Case): { ingredient: string; reason: 
   return formulation.components
     .filter(({ massFraction }) => massFraction > 0)
     .flatMap(({ ingredient }) =>
-      brief.avoid
-        .filter(
-          ({ ingredient: id, hazard }) =>
-            ingredient.id === id || (hazard !== undefined && carries(ingredient, hazard)),
-        )
-        .map(({ reason }) => ({ ingredient: ingredient.id, reason })),
+      avoidReasons(brief, ingredient).map((reason) => ({ ingredient: ingredient.id, reason })),
     );
-}
-
-function carries({ hazards }: Ingredient, code: string): boolean {
-  return (hazards ?? []).some((statement) => statement.code.startsWith(code));
 }
 
 function distinctWarnings(warnings: readonly Warning[]): Warning[] {

@@ -19,39 +19,37 @@ export interface Case {
   readonly oxygenCorrection?: OxygenCorrection;
 }
 
-/** A sourced value under a label, spread as its kind needs, up to `max` where nature sets a limit. */
+/**
+ * A sourced value under a label, spread as its kind needs, up to `max` where nature sets a limit. The same value under the
+ * same label is the same object, so that a model built many times over one set of draws reads one input.
+ */
 export function uncertain(
   label: string,
-  { value, u, source, status }: SourcedValue,
+  stated: SourcedValue,
   spread: Uncertain["spread"] = "positive",
   max?: number,
 ): Uncertain {
-  return { label, value, u, source, status, spread, max };
+  const made = inputsOf(stated);
+  const known = made.get(label);
+  if (known !== undefined) return known;
+  const { value, u, source, status } = stated;
+  const input: Uncertain = { label, value, u, source, status, spread, max };
+  made.set(label, input);
+  return input;
 }
 
-/** A figure of an ingredient, or undefined where the shelf has none. The same figure is the same object in every use. */
+/** A figure of an ingredient, or undefined where the shelf has none. */
 export function figureOf(ingredient: Ingredient, figure: keyof IngredientFigures): Uncertain | undefined {
   const stated = ingredient[figure];
   if (stated === undefined) return undefined;
-  const known = figureInputs.get(stated);
-  if (known !== undefined) return known;
   const lot = ingredient.lot?.measured.includes(figure) ? ` (lot ${ingredient.lot.id})` : "";
-  const made = uncertain(
-    `${figureTitles[figure]} of ${ingredient.id}${lot}`,
-    stated,
-    spreadOf(figure),
-    limits[figure],
-  );
-  figureInputs.set(stated, made);
-  return made;
+  const label = `${figureTitles[figure]} of ${ingredient.id}${lot}`;
+  return uncertain(label, stated, spreadOf(figure), limits[figure]);
 }
 
-/** A class constant. The same constant is the same object in every use. */
+/** A class constant. */
 export function constantOf(constants: ResinConstants, name: keyof ResinConstants): Uncertain {
-  const stated = constants[name];
-  const made = figureInputs.get(stated) ?? uncertain(constantTitles[name], stated, "positive", limits[name]);
-  figureInputs.set(stated, made);
-  return made;
+  return uncertain(constantTitles[name], constants[name], "positive", limits[name]);
 }
 
 /** Reads densities and molar masses for {@link composition} from the present draw. */
@@ -67,7 +65,23 @@ export function componentsIn(formulation: Formulation, roles: readonly Ingredien
   return formulation.components.filter(({ ingredient }) => roles.includes(ingredient.role));
 }
 
-const figureInputs = new WeakMap<SourcedValue, Uncertain>();
+/** The light at the window. */
+export function irradianceOf({ brief }: Pick<Case, "brief">): Uncertain {
+  return uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
+}
+
+/** How deep the brief wants a layer to cure, µm. */
+export function layerCureDepth({ brief }: Pick<Case, "brief">): number {
+  return brief.cureDepthPerLayer * brief.layerThickness_um;
+}
+
+const inputs = new WeakMap<SourcedValue, Map<string, Uncertain>>();
+
+function inputsOf(stated: SourcedValue): Map<string, Uncertain> {
+  const known = inputs.get(stated) ?? new Map<string, Uncertain>();
+  inputs.set(stated, known);
+  return known;
+}
 
 const figureTitles: Readonly<Record<keyof IngredientFigures, string>> = {
   molarMass_gmol: "molar mass",
@@ -77,6 +91,7 @@ const figureTitles: Readonly<Record<keyof IngredientFigures, string>> = {
   refractiveIndex: "refractive index",
   homopolymerGlassTransition_C: "homopolymer glass transition",
   radicalsPerPhoton: "radicals per photon",
+  solubility_pct: "solubility",
 };
 
 const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
@@ -87,15 +102,17 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   termination_m3mols: "termination rate constant",
   oxygenCapture_m3mols: "oxygen capture rate constant",
   gelConversion: "gel conversion",
+  slopeFactor: "working-curve slope against optical depth",
   backgroundAbsorption_percm: "absorption of the resin itself",
   unmeasuredInteraction: "interaction of an unmeasured pair",
   packingLimit: "packing limit of the particles",
   intrinsicViscosity: "intrinsic viscosity of the particles",
 };
 
-/** A photon starts at most two radicals; a gel holds before nine bonds in ten have reacted. */
+/** A photon starts at most two radicals; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
 const limits: Readonly<Partial<Record<keyof IngredientFigures | keyof ResinConstants, number>>> = {
   radicalsPerPhoton: 2,
+  solubility_pct: 100,
   gelConversion: 0.9,
 };
 

@@ -1,14 +1,13 @@
-// The working curve of a formulation under a brief, estimated from its ingredients until a cure-depth series is measured,
-// and the exposure a layer needs.
+// The working curve of a formulation under a brief, as a cure-depth series measured it or estimated from the ingredients, and
+// the exposure a layer needs.
 
 import { exposureForDepth, steadyConversionTime } from "../models/cure.js";
-import { penetrationDepth } from "../models/light.js";
 import { inductionTime } from "../models/oxygen.js";
 import type { PropertyName } from "../recipe/brief.js";
-import type { Warning } from "../result.js";
-import { constantOf, type Case } from "./case.js";
+import { constantOf, irradianceOf, layerCureDepth, type Case } from "./case.js";
+import { depthModel, drawPenetrationDepth, type DepthAt } from "./depth.js";
 import { startDraws, type DrawOptions, type Draws, type Read } from "./doubt.js";
-import { drawPenetrationDepth } from "./light.js";
+import { curveWarnings, measuredFor, readCritical } from "./measuredCurve.js";
 import { airSaturation, radicalModel } from "./oxygen.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
@@ -21,11 +20,12 @@ export interface WorkingCurveEstimate {
 }
 
 /**
- * The estimated working curve: optical penetration depth, critical exposure at the window, exposure and time for one layer.
+ * The working curve: penetration depth, critical exposure at the window, exposure and time for one layer.
  *
- * Critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
+ * Measured where a cure-depth series of this resin under this light is on the shelf ({@link calibrate}); otherwise estimated:
+ * critical exposure = light that burns the dissolved oxygen + light that brings the resin to its gel conversion at steady
  * radicals. Cure depth = penetration depth × ln(exposure / critical exposure). The layer's exposure cures
- * `cureDepthPerLayer` layers deep. An estimate to plan the first cure-depth series with, not a setting to print with.
+ * `cureDepthPerLayer` layers deep. The estimate is there to plan the first cure-depth series with, not to print with.
  * @throws InputError as {@link penetrationDepthOf}; when no initiator absorbs the light.
  * @source Models: {@link inductionTime}, {@link steadyConversionTime}, {@link exposureForDepth}. Propagation: JCGM 101:2008.
  * @example
@@ -55,7 +55,7 @@ export function workingCurveOf(input: Case & DrawOptions): WorkingCurveEstimate 
 /** @internal */
 export function drawCure(input: Case, property: PropertyName & keyof CureFigures, draws: Draws): Drawn {
   const model = cureModel(input);
-  return drawProperty(property, (read) => model(read)[property], cureWarnings, draws);
+  return drawProperty(property, (read) => model(read)[property], curveWarnings(input), draws);
 }
 
 interface CureFigures {
@@ -64,29 +64,15 @@ interface CureFigures {
   readonly layerTime_s: number;
 }
 
-/** The working curve's figures as a function of what the draws read. @internal */
+/** The working curve's figures for this brief's layer as a function of what the draws read. @internal */
 export function cureModel(input: Case): (read: Read) => CureFigures {
-  const { brief, shelf } = input;
-  const radicals = radicalModel(input);
-  const constant = (name: "termination_m3mols" | "gelConversion") => constantOf(shelf.constants, name);
+  const curve = curveModel(input);
+  const cureDepth_um = layerCureDepth(input);
   return (read) => {
-    const drawn = radicals(read);
-    const { radicalGeneration_molm3s, oxygenPerRadical, propagation_m3mols, irradiance_mWcm2 } = drawn;
-    const oxygenTime_s = inductionTime({
-      oxygen_molm3: airSaturation(drawn.solubility_molm3Pa),
-      radicalGeneration_molm3s,
-      oxygenPerRadical,
-    });
-    const gelTime_s = steadyConversionTime({
-      conversion: read(constant("gelConversion")),
-      propagation_m3mols,
-      termination_m3mols: read(constant("termination_m3mols")),
-      radicalGeneration_molm3s,
-    });
-    const criticalExposure_mJcm2 = irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
+    const { penetrationDepthAt, criticalExposure_mJcm2, irradiance_mWcm2 } = curve(read);
     const layerExposure_mJcm2 = exposureForDepth({
-      cureDepth_um: brief.cureDepthPerLayer * brief.layerThickness_um,
-      penetrationDepth_um: penetrationDepth(drawn),
+      cureDepth_um,
+      penetrationDepth_um: penetrationDepthAt(cureDepth_um),
       criticalExposure_mJcm2,
     });
     return {
@@ -97,10 +83,55 @@ export function cureModel(input: Case): (read: Read) => CureFigures {
   };
 }
 
-const cureWarnings: readonly Warning[] = [
-  {
-    code: "working-curve-estimated",
-    message:
-      "Estimated from rate constants and dissolved oxygen, not measured. Cure five spots on a glass slide over a factor of ten in exposure before trusting an exposure time.",
-  },
-];
+/** The working curve of one draw, and the light it is for. @internal */
+export interface DrawnCurve {
+  readonly penetrationDepthAt: DepthAt;
+  readonly criticalExposure_mJcm2: number;
+  readonly irradiance_mWcm2: number;
+}
+
+/** The working curve as a function of what the draws read. @internal */
+export function curveModel(input: Case): (read: Read) => DrawnCurve {
+  const depth = depthModel(input);
+  const critical = criticalModel(input);
+  const irradiance = irradianceOf(input);
+  return (read) => ({
+    penetrationDepthAt: depth(read),
+    criticalExposure_mJcm2: critical(read),
+    irradiance_mWcm2: read(irradiance),
+  });
+}
+
+/** Measured where a curve of this resin under this light stands on the shelf; carried over by the estimates' ratio or estimated. */
+function criticalModel(input: Case): (read: Read) => number {
+  const measured = measuredFor(input);
+  if (measured === undefined) return estimatedCritical(input, 1);
+  const { curve, differs, formulation, relativeIrradiance } = measured;
+  if (differs.length === 0) return (read) => readCritical(curve, read, input);
+  const here = estimatedCritical(input, 1);
+  const there = estimatedCritical({ ...input, formulation }, relativeIrradiance);
+  return (read) => (readCritical(curve, read, input) * here(read)) / there(read);
+}
+
+/** Light that burns the dissolved oxygen, and light that brings the resin to its gel conversion. */
+function estimatedCritical(input: Case, relativeIrradiance: number): (read: Read) => number {
+  const { shelf } = input;
+  const radicals = radicalModel(input);
+  const constant = (name: "termination_m3mols" | "gelConversion") => constantOf(shelf.constants, name);
+  return (read) => {
+    const drawn = radicals(read);
+    const radicalGeneration_molm3s = relativeIrradiance * drawn.radicalGeneration_molm3s;
+    const oxygenTime_s = inductionTime({
+      oxygen_molm3: airSaturation(drawn.solubility_molm3Pa),
+      radicalGeneration_molm3s,
+      oxygenPerRadical: drawn.oxygenPerRadical,
+    });
+    const gelTime_s = steadyConversionTime({
+      conversion: read(constant("gelConversion")),
+      propagation_m3mols: drawn.propagation_m3mols,
+      termination_m3mols: read(constant("termination_m3mols")),
+      radicalGeneration_molm3s,
+    });
+    return relativeIrradiance * drawn.irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
+  };
+}

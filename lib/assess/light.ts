@@ -1,183 +1,204 @@
-// What the light meets in the resin: how much of it initiator, absorber and the resin itself take, weighted by the engine's
-// spectrum; and the penetration depth that follows.
+// What the light meets in the resin: how much of it initiator, absorber and the resin itself take at each wavelength of the
+// engine; and the optical depth that follows.
 
 import { InputError } from "../door.js";
 import {
   absorberConcentration,
   absorptionCoefficient,
+  absorptionSpectrum,
   interpolateSpectrum,
-  penetrationDepth,
-  spectrumMean,
+  lightEngine,
+  opticalDepth,
+  type LightEngine,
 } from "../models/light.js";
 import { densityOf, type Component } from "../recipe/formulation.js";
+import type { Ingredient } from "../recipe/ingredient.js";
 import { spectrumOn } from "../recipe/shelf.js";
 import type { Spectrum } from "../recipe/spectrum.js";
-import type { Warning } from "../result.js";
+import type { SourcedValue, Warning } from "../result.js";
 import { componentsIn, constantOf, figureOf, figureReader, uncertain, type Case } from "./case.js";
 import { startDraws, type DrawOptions, type Draws, type Read, type Uncertain } from "./doubt.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
 /** What one draw of the light says. Coefficients are Napierian. */
 export interface LightInResin {
-  /** Everything that absorbs. */
+  /** Everything that absorbs, averaged over the engine. */
   readonly napierianAbsorption_percm: number;
-  /** The initiators alone. */
+  /** The initiators alone, averaged over the engine. */
   readonly initiatorAbsorption_percm: number;
   /** Chain-starting radicals per photon the initiators absorb, averaged over what each absorbs. */
   readonly radicalsPerPhoton: number;
-  /** Photon-averaged wavelength of the engine. */
+  /** Mean wavelength of the engine. */
   readonly wavelength_nm: number;
+  /** Everything that absorbs, at each node of the engine. */
+  readonly napierianAbsorptions_percm: Float64Array;
+  /** The engine by the radicals that each node starts at the window; by its power where nothing starts any. */
+  readonly starting: LightEngine;
 }
 
 /**
- * Penetration depth at the window, µm: the depth at which the light is down to 1/e, by Beer–Lambert, with the absorption
+ * Optical depth at the window, µm: the depth at which the light is down to 1/e, by Beer–Lambert, with the absorption
  * averaged over the engine's spectrum.
  *
- * This is the optical depth; the slope of a measured working curve is another quantity and can differ.
+ * The slope of a working curve is another quantity, {@link penetrationDepthOf}, and can differ.
  * @throws InputError when an initiator or absorber has no spectrum, molar mass or density, or a spectrum does not cover the light.
- * @source Models: {@link absorptionCoefficient}, {@link penetrationDepth}, {@link spectrumMean}. Propagation: JCGM 101:2008.
+ * @source Models: {@link absorptionSpectrum}, {@link opticalDepth}, {@link lightEngine}. Propagation: JCGM 101:2008.
  * @example
  * ```ts
- * import { penetrationDepthOf } from "resinwright";
+ * import { opticalDepthOf } from "resinwright";
  * import { openBrief } from "resinwright/files";
  * const work = openBrief("data/briefs/flow-cell.json");
- * const depth = penetrationDepthOf(work);
+ * const depth = opticalDepthOf(work);
  * depth.unit; // → "µm"
  * // The depth the light reaches is a matter of the spectrum, not of how bright it is.
  * const light = { ...work.brief.light, irradiance_mWcm2: { ...work.brief.light.irradiance_mWcm2, value: 16 } };
- * penetrationDepthOf({ ...work, brief: { ...work.brief, light } }).value === depth.value; // → true
+ * opticalDepthOf({ ...work, brief: { ...work.brief, light } }).value === depth.value; // → true
  * ```
  */
-export function penetrationDepthOf(input: Case & DrawOptions): Property {
-  return drawPenetrationDepth(input, startDraws(input)).property;
+export function opticalDepthOf(input: Case & DrawOptions): Property {
+  return drawOpticalDepth(input, startDraws(input)).property;
 }
 
 /** @internal */
-export function drawPenetrationDepth(input: Case, draws: Draws): Drawn {
+export function drawOpticalDepth(input: Case, draws: Draws): Drawn {
   const light = lightModel(input);
-  return drawProperty(
-    "penetrationDepth_um",
-    (read) => penetrationDepth(light(read)),
-    lightWarnings(input),
-    draws,
-  );
+  return drawProperty("opticalDepth_um", (read) => opticalDepth(light(read)), lightWarnings(input), draws);
 }
 
 /** The light in the resin as a function of what the draws read; other properties build on it. @internal */
 export function lightModel(input: Case): (read: Read) => LightInResin {
   const { formulation, shelf } = input;
-  const absorbers = componentsIn(formulation, ["photoinitiator", "absorber"]).map((one) =>
-    absorberOf(input, one),
+  const substances = componentsIn(formulation, ["photoinitiator", "absorber"]).map((one) =>
+    substanceOf(input, one),
   );
   const background = constantOf(shelf.constants, "backgroundAbsorption_percm");
-  const engine = engineOf(input);
+  const engineAt = engineOf(input);
   return (read) => {
+    const engine = engineAt(read);
     const density_gcm3 = densityOf(formulation, figureReader(read));
-    const taken = absorbers.map(({ massFraction, scale, molarMass, absorptionAt, radicals }) => ({
-      radicals: radicals === undefined ? 0 : read(radicals),
-      isInitiator: radicals !== undefined,
-      molarAbsorption_Lmolcm: read(scale) * engine.average(absorptionAt, read),
-      concentration_molL: absorberConcentration({
-        massFraction,
-        density_gcm3,
-        molarMass_gmol: read(molarMass),
-      }),
-    }));
-    const initiators = taken.filter(({ isInitiator }) => isInitiator);
-    const initiatorAbsorption_percm = absorptionCoefficient({ absorbers: initiators, background_percm: 0 });
-    const started = initiators.reduce(
-      (sum, one) => sum + one.radicals * one.molarAbsorption_Lmolcm * one.concentration_molL,
-      0,
-    );
-    const absorbed = initiators.reduce(
-      (sum, one) => sum + one.molarAbsorption_Lmolcm * one.concentration_molL,
-      0,
+    const taken = substances.map(({ massFraction, scale, molarMass, spectrum, radicals }) => {
+      const factor = read(scale);
+      return {
+        radicalsPerPhoton: radicals && read(radicals),
+        molarAbsorptions_Lmolcm: absorptionsOn(engine, spectrum).map((eps) => factor * eps),
+        concentration_molL: absorberConcentration({
+          massFraction,
+          density_gcm3,
+          molarMass_gmol: read(molarMass),
+        }),
+      };
+    });
+    const background_percm = read(background);
+    const napierianAbsorptions_percm = absorptionSpectrum({
+      absorbers: taken,
+      backgrounds_percm: engine.shares.map(() => background_percm),
+    });
+    const initiators = taken.filter(({ radicalsPerPhoton }) => radicalsPerPhoton !== undefined);
+    const initiatorAbsorption_percm = absorptionCoefficient({
+      absorbers: initiators.map((one) => ({
+        ...one,
+        molarAbsorption_Lmolcm: meanOver(engine, one.molarAbsorptions_Lmolcm),
+      })),
+      background_percm: 0,
+    });
+    // Radicals started at each node, in the unit of the absorption.
+    const started = engine.shares.map((_, k) =>
+      initiators.reduce(
+        (sum, { radicalsPerPhoton, molarAbsorptions_Lmolcm: eps, concentration_molL }) =>
+          sum + Math.LN10 * radicalsPerPhoton! * eps[k]! * concentration_molL,
+        0,
+      ),
     );
     return {
-      napierianAbsorption_percm: absorptionCoefficient({
-        absorbers: taken,
-        background_percm: read(background),
-      }),
+      napierianAbsorption_percm: meanOver(engine, napierianAbsorptions_percm),
       initiatorAbsorption_percm,
-      radicalsPerPhoton: absorbed > 0 ? started / absorbed : 0,
-      wavelength_nm: engine.wavelength_nm(read),
+      radicalsPerPhoton:
+        initiatorAbsorption_percm > 0 ? meanOver(engine, started) / initiatorAbsorption_percm : 0,
+      wavelength_nm: meanOver(engine, engine.wavelengths_nm),
+      napierianAbsorptions_percm,
+      starting: byRadicals(engine, started),
     };
   };
 }
 
-/** The wavelength-dependent molar absorption of an ingredient, ready for either kind of engine. */
-interface AbsorptionAt {
-  readonly spectrum: Spectrum;
-  readonly engineMean: number;
+/** A photon carries energy in inverse proportion to its wavelength, so a share of power is a share of photons times 1/nm. */
+function byRadicals({ wavelengths_nm, shares }: LightEngine, started: readonly number[]): LightEngine {
+  const parts = shares.map((share, k) => share * wavelengths_nm[k]! * started[k]!);
+  const total = parts.reduce((sum, part) => sum + part, 0);
+  return { wavelengths_nm, shares: total > 0 ? parts.map((part) => part / total) : shares };
 }
 
-interface Engine {
-  readonly average: (absorption: AbsorptionAt, read: Read) => number;
-  readonly wavelength_nm: (read: Read) => number;
+function meanOver({ shares }: LightEngine, values: ArrayLike<number>): number {
+  return shares.reduce((sum, share, k) => sum + share * values[k]!, 0);
 }
 
-/** A spectrum averages each absorption over its nodes; a nominal wavelength reads it at one place, itself in doubt. */
-function engineOf({ brief, shelf }: Case): Engine {
+/** A spectrum is one engine for all draws; a nominal wavelength is one node, itself in doubt. */
+function engineOf({ brief, shelf }: Case): (read: Read) => LightEngine {
   const { spectrum: id, wavelength_nm } = brief.light;
   if (id === undefined) {
     const wavelength = uncertain("wavelength of the light", wavelength_nm!);
-    return {
-      average: ({ spectrum }, read) => absorptionAtWavelength(spectrum, read(wavelength)),
-      wavelength_nm: (read) => read(wavelength),
-    };
+    return (read) => ({ wavelengths_nm: [read(wavelength)], shares: [1] });
   }
-  const { wavelengths_nm, values } = spectrumOn(shelf, `brief "${brief.id}"`, id);
-  const mean_nm = spectrumMean({ wavelengths_nm, spectrum: values, values: wavelengths_nm });
-  return { average: ({ engineMean }) => engineMean, wavelength_nm: () => mean_nm };
+  const spectrum = spectrumOn(shelf, `brief "${brief.id}"`, id);
+  const engine = engines.get(spectrum) ?? lightEngine({ ...spectrum, spectrum: spectrum.values });
+  engines.set(spectrum, engine);
+  return () => engine;
 }
 
-function absorberOf({ formulation, brief, shelf }: Case, { ingredient, massFraction }: Component) {
+const engines = new WeakMap<Spectrum, LightEngine>();
+
+/** Molar absorption at the nodes of an engine. */
+function absorptionsOn(engine: LightEngine, spectrum: Spectrum): readonly number[] {
+  const known = onEngine.get(engine) ?? new WeakMap<Spectrum, readonly number[]>();
+  onEngine.set(engine, known);
+  const { id, wavelengths_nm: nodes_nm, values } = spectrum;
+  const where = `spectrum "${id}"`;
+  const read =
+    known.get(spectrum) ??
+    engine.wavelengths_nm.map((wavelength_nm) =>
+      interpolateSpectrum({ nodes_nm, values, wavelength_nm, where }),
+    );
+  known.set(spectrum, read);
+  return read;
+}
+
+const onEngine = new WeakMap<LightEngine, WeakMap<Spectrum, readonly number[]>>();
+
+function substanceOf({ formulation, shelf }: Case, { ingredient, massFraction }: Component) {
   const where = `formulation "${formulation.id}"`;
-  const molarMass = figureOf(ingredient, "molarMass_gmol");
-  const radicals =
-    ingredient.role === "photoinitiator" ? figureOf(ingredient, "radicalsPerPhoton") : undefined;
-  if (ingredient.spectrum === undefined) {
-    throw new InputError(
-      `${where}: ${ingredient.id} has no absorption spectrum; add one to spectra/ and name it in the ingredient`,
-    );
-  }
-  if (molarMass === undefined) {
-    throw new InputError(
-      `${where}: ${ingredient.id} has no molarMass_gmol; add it to the ingredient with its source and u`,
-    );
-  }
-  if (ingredient.role === "photoinitiator" && radicals === undefined) {
-    throw new InputError(
-      `${where}: ${ingredient.id} has no radicalsPerPhoton; add it to the ingredient with its source and u`,
-    );
-  }
-  const spectrum = spectrumOn(shelf, where, ingredient.spectrum);
+  const lack = lightLack(ingredient);
+  if (lack !== undefined) throw new InputError(`${where}: ${ingredient.id} ${lack}`);
+  const spectrum = spectrumOn(shelf, where, ingredient.spectrum!);
   return {
     massFraction,
-    molarMass,
-    radicals,
+    molarMass: figureOf(ingredient, "molarMass_gmol")!,
+    radicals: ingredient.role === "photoinitiator" ? figureOf(ingredient, "radicalsPerPhoton") : undefined,
     scale: scaleOf(ingredient.id, spectrum),
-    absorptionAt: { spectrum, engineMean: meanOverEngine(spectrum, brief, shelf) },
+    spectrum,
   };
 }
 
-function meanOverEngine(absorption: Spectrum, brief: Case["brief"], shelf: Case["shelf"]): number {
-  if (brief.light.spectrum === undefined) return NaN;
-  const { wavelengths_nm, values } = spectrumOn(shelf, `brief "${brief.id}"`, brief.light.spectrum);
-  const onNodes = wavelengths_nm.map((wavelength_nm) => absorptionAtWavelength(absorption, wavelength_nm));
-  return spectrumMean({ wavelengths_nm, spectrum: values, values: onNodes });
-}
-
-function absorptionAtWavelength({ id, wavelengths_nm, values }: Spectrum, wavelength_nm: number): number {
-  return interpolateSpectrum({ nodes_nm: wavelengths_nm, values, wavelength_nm, where: `spectrum "${id}"` });
+/** What an initiator or absorber lacks for its light to be assessed, and what to do; undefined where nothing is missing. @internal */
+export function lightLack(ingredient: Ingredient): string | undefined {
+  if (ingredient.spectrum === undefined)
+    return "has no absorption spectrum; add one to spectra/ and name it in the ingredient";
+  const needed = ["molarMass_gmol", ...(ingredient.role === "photoinitiator" ? ["radicalsPerPhoton"] : [])];
+  const missing = needed.find((figure) => ingredient[figure as "molarMass_gmol"] === undefined);
+  return missing && `has no ${missing}; add it to the ingredient with its source and u`;
 }
 
 /** One factor moves a whole spectrum: what is uncertain is mostly its scale (concentration, path). */
-function scaleOf(id: string, { relativeU, source, status }: Spectrum): Uncertain {
-  return uncertain(`absorption of ${id}`, { value: 1, u: relativeU, source, status });
+function scaleOf(id: string, spectrum: Spectrum): Uncertain {
+  const { relativeU, source, status } = spectrum;
+  const scale = scales.get(spectrum) ?? { value: 1, u: relativeU, source, status };
+  scales.set(spectrum, scale);
+  return uncertain(`absorption of ${id}`, scale);
 }
 
-function lightWarnings({ formulation, brief, shelf }: Case): Warning[] {
+const scales = new WeakMap<Spectrum, SourcedValue>();
+
+/** What to know before using anything that rests on the absorption. @internal */
+export function lightWarnings({ formulation, brief, shelf }: Case): Warning[] {
   const warnings: Warning[] = [];
   if (componentsIn(formulation, ["photoinitiator"]).length === 0) {
     warnings.push({

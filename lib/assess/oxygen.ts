@@ -32,7 +32,7 @@ export type DeadZoneEstimate = (Property & { readonly neverCuresShare: number })
  *
  * Zero-order oxygen sink in light that decays with depth, oxygen fed through the film in series; oxygen diffuses as the
  * two-thirds power of viscosity allows. Steady state, no flow: layers shorter than a few induction times never reach it.
- * @throws InputError as {@link viscosityOf} and {@link penetrationDepthOf}; when the film is unknown.
+ * @throws InputError as {@link viscosityOf} and {@link opticalDepthOf}; when the film is unknown.
  * @source Models: {@link deadZone}, `diffusivityFromViscosity`, `filmPermeance`. Propagation: JCGM 101:2008.
  * @example
  * ```ts

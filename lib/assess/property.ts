@@ -57,6 +57,7 @@ export interface Drawn<P extends Property | NeverCures = Property> {
 
 export const propertyTitles: Readonly<Record<PropertyName, string>> = {
   viscosity_mPas: "viscosity at print temperature",
+  opticalDepth_um: "optical depth",
   penetrationDepth_um: "penetration depth",
   criticalExposure_mJcm2: "critical exposure",
   layerExposure_mJcm2: "exposure of a layer",

@@ -5,21 +5,21 @@ import { InputError } from "../door.js";
 import { diffusivityFromViscosity, filmPermeance, radicalGeneration } from "../models/oxygen.js";
 import { photonFlux } from "../models/light.js";
 import { filmOn } from "../recipe/shelf.js";
-import { componentsIn, constantOf, uncertain, type Case } from "./case.js";
+import { componentsIn, constantOf, irradianceOf, uncertain, type Case } from "./case.js";
 import type { Read } from "./doubt.js";
 import { lightModel } from "./light.js";
 import { viscosityModel } from "./viscosity.js";
 
 /** Radicals started at the window, and the oxygen figures that go with them. */
 export function radicalFigures(input: Case) {
-  const { brief, shelf } = input;
+  const { shelf } = input;
   if (componentsIn(input.formulation, ["photoinitiator"]).length === 0) {
     throw new InputError(
       `formulation "${input.formulation.id}": no photoinitiator in it; nothing would start the cure`,
     );
   }
   const light = lightModel(input);
-  const irradiance = uncertain("irradiance at the window", brief.light.irradiance_mWcm2);
+  const irradiance = irradianceOf(input);
   return (read: Read) => {
     const inResin = light(read);
     const irradiance_mWcm2 = read(irradiance);

@@ -1,4 +1,4 @@
-// What was measured corrects what was guessed: readings on the shelf become interactions and neat viscosities.
+// What was measured corrects what was guessed: readings on the shelf become interactions, neat viscosities and working curves.
 
 import { fitBlend, fitGrunbergNissan, type BlendFit } from "../models/viscosity.js";
 import type { Case } from "../assess/case.js";
@@ -8,6 +8,7 @@ import type { BlendReadings } from "../recipe/readings.js";
 import { withInteraction } from "../recipe/shelf.js";
 import type { AtTemperature } from "../recipe/sourced.js";
 import { correctOxygen } from "./calibrateOxygen.js";
+import { workingCurveFrom } from "./workingCurveFrom.js";
 
 /**
  * The interaction of two liquids from readings of their blends, by least squares in ln viscosity on a mass basis, neat
@@ -69,10 +70,11 @@ export function fitReadings({
 }
 
 /**
- * The case with every measured pair of liquids corrected: interactions fitted to the readings on the shelf, and neat
- * viscosities as read, in place of the typical ones. A lot's own figure stands. Readings on the window correct what is said of
- * oxygen ({@link correctOxygen}).
- * @throws InputError as {@link interactionFrom}.
+ * The case with what the shelf's measurements say in place of what was guessed: interactions fitted to the readings of blends,
+ * neat viscosities as read (a lot's own figure stands), and a working curve for each cure-depth series. A curve is used for its
+ * own resin and engine, carried over to other amounts of the same ingredients with a warning, and left aside for any other.
+ * Readings on the window correct what is said of oxygen ({@link correctOxygen}).
+ * @throws InputError as {@link interactionFrom}, {@link workingCurveFrom} and {@link correctOxygen}.
  * @example
  * ```ts
  * import { calibrate, interactionOn } from "resinwright";
@@ -100,9 +102,10 @@ export function calibrate<C extends Case>(work: C): C {
     ingredient: correct(one.ingredient),
   }));
   const ingredients = new Map([...shelf.ingredients].map(([id, ingredient]) => [id, correct(ingredient)]));
+  const workingCurves = shelf.cureDepths.map(workingCurveFrom);
   return correctOxygen({
     ...work,
-    shelf: { ...shelf, ingredients },
+    shelf: { ...shelf, ingredients, workingCurves },
     formulation: { ...work.formulation, components },
   });
 }

@@ -330,4 +330,5 @@ const figureFields: readonly (keyof IngredientFigures)[] = [
   "viscosityActivation_K",
   "homopolymerGlassTransition_C",
   "radicalsPerPhoton",
+  "solubility_pct",
 ];

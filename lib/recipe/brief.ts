@@ -10,6 +10,7 @@ import { idSchema, sourced } from "./sourced.js";
 /** The properties a target can be set on; each is assessed for a formulation under a brief. */
 export type PropertyName =
   | "viscosity_mPas"
+  | "opticalDepth_um"
   | "penetrationDepth_um"
   | "criticalExposure_mJcm2"
   | "layerExposure_mJcm2"

@@ -21,6 +21,8 @@ export interface ResinConstants {
   readonly oxygenCapture_m3mols: SourcedValue;
   /** Double-bond conversion at which the resin holds as a solid. */
   readonly gelConversion: SourcedValue;
+  /** Slope of a measured working curve over the slope that the absorption gives it. */
+  readonly slopeFactor: SourcedValue;
   /** Napierian absorption of the resin without initiator and absorber. */
   readonly backgroundAbsorption_percm: SourcedValue;
   /** Grunberg–Nissan G of a pair of liquids that nobody has measured. */
@@ -55,6 +57,7 @@ const constantsSchema: z.ZodType<ResinConstants> = strict({
   termination_m3mols: sourced("termination_m3mols", { above: 0 }),
   oxygenCapture_m3mols: sourced("oxygenCapture_m3mols", { above: 0 }),
   gelConversion: sourced("gelConversion", { above: 0, max: 0.9 }),
+  slopeFactor: sourced("slopeFactor", { above: 0, max: 10 }),
   backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { min: 0 }),
   unmeasuredInteraction: sourced("unmeasuredInteraction"),
   packingLimit: sourced("packingLimit", { above: 0.1, max: 0.9 }),

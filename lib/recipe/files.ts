@@ -2,9 +2,10 @@
 
 import { existsSync, readdirSync, readFileSync } from "node:fs";
 import { dirname, join, relative, resolve } from "node:path";
-import { InputError } from "../door.js";
+import { InputError, unknownName } from "../door.js";
 import { readBrief, type Brief } from "./brief.js";
 import { readConstants, type ResinConstants } from "./constants.js";
+import { readCureDepths } from "./cureDepths.js";
 import { parseJson, type JsonDocument } from "./document.js";
 import { readFilm } from "./film.js";
 import { formulate, type Formulation } from "./formulation.js";
@@ -15,7 +16,7 @@ import type { Shelf } from "./shelf.js";
 import { readBlendReadings } from "./readings.js";
 import { readSpectrum } from "./spectrum.js";
 import { readNumberTable } from "./table.js";
-import { holdsWindowReadings, readWindowReadings } from "./windowReadings.js";
+import { readWindowReadings } from "./windowReadings.js";
 
 /** A brief with the formulation it starts from and the shelf both stand on. */
 export interface Workbench {
@@ -82,6 +83,8 @@ export function readShelf(folders: readonly string[]): Shelf {
     interactions: [...interactions.values()],
     readings: parts.flatMap((part) => part.readings),
     windowReadings: parts.flatMap((part) => part.windowReadings),
+    cureDepths: parts.flatMap((part) => part.cureDepths),
+    workingCurves: [],
     constants,
   };
 }
@@ -142,15 +145,15 @@ function readShelfFolder(folder: string) {
   if (!existsSync(folder))
     throw new InputError(`${shown(folder)}: this shelf folder does not exist; correct "shelf" in the brief`);
   const constantsFile = join(folder, "constants", "resin.json");
-  const measurements = documentsIn(folder, "measurements");
   return {
     ingredients: byId(folder, "ingredients", readIngredient),
     lots: byId(folder, "lots", readLot),
     spectra: byId(folder, "spectra", readSpectrum),
     films: byId(folder, "films", readFilm),
     interactions: documentsIn(folder, "interactions").map(readInteraction),
-    readings: measurements.filter((one) => !holdsWindowReadings(one)).map(readBlendReadings),
-    windowReadings: measurements.filter(holdsWindowReadings).map(readWindowReadings),
+    readings: measurementsIn(folder, "blend viscosities").map(readBlendReadings),
+    cureDepths: measurementsIn(folder, "cure depths").map(readCureDepths),
+    windowReadings: measurementsIn(folder, "window").map(readWindowReadings),
     constants: existsSync(constantsFile)
       ? readConstants(readJson(constantsFile))
       : (undefined as ResinConstants | undefined),
@@ -173,6 +176,17 @@ function byId<T extends { id: string }>(
     found.set(one.id, one);
   }
   return found;
+}
+
+const measurementKinds = ["blend viscosities", "cure depths", "window"] as const;
+
+/** Measurements of one kind; a file that does not say its kind holds viscosities of blends. */
+function measurementsIn(folder: string, kind: (typeof measurementKinds)[number]): JsonDocument[] {
+  return documentsIn(folder, "measurements").filter(({ value, where }) => {
+    const { kind: given = "blend viscosities" } = (value ?? {}) as { kind?: unknown };
+    if ((measurementKinds as readonly unknown[]).includes(given)) return given === kind;
+    throw new InputError(unknownName(where, "kind of measurement", String(given), measurementKinds));
+  });
 }
 
 /** The JSON documents of one folder of a shelf, by file name; none where it does not exist. @internal */

@@ -49,6 +49,8 @@ export interface IngredientFigures {
   readonly homopolymerGlassTransition_C?: SourcedValue;
   /** Chain-starting radicals per photon the initiator absorbs. */
   readonly radicalsPerPhoton?: SourcedValue;
+  /** The most that stays dissolved in a liquid acrylate resin at room temperature, percent of the mass. */
+  readonly solubility_pct?: SourcedValue;
 }
 
 /** One substance or generic oligomer on the shelf. */
@@ -128,6 +130,7 @@ const figureShape = {
   refractiveIndex: sourcedAtTemperature("refractiveIndex", { min: 1, max: 4 }).optional(),
   homopolymerGlassTransition_C: sourced("homopolymerGlassTransition_C", { above: -150, max: 400 }).optional(),
   radicalsPerPhoton: sourced("radicalsPerPhoton", { above: 0, max: 2 }).optional(),
+  solubility_pct: sourced("solubility_pct", { above: 0, max: 100 }).optional(),
 };
 
 const ingredientSchema: z.ZodType<Ingredient> = strict({

@@ -6,6 +6,7 @@ import type { PropertyName } from "./brief.js";
 /** Every property that is assessed, in the order tables show them. */
 export const propertyNames: readonly PropertyName[] = [
   "viscosity_mPas",
+  "opticalDepth_um",
   "penetrationDepth_um",
   "criticalExposure_mJcm2",
   "layerExposure_mJcm2",

@@ -1,7 +1,6 @@
 // Quantities at the door: people write "450 cP" or "77 °F", mathjs reads them once, and inside there are only numbers in the
 // unit a field's name ends in.
 
-/// <reference path="./mathjs.d.ts" />
 import type { Unit } from "mathjs";
 // The same package in one file: loading its thousand modules takes a second, and every program of this library waits for it.
 import mathjs from "mathjs/lib/browser/math.js";

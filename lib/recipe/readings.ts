@@ -9,6 +9,7 @@ import { idSchema, sourceText, statusSchema } from "./sourced.js";
 /** Viscosities of blends of two liquids at one temperature, both neat liquids among them. */
 export interface BlendReadings {
   readonly id: string;
+  readonly kind?: "blend viscosities";
   /** The two liquids; mass fractions are of the first. */
   readonly pair: readonly [string, string];
   readonly temperature_C: number;
@@ -55,6 +56,7 @@ export function readBlendReadings(document: JsonDocument): BlendReadings {
 
 const readingsSchema: z.ZodType<BlendReadings> = strict({
   id: idSchema,
+  kind: z.literal("blend viscosities").optional(),
   pair: z.tuple([idSchema, idSchema]),
   temperature_C: quantity("temperature_C", { above: -100, max: 200 }),
   relativeU: z.number().min(0).max(1),

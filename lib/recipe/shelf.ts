@@ -2,6 +2,7 @@
 
 import { InputError, unknownName } from "../door.js";
 import type { ResinConstants } from "./constants.js";
+import type { CureDepthSeries, MeasuredWorkingCurve } from "./cureDepths.js";
 import type { Film } from "./film.js";
 import type { Ingredient, Lot } from "./ingredient.js";
 import type { Interaction } from "./interaction.js";
@@ -19,6 +20,9 @@ export interface Shelf {
   readonly interactions: readonly Interaction[];
   readonly readings: readonly BlendReadings[];
   readonly windowReadings: readonly WindowReadings[];
+  readonly cureDepths: readonly CureDepthSeries[];
+  /** What cure-depth series say once they are fitted; empty until then. */
+  readonly workingCurves: readonly MeasuredWorkingCurve[];
   readonly constants: ResinConstants;
 }
 

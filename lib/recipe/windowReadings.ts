@@ -2,7 +2,7 @@
 // liquid. They say what the oxygen models guess: how many radicals the light starts, and how fast oxygen moves.
 
 import { z } from "zod";
-import { InputError, show, unknownName } from "../door.js";
+import { InputError } from "../door.js";
 import type { SourceStatus } from "../result.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import { idSchema, sourceText, statusSchema } from "./sourced.js";
@@ -46,14 +46,6 @@ export interface WindowReadings {
   readonly uncuredLayers: readonly UncuredReading[];
   readonly source: string;
   readonly status: SourceStatus;
-}
-
-/** Whether a document of `measurements/` says of itself that it holds window readings. @internal */
-export function holdsWindowReadings({ value, where }: JsonDocument): boolean {
-  const kind = (value as { kind?: unknown } | null)?.kind;
-  if (kind === undefined || kind === "window") return kind === "window";
-  const given = typeof kind === "string" ? kind : show(kind);
-  throw new InputError(unknownName(where, "kind", given, ["window"]));
 }
 
 /**

@@ -1,17 +1,17 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { penetrationDepthOf } from "../../lib/assess/light.js";
+import { opticalDepthOf } from "../../lib/assess/light.js";
 import type { Brief } from "../../lib/recipe/brief.js";
 import { brief, formulationOf, shelf, sure } from "../fixtures.js";
 
 const depth = (parts: Record<string, number>, under: Brief = brief, on = shelf) =>
-  penetrationDepthOf({ formulation: formulationOf(parts), brief: under, shelf: on, draws: 200 });
+  opticalDepthOf({ formulation: formulationOf(parts), brief: under, shelf: on, draws: 200 });
 const nominal = (value: number, u = 0): Brief => ({
   ...brief,
   light: { ...brief.light, spectrum: undefined, wavelength_nm: sure(value, u) },
 });
 
-describe("penetrationDepthOf", () => {
+describe("opticalDepthOf", () => {
   // 1 % of 400 g/mol in a resin of density 1 is 0.025 mol/L; 500 L/(mol cm) decadic; background 1 per cm Napierian.
   it("is one over the Napierian absorption of initiator and resin", () => {
     const alpha_percm = Math.LN10 * 500 * 0.025 + 1;
@@ -62,7 +62,7 @@ describe("penetrationDepthOf", () => {
       const [liquid, initiator] = formulation.components;
       const stripped = { ...initiator!, ingredient: { ...initiator!.ingredient, [field]: undefined } };
       return () =>
-        penetrationDepthOf({
+        opticalDepthOf({
           formulation: { ...formulation, components: [liquid!, stripped] },
           brief,
           shelf,

@@ -62,6 +62,7 @@ describe("files", () => {
     ["refractiveIndex", 43, 65.2788, 5e-5],
     ["homopolymerGlassTransition_C", 34, 2359, 0.5],
     ["radicalsPerPhoton", 6, 5.2, 0.05],
+    ["solubility_pct", 5, 40.3, 0.05],
   ])("%s: %i figures with the sum %f", (figure, count, sum, tolerance) => {
     const values = ingredients.flatMap((one) => one[figure]?.value ?? []);
     expect(values).toHaveLength(count);
@@ -295,9 +296,9 @@ const knownWords = new Set(
   [
     "About Absorbs Alpha Amorphous Below Beware Bleaches Consider Corrosive Density Do Exposure Fluoresces From",
     "Highly It Its Keep Known Lets Made May Melts Needs No Radicals Serious Skin Suspected The Toxic Treat Usually Works",
-    "Alentiev Anseth Bowman Chang Chen Chignell Coretsopoulos Decker Dendukuri Einstein Jenkins Iersel Kruif Russel Vrij Ferracane G P Nordin Gong Gou Iida Jasim Mansour",
+    "Alentiev Anseth Bowman Chang Chen Chignell Coretsopoulos Decker Dendukuri Einstein Jenkins Iersel Kruif Russel Vrij Ferracane G P Kolibaba Nordin Gong Gou Iida Jasim Mansour",
     "Mark Merkel Peppas Perry Pinnau Prahl Prohaska Robb Scranton Sideridou Toy Al",
-    "A Acta Adv Appl Bull CRC Chem Chemical Chemistry Data Dent Eng Engineers Front Handbook Int J Macromolecules Mater",
+    "A Acta Addit Adv Appl Bull CRC Chem Chemical Chemistry Data Dent Eng Engineers Front Handbook Int J Macromolecules Manuf Mater",
     "Physics Polym Polymer Pure R RSC Sci Table Thermochim Thermophys C5RA23855B PhotochemCAD HomoPolymer",
     "Annex C Carc Court Delegated EC EU General H319 H334 H335 H360Fd IARC ICSC L MIT Regulation VI",
     "B BAPO BBOT C2 C3 H-benzotriazol-2-yl HMPP I K N N-dimethylacrylamide N-vinyl-2-pyrrolidone Pa Sudan T TMPTA TPO",

@@ -53,24 +53,24 @@ export function absorptionCoefficient(input: {
  *
  * - `napierianAbsorption_percm`: above 0, 1/cm.
  *
- * Dp = 1 / alpha. This is the optical depth; the slope of a working curve is a measurement of its own and may differ.
+ * 1 / alpha. The slope of a working curve is a measurement of its own and may differ.
  * @throws InputError when the absorption is not above 0.
  * @source IUPAC Gold Book, entry A00037 (definition of alpha).
  * @example
  * ```ts
- * import { penetrationDepth } from "resinwright";
- * penetrationDepth({ napierianAbsorption_percm: 100 }); // → 100
+ * import { opticalDepth } from "resinwright";
+ * opticalDepth({ napierianAbsorption_percm: 100 }); // → 100
  * ```
  */
-export function penetrationDepth(input: { readonly napierianAbsorption_percm: number }): number {
-  const where = "penetrationDepth";
+export function opticalDepth(input: { readonly napierianAbsorption_percm: number }): number {
+  const where = "opticalDepth";
   checkNumbers(where, input, {
     napierianAbsorption_percm: {
       ...positive,
-      advice: "without absorption light has no penetration depth; include the background of the resin",
+      advice: "without absorption light has no depth; include the background of the resin",
     },
   });
-  return finite(where, "the penetration depth in um", um_per_cm / input.napierianAbsorption_percm);
+  return finite(where, "the optical depth in um", um_per_cm / input.napierianAbsorption_percm);
 }
 
 /**

@@ -115,7 +115,7 @@ export function localOpticalDepth(input: LitResin & { readonly depth_um: number 
 /** The rule for a resin in which light has a depth. @internal */
 export const absorbing = {
   ...positive,
-  advice: "without absorption light has no penetration depth; include the background of the resin",
+  advice: "without absorption light has no depth; include the background of the resin",
 };
 
 /** Refuses a resin whose absorption does not fit its engine. @internal */

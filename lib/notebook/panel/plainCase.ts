@@ -1,7 +1,9 @@
 // A case as plain data that survives JSON, with no more of the shelf than this formulation and this brief name.
 
 import type { Case } from "../../assess/case.js";
+import type { OxygenCorrection } from "../../assess/windowCorrection.js";
 import type { Brief } from "../../recipe/brief.js";
+import type { MeasuredWorkingCurve } from "../../recipe/cureDepths.js";
 import type { Film } from "../../recipe/film.js";
 import type { Formulation } from "../../recipe/formulation.js";
 import type { Interaction } from "../../recipe/interaction.js";
@@ -15,11 +17,13 @@ export interface PlainCase {
   readonly spectra: readonly Spectrum[];
   readonly films: readonly Film[];
   readonly interactions: readonly Interaction[];
+  readonly workingCurves: readonly MeasuredWorkingCurve[];
   readonly constants: ResinConstants;
+  readonly oxygenCorrection?: Omit<OxygenCorrection, "takenOn"> & { readonly takenOn: PlainCase };
 }
 
 /** A case as plain data. Where its files lie stays behind: a page says nothing of the machine it was made on. */
-export function plainCase({ formulation, brief, shelf }: Case): PlainCase {
+export function plainCase({ formulation, brief, shelf, oxygenCorrection }: Case): PlainCase {
   const ids = formulation.components.map(({ ingredient }) => ingredient.id);
   const spectra = [
     brief.light.spectrum,
@@ -31,12 +35,16 @@ export function plainCase({ formulation, brief, shelf }: Case): PlainCase {
     spectra: [...shelf.spectra.values()].filter(({ id }) => spectra.includes(id)),
     films: [...shelf.films.values()].filter(({ id }) => id === brief.window.film),
     interactions: shelf.interactions.filter(({ pair }) => pair.every((id) => ids.includes(id))),
+    workingCurves: shelf.workingCurves,
     constants: shelf.constants,
+    ...(oxygenCorrection && {
+      oxygenCorrection: { ...oxygenCorrection, takenOn: plainCase(oxygenCorrection.takenOn) },
+    }),
   };
 }
 
 /** The case again. Its shelf holds what the formulation and the brief name and nothing else. */
-export function caseOf({ formulation, brief, spectra, films, interactions, constants }: PlainCase): Case {
+export function caseOf({ formulation, brief, oxygenCorrection, ...plain }: PlainCase): Case {
   const byId = <T extends { readonly id: string }>(list: readonly T[]) =>
     new Map(list.map((one) => [one.id, one]));
   return {
@@ -45,11 +53,17 @@ export function caseOf({ formulation, brief, spectra, films, interactions, const
     shelf: {
       ingredients: byId(formulation.components.map(({ ingredient }) => ingredient)),
       lots: new Map(),
-      spectra: byId(spectra),
-      films: byId(films),
-      interactions,
+      spectra: byId(plain.spectra),
+      films: byId(plain.films),
+      interactions: plain.interactions,
       readings: [],
-      constants,
+      windowReadings: [],
+      cureDepths: [],
+      workingCurves: plain.workingCurves,
+      constants: plain.constants,
     },
+    ...(oxygenCorrection && {
+      oxygenCorrection: { ...oxygenCorrection, takenOn: caseOf(oxygenCorrection.takenOn) },
+    }),
   };
 }

@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { absorberForCureDepth, absorberForOpticalDepth, broadCureDepth } from "../../../lib/models/cure.js";
-import { absorptionCoefficient, lightEngine, penetrationDepth } from "../../../lib/models/light.js";
+import { absorptionCoefficient, lightEngine, opticalDepth } from "../../../lib/models/light.js";
 
 const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
 
@@ -16,7 +16,7 @@ describe("absorberForOpticalDepth", () => {
           solubility_molL: 1,
         });
         const depth = (concentration_molL: number): number =>
-          penetrationDepth({
+          opticalDepth({
             napierianAbsorption_percm: absorptionCoefficient({
               absorbers: [{ molarAbsorption_Lmolcm: eps, concentration_molL }],
               background_percm: other,

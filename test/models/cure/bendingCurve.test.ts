@@ -118,7 +118,7 @@ describe("the bending working curve", () => {
   it.each([
     [
       () => broadCureDepth({ ...resin, napierianAbsorptions_percm: [200, 0], exposure_mJcm2: 9 }),
-      "broadCureDepth: napierianAbsorptions_percm[1] is 0; it must be a finite number above 0; without absorption light has no penetration depth; include the background of the resin",
+      "broadCureDepth: napierianAbsorptions_percm[1] is 0; it must be a finite number above 0; without absorption light has no depth; include the background of the resin",
     ],
     [
       () => broadCureDepth({ ...resin, exposure_mJcm2: NaN }),
@@ -189,7 +189,7 @@ describe("broadCureDepthMap", () => {
     ],
     [
       { backgrounds_percm: wavelengths_nm.map(() => 0) },
-      "broadCureDepthMap: backgrounds_percm[0] is 0; it must be a finite number above 0; without absorption light has no penetration depth; include the background of the resin",
+      "broadCureDepthMap: backgrounds_percm[0] is 0; it must be a finite number above 0; without absorption light has no depth; include the background of the resin",
     ],
     [
       { absorberLevels_molL: [0, -1] },

@@ -5,7 +5,7 @@ import {
   absorptionCoefficient,
   molarAbsorptionFromMassAbsorption,
   molarAbsorptionFromSpecificAbsorbance,
-  penetrationDepth,
+  opticalDepth,
   transmittedFraction,
 } from "../../../lib/models/light.js";
 
@@ -43,7 +43,7 @@ describe("absorption, identities of base and unit", () => {
   it("has 1/e left after one penetration depth, a tenth after ln 10 of them, all of it at the window", () => {
     fc.assert(
       fc.property(fc.double({ min: 0.1, max: 1e5, noNaN: true }), (napierianAbsorption_percm) => {
-        const Dp = penetrationDepth({ napierianAbsorption_percm });
+        const Dp = opticalDepth({ napierianAbsorption_percm });
         const left = (depth_um: number): number =>
           transmittedFraction({ napierianAbsorption_percm, depth_um });
         expect(left(Dp)).toBeCloseTo(Math.exp(-1), 12);
@@ -57,10 +57,7 @@ describe("absorption, identities of base and unit", () => {
   it("has a penetration depth of 0.434294 over the decadic absorbance per um", () => {
     const decadic_perum = 0.02;
     const napierianAbsorption_percm = decadic_perum * Math.LN10 * 1e4;
-    expect(penetrationDepth({ napierianAbsorption_percm }) / (Math.LOG10E / decadic_perum)).toBeCloseTo(
-      1,
-      12,
-    );
+    expect(opticalDepth({ napierianAbsorption_percm }) / (Math.LOG10E / decadic_perum)).toBeCloseTo(1, 12);
   });
 
   it("reads mL/(g cm) and A(1 %, 1 cm) as the same substance", () => {
@@ -150,9 +147,9 @@ describe("absorption, refusals", () => {
       "absorptionCoefficient: background_percm is -1; it must be a finite number of at least 0",
     ],
     [
-      () => penetrationDepth({ napierianAbsorption_percm: 0 }),
-      "penetrationDepth: napierianAbsorption_percm is 0; it must be a finite number above 0; " +
-        "without absorption light has no penetration depth; include the background of the resin",
+      () => opticalDepth({ napierianAbsorption_percm: 0 }),
+      "opticalDepth: napierianAbsorption_percm is 0; it must be a finite number above 0; " +
+        "without absorption light has no depth; include the background of the resin",
     ],
     [
       () => transmittedFraction({ napierianAbsorption_percm: 1, depth_um: -5 }),

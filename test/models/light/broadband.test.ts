@@ -6,7 +6,7 @@ import {
   broadTransmittedFraction,
   lightEngine,
   localOpticalDepth,
-  penetrationDepth,
+  opticalDepth,
   transmittedFraction,
 } from "../../../lib/models/light.js";
 import { filmThickness_um, filmUnder } from "./measuredFilms.js";
@@ -87,10 +87,7 @@ describe("light of a broad engine", () => {
       const light = { engine, napierianAbsorptions_percm, depth_um };
       const one = transmittedFraction({ napierianAbsorption_percm: alone, depth_um });
       expect(broadTransmittedFraction(light) / one).toBeCloseTo(1, 9);
-      expect(localOpticalDepth(light) / penetrationDepth({ napierianAbsorption_percm: alone })).toBeCloseTo(
-        1,
-        9,
-      );
+      expect(localOpticalDepth(light) / opticalDepth({ napierianAbsorption_percm: alone })).toBeCloseTo(1, 9);
     }
   });
 
@@ -140,7 +137,7 @@ describe("light of a broad engine", () => {
     expect(broadTransmittedFraction(resin)).toBe(1);
     expect(() => localOpticalDepth(resin)).toThrow(
       "localOpticalDepth: napierianAbsorptions_percm[0] is 0; it must be a finite number above 0; " +
-        "without absorption light has no penetration depth; include the background of the resin",
+        "without absorption light has no depth; include the background of the resin",
     );
   });
 

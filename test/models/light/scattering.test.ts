@@ -1,9 +1,5 @@
 import { describe, expect, it } from "vitest";
-import {
-  filledPenetrationDepth,
-  penetrationDepth,
-  scatteringCoefficient,
-} from "../../../lib/models/light.js";
+import { filledPenetrationDepth, opticalDepth, scatteringCoefficient } from "../../../lib/models/light.js";
 
 // Round numbers for checking, not a material.
 const resin = {
@@ -30,7 +26,7 @@ describe("scattering", () => {
 
   it("leaves the absorption alone when the filler is index-matched, and adds to it otherwise", () => {
     const matched = depth({ particleRefractiveIndex: 1.5 }, 80);
-    expect(matched).toBe(penetrationDepth({ napierianAbsorption_percm: 80 }));
+    expect(matched).toBe(opticalDepth({ napierianAbsorption_percm: 80 }));
     expect(1 / depth({}, 80)).toBeCloseTo(1 / depth({}) + 1 / matched, 12);
     expect(scatteringCoefficient({ ...resin, particleRefractiveIndex: 1.5 })).toBe(0);
   });

@@ -1,0 +1,147 @@
+// A level of initiator or absorber as an answer: found, more than dissolves, kept out by the brief, impossible, or unknown for
+// want of data; each with its reason in words. And what both kinds of search share.
+
+import { InputError, unknownName } from "../door.js";
+import { avoidReasons } from "../assess/avoided.js";
+import { figureOf, type Case } from "../assess/case.js";
+import type { Read } from "../assess/doubt.js";
+import { lightLack, lightModel } from "../assess/light.js";
+import type { Formulation } from "../recipe/formulation.js";
+import type { Ingredient } from "../recipe/ingredient.js";
+import { ingredientOn } from "../recipe/shelf.js";
+import type { Interval, UsedSource, Warning } from "../result.js";
+
+/** A level that does what is wanted, or would if it dissolved. */
+export interface LevelFound {
+  readonly ingredient: string;
+  readonly outcome: "reached" | "above solubility";
+  readonly reason: string;
+  /** Of the whole resin; an end at 0 or at 0.1, the most that is tried, means that some draws go beyond it. */
+  readonly massFraction: Interval;
+  /** Share of the draws, 0 to 1, in which such a level exists and dissolves. */
+  readonly reachedShare: number;
+  readonly warnings: readonly Warning[];
+  readonly sources: readonly UsedSource[];
+}
+
+/** Why there is no level to give: the brief avoids it, no level does it, or its data do not allow an answer. */
+export interface LevelRefused {
+  readonly ingredient: string;
+  readonly outcome: "avoided" | "impossible" | "unknown";
+  readonly reason: string;
+  readonly warnings: readonly Warning[];
+  readonly sources: readonly UsedSource[];
+}
+
+export type LevelAnswer = LevelFound | LevelRefused;
+
+/** Nobody puts more than a tenth of the mass of an initiator or absorber into a resin (common practice). @internal */
+export const MOST_TRIED = 0.1;
+
+/** A search for a level costs many runs of the model a draw. @internal */
+export const SEARCH_DRAWS = 200;
+
+/** The ingredient to search a level of: the one in the formulation (its lot counts), otherwise the one on the shelf. @internal */
+export function soughtIngredient(
+  { formulation, shelf }: Case,
+  role: "absorber" | "photoinitiator",
+  id: string,
+): Ingredient {
+  const where = `formulation "${formulation.id}"`;
+  const present = formulation.components.find(({ ingredient }) => ingredient.id === id)?.ingredient;
+  const ingredient = present ?? ingredientOn(shelf, where, id);
+  if (ingredient.role === role) return ingredient;
+  const known = [...shelf.ingredients.values()].filter((one) => one.role === role).map((one) => one.id);
+  throw new InputError(unknownName(where, role, id, known));
+}
+
+/** The formulation with one ingredient at a level in place of all of its role; the others keep their proportions. @internal */
+export function withOnly(
+  formulation: Formulation,
+  ingredient: Ingredient,
+  massFraction: number,
+): Formulation {
+  const others = formulation.components.filter((one) => one.ingredient.role !== ingredient.role);
+  const rest = others.reduce((sum, one) => sum + one.massFraction, 0);
+  const scaled = others.map((one) => ({
+    ...one,
+    massFraction: (one.massFraction * (1 - massFraction)) / rest,
+  }));
+  return { ...formulation, components: [...scaled, { ingredient, massFraction }] };
+}
+
+/** Why an ingredient cannot be searched at all; undefined where it can. @internal */
+export function refusal(input: Case, ingredient: Ingredient): LevelRefused | undefined {
+  const { id } = ingredient;
+  const refused = (outcome: LevelRefused["outcome"], reason: string): LevelRefused => ({
+    ingredient: id,
+    outcome,
+    reason,
+    warnings: [],
+    sources: [],
+  });
+  const [avoid] = avoidReasons(input.brief, ingredient);
+  if (avoid !== undefined) return refused("avoided", `The brief avoids ${id}: ${avoid}.`);
+  const lack = lightLack(ingredient);
+  if (lack !== undefined) return refused("unknown", `${id} ${lack}.`);
+  try {
+    lightModel({ ...input, formulation: withOnly(input.formulation, ingredient, 0.001) })(
+      ({ value }) => value,
+    );
+  } catch (error) {
+    if (error instanceof InputError) return refused("unknown", `${error.message}.`);
+    throw error;
+  }
+  return undefined;
+}
+
+/** Solubility as a fraction of the mass in the present draw; undefined where nobody has stated one. @internal */
+export function solubilityModel(ingredient: Ingredient): ((read: Read) => number) | undefined {
+  const solubility = figureOf(ingredient, "solubility_pct");
+  return solubility && ((read) => read(solubility) / 100);
+}
+
+/** What to know about a candidate before weighing it. @internal */
+export function candidateWarnings({ brief }: Case, ingredient: Ingredient): Warning[] {
+  const { id } = ingredient;
+  const warnings: Warning[] = [];
+  if (ingredient.solubility_pct === undefined) {
+    warnings.push({
+      code: "solubility-unknown",
+      message: `How much ${id} dissolves is not on the shelf. Stir the level in, filter, leave it cold for a week and look for crystals; then add solubility_pct.`,
+    });
+  }
+  if (ingredient.hazards === undefined && brief.avoid.some(({ hazard }) => hazard !== undefined)) {
+    warnings.push({
+      code: "hazards-unchecked",
+      message: `No hazard statement of ${id} is on the shelf because nobody has looked, so whether the brief avoids it is not known. Read its safety data sheet first.`,
+    });
+  }
+  return warnings;
+}
+
+/** Percent of the mass, as a sentence says it. @internal */
+export function percentText(massFraction: number): string {
+  return `${shortText(100 * massFraction)} %`;
+}
+
+/** A number as a sentence says it. @internal */
+export function shortText(value: number): string {
+  return String(Number(value.toPrecision(3)));
+}
+
+const outcomeOrder: readonly LevelAnswer["outcome"][] = [
+  "reached",
+  "above solubility",
+  "unknown",
+  "impossible",
+  "avoided",
+];
+
+/** Answers for a table: what can be done first, least needed first. @internal */
+export function inOrder<A extends LevelAnswer>(answers: readonly A[]): A[] {
+  const amount = (one: LevelAnswer): number => ("massFraction" in one ? one.massFraction.value : 0);
+  return [...answers].sort(
+    (a, b) => outcomeOrder.indexOf(a.outcome) - outcomeOrder.indexOf(b.outcome) || amount(a) - amount(b),
+  );
+}
