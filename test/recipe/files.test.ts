@@ -65,7 +65,7 @@ describe("readShelf", () => {
     const { readings, windowReadings } = base();
     expect([readings, windowReadings.map(({ id }) => id)]).toEqual([[], ["w"]]);
     write("base/measurements/w.json", { ...window, kind: "windw" });
-    expect(base).toThrow('w.json: unknown kind "windw"; did you mean "window"?');
+    expect(base).toThrow('w.json: unknown kind of measurement "windw"; did you mean "window"?');
   });
 
   it("refuses two files with one id, a missing folder, missing constants, a wrong check digit", () => {
