@@ -1,6 +1,5 @@
 // Tables as text: columns aligned, long cells wrapped, no wider than the terminal unless a single word is.
 
-import { stripVTControlCharacters } from "node:util";
 import type { TableContent } from "../notebook/content.js";
 import { cellText } from "../notebook/digits.js";
 
@@ -34,7 +33,7 @@ export function paragraph(text: string, width: number): string {
 function lines(blocks: readonly (readonly string[])[]): string {
   return blocks
     .flat()
-    .map((line) => `${line.trimEnd()}\n`)
+    .map((line) => `${line}\n`)
     .join("");
 }
 
@@ -57,7 +56,8 @@ function rowTexts({ cells, aligns, width }: Cells): string[][] {
           const text = cell[k] ?? "";
           return aligns[i] === "right" ? text.padStart(widths[i]!) : text.padEnd(widths[i]!);
         })
-        .join(" ".repeat(gap)),
+        .join(" ".repeat(gap))
+        .trimEnd(),
     );
   });
 }
@@ -103,7 +103,5 @@ function wrapped(text: string, width: number): string[] {
 
 /** What a file says must not move the cursor. */
 function oneLine(text: string): string {
-  return stripVTControlCharacters(text)
-    .replace(/[\s\p{Cc}]+/gu, " ")
-    .trim();
+  return text.replace(/[\s\p{Cc}]+/gu, " ").trim();
 }
