@@ -4,7 +4,7 @@ import { dirname, join, resolve } from "node:path";
 import { describe, expect, it } from "vitest";
 import { assess } from "../../lib/assess/assess.js";
 import { runCommand } from "../../lib/command/run.js";
-import { appendRecord } from "../../lib/lab/record.js";
+import { appendRecord, type NewRecord } from "../../lib/lab/record.js";
 import { readWorkbench } from "../../lib/recipe/files.js";
 import { oneOfEach } from "../lab/record/fixtures.js";
 
@@ -52,6 +52,16 @@ describe("the README", () => {
         });
         expect({ call, code, errors }).toEqual({ call, code: 0, errors: [] });
       }
+    } finally {
+      rmSync(folder, { recursive: true });
+    }
+  });
+
+  it("gives a record that can be appended as it stands there", () => {
+    const [, , record] = [...readme.matchAll(/```json\n([^]*?)```/g)].map(([, text]) => text!);
+    const folder = mkdtempSync(join(tmpdir(), "readme-"));
+    try {
+      appendRecord({ folder, record: JSON.parse(record!) as NewRecord });
     } finally {
       rmSync(folder, { recursive: true });
     }
