@@ -61,6 +61,11 @@ describe("tableText", () => {
     expect(lines.slice(3, 5)).toEqual(["012345678901234567890123456789012  short", "3456789"]);
   });
 
+  it("takes more rows than a call can have arguments", () => {
+    const rows = Array.from({ length: 20_000 }, (_, i) => ({ record: i, words: "a b c d e f g h i j k l" }));
+    expect(tableText(tableOf({ caption: "x", rows }), 20).split("\n").length).toBeGreaterThan(20_000);
+  });
+
   it("lets no text of a file move the cursor or break the lines", () => {
     const hostile = tableOf({ caption: "a\u001b[2Jb", rows: [{ title: "one\n\n\u001b[31mred\u0007 end" }] });
     expect(tableText(hostile, 80)).toBe("a [2Jb\ntitle\n───────────────\none [31mred end\n");
