@@ -169,7 +169,7 @@ function deadZoneWarnings({ brief, oxygenCorrection }: Case, neverCuresShare: nu
   if (neverCuresShare > 0) {
     warnings.push({
       code: "may-never-cure",
-      message: `In ${(100 * neverCuresShare).toPrecision(2)} % of the draws this light never cures this resin at this window: oxygen comes in faster than it is burnt. More light, more initiator or a tighter film cures it.`,
+      message: `In ${Number((100 * neverCuresShare).toPrecision(2))} % of the draws this light never cures this resin at this window: oxygen comes in faster than it is burnt. More light, more initiator or a tighter film cures it.`,
     });
   }
   if (brief.window.gasOxygenFraction === 0) {

@@ -7,11 +7,10 @@ import { runCommand } from "./run.js";
 /** Where the output is no terminal, lines are as wide as this. */
 const WIDTH_IN_FILES = 100;
 
-// Whoever reads may stop early, as `head` does; there is nobody left to tell then.
+// Whoever reads may stop early, as `head` does; the answer and its exit code stand all the same.
 for (const stream of [process.stdout, process.stderr]) {
   stream.on("error", (error: NodeJS.ErrnoException) => {
     if (error.code !== "EPIPE") throw error;
-    process.exit();
   });
 }
 

@@ -1,6 +1,5 @@
 // Tables as text: columns aligned, long cells wrapped, no wider than the terminal unless a single word is.
 
-import { stripVTControlCharacters } from "node:util";
 import type { TableContent } from "../notebook/content.js";
 import { cellText } from "../notebook/digits.js";
 
@@ -15,8 +14,8 @@ export function tableText({ caption, columns, rows }: TableContent, width: numbe
   const head = columns.map(({ name, unit }) => (unit === undefined ? name : `${name} (${unit})`));
   const cells = [head, ...rows.map((row) => row.map(cellText))];
   const [first, ...others] = rowTexts({ cells, aligns: columns.map(({ align }) => align), width });
-  const longest = Math.max(...[first!, ...others].flat().map((line) => line.length));
-  return lines([wrapped(caption, width), first!, ["─".repeat(longest)], ...others]);
+  const rule = "─".repeat(longest([first!, ...others].flat()));
+  return lines([wrapped(caption, width), first!, [rule], ...others]);
 }
 
 /** Names with what they mean, indented. */
@@ -34,7 +33,7 @@ export function paragraph(text: string, width: number): string {
 function lines(blocks: readonly (readonly string[])[]): string {
   return blocks
     .flat()
-    .map((line) => `${line.trimEnd()}\n`)
+    .map((line) => `${line}\n`)
     .join("");
 }
 
@@ -50,14 +49,15 @@ function rowTexts({ cells, aligns, width }: Cells): string[][] {
   const widths = columnWidths(clean, width);
   return clean.map((row) => {
     const broken = row.map((cell, i) => wrapped(cell, widths[i]!));
-    const height = Math.max(...broken.map((cell) => cell.length));
+    const height = broken.reduce((most, cell) => Math.max(most, cell.length), 0);
     return Array.from({ length: height }, (_, k) =>
       broken
         .map((cell, i) => {
           const text = cell[k] ?? "";
           return aligns[i] === "right" ? text.padStart(widths[i]!) : text.padEnd(widths[i]!);
         })
-        .join(" ".repeat(gap)),
+        .join(" ".repeat(gap))
+        .trimEnd(),
     );
   });
 }
@@ -68,17 +68,21 @@ function rowTexts({ cells, aligns, width }: Cells): string[][] {
  */
 function columnWidths(cells: readonly (readonly string[])[], width: number): number[] {
   const columns = cells[0]!.map((_, i) => cells.map((row) => row[i]!));
-  const natural = columns.map((column) => Math.max(...column.map((cell) => cell.length)));
+  const natural = columns.map(longest);
   const room = width - gap * (columns.length - 1);
   if (sum(natural) <= room) return natural;
   const words = columns.map((column) =>
-    Math.min(longWord, Math.max(...column.flatMap((cell) => cell.split(" ").map((word) => word.length)))),
+    Math.min(longWord, longest(column.flatMap((cell) => cell.split(" ")))),
   );
   const kept = natural.map((one, i) => (one <= shortCell ? one : words[i]!));
   const least = sum(kept) <= room ? kept : words;
   const wanted = natural.map((one, i) => Math.min(one, room) - least[i]!);
   const given = Math.max(0, room - sum(least)) / Math.max(1, sum(wanted));
   return least.map((one, i) => one + Math.floor(wanted[i]! * Math.min(1, given)));
+}
+
+function longest(texts: readonly string[]): number {
+  return texts.reduce((length, text) => Math.max(length, text.length), 0);
 }
 
 function sum(values: readonly number[]): number {
@@ -103,7 +107,5 @@ function wrapped(text: string, width: number): string[] {
 
 /** What a file says must not move the cursor. */
 function oneLine(text: string): string {
-  return stripVTControlCharacters(text)
-    .replace(/[\s\p{Cc}]+/gu, " ")
-    .trim();
+  return text.replace(/[\s\p{Cc}]+/gu, " ").trim();
 }

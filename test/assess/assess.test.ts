@@ -46,6 +46,9 @@ describe("deadZoneOf", () => {
     const dark = zone({ light: { ...brief.light, irradiance_mWcm2: sure(0.001) } });
     expect(dark.outcome).toBe("never-cures");
     expect(dark.outcome === "never-cures" && dark.share).toBeGreaterThan(0.9);
+    expect(dark.warnings.map(({ message }) => message).join()).toMatch(
+      /^In 100 % of the draws this light never/,
+    );
   });
 
   it("gives the share of draws that never cure beside a thickness, and what would help", () => {

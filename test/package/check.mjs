@@ -1,8 +1,8 @@
 // Checks the library package as it would be published: packs it, lints the tarball, resolves its types, and uses it from an
 // empty folder. Prints "N passed, N failed" and exits non-zero on any failure.
 
-import { execFileSync } from "node:child_process";
-import { mkdtempSync, readdirSync, rmSync, writeFileSync } from "node:fs";
+import { execFileSync, spawnSync } from "node:child_process";
+import { cpSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join, resolve } from "node:path";
 
@@ -63,6 +63,32 @@ check("passes the kernel's own compiler, TypeScript 5.0 with the old resolution"
   const compiler = resolve("node_modules/@tslab/typescript-for-tslab/bin/tsc");
   const options = ["--noEmit", "--strict", "--skipLibCheck", "--target", "es2022", "--module", "esnext"];
   run("node", [compiler, ...options, "--moduleResolution", "node", "use.ts"], user);
+});
+const data = resolve("data");
+const { version } = JSON.parse(readFileSync("lib/package.json", "utf8"));
+check("its command assesses a brief of the user", () => {
+  const told = run("npx", ["--no-install", "resinwright", "--version"], user).trim();
+  if (told !== version) throw new Error(`--version says ${told}`);
+  cpSync(data, join(user, "data"), { recursive: true });
+  const words = [
+    "--no-install",
+    "resinwright",
+    "assess",
+    "data/briefs/flow-cell.json",
+    "--draws",
+    "100",
+    "--json",
+  ];
+  const { format, verdicts } = JSON.parse(run("npx", words, user));
+  if (format !== "resinwright assessment 1" || verdicts.length === 0) throw new Error("assess");
+});
+check("its command says what notebooks need where that is missing", () => {
+  const { status, stdout, stderr } = spawnSync("npx", ["--no-install", "resinwright", "render", "x.json"], {
+    cwd: user,
+    encoding: "utf8",
+  });
+  if (status !== 2 || stdout !== "" || !/^render: notebooks need .*tslab.*npm ci/.test(stderr))
+    throw new Error(`${status} ${stdout} ${stderr}`);
 });
 
 rmSync(folder, { recursive: true });
