@@ -25,6 +25,23 @@ const figure = embed({
   table: { kind: "table", caption: "Numbers", columns: [{ name: "x", align: "right" }], rows: [[1], [2]] },
 });
 
+const sheet = embed({
+  kind: "sheet",
+  name: "weigh-out",
+  title: "Weigh out 500 g",
+  label: "a, 500 g",
+  facts: [],
+  warnings: [],
+  protection: [],
+  masterBatches: [],
+  portions: [],
+  hazards: [],
+  findings: [],
+  storage: [],
+  law: [],
+  caution: "",
+});
+
 const twoNotebooks = {
   "02-light.ipynb": [
     `md: # Light\n\nHow deep.`,
@@ -99,6 +116,30 @@ describe("start", () => {
       );
       expect(page).not.toContain(path.resolve("."));
     }
+  });
+
+  it("writes the sheets that a notebook shows beside its page", async () => {
+    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(sheet)})`;
+    const folder = workbench({ "01-a.ipynb": [show] });
+    const { code, printed } = await run(folder);
+    expect(code).toBe(0);
+    expect(printed).toMatch(
+      /rendered\/01-a\.html\n {2}rendered\/weigh-out-a4\.html\n {2}rendered\/weigh-out-letter\.html\n {2}rendered\/index\.html$/,
+    );
+    for (const name of ["weigh-out-a4.html", "weigh-out-letter.html"])
+      expect(rendered(folder, name)).toContain("Brief flow-cell.json · run");
+    expect(rendered(folder, "index.html")).toContain('href="weigh-out-letter.html"');
+  });
+
+  it("refuses two sheets of one name, and writes no page", async () => {
+    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(sheet)})`;
+    const folder = workbench({ "01-a.ipynb": [show], "02-b.ipynb": [show] });
+    const { code, errors } = await run(folder);
+    expect([code, errors]).toEqual([
+      1,
+      'two sheets are named "weigh-out"; give one of them another name in showSheet',
+    ]);
+    expect(existsSync(path.join(folder, "rendered"))).toBe(false);
   });
 
   it("takes the brief it is given", async () => {

@@ -5,7 +5,8 @@ import type { Notebook, Output } from "../../lib/notebook/notebookFile.js";
 import { darkPalette, lightPalette, type Palette } from "../../lib/notebook/palette.js";
 import * as pages from "../../lib/notebook/pages.js";
 import { panelOf } from "../../lib/notebook/panel/panel.js";
-import { renderIndex, renderNotebook } from "../../lib/notebook/render.js";
+import { renderIndex, renderNotebook, renderSheet } from "../../lib/notebook/render.js";
+import type { SheetContent } from "../../lib/notebook/sheet/content.js";
 import { summaryOf } from "../../lib/notebook/summary.js";
 import { readWorkbench } from "../../lib/recipe/files.js";
 
@@ -38,6 +39,22 @@ const figure: FigureContent = {
   data: [{ x: [1, 2], y: [3, 4] }],
   layout: { height: 300 },
   table,
+};
+const sheet: SheetContent = {
+  kind: "sheet",
+  name: "weigh-out",
+  title: "Weigh out 500 g",
+  label: "a, 500 g",
+  facts: [],
+  warnings: [],
+  protection: [],
+  masterBatches: [],
+  portions: [],
+  hazards: [],
+  findings: [],
+  storage: [],
+  law: [],
+  caution: "",
 };
 const html = (content: Content) =>
   display("text/html", `${embed(content)}<div onclick="alert(1)">live fallback</div>`);
@@ -298,6 +315,36 @@ describe("renderIndex", () => {
     expect(index.indexOf("02-b")).toBeLessThan(index.indexOf("01-a"));
     expect(index).not.toMatch(/<script|<img/);
     expect(index).toContain("run 2026-01-05");
+  });
+});
+
+describe("a weigh-out sheet", () => {
+  const links =
+    '<a href="weigh-out-a4.html">weigh-out sheet, A4</a> · <a href="weigh-out-letter.html">weigh-out sheet, US Letter</a>';
+
+  it("is linked from the page that shows it and handed on to be written beside it", () => {
+    const { html: written, sheets } = page(shown(html(sheet)));
+    expect(mainOf(written)).toContain(`<p>To print and write on: ${links}</p>`);
+    expect(mainOf(written)).not.toContain("live fallback");
+    expect(sheets).toEqual([sheet]);
+    expect(page(prose("a")).sheets).toEqual([]);
+  });
+
+  it("is linked from the index under its notebook", () => {
+    const index = renderIndex({
+      ...emptyIndex,
+      pages: [{ file: "01-a.html", title: "A", summary: "", sheets: [sheet] }],
+    });
+    expect(index).toContain(`<a href="01-a.html">A</a><p class="sheets">${links}</p></li>`);
+  });
+
+  it("becomes a page a paper, each with a way back and to the other", () => {
+    const written = renderSheet({ content: sheet, origin });
+    expect([...written.keys()]).toEqual(["weigh-out-a4.html", "weigh-out-letter.html"]);
+    for (const one of written.values())
+      expect(one).toContain(`<header class="bar"><a href="index.html">All notebooks</a> · ${links}</header>`);
+    expect(written.get("weigh-out-a4.html")).toContain("size: A4 landscape");
+    expect(written.get("weigh-out-letter.html")).toContain("size: letter landscape");
   });
 });
 

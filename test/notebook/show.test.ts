@@ -3,8 +3,12 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { extract } from "../../lib/notebook/content.js";
 import { shareFigure } from "../../lib/notebook/figure/share.js";
 import { startKernel, type Kernel } from "../../lib/notebook/kernel.js";
-import { showFigure, showPanel, showTable } from "../../lib/notebook/show.js";
+import { showFigure, showPanel, showSheet, showTable } from "../../lib/notebook/show.js";
+import { sheetOf } from "../../lib/notebook/sheet.js";
 import { tableOf } from "../../lib/notebook/table.js";
+import { weighOut } from "../../lib/lab/batch.js";
+import { screenHazards } from "../../lib/lab/hazards.js";
+import { readSafetyRules } from "../../lib/lab/hazards/files.js";
 import { readWorkbench } from "../../lib/recipe/files.js";
 
 const shares = {
@@ -14,11 +18,20 @@ const shares = {
 };
 const batches = { caption: "Batches", rows: [{ batch: "B1", mass_g: 12.5 }] };
 
+const { brief, formulation, file } = readWorkbench("data/briefs/flow-cell.json");
+const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
+const sheet = {
+  sheet: weighOut({ formulation, batch_g: 500, balance }),
+  screening: screenHazards({ formulation, rules: readSafetyRules("data/rules"), draws: 50 }),
+  brief,
+};
+
 describe("outside a notebook", () => {
   it.each<[string, () => void]>([
     ["showFigure", () => showFigure(shareFigure(shares))],
     ["showTable", () => showTable(tableOf(batches))],
     ["showPanel", () => showPanel(readWorkbench("data/briefs/flow-cell.json"))],
+    ["showSheet", () => showSheet({ ...sheet, file })],
   ])("%s says so", (name, call) => {
     expect(call).toThrow(
       `${name}: no notebook is running here; call it in a cell of a notebook of this project`,
@@ -37,7 +50,7 @@ describe("in a notebook", () => {
     );
     const run = await kernel.execute({ code: `const library = { ${load.join(", ")} };`, timeLimit_s: 60 });
     expect(run).toEqual({ status: "ok", outputs: [], errorText: "" });
-  });
+  }, 60_000);
   afterAll(async () => {
     await kernel.stop();
   });
@@ -74,6 +87,25 @@ describe("in a notebook", () => {
     expect(extract(html)).toMatchObject({ kind: "panel", work: { brief: { id: "flow-cell" } } });
     expect(html).toContain("The panel works on the rendered page");
     expect(html).not.toContain(root);
+  });
+
+  it("a sheet arrives as its data, with a page for each paper to save", async () => {
+    const code = `
+      const { weighOut, screenHazards } = require("resinwright");
+      const { openBrief, readSafetyRules } = require("resinwright/files");
+      const { brief, formulation, file } = openBrief("data/briefs/flow-cell.json");
+      const sheet = weighOut({ formulation, batch_g: 500, balance: ${JSON.stringify(balance)} });
+      const screening = screenHazards({ formulation, rules: readSafetyRules("data/rules"), draws: 50 });
+      library.showSheet({ sheet: sheet, screening: screening, brief: brief, file: file });`;
+    const html = await htmlOf(code);
+    expect(extract(html)).toEqual(sheetOf(sheet));
+    const saved = [...html.matchAll(/<a download="([^"]*)" href="data:text\/html;base64,([^"]*)">([^<]*)</g)];
+    expect(saved.map(([, name, , paper]) => [name, paper])).toEqual([
+      ["weigh-out-a4.html", "A4"],
+      ["weigh-out-letter.html", "US Letter"],
+    ]);
+    for (const [, , page] of saved)
+      expect(Buffer.from(page!, "base64").toString()).toMatch(/^<!doctype html>[^]*Brief flow-cell\.json/);
   });
 
   it("frames load without a word on the error stream", async () => {

@@ -1,8 +1,8 @@
 import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
-import { join, resolve } from "node:path";
+import { join, relative, resolve } from "node:path";
 import ts from "typescript";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
-import { runNotebooks } from "../../lib/notebook/run.js";
+import { runNotebook, runNotebooks } from "../../lib/notebook/run.js";
 import { readRecords } from "../../lib/lab/record.js";
 
 const files = readdirSync("notebooks").filter((name) => name.endsWith(".ipynb"));
@@ -67,12 +67,45 @@ describe("the notebooks", () => {
       expect(runs.map((run) => (run.outcome === "failed" ? run.failure.message : "passed"))).toEqual(
         files.map(() => "passed"),
       );
-      const decisions = readRecords(records);
+      const decisions = readRecords(records).filter(({ kind }) => kind === "decision");
       expect(decisions.map(({ from }) => from).sort()).toEqual(
         files.map((file) => file.replace(".ipynb", "")),
       );
       for (const decision of decisions) expect(decision.brief).toBe(brief);
+      const batches = readRecords(records).filter(({ kind }) => kind === "batch");
+      expect(batches.map(({ from, brief }) => [from, brief])).toEqual([["06-weigh-it-out", brief]]);
     },
     300_000,
   );
+
+  it("06 says what to do for a formulation that nobody has weighed yet", async () => {
+    const records = join(folder, "records-unweighed");
+    const place = join(folder, "unweighed");
+    mkdirSync(place);
+    const parts = [
+      { ingredient: "BisEMA", mass_pct: 60 },
+      { ingredient: "HDDA", mass_pct: 38.9 },
+      { ingredient: "BAPO", mass_pct: 1 },
+      { ingredient: "BBOT", mass_pct: 0.1 },
+    ];
+    const formulation = { id: "unweighed", title: "a formulation for a test", parts };
+    const demo = JSON.parse(readFileSync("data/briefs/flow-cell.json", "utf8")) as object;
+    const brief = { ...demo, formulation: "formulation.json", shelf: [relative(place, "data")] };
+    writeFileSync(join(place, "formulation.json"), JSON.stringify(formulation));
+    writeFileSync(join(place, "brief.json"), JSON.stringify(brief));
+    const run = await runNotebook({
+      file: "notebooks/06-weigh-it-out.ipynb",
+      environment: { RESINWRIGHT_BRIEF: join(place, "brief.json"), RESINWRIGHT_RECORDS: records },
+    });
+    if (run.outcome === "failed") throw new Error(run.failure.message);
+    const said = JSON.stringify(run.notebook.cells);
+    expect(said).toContain("No weighed batch of **unweighed** on the shelf yet. Print the sheet, weigh,");
+    expect(said).toContain("Nothing has been weighed, so there is nothing to put right.");
+    expect(readRecords(records).map(({ kind, statement }) => [kind, statement])).toEqual([
+      [
+        "decision",
+        "Weigh out 500 g of a formulation for a test by this sheet: 4 portions, 1 of them master batches to be made first.",
+      ],
+    ]);
+  }, 120_000);
 });

@@ -23,11 +23,11 @@ export function sheetStyle({ paper, label }: { paper: Paper; label: string }): s
 @media screen {
   .sheet { width: min(100% - 2rem, 76rem); margin-inline: auto; }
   .bar:has(+ .sheet), .sheet + .foot { width: min(100% - 2rem, 76rem); margin-inline: auto; }
-  .weigh { min-width: 62rem; }
+  .scroll > .weigh { min-width: 62rem; }
 }
 @media screen and (max-width: 48rem) {
   .sheet .pen { display: none; }
-  .weigh { min-width: 44rem; }
+  .scroll > .weigh { min-width: 38rem; }
 }
 @page {
   size: ${paper === "A4" ? "A4" : "letter"} landscape;
