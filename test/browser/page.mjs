@@ -1,17 +1,20 @@
-// Opens the pages of a rendered folder in a browser, wide and narrow, light and dark, and prints them.
-// node test/browser/page.mjs [folder, default rendered] [--shots <folder for pictures>]
+// Opens the pages of rendered folders in a browser, wide and narrow, light and dark, prints them, copies from them and moves
+// what can be moved. The first folder is seen in every view, others in the two that differ most.
+// node test/browser/page.mjs [folder..., default rendered] [--shots <folder for pictures>]
 /* global document, innerWidth */
 
-import { mkdirSync, readFileSync, readdirSync, writeFileSync } from "node:fs";
+import { mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
 import { chromium } from "playwright-core";
+import { checkCopying } from "./copying.mjs";
+import { checkPanel } from "./panel.mjs";
 
 const words = process.argv.slice(2);
 const shotsAt = words.indexOf("--shots");
 const shots = shotsAt === -1 ? undefined : words.splice(shotsAt, 2)[1];
-const folder = path.resolve(words[0] ?? "rendered");
+const folders = (words.length > 0 ? words : ["rendered"]).map((name) => path.resolve(name));
 const axe = readFileSync(createRequire(import.meta.url).resolve("axe-core"), "utf8");
 const views = [
   { width: 1280, colorScheme: "light" },
@@ -40,21 +43,31 @@ const browser = await chromium.launch({
     "--disable-sync",
   ],
 });
-const files = readdirSync(folder).filter((name) => name.endsWith(".html"));
-check(`${folder} has pages`, files.length > 0);
 if (shots !== undefined) mkdirSync(shots, { recursive: true });
 try {
-  for (const file of files) {
-    for (const view of views) await checkView(file, view);
-    await checkWithoutScript(file);
-  }
+  for (const folder of folders) await checkFolder(folder);
 } finally {
   await browser.close();
 }
 console.log(`${passed} passed, ${failed} failed`);
 process.exitCode = failed === 0 ? 0 : 1;
 
-async function checkView(file, { width, colorScheme }) {
+async function checkFolder(folder) {
+  const files = readdirSync(folder).filter((name) => name.endsWith(".html"));
+  check(`${folder} has pages`, files.length > 0);
+  for (const file of files) {
+    const place = path.join(folder, file);
+    const { size } = statSync(place);
+    check(`${file}: at most 3 MB`, size <= 3e6, `${size} bytes`);
+    for (const view of folder === folders[0] ? views : [views[0], views[3]]) await checkView(place, view);
+    await checkWithoutScript(place);
+    await checkCopying({ browser, place, check });
+    await checkPanel({ browser, place, check, axe });
+  }
+}
+
+async function checkView(place, { width, colorScheme }) {
+  const file = path.basename(place);
   const name = `${file} at ${width} px, ${colorScheme}`;
   const context = await browser.newContext({ viewport: { width, height: 800 }, colorScheme });
   const page = await context.newPage();
@@ -68,7 +81,7 @@ async function checkView(file, { width, colorScheme }) {
     troubles.push(`dialog ${dialog.message()}`);
     void dialog.dismiss();
   });
-  const address = pathToFileURL(path.join(folder, file)).href;
+  const address = pathToFileURL(place).href;
   page.on("request", (request) => {
     if (request.url() !== address && !request.url().startsWith("data:")) requests.push(request.url());
   });
@@ -126,14 +139,20 @@ async function checkView(file, { width, colorScheme }) {
   await context.close();
 }
 
-async function checkWithoutScript(file) {
+async function checkWithoutScript(place) {
+  const file = path.basename(place);
   const context = await browser.newContext({ javaScriptEnabled: false });
   const page = await context.newPage();
-  await page.goto(pathToFileURL(path.join(folder, file)).href);
+  await page.goto(pathToFileURL(place).href);
   const figures = await page.locator("figure.drawn").count();
   const seen = await page.locator("figure.drawn:has(noscript p) figcaption .name:visible").count();
   const tables = await page.locator("figure.drawn details.data table").count();
   check(`${file} without scripts: captions stand`, seen === figures, `${seen} of ${figures}`);
   check(`${file} without scripts: tables stand`, tables === figures, `${tables} of ${figures}`);
+  const panels = await page.locator("section.panel").count();
+  const told = await page.getByText("It needs a browser that may run scripts").count();
+  check(`${file} without scripts: a panel says what it needs`, told === panels, `${told} of ${panels}`);
+  const dead = await page.locator("button").count();
+  check(`${file} without scripts: no button that does nothing`, dead === 0, `${dead}`);
   await context.close();
 }
