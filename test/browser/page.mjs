@@ -1,19 +1,21 @@
-// Opens the pages of a rendered folder in a browser, wide and narrow, light and dark, and prints them.
-// Weigh-out sheets are also read as printed: nothing cut, no row split. node test/browser/page.mjs [folder, default rendered]
-// [--shots <folder for pictures>]
-/* global document, getComputedStyle, innerWidth */
+// Opens the pages of rendered folders in a browser, wide and narrow, light and dark, prints them, copies from them and moves
+// what can be moved; weigh-out sheets are also read as printed. The first folder is seen in every view, others in the two that differ most.
+// node test/browser/page.mjs [folder..., default rendered] [--shots <folder for pictures>]
+/* global document, innerWidth */
 
-import { mkdirSync, readFileSync, readdirSync, writeFileSync } from "node:fs";
-import { spawnSync } from "node:child_process";
+import { mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from "node:fs";
 import { createRequire } from "node:module";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
 import { chromium } from "playwright-core";
+import { checkCopying } from "./copying.mjs";
+import { checkPanel } from "./panel.mjs";
+import { checkSheet } from "./sheet.mjs";
 
 const words = process.argv.slice(2);
 const shotsAt = words.indexOf("--shots");
 const shots = shotsAt === -1 ? undefined : words.splice(shotsAt, 2)[1];
-const folder = path.resolve(words[0] ?? "rendered");
+const folders = (words.length > 0 ? words : ["rendered"]).map((name) => path.resolve(name));
 const axe = readFileSync(createRequire(import.meta.url).resolve("axe-core"), "utf8");
 const views = [
   { width: 1280, colorScheme: "light" },
@@ -42,23 +44,32 @@ const browser = await chromium.launch({
     "--disable-sync",
   ],
 });
-const files = readdirSync(folder).filter((name) => name.endsWith(".html"));
-check(`${folder} has pages`, files.length > 0);
 if (shots !== undefined) mkdirSync(shots, { recursive: true });
 try {
-  for (const file of files) {
-    for (const view of views) await checkView(file, view);
-    await checkWithoutScript(file);
-    if (/<main [^>]*class="page sheet"/.test(readFileSync(path.join(folder, file), "utf8")))
-      await checkSheet(file);
-  }
+  for (const folder of folders) await checkFolder(folder);
 } finally {
   await browser.close();
 }
 console.log(`${passed} passed, ${failed} failed`);
 process.exitCode = failed === 0 ? 0 : 1;
 
-async function checkView(file, { width, colorScheme }) {
+async function checkFolder(folder) {
+  const files = readdirSync(folder).filter((name) => name.endsWith(".html"));
+  check(`${folder} has pages`, files.length > 0);
+  for (const file of files) {
+    const place = path.join(folder, file);
+    const { size } = statSync(place);
+    check(`${file}: at most 3 MB`, size <= 3e6, `${size} bytes`);
+    for (const view of folder === folders[0] ? views : [views[0], views[3]]) await checkView(place, view);
+    await checkWithoutScript(place);
+    await checkCopying({ browser, place, check });
+    await checkPanel({ browser, place, check, axe });
+    await checkSheet({ browser, place, check });
+  }
+}
+
+async function checkView(place, { width, colorScheme }) {
+  const file = path.basename(place);
   const name = `${file} at ${width} px, ${colorScheme}`;
   const context = await browser.newContext({ viewport: { width, height: 800 }, colorScheme });
   const page = await context.newPage();
@@ -72,7 +83,7 @@ async function checkView(file, { width, colorScheme }) {
     troubles.push(`dialog ${dialog.message()}`);
     void dialog.dismiss();
   });
-  const address = pathToFileURL(path.join(folder, file)).href;
+  const address = pathToFileURL(place).href;
   page.on("request", (request) => {
     if (request.url() !== address && !request.url().startsWith("data:")) requests.push(request.url());
   });
@@ -130,85 +141,20 @@ async function checkView(file, { width, colorScheme }) {
   await context.close();
 }
 
-async function checkWithoutScript(file) {
+async function checkWithoutScript(place) {
+  const file = path.basename(place);
   const context = await browser.newContext({ javaScriptEnabled: false });
   const page = await context.newPage();
-  await page.goto(pathToFileURL(path.join(folder, file)).href);
+  await page.goto(pathToFileURL(place).href);
   const figures = await page.locator("figure.drawn").count();
   const seen = await page.locator("figure.drawn:has(noscript p) figcaption .name:visible").count();
   const tables = await page.locator("figure.drawn details.data table").count();
   check(`${file} without scripts: captions stand`, seen === figures, `${seen} of ${figures}`);
   check(`${file} without scripts: tables stand`, tables === figures, `${tables} of ${figures}`);
-  await context.close();
-}
-
-/** The sheet as it prints, and again with forty portions, so that it runs over pages. */
-async function checkSheet(file) {
-  const paper_mm = file.includes("letter") ? [279.4, 215.9] : [297, 210];
-  // The side margins of a sheet are 12 mm.
-  const width = Math.floor(((paper_mm[0] - 24) / 25.4) * 96);
-  const context = await browser.newContext({ viewport: { width, height: 700 } });
-  const page = await context.newPage();
-  await page.goto(pathToFileURL(path.join(folder, file)).href);
-  await page.emulateMedia({ media: "print" });
-  const cut = await page.evaluate(() => [
-    ...[document.documentElement].filter((root) => root.scrollWidth > innerWidth).map(() => "the page"),
-    ...[...document.querySelectorAll("main th, main td, main dd, main li")]
-      .filter((cell) => cell.scrollWidth > cell.clientWidth + 1 && cell.clientWidth > 0)
-      .map((cell) => cell.textContent),
-    ...[...document.querySelectorAll("main table")]
-      .filter((table) => table.getBoundingClientRect().right > innerWidth)
-      .map((table) => table.caption.textContent),
-  ]);
-  check(`${file}, printed: nothing is cut`, cut.length === 0, cut.join(" | "));
-  const small = await page.evaluate(() =>
-    [...document.querySelectorAll("body *")]
-      .filter((part) => part.checkVisibility() && [...part.childNodes].some((node) => node.data?.trim()))
-      .map((part) => ({ size: parseFloat(getComputedStyle(part).fontSize), text: part.textContent }))
-      .filter(({ size }) => size < (10 / 72) * 96 - 0.01)
-      .map(({ size, text }) => `${size} px: ${text.slice(0, 40)}`),
-  );
-  check(`${file}, printed: nothing is smaller than ten points`, small.length === 0, small.join(" | "));
-
-  const rows = await page.evaluate(() => {
-    const body = document.querySelector(".weigh tbody");
-    const models = [...body.rows];
-    for (let i = models.length; i < 40; i++) body.append(models[i % models.length].cloneNode(true));
-    [...body.rows].forEach((row, i) => {
-      row.cells[0].textContent = `first${i}x`;
-      row.cells[1].append(` last${i}x`);
-    });
-    return body.rows.length;
-  });
-  const pdf = await page.pdf({ preferCSSPageSize: true });
-  const [wide, high] = /\/MediaBox \[0 0 ([\d.]+) ([\d.]+)\]/
-    .exec(pdf.toString("latin1"))
-    .slice(1)
-    .map(Number);
-  const off_mm = [wide, high].map((points, i) => Math.abs((points / 72) * 25.4 - paper_mm[i]));
-  check(`${file}, printed: across its paper`, Math.max(...off_mm) < 0.5, `${wide} by ${high} points`);
-  const read = spawnSync("pdftotext", ["-layout", "-", "-"], { input: pdf, encoding: "utf8" });
-  if (read.error !== undefined) {
-    console.log(`${file}: pdftotext is not here, so the printed pages were not read`);
-  } else {
-    const pages = read.stdout.split("\f");
-    const pageOf = (word) => pages.findIndex((text) => text.includes(word));
-    const numbers = Array.from({ length: rows }, (_, i) => i);
-    const split = numbers.filter((i) => pageOf(`first${i}x`) !== pageOf(`last${i}x`));
-    const lost = numbers.filter((i) => pageOf(`first${i}x`) === -1);
-    check(`${file}, printed: no row is split or lost`, [...split, ...lost].length === 0, `${split} ${lost}`);
-    const bare = pages.filter((text) => /first\d+x/.test(text) && !text.includes("Low to high"));
-    check(
-      `${file}, printed: every page of the table has its head`,
-      bare.length === 0,
-      `${bare.length} have not`,
-    );
-    const weighing = pages.filter((text) => /first\d+x/.test(text)).length;
-    check(`${file}, printed: forty portions take several pages`, weighing > 2, `${weighing}`);
-    const unnumbered = pages
-      .slice(0, -1)
-      .filter((text, i) => !text.includes(`page ${i + 1} of ${pages.length - 1}`));
-    check(`${file}, printed: pages are numbered`, unnumbered.length === 0, `${unnumbered.length} are not`);
-  }
+  const panels = await page.locator("section.panel").count();
+  const told = await page.getByText("It needs a browser that may run scripts").count();
+  check(`${file} without scripts: a panel says what it needs`, told === panels, `${told} of ${panels}`);
+  const dead = await page.locator("button").count();
+  check(`${file} without scripts: no button that does nothing`, dead === 0, `${dead}`);
   await context.close();
 }

@@ -55,6 +55,7 @@ function openPanel(section: HTMLElement): void {
     ),
     file.node,
   );
+  for (const row of rows) row.mark(settings);
   show(content.start);
 
   // An empty box is refused with the others that hold no number, where the settings are put in place.
@@ -69,6 +70,7 @@ function openPanel(section: HTMLElement): void {
     cancelAnimationFrame(frame);
     clearTimeout(rest);
     section.setAttribute("aria-busy", "true");
+    for (const row of rows) row.mark(settings);
     frame = requestAnimationFrame(() => {
       const tried = attempt(() => {
         const tried = withSettings(work, settings);
@@ -107,7 +109,6 @@ function openPanel(section: HTMLElement): void {
 
   function show(reading: Reading): void {
     const changed = controls.filter(({ field, start }) => settings[field] !== start);
-    for (const row of rows) row.mark(settings);
     results.show(reading);
     warnings.replaceChildren(...reading.warnings.map((message) => element("li", {}, text(message))));
     if (reading.warnings.length === 0) warnings.append(element("li", {}, text("No warning.")));
