@@ -1,6 +1,6 @@
 // The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
 
-export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
+export type { Content, FigureContent, Moments, TableColumn, TableContent } from "./content.js";
 export { showFigure, showMarkdown, showTable } from "./show.js";
 
 export { lineFigure, type LineFigure, type Series } from "./figure/line.js";
@@ -11,6 +11,7 @@ export {
   type GridValues,
   type Region,
 } from "./figure/contour.js";
+export { momentsFigure, type Moment, type MomentsFigure } from "./figure/moments.js";
 export { intervalFigure, type IntervalFigure, type IntervalRow } from "./figure/interval.js";
 export { shareFigure, type ShareFigure, type ShareRow } from "./figure/share.js";
 export type { Axis, Limits } from "./figure/axis.js";
@@ -54,7 +55,8 @@ export {
   type FigureRow,
 } from "./views.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
-export { layerTable, profileFigure } from "./layers.js";
+export { layerMoments, layerTable, profileFigure, settlingFigure } from "./layers.js";
+export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
 export { handlingTable, screeningTable } from "./safety.js";
 export { decide } from "./decision.js";
 

@@ -5,7 +5,7 @@ import { randomUUID } from "node:crypto";
 import { createRequire } from "node:module";
 import type * as Tslab from "tslab";
 import { InputError } from "../door.js";
-import { embed, tableHtml, type FigureContent, type TableContent } from "./content.js";
+import { embed, sliderHtml, tableHtml, type FigureContent, type TableContent } from "./content.js";
 import { escapeHtml } from "./html.js";
 
 /**
@@ -75,6 +75,7 @@ function liveFigure(figure: FigureContent): string {
   return [
     `<figure id="${id}" style="margin:0">`,
     `<div role="img" aria-label="${escapeHtml(figure.alternativeText)}"></div>`,
+    ...(figure.moments === undefined ? [] : [sliderHtml(figure.moments, id)]),
     `<figcaption>${escapeHtml(figure.caption)}</figcaption>`,
     `<details><summary style="display:list-item">Data behind this figure</summary>${tableHtml(figure.table)}</details>`,
     `</figure>`,
@@ -99,9 +100,21 @@ const drawLive = `function (figure) {
     document.head.append(script);
   });
   const target = figure.firstElementChild;
-  const { data, layout } = JSON.parse(figure.previousElementSibling.textContent);
+  const { data, layout, moments } = JSON.parse(figure.previousElementSibling.textContent);
+  const draw = (shown) => page.Plotly.react(target, shown, layout, { displayModeBar: false, responsive: true });
+  const follow = () => {
+    const box = figure.querySelector(".moments");
+    const [slider, name] = [box.querySelector("input"), box.querySelector("output")];
+    box.hidden = false;
+    slider.addEventListener("input", () => {
+      const step = moments.steps[slider.value];
+      name.textContent = step.name;
+      slider.setAttribute("aria-valuetext", step.name);
+      draw(step.data);
+    });
+  };
   page.plotlyLoaded.then(
-    () => page.Plotly.newPlot(target, data, layout, { displayModeBar: false, responsive: true }),
+    () => { draw(data); if (moments !== undefined) follow(); },
     () => { target.textContent = "The figure could not be drawn here; its numbers stand below."; },
   );
 }`;
