@@ -16,7 +16,7 @@ export interface Case {
   readonly brief: Brief;
   readonly shelf: Shelf;
   /** Readings on this window that correct what is said of oxygen; `calibrate` adds it. */
-  readonly oxygenCorrection?: OxygenCorrection;
+  readonly oxygenCorrection?: OxygenCorrection | undefined;
 }
 
 /**

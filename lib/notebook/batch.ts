@@ -171,13 +171,13 @@ export function madeTable({ formulation, parts }: AsMade): TableContent {
  * @example
  * ```ts
  * import { openBatch, openBrief } from "resinwright/files";
- * import { changeTable } from "resinwright/notebook";
+ * import { batchChangeTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const batch = openBatch({ ...work, draws: 200 })!;
- * changeTable({ ...batch, brief: work.brief }).rows.length; // → 7
+ * batchChangeTable({ ...batch, brief: work.brief }).rows.length; // → 7
  * ```
  */
-export function changeTable({
+export function batchChangeTable({
   made,
   brief,
 }: {

@@ -39,6 +39,15 @@ export interface FigureContent {
   readonly data: readonly unknown[];
   readonly layout: object;
   readonly table: TableContent;
+  /** Other data for the same layout, one step of a slider each; `data` is that of the step `shown`. */
+  readonly moments?: Moments | undefined;
+}
+
+/** The steps of a figure's slider: what it chooses, which step is shown first, and the data of each under its name. */
+export interface Moments {
+  readonly label: string;
+  readonly shown: number;
+  readonly steps: readonly { readonly name: string; readonly data: readonly unknown[] }[];
 }
 
 /** How the Markdown of a decision begins; the index repeats what follows it. */
@@ -152,6 +161,14 @@ const figureSchema = z.strictObject({
   data: z.array(z.looseObject({})),
   layout: z.looseObject({}),
   table: tableSchema,
+  moments: z
+    .strictObject({
+      label: z.string(),
+      shown: z.int().min(0),
+      steps: z.array(z.strictObject({ name: z.string(), data: z.array(z.looseObject({})) })).min(2),
+    })
+    .refine(({ shown, steps }) => shown < steps.length, { error: "shown is beyond the last step" })
+    .optional(),
 });
 
 const rowSchema = z.strictObject({
@@ -190,6 +207,14 @@ const schemas: Readonly<Record<Content["kind"], z.ZodType<Content>>> = {
   sheet: sheetSchema,
   summary: summarySchema,
 };
+
+/** The slider of a figure's moments; a script has to unhide and follow it. */
+export function sliderHtml({ label, shown, steps }: Moments, id: string): string {
+  const chosen = escapeHtml(steps[shown]!.name);
+  return `<div class="moments" hidden><label for="${id}-moment">${escapeHtml(label)}</label>
+<input id="${id}-moment" type="range" min="0" max="${steps.length - 1}" step="1" value="${shown}" aria-valuetext="${chosen}">
+<output for="${id}-moment">${chosen}</output></div>`;
+}
 
 /** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
 function tableClass({ columns, rows }: TableContent): string {

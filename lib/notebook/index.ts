@@ -1,6 +1,6 @@
 // The door `resinwright/notebook`: what a notebook shows, and how notebooks are run and rendered without a browser.
 
-export type { Content, FigureContent, TableColumn, TableContent } from "./content.js";
+export type { Content, FigureContent, Moments, TableColumn, TableContent } from "./content.js";
 export type { PanelContent } from "./panel/panel.js";
 export type { PlainCase } from "./panel/plainCase.js";
 export type { Reading } from "./panel/reading.js";
@@ -16,6 +16,7 @@ export {
   type GridValues,
   type Region,
 } from "./figure/contour.js";
+export { momentsFigure, type Moment, type MomentsFigure } from "./figure/moments.js";
 export { intervalFigure, type IntervalFigure, type IntervalRow } from "./figure/interval.js";
 export { shareFigure, type ShareFigure, type ShareRow } from "./figure/share.js";
 export type { Axis, Limits } from "./figure/axis.js";
@@ -58,12 +59,13 @@ export {
 } from "./views.js";
 export { valueText, verdictText } from "./verdicts.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
-export { layerTable, profileFigure } from "./layers.js";
+export { layerMoments, layerTable, profileFigure, settlingFigure } from "./layers.js";
+export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
 export { handlingTable, screeningTable } from "./safety.js";
 export { recordFrame } from "./recordFrame.js";
 export {
+  batchChangeTable,
   batchDecision,
-  changeTable,
   madeTable,
   masterBatchTable,
   rescueTable,

@@ -2,7 +2,7 @@
 // It works in JupyterLab and in the notebook applications, without a network: the figure library comes from the notebook server.
 
 import { randomUUID } from "node:crypto";
-import { tableHtml, type FigureContent, type TableContent } from "./content.js";
+import { sliderHtml, tableHtml, type FigureContent, type TableContent } from "./content.js";
 import { figureLook } from "./figureLook.js";
 import { escapeHtml } from "./html.js";
 import { darkPalette, lightPalette } from "./palette.js";
@@ -21,6 +21,7 @@ export function liveFigure(figure: FigureContent): string {
   return [
     `<figure id="${id}" class="resinwright" style="margin:0">`,
     `<div role="img" aria-label="${escapeHtml(figure.alternativeText)}"><p>Run this cell to see the drawing.</p></div>`,
+    ...(figure.moments === undefined ? [] : [sliderHtml(figure.moments, id)]),
     `<figcaption>${escapeHtml(figure.caption)}</figcaption>`,
     `<details><summary style="display:list-item">Data behind this figure</summary>${tableHtml(figure.table)}</details>`,
     `</figure>`,
@@ -59,13 +60,27 @@ const drawLive = `function (figure) {
     document.head.append(script);
   });
   const target = figure.firstElementChild;
-  const { data, layout } = JSON.parse(figure.previousElementSibling.textContent);
+  const { data, layout, moments } = JSON.parse(figure.previousElementSibling.textContent);
   const colors = document.body.dataset.jpThemeLight === "false" ? ${JSON.stringify(darkPalette)} : ${JSON.stringify(lightPalette)};
   const look = ${figureLook};
+  const draw = (shown) =>
+    page.Plotly.react(target, shown, look(layout, colors), { displayModeBar: false, responsive: true });
+  const follow = () => {
+    const box = figure.querySelector(".moments");
+    const [slider, name] = [box.querySelector("input"), box.querySelector("output")];
+    box.hidden = false;
+    slider.addEventListener("input", () => {
+      const step = moments.steps[slider.value];
+      name.textContent = step.name;
+      slider.setAttribute("aria-valuetext", step.name);
+      draw(step.data);
+    });
+  };
   page.figureLibrary.then(
     () => {
       target.replaceChildren();
-      page.Plotly.newPlot(target, data, look(layout, colors), { displayModeBar: false, responsive: true });
+      draw(data);
+      if (moments !== undefined) follow();
     },
     () => { target.textContent = "The figure could not be drawn here; its numbers stand below. Open the notebooks with npm run lab."; },
   );

@@ -2,7 +2,7 @@
 // Nothing a cell writes reaches the page as HTML of its own.
 
 import { InputError } from "../door.js";
-import { extract, tableHtml, toJson, type Content, type FigureContent } from "./content.js";
+import { extract, sliderHtml, tableHtml, toJson, type Content, type FigureContent } from "./content.js";
 import { escapeHtml } from "./html.js";
 import { markdownHtml, type Heading } from "./markdown.js";
 import type { Output } from "./notebookFile.js";
@@ -61,14 +61,15 @@ function contentHtml(content: Content, counts: Counts): string {
 }
 
 function figureHtml(
-  { caption, alternativeText, data, layout, table }: FigureContent,
+  { caption, alternativeText, data, layout, table, moments }: FigureContent,
   number: number,
 ): string {
   const id = `resinwright-figure-${number}`;
-  const drawing = { data, layout };
+  // What a slider shows first is among its steps.
+  const drawing = moments === undefined ? { data, layout } : { layout, moments };
   return `<figure class="drawn" id="${id}">
 <div class="plot" role="img" aria-labelledby="${id}-name" aria-describedby="${id}-words"></div>
-<script type="application/json">${toJson(drawing, "figure")}</script>
+<script type="application/json">${toJson(drawing, "figure")}</script>${moments === undefined ? "" : `\n${sliderHtml(moments, id)}`}
 <noscript><p>The drawing needs JavaScript; its words and numbers stand below.</p></noscript>
 <figcaption>
 <p class="name" id="${id}-name"><strong>Figure ${number}.</strong> ${escapeHtml(caption)}</p>

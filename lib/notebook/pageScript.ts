@@ -15,10 +15,12 @@ export const pageScript = `"use strict";
   const dark = ${JSON.stringify(darkPalette)};
   const prefersDark = matchMedia("(prefers-color-scheme: dark)");
   const config = { displayModeBar: false, displaylogo: false, scrollZoom: false, responsive: false };
-  const figures = [...document.querySelectorAll("figure.drawn")].map((figure) => ({
-    plot: figure.querySelector(".plot"),
-    ...JSON.parse(figure.querySelector("script").textContent),
-  }));
+  const figures = [...document.querySelectorAll("figure.drawn")].map((figure) => {
+    const drawing = JSON.parse(figure.querySelector("script").textContent);
+    const { moments } = drawing;
+    if (moments !== undefined) drawing.data = moments.steps[moments.shown].data;
+    return { figure, plot: figure.querySelector(".plot"), ...drawing };
+  });
   const figureLook = ${figureLook};
   let printing = false;
 
@@ -29,6 +31,22 @@ export const pageScript = `"use strict";
     Plotly.react(plot, data, { ...look, width, autosize: false }, config);
   };
   const drawAll = () => figures.forEach(draw);
+  const followSlider = (drawing) => {
+    if (drawing.moments === undefined) return;
+    const box = drawing.figure.querySelector(".moments");
+    const slider = box.querySelector("input");
+    const name = box.querySelector("output");
+    // A browser may bring a page back with the slider where it was left.
+    slider.value = drawing.moments.shown;
+    box.hidden = false;
+    slider.addEventListener("input", () => {
+      const step = drawing.moments.steps[slider.value];
+      drawing.data = step.data;
+      name.textContent = step.name;
+      slider.setAttribute("aria-valuetext", step.name);
+      draw(drawing);
+    });
+  };
   const reachScrolling = () => {
     for (const box of document.querySelectorAll(".scroll")) {
       if (box.scrollWidth > box.clientWidth || box.scrollHeight > box.clientHeight) box.tabIndex = 0;
@@ -55,6 +73,7 @@ export const pageScript = `"use strict";
     drawAll();
   });
   document.addEventListener("toggle", reachScrolling, true);
+  figures.forEach(followSlider);
   fit();
 })();
 ${copyScript}`;

@@ -92,6 +92,11 @@ td.right, .whole { white-space: nowrap; }
 figure { margin: 2rem 0; }
 .plot { width: 100%; overflow: hidden; }
 .plot .draglayer * { touch-action: pan-y; }
+.moments { display: flex; flex-wrap: wrap; align-items: center; gap: 0.25rem 0.75rem; margin-top: 0.5rem; font-size: 0.875rem; }
+.moments[hidden] { display: none; }
+.moments label { color: var(--muted); }
+.moments input { flex: 1 1 12rem; min-width: 0; height: 1.75rem; margin: 0; accent-color: var(--accent); }
+.moments output { min-width: 7.5rem; font-variant-numeric: tabular-nums; }
 figcaption { margin-top: 0.5rem; font-size: 0.875rem; line-height: 1.5; color: var(--muted); }
 figcaption p { margin: 0 0 0.375rem; }
 figcaption .name { color: var(--ink); }
@@ -179,6 +184,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
   .long { break-inside: auto; }
   thead { display: table-header-group; }
   .scroll { overflow: visible; }
+  .moments label, .moments input { display: none; }
   pre { white-space: pre-wrap; overflow-wrap: anywhere; }
   table { max-width: 100%; font-size: 9pt; }
   th, td { padding-right: 0.75rem; }

@@ -3,7 +3,7 @@ import { asMade, rescue, weighOut, type PropertyChange, type Weighing } from "..
 import type { ReturnedBatch } from "../../lib/lab/batch/files.js";
 import {
   batchDecision,
-  changeTable,
+  batchChangeTable,
   costText,
   madeTable,
   massText,
@@ -169,9 +169,9 @@ const change = (from: PropertyChange["verdictBefore"], to: PropertyChange["verdi
   changed: true,
 });
 
-describe("changeTable", () => {
+describe("batchChangeTable", () => {
   const rowOf = (changes: PropertyChange[]) =>
-    changeTable({ made: { changes }, brief: { targets: { viscosity_mPas: { max: 320 } } } });
+    batchChangeTable({ made: { changes }, brief: { targets: { viscosity_mPas: { max: 320 } } } });
 
   it("sets planned and made side by side, with the change, the target and what became of it", () => {
     const { rows, caption } = rowOf([change("meets", "cannot tell")]);

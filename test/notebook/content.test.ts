@@ -47,6 +47,15 @@ describe("embed and extract", () => {
     );
   });
 
+  it("carry the steps of a slider, and refuse one that starts beyond them", () => {
+    const steps = ["1 s", "2 s"].map((name, i) => ({ name, data: [{ x: [1, 2], y: [1, i] }] }));
+    const moving = { ...figure, moments: { label: "light", shown: 1, steps } };
+    expect(extract(embed(moving))).toEqual(moving);
+    expect(() => extract(embed({ ...moving, moments: { ...moving.moments, shown: 2 } }))).toThrow(
+      "output figure: moments: shown is beyond the last step",
+    );
+  });
+
   it("write typed arrays as lists", () => {
     const html = embed({ ...figure, data: [{ y: Float64Array.of(1, 2) }] });
     expect(extract(html)).toMatchObject({ data: [{ y: [1, 2] }] });

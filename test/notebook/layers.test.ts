@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { layersOf } from "../../lib/assess/layers.js";
 import { embed } from "../../lib/notebook/content.js";
-import { layerTable, profileFigure } from "../../lib/notebook/layers.js";
+import { layerMoments, layerTable, profileFigure, settlingFigure } from "../../lib/notebook/layers.js";
 import { brief, formulationOf, shelf } from "../fixtures.js";
 
 const formulation = formulationOf({ THIN: 60, THICK: 38.9, PI: 1, AB: 0.1 });
@@ -51,5 +51,28 @@ describe("profileFigure", () => {
     expect(figure.caption).toBe("Oxygen in layer 2 from the window up. A test.");
     expect(figure.table.rows).toHaveLength(layer.stated.end.depths_um.length);
     expect(() => embed(figure)).not.toThrow();
+  });
+});
+
+describe("layerMoments", () => {
+  it("has a moment for each time asked for and the end, counted in light, both shares from 0 to 1", () => {
+    const { dark_s } = brief.betweenLayers;
+    const figure = layerMoments({ layer: series.layers[1]!, conditions: "A test", dark_s });
+    expect(figure.moments!.steps.map(({ name }) => name)).toEqual(["light 3 s", "light 6 s", "light 12 s"]);
+    for (const { data } of figure.moments!.steps)
+      for (const { y } of data as { y: number[] }[]) {
+        expect(Math.max(...y)).toBeLessThanOrEqual(1);
+        expect(Math.min(...y)).toBeGreaterThanOrEqual(0);
+      }
+    expect(() => embed(figure)).not.toThrow();
+  });
+});
+
+describe("settlingFigure", () => {
+  it("draws what each layer leaves liquid, and nothing where none gels", () => {
+    const figure = settlingFigure(series, "A test")!;
+    expect(figure.table.rows.map(([layer]) => layer)).toEqual([1, 2]);
+    const dim = layersOf({ formulation, brief, shelf, draws: 40, layers: 1, exposure_s: 0.01 });
+    expect(settlingFigure(dim, "A test")).toBeUndefined();
   });
 });

@@ -1,0 +1,188 @@
+// How oxygen at a window is shown: a map of the dead zone, what readings changed, which resistance rules, what changes would do.
+
+import type { Case } from "../assess/case.js";
+import { deadZoneOf } from "../assess/oxygen.js";
+import type { ResistanceEstimate } from "../assess/resistance.js";
+import type { ChangeComparison } from "../decide/changes.js";
+import type { LearntOxygen } from "../decide/calibrateOxygen.js";
+import { evenSteps, mapOver } from "../decide/sweep.js";
+import type { FigureContent, TableContent } from "./content.js";
+import { intervalText, numberText } from "./digits.js";
+import { contourFigure } from "./figure/contour.js";
+import { intervalFigure } from "./figure/interval.js";
+import { gasText, sharePercent, targetRegion } from "./phrases.js";
+import { tableOf } from "./table.js";
+
+/**
+ * The dead zone over irradiance and film thickness at the stated figures, with the brief's target and the present point; blank
+ * where the resin never cures.
+ * @example
+ * ```ts
+ * import { openBrief } from "resinwright/files";
+ * import { deadZoneMap } from "resinwright/notebook";
+ * const figure = deadZoneMap(openBrief("data/briefs/flow-cell.json"));
+ * figure.table.columns[0]?.name.includes("film thickness"); // → true
+ * ```
+ */
+export function deadZoneMap(work: Case): FigureContent {
+  const { brief, formulation } = work;
+  const { window, light } = brief;
+  const [film_um, power_mWcm2] = [window.filmThickness_um.value, light.irradiance_mWcm2.value];
+  const around = (value: number) =>
+    evenSteps({ from: value / 8, to: 8 * value, count: 13, logarithmic: true });
+  const [x, y] = [around(power_mWcm2), around(film_um)];
+  const at = (power: number, thickness: number): number | null => {
+    const zone = deadZoneOf({
+      ...work,
+      draws: 40,
+      brief: {
+        ...brief,
+        light: { ...light, irradiance_mWcm2: { ...light.irradiance_mWcm2, value: power } },
+        window: { ...window, filmThickness_um: { ...window.filmThickness_um, value: thickness } },
+      },
+    });
+    return zone.outcome === "value" ? zone.value : null;
+  };
+  const feasible = targetRegion(brief.targets.deadZone_um);
+  return contourFigure({
+    caption: "Dead zone over irradiance and film thickness",
+    conditions: `${formulation.title}, ${window.film} film over ${gasText(brief)}, stated figures; blank where the resin never cures`,
+    x: { label: "irradiance at the window", unit: "mW/cm²", logarithmic: true, values: x },
+    y: { label: "film thickness", unit: "µm", logarithmic: true, values: y },
+    z: { label: "dead-zone thickness", unit: "µm", values: mapOver({ x, y, at }) },
+    levels: [0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 50, 100, 200],
+    ...(feasible && { feasible }),
+    marks: [{ label: "this printer", x: power_mWcm2, y: film_um }],
+  });
+}
+
+/**
+ * What readings on the window changed: each reading against what was expected, then each figure before and after, as a multiple of
+ * what the shelf states.
+ * @example
+ * ```ts
+ * import { learntTable } from "resinwright/notebook";
+ * learntTable(undefined).rows[0]?.[0]; // → "no readings on the window"
+ * ```
+ */
+export function learntTable(learnt: LearntOxygen | undefined): TableContent {
+  const caption = "What the readings on the window say of the figures behind them";
+  if (learnt === undefined) {
+    const advice =
+      "none on the shelf for this formulation in this light: everything here is a guess from tables until an induction time and one uncured layer are read";
+    return tableOf({ caption, rows: [{ about: "no readings on the window", before: advice, after: null }] });
+  }
+  const readings = learnt.readings.map(({ reading, value, u, unit, surprise }) => ({
+    about: reading,
+    before: `${numberText(Math.abs(surprise), 2)} standard deviations ${surprise < 0 ? "less" : "more"} than expected`,
+    after: `read ${numberText(value)} ± ${numberText(u)} ${unit}`,
+  }));
+  const figures = learnt.figures.map(({ figure, before, after }) => ({
+    about: figure,
+    before: `× ${intervalText(before)}`,
+    after: `× ${intervalText(after)}`,
+  }));
+  return tableOf({
+    caption: `${caption}, with 95 % intervals. ${learnt.source}`,
+    rows: [...readings, ...figures],
+    columns: [
+      { key: "about", name: "reading or figure" },
+      { key: "before", name: "before", align: "right" },
+      { key: "after", name: "after", align: "right" },
+    ],
+  });
+}
+
+/**
+ * Which resistance rules, in a sentence with what follows from it.
+ * @example
+ * ```ts
+ * import { resistanceOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { resistanceText } from "resinwright/notebook";
+ * const { brief, ...work } = openBrief("data/briefs/flow-cell.json");
+ * const window = { ...brief.window, film: "FEP" };
+ * resistanceText(resistanceOf({ ...work, brief: { ...brief, window } })).slice(0, 15); // → "The film rules:"
+ * ```
+ */
+export function resistanceText({
+  rules,
+  filmShare,
+  filmRulesShare,
+  neverCuresShare,
+}: ResistanceEstimate): string {
+  if (rules === "nothing cures" || filmShare === undefined) {
+    return `Nothing cures in ${sharePercent(neverCuresShare)} % of the draws: oxygen comes in faster than this light burns it. More light, more initiator or a tighter film comes first.`;
+  }
+  const percent = intervalText({
+    value: 100 * filmShare.value,
+    low: 100 * filmShare.low,
+    high: 100 * filmShare.high,
+  });
+  const follows =
+    rules === "film"
+      ? "a thinner or more open film and more oxygen below thicken the zone about one to one; viscosity hardly counts"
+      : "the zone goes with square roots of light and gas; viscosity and temperature count, the film little";
+  return `The ${rules} rules: ${percent} % of the fall in oxygen happens across the film, more than half in ${sharePercent(filmRulesShare)} % of the draws, so ${follows}. The gas counts as mixed; where it stands still, it adds a resistance that is not in here.`;
+}
+
+/**
+ * What changes would do, the strongest effect on the dead zone first: each quantity then, and its factor.
+ * @example
+ * ```ts
+ * import { compareChanges, usualChanges } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { changeTable } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const changes = usualChanges(work).filter(({ change }) => change.endsWith("the light"));
+ * changeTable(compareChanges({ ...work, changes, draws: 200 })).rows.length; // → 2
+ * ```
+ */
+export function changeTable({ effects, notModelled }: ChangeComparison): TableContent {
+  const withGel = effects.some(({ gelTime_s }) => gelTime_s !== undefined);
+  return tableOf({
+    caption: `What a change would do, with 95 % intervals of the factor. ${notModelled.join(" ")}`,
+    rows: effects.map(({ change, deadZone_um, inductionTime_s, gelTime_s }) => ({
+      change,
+      deadZone_um: deadZone_um === undefined ? "never cures" : numberText(deadZone_um.then.value, 2),
+      zoneFactor: deadZone_um === undefined ? null : `× ${intervalText(deadZone_um.factor)}`,
+      inductionFactor: inductionTime_s === undefined ? null : `× ${intervalText(inductionTime_s.factor)}`,
+      gelFactor: gelTime_s === undefined ? null : `× ${intervalText(gelTime_s.factor)}`,
+    })),
+    columns: [
+      { key: "change" },
+      { key: "deadZone_um", align: "right" },
+      { key: "zoneFactor", name: "dead zone", align: "right" },
+      { key: "inductionFactor", name: "induction time", align: "right" },
+      ...(withGel ? [{ key: "gelFactor", name: "time to first gel", align: "right" as const }] : []),
+    ],
+  });
+}
+
+/**
+ * The factors on the dead zone as a figure, without the changes after which there is no zone; undefined where none is left.
+ * @example
+ * ```ts
+ * import { compareChanges, usualChanges } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { changeFigure } from "resinwright/notebook";
+ * const work = openBrief("data/briefs/flow-cell.json");
+ * const changes = usualChanges(work).filter(({ change }) => change.endsWith("the light"));
+ * const figure = changeFigure(compareChanges({ ...work, changes, draws: 200 }), "Flow-cell resin");
+ * figure?.table.rows.length; // → 2
+ * ```
+ */
+export function changeFigure({ effects }: ChangeComparison, conditions: string): FigureContent | undefined {
+  const rows = effects.flatMap(({ change, deadZone_um }) =>
+    deadZone_um === undefined || deadZone_um.factor.low <= 0
+      ? []
+      : [{ label: change, ...deadZone_um.factor }],
+  );
+  if (rows.length === 0) return undefined;
+  return intervalFigure({
+    caption: "Factor on the dead zone, change by change; changes after which there is none are left out",
+    conditions,
+    axis: { label: "dead zone then over dead zone now", logarithmic: true },
+    rows,
+  });
+}
