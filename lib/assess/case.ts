@@ -42,9 +42,13 @@ export function uncertain(
 export function figureOf(ingredient: Ingredient, figure: keyof IngredientFigures): Uncertain | undefined {
   const stated = ingredient[figure];
   if (stated === undefined) return undefined;
+  const known = figureInputs.get(stated);
+  if (known !== undefined) return known;
   const lot = ingredient.lot?.measured.includes(figure) ? ` (lot ${ingredient.lot.id})` : "";
   const label = `${figureTitles[figure]} of ${ingredient.id}${lot}`;
-  return uncertain(label, stated, spreadOf(figure), limits[figure]);
+  const input = uncertain(label, stated, spreadOf(figure), limits[figure]);
+  figureInputs.set(stated, input);
+  return input;
 }
 
 /** A class constant. */
@@ -75,6 +79,8 @@ export function layerCureDepth({ brief }: Pick<Case, "brief">): number {
   return brief.cureDepthPerLayer * brief.layerThickness_um;
 }
 
+/** Of an ingredient's figures, which are read so often that even making the label would cost. */
+const figureInputs = new WeakMap<SourcedValue, Uncertain>();
 const inputs = new WeakMap<SourcedValue, Map<string, Uncertain>>();
 
 function inputsOf(stated: SourcedValue): Map<string, Uncertain> {

@@ -76,60 +76,62 @@ export function lightModel(input: Case): (read: Read) => LightInResin {
   return (read) => {
     const engine = engineAt(read);
     const density_gcm3 = densityOf(formulation, figureReader(read));
-    const taken = substances.map(({ massFraction, scale, molarMass, spectrum, radicals }) => {
-      const factor = read(scale);
-      return {
-        radicalsPerPhoton: radicals && read(radicals),
-        molarAbsorptions_Lmolcm: absorptionsOn(engine, spectrum).map((eps) => factor * eps),
-        concentration_molL: absorberConcentration({
-          massFraction,
-          density_gcm3,
-          molarMass_gmol: read(molarMass),
-        }),
-      };
-    });
-    const background_percm = read(background);
+    const taken = substances.map(({ massFraction, scale, molarMass, spectrum, radicals }) => ({
+      radicalsPerPhoton: radicals && read(radicals),
+      molarAbsorptions_Lmolcm: absorptionsOn(engine, spectrum),
+      // The scale of the spectrum moves the absorption as the concentration does.
+      concentration_molL:
+        read(scale) * absorberConcentration({ massFraction, density_gcm3, molarMass_gmol: read(molarMass) }),
+    }));
     const napierianAbsorptions_percm = absorptionSpectrum({
       absorbers: taken,
-      backgrounds_percm: engine.shares.map(() => background_percm),
+      backgrounds_percm: new Float64Array(engine.shares.length).fill(read(background)),
     });
-    const initiators = taken.filter(({ radicalsPerPhoton }) => radicalsPerPhoton !== undefined);
-    const initiatorAbsorption_percm = absorptionCoefficient({
-      absorbers: initiators.map((one) => ({
+    const initiators = taken
+      .filter(({ radicalsPerPhoton }) => radicalsPerPhoton !== undefined)
+      .map((one) => ({
         ...one,
         molarAbsorption_Lmolcm: meanOver(engine, one.molarAbsorptions_Lmolcm),
-      })),
+        radicals_molL: one.radicalsPerPhoton! * one.concentration_molL,
+      }));
+    const absorbed = absorptionCoefficient({ absorbers: initiators, background_percm: 0 });
+    const started = absorptionCoefficient({
+      absorbers: initiators.map((one) => ({ ...one, concentration_molL: one.radicals_molL })),
       background_percm: 0,
     });
-    // Radicals started at each node, in the unit of the absorption.
-    const started = engine.shares.map((_, k) =>
-      initiators.reduce(
-        (sum, { radicalsPerPhoton, molarAbsorptions_Lmolcm: eps, concentration_molL }) =>
-          sum + Math.LN10 * radicalsPerPhoton! * eps[k]! * concentration_molL,
-        0,
-      ),
-    );
     return {
       napierianAbsorption_percm: meanOver(engine, napierianAbsorptions_percm),
-      initiatorAbsorption_percm,
-      radicalsPerPhoton:
-        initiatorAbsorption_percm > 0 ? meanOver(engine, started) / initiatorAbsorption_percm : 0,
+      initiatorAbsorption_percm: absorbed,
+      radicalsPerPhoton: absorbed > 0 ? started / absorbed : 0,
       wavelength_nm: meanOver(engine, engine.wavelengths_nm),
       napierianAbsorptions_percm,
-      starting: byRadicals(engine, started),
+      starting: byRadicals(engine, initiators),
     };
   };
 }
 
 /** A photon carries energy in inverse proportion to its wavelength, so a share of power is a share of photons times 1/nm. */
-function byRadicals({ wavelengths_nm, shares }: LightEngine, started: readonly number[]): LightEngine {
-  const parts = shares.map((share, k) => share * wavelengths_nm[k]! * started[k]!);
+function byRadicals(
+  { wavelengths_nm, shares }: LightEngine,
+  initiators: readonly {
+    readonly molarAbsorptions_Lmolcm: readonly number[];
+    readonly radicals_molL: number;
+  }[],
+): LightEngine {
+  const parts = new Array<number>(shares.length).fill(0);
+  for (const { molarAbsorptions_Lmolcm: eps, radicals_molL } of initiators)
+    for (let k = 0; k < parts.length; k++)
+      parts[k]! += shares[k]! * wavelengths_nm[k]! * eps[k]! * radicals_molL;
   const total = parts.reduce((sum, part) => sum + part, 0);
-  return { wavelengths_nm, shares: total > 0 ? parts.map((part) => part / total) : shares };
+  if (total === 0) return { wavelengths_nm, shares };
+  for (let k = 0; k < parts.length; k++) parts[k]! /= total;
+  return { wavelengths_nm, shares: parts };
 }
 
 function meanOver({ shares }: LightEngine, values: ArrayLike<number>): number {
-  return shares.reduce((sum, share, k) => sum + share * values[k]!, 0);
+  let mean = 0;
+  for (let k = 0; k < shares.length; k++) mean += shares[k]! * values[k]!;
+  return mean;
 }
 
 /** A spectrum is one engine for all draws; a nominal wavelength is one node, itself in doubt. */

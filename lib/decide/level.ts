@@ -33,6 +33,7 @@ export interface LevelRefused {
   readonly sources: readonly UsedSource[];
 }
 
+/** A level of one initiator or absorber, or why there is none. */
 export type LevelAnswer = LevelFound | LevelRefused;
 
 /** Nobody puts more than a tenth of the mass of an initiator or absorber into a resin (common practice). @internal */

@@ -2,6 +2,7 @@
 // on layers, conversion and gel. The door of the topic; one model a file stands in the folder beside it.
 export * from "./cure/absorberLevel.js";
 export * from "./cure/bendingCurve.js";
+export * from "./cure/bleachedCureDepth.js";
 export * from "./cure/broadInitiatorLevel.js";
 export * from "./cure/conversion.js";
 export * from "./cure/conversionTime.js";

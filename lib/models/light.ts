@@ -4,6 +4,7 @@ export { absorbedShares, type AbsorbedShares, type AbsorbingComponent } from "./
 export * from "./light/absorption.js";
 export * from "./light/actinometer.js";
 export * from "./light/bleaching.js";
+export { bleachedBesideAbsorber } from "./light/bleachingBeside.js";
 export {
   absorptionSpectrum,
   broadTransmittedFraction,
