@@ -4,6 +4,7 @@
 import { createHash } from "node:crypto";
 import type { Case } from "../assess/case.js";
 import { InputError } from "../door.js";
+import type { CureDepthSeries } from "../recipe/cureDepths.js";
 import type { Formulation } from "../recipe/formulation.js";
 import type { Shelf } from "../recipe/shelf.js";
 
@@ -11,8 +12,8 @@ import type { Shelf } from "../recipe/shelf.js";
  * SHA-256, as 64 hex digits, over the data that a case uses.
  *
  * In it: the formulation with its ingredients as they stand in the case (lots and calibration included), their spectra and that
- * of the light engine, the film, the class constants, interactions between its liquids, readings that name one of them, and the
- * brief. Not in it: what else stands on the shelf, where files lie, prices and safety rules. The same hash, library version,
+ * of the light engine, the film, the class constants, interactions between its liquids, readings that name one of them, cure
+ * depths of these ingredients, readings on the window with this formulation, what calibration made of them, and the brief. Not in it: what else stands on the shelf, where files lie, prices and safety rules. The same hash, library version,
  * draws and seed give the same assessment. Of a formulation alone, as a batch is weighed out from, it is the hash of the
  * formulation with its ingredients.
  *
@@ -43,7 +44,7 @@ function dataUsedBy(work: Case | { readonly formulation: Formulation }): object 
   const { id, title, components } = work.formulation;
   const formulation = { id, title, components };
   if (!("brief" in work)) return { formulation };
-  const { brief, shelf } = work;
+  const { brief, shelf, oxygenCorrection } = work;
   const inIt = new Set(components.map(({ ingredient }) => ingredient.id));
   const spectra = new Set([...components.map(({ ingredient }) => ingredient.spectrum), brief.light.spectrum]);
   return {
@@ -55,7 +56,19 @@ function dataUsedBy(work: Case | { readonly formulation: Formulation }): object 
     constants: shelf.constants,
     interactions: shelf.interactions.filter(({ pair }) => pair.every((one) => inIt.has(one))),
     readings: readingsOf(shelf, inIt),
+    cureDepths: shelf.cureDepths.filter((series) => ofThisResin(series, inIt)),
+    workingCurves: shelf.workingCurves.filter(({ series }) => ofThisResin(series, inIt)),
+    windowReadings: shelf.windowReadings.filter(({ formulation: on }) => on === id),
+    oxygenCorrection: oxygenCorrection && {
+      ...oxygenCorrection,
+      takenOn: dataUsedBy(oxygenCorrection.takenOn),
+    },
   };
+}
+
+/** A working curve counts for the same ingredients, in whatever amounts. */
+function ofThisResin({ parts }: CureDepthSeries, inIt: ReadonlySet<string>): boolean {
+  return parts.every(({ ingredient }) => inIt.has(ingredient));
 }
 
 /** Readings of a liquid correct its own viscosity too, whatever it was blended with. */

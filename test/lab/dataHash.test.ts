@@ -5,28 +5,12 @@ import { InputError } from "../../lib/door.js";
 import { calibrate } from "../../lib/decide/calibrate.js";
 import { dataHashOf } from "../../lib/lab/dataHash.js";
 import { formulate } from "../../lib/recipe/formulation.js";
+import type { CureDepthSeries } from "../../lib/recipe/cureDepths.js";
 import type { BlendReadings } from "../../lib/recipe/readings.js";
 import { withInteraction, type Shelf } from "../../lib/recipe/shelf.js";
+import type { WindowReadings } from "../../lib/recipe/windowReadings.js";
 import { brief, shelf, sure } from "../fixtures.js";
 
-const readingsOf = (first: string, second: string): BlendReadings => ({
-  id: `${first}-${second}`,
-  pair: [first, second],
-  temperature_C: 25,
-  relativeU: 0.03,
-  massFractions: [1, 0.7, 0.4, 0],
-  viscosities_mPas: [9000, 900, 120, 11],
-  source: "made up for a test",
-  status: "invented for the demo",
-});
-const G = (value: number) => sure(value, 0.1);
-const stocked: Shelf = {
-  ...[
-    { pair: ["THICK", "THIN"], basis: "mass", G: G(-1), temperature_C: 20 } as const,
-    { pair: ["MID", "THIN"], basis: "mass", G: G(-2), temperature_C: 25 } as const,
-  ].reduce(withInteraction, shelf),
-  readings: [readingsOf("THICK", "THIN"), readingsOf("THICK", "MID"), readingsOf("MID", "OTHER")],
-};
 const recipe = {
   id: "made",
   title: "made for a test",
@@ -37,6 +21,60 @@ const recipe = {
     { ingredient: "PI", mass_pct: 1.5 },
     { ingredient: "AB", mass_pct: 0.5 },
   ],
+};
+const made = { source: "made up for a test", status: "invented for the demo" } as const;
+const depthsOf = (id: string, parts: CureDepthSeries["parts"]): CureDepthSeries => ({
+  id,
+  kind: "cure depths",
+  formulation: "made",
+  parts,
+  light: { spectrum: "lamp", irradiance_mWcm2: sure(8, 0.4) },
+  depthU_um: 4,
+  spots: [
+    [8, 41],
+    [12, 66],
+    [20, 88],
+    [20, 94],
+    [35, 121],
+    [70, 153],
+  ].map(([exposure_mJcm2, cureDepth_um]) => ({
+    exposure_mJcm2: exposure_mJcm2!,
+    cureDepth_um: cureDepth_um!,
+    reading: "measured",
+  })),
+  ...made,
+});
+const windowReadingsOf = (formulation: string): WindowReadings => ({
+  kind: "window",
+  id: `window of ${formulation}`,
+  formulation,
+  spectrum: "lamp",
+  temperature_C: 25,
+  film: "OPEN",
+  filmThickness_um: { value: 200, u: 10 },
+  gasPressure_Pa: 101325,
+  inductionTimes: [{ until: "first gel", irradiance_mWcm2: 8, time_s: { value: 1, u: 0.2 } }],
+  uncuredLayers: [{ irradiance_mWcm2: 8, gasOxygenFraction: 0.2095, thickness_um: { value: 15, u: 2 } }],
+  ...made,
+});
+const readingsOf = (first: string, second: string): BlendReadings => ({
+  id: `${first}-${second}`,
+  pair: [first, second],
+  temperature_C: 25,
+  relativeU: 0.03,
+  massFractions: [1, 0.7, 0.4, 0],
+  viscosities_mPas: [9000, 900, 120, 11],
+  ...made,
+});
+const G = (value: number) => sure(value, 0.1);
+const stocked: Shelf = {
+  ...[
+    { pair: ["THICK", "THIN"], basis: "mass", G: G(-1), temperature_C: 20 } as const,
+    { pair: ["MID", "THIN"], basis: "mass", G: G(-2), temperature_C: 25 } as const,
+  ].reduce(withInteraction, shelf),
+  readings: [readingsOf("THICK", "THIN"), readingsOf("THICK", "MID"), readingsOf("MID", "OTHER")],
+  cureDepths: [depthsOf("ours", recipe.parts), depthsOf("other", [{ ingredient: "MID", mass_pct: 100 }])],
+  windowReadings: [windowReadingsOf("made"), windowReadingsOf("other")],
 };
 const workOn = (on: Shelf, change: Partial<Case["brief"]> = {}): Case => ({
   brief: { ...brief, targets: { viscosity_mPas: { max: 300 } }, ...change },
@@ -74,6 +112,14 @@ const assessed = (one: Case) => {
 };
 
 describe("dataHashOf", () => {
+  it("of a calibrated case holds what calibration made of the measurements", () => {
+    const known = calibrate(work);
+    const all = dataHashOf(known);
+    expect(all).not.toBe(hash);
+    expect(dataHashOf({ ...known, oxygenCorrection: undefined })).not.toBe(all);
+    expect(dataHashOf({ ...known, shelf: { ...known.shelf, workingCurves: [] } })).not.toBe(all);
+  });
+
   it("changes with every figure that changes an assessment", () => {
     const before = assessed(work);
     const outcomes = { told: 0, unused: 0, changedBoth: 0 };
@@ -92,7 +138,7 @@ describe("dataHashOf", () => {
     // About a hundred figures move a result; those of what is not in the formulation move neither.
     expect(outcomes.changedBoth).toBeGreaterThan(80);
     expect(outcomes.unused).toBeGreaterThan(10);
-  });
+  }, 300_000);
 
   it("stays where something unused changes", () => {
     const without = (key: "ingredients" | "lots" | "spectra", id: string) => {
@@ -109,6 +155,10 @@ describe("dataHashOf", () => {
     expect(dataHashOf({ ...work, shelf: { ...stocked, interactions } })).toBe(hash);
     const readings = stocked.readings.slice(0, 2);
     expect(dataHashOf({ ...work, shelf: { ...stocked, readings } })).toBe(hash);
+    const cureDepths = stocked.cureDepths.slice(0, 1);
+    expect(dataHashOf({ ...work, shelf: { ...stocked, cureDepths } })).toBe(hash);
+    const windowReadings = stocked.windowReadings.slice(0, 1);
+    expect(dataHashOf({ ...work, shelf: { ...stocked, windowReadings } })).toBe(hash);
   });
 
   it.each<[string, Case]>([
