@@ -218,7 +218,7 @@ export function sliderHtml({ label, shown, steps }: Moments, id: string): string
 
 /** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
 function tableClass({ columns, rows }: TableContent): string {
-  const classes = [columns.length > 5 && "many", columns.length > 8 && "crowded", rows.length > 12 && "long"];
+  const classes = [columns.length > 5 && "many", columns.length > 8 && "crowded", rows.length > 6 && "long"];
   const named = classes.filter((name) => name !== false);
   return named.length === 0 ? "" : ` class="${named.join(" ")}"`;
 }

@@ -7,6 +7,8 @@ import { darkPalette, lightPalette } from "./palette.js";
 
 // A4 less its margins, in CSS pixels.
 const printWidth_px = 620;
+// Two figures and what belongs to them then fit on a page.
+const printHeight_px = 340;
 
 /** The script of every notebook page. */
 export const pageScript = `"use strict";
@@ -27,7 +29,7 @@ export const pageScript = `"use strict";
   const draw = ({ plot, data, layout }) => {
     const colors = prefersDark.matches && !printing ? dark : light;
     const width = printing ? ${printWidth_px} : plot.clientWidth;
-    const look = figureLook(layout, colors);
+    const look = figureLook(printing ? { height: ${printHeight_px}, ...layout } : layout, colors);
     Plotly.react(plot, data, { ...look, width, autosize: false }, config);
   };
   const drawAll = () => figures.forEach(draw);

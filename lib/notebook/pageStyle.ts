@@ -9,6 +9,17 @@ function variables(palette: Palette): string {
     .join(" ");
 }
 
+/** The papers a page can be printed on. */
+export const papers = ["A4", "Letter"] as const;
+export type Paper = (typeof papers)[number];
+
+const sheet = (paper: Paper) => `@page { size: ${paper}; margin: 18mm 20mm; }`;
+
+/** The page `html`, to be printed on another paper than A4. */
+export function onPaper(html: string, paper: Paper): string {
+  return html.replace(sheet("A4"), sheet(paper));
+}
+
 /** The style sheet of every page. */
 export const pageStyle = `
 :root { color-scheme: light dark; ${variables(lightPalette)} }
@@ -166,7 +177,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
 }
 @media (prefers-reduced-motion: no-preference) { html { scroll-behavior: smooth; } }
 
-@page { size: A4; margin: 18mm 20mm; }
+${sheet("A4")}
 @media print {
   html { font-size: 10pt; line-height: 1.45; background: #fff; }
   .bar, .skip, .contents, .copy, .buttons, .panel input[type="range"], details:not(.panel-warnings) { display: none; }
@@ -183,6 +194,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
   figure, table, tr, img, .formula, blockquote { break-inside: avoid; }
   .long { break-inside: auto; }
   thead { display: table-header-group; }
+  tbody tr:first-child, tbody tr:last-child { break-before: avoid; }
   .scroll { overflow: visible; }
   .moments label, .moments input { display: none; }
   pre { white-space: pre-wrap; overflow-wrap: anywhere; }

@@ -12,8 +12,8 @@ import { chromium } from "playwright-core";
 
 const shotsAt = process.argv.indexOf("--shots");
 const shots = shotsAt === -1 ? undefined : process.argv[shotsAt + 1];
-const startLimit_ms = 120_000;
-const notebookLimit_ms = 240_000;
+const startLimit_ms = 240_000;
+const notebookLimit_ms = 480_000;
 
 let passed = 0;
 let failed = 0;

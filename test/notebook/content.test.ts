@@ -137,8 +137,9 @@ describe("tableHtml", () => {
   });
 
   it("marks a long table, which print may break between pages", () => {
-    const rows = Array.from({ length: 13 }, () => table.rows[0]!);
+    const rows = Array.from({ length: 7 }, () => table.rows[0]!);
     expect(tableHtml({ ...table, rows })).toMatch(/^<table class="long">/);
+    expect(tableHtml({ ...table, rows: rows.slice(1) })).toMatch(/^<table>/);
   });
 
   it("keeps hostile text as text", () => {

@@ -71,7 +71,8 @@ describe("in a notebook", () => {
       'aria-label="Bars of 1 input by share of the doubt, largest first: &lt;b&gt;a&lt;/b&gt; 100 %."',
     );
     expect(html).toContain("Data behind this figure");
-    expect(html).toContain("files/node_modules/plotly.js-dist/plotly.js");
+    expect(html).toContain("<p>Run this cell to see the drawing.</p>");
+    expect(html).toContain("files/node_modules/plotly.js-cartesian-dist-min/plotly-cartesian.min.js");
   });
 
   it("a table arrives as its data and as HTML", async () => {

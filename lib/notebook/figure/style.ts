@@ -41,11 +41,11 @@ export function tinted(color: string, opacity = tintOpacity): string {
   return `rgba(${r}, ${g}, ${b}, ${opacity})`;
 }
 
-/** The layout every figure shares, around its own axes and shapes. */
+/** The layout every figure shares, around its own axes and shapes; one that needs no height of its own takes that of the page. */
 export function layoutOf({
   x,
   y,
-  height = 420,
+  height,
   ...parts
 }: {
   x: PlotlyPart;
@@ -57,7 +57,7 @@ export function layoutOf({
 }): object {
   return {
     autosize: true,
-    height,
+    ...(height === undefined ? {} : { height }),
     paper_bgcolor: "rgba(0,0,0,0)",
     plot_bgcolor: "rgba(0,0,0,0)",
     font: { family: "inherit", size: 13, color: neutralColor },
