@@ -87,7 +87,7 @@ export { penetrationDepthOf } from "./assess/light.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
-export { assess, verdictOf, type Assessment } from "./assess/assess.js";
+export { assess, avoidedIn, verdictOf, type Assessment } from "./assess/assess.js";
 
 export { evenSteps, mapOver, nearestWithin, sweep, type Curve } from "./decide/sweep.js";
 export { calibrate, fitReadings, interactionFrom } from "./decide/calibrate.js";

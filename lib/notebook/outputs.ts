@@ -48,7 +48,7 @@ function contentOf(html: string, where: string): Content | undefined {
 function contentHtml(content: Content, counts: Counts): string {
   if (content.kind === "sheet") {
     counts.sheets.push(content);
-    return `<p>To print and write on: ${sheetLinks(content)}</p>\n`;
+    return `<p>${sheetLinks(content)}</p>\n`;
   }
   if (content.kind === "figure") return figureHtml(content, ++counts.figures);
   return scrolling(tableHtml(content, `Table ${++counts.tables}.`), `Table ${counts.tables}`);

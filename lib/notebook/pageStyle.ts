@@ -101,6 +101,7 @@ figcaption .name { color: var(--ink); }
 .list a { font-size: 1.125rem; font-weight: 600; }
 .list p { margin: 0.375rem 0 0; color: var(--muted); }
 .list .decided { color: var(--ink); }
+.list .sheets a { font-size: 1rem; font-weight: 400; }
 
 @media (min-width: 75rem) {
   .bar, .page, .foot { margin-left: max(50% - 22.5rem, 18rem); }
