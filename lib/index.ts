@@ -99,7 +99,7 @@ export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxy
 export type { OxygenCorrection } from "./assess/windowCorrection.js";
 export { resistanceOf, type ResistanceEstimate } from "./assess/resistance.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
-export { assess, verdictOf, type Assessment } from "./assess/assess.js";
+export { assess, avoidedIn, verdictOf, type Assessment } from "./assess/assess.js";
 
 export {
   compareChanges,

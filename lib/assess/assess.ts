@@ -1,6 +1,7 @@
 // Every property of one formulation under one brief, from the same draws, with a verdict for each target.
 
-import type { PropertyName, Target } from "../recipe/brief.js";
+import type { Brief, PropertyName, Target } from "../recipe/brief.js";
+import type { Formulation } from "../recipe/formulation.js";
 import { propertyNames } from "../recipe/propertyNames.js";
 import type { UsedSource, Warning } from "../result.js";
 import { avoidReasons } from "./avoided.js";
@@ -114,7 +115,25 @@ const drawers: Readonly<
   inductionTime_s: drawInductionTime,
 };
 
-function avoidedIn({ brief, formulation }: Case): { ingredient: string; reason: string }[] {
+/**
+ * What a formulation holds that its brief says to avoid, by name or by a hazard statement it carries, each with the reason.
+ * @example
+ * ```ts
+ * import { avoidedIn, formulate } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * const { brief, shelf } = openBrief("data/briefs/flow-cell.json");
+ * const parts = [{ ingredient: "IBOA", mass_pct: 99 }, { ingredient: "TPO", mass_pct: 1 }];
+ * const formulation = formulate({ recipe: { id: "two", title: "two parts", normalise: false, parts }, shelf });
+ * avoidedIn({ brief, formulation })[0]; // → { ingredient: "TPO", reason: "reprotoxic category 1B in the EU since 2025-09-01" }
+ * ```
+ */
+export function avoidedIn({
+  brief,
+  formulation,
+}: {
+  brief: Pick<Brief, "avoid">;
+  formulation: Formulation;
+}): { ingredient: string; reason: string }[] {
   return formulation.components
     .filter(({ massFraction }) => massFraction > 0)
     .flatMap(({ ingredient }) =>

@@ -4,7 +4,7 @@ import type { Brief } from "../recipe/brief.js";
 import type { Ingredient } from "../recipe/ingredient.js";
 
 /** The brief's reasons to avoid an ingredient; none where it may be used. */
-export function avoidReasons({ avoid }: Brief, ingredient: Ingredient): string[] {
+export function avoidReasons({ avoid }: Pick<Brief, "avoid">, ingredient: Ingredient): string[] {
   return avoid
     .filter(
       ({ ingredient: id, hazard }) =>

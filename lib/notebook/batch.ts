@@ -139,7 +139,7 @@ export function weighedTable({ sheet, made }: { sheet: WeighOutSheet; made: AsMa
  * const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
  * const sheet = weighOut({ formulation, batch_g: 500, balance });
  * const weighings = sheet.portions.map(({ line, target_g }) => ({ line, mass_g: target_g }));
- * madeTable(asMade({ sheet, weighings })).rows[0]; // → ["UDMA", "55", "55.00000 (54.99966 to 55.00034)", "0", "within"]
+ * madeTable(asMade({ sheet, weighings })).rows[0]; // → ["UDMA", "55", "55.00000 (54.99954 to 55.00046)", "0", "within"]
  * ```
  */
 export function madeTable({ formulation, parts }: AsMade): TableContent {
@@ -154,14 +154,14 @@ export function madeTable({ formulation, parts }: AsMade): TableContent {
         high: 100 * (massFraction + 1.96 * u),
       },
       change_pct: numberText(100 * relativeChange, 2),
-      note: within ? "within" : "off by more than was asked",
+      note: within ? "within" : "too far off",
     })),
     columns: [
       { key: "ingredient" },
       { key: "planned_pct", name: "planned", unit: "mass %", align: "right" },
       { key: "made_pct", name: "as made", unit: "mass %", align: "right" },
       { key: "change_pct", name: "off by", unit: "% of itself", align: "right" },
-      { key: "note" },
+      { key: "note", name: "against what was asked" },
     ],
   });
 }
@@ -217,7 +217,7 @@ export function batchChangeTable({
  * import { rescueTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const batch = openBatch({ ...work, draws: 200 })!;
- * rescueTable(batch)?.rows[0]; // → ["IBOA", "141.032", "17.416"]
+ * rescueTable(batch)?.rows[0]; // → ["IBOA", "141.032", "90.377"]
  * ```
  */
 export function rescueTable({

@@ -51,7 +51,7 @@ export function contentIn(html: string, where: string): Content | undefined {
 function contentHtml(content: Content, counts: Counts): string {
   if (content.kind === "sheet") {
     counts.sheets.push(content);
-    return `<p>To print and write on: ${sheetLinks(content)}</p>\n`;
+    return `<p>${sheetLinks(content)}</p>\n`;
   }
   if (content.kind === "figure") return figureHtml(content, ++counts.figures);
   if (content.kind === "panel") return panelHtml(content, ++counts.panels);

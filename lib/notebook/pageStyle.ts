@@ -154,6 +154,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
 .list a { font-size: 1.125rem; font-weight: 600; }
 .list p { margin: 0.375rem 0 0; color: var(--muted); }
 .list .decided { color: var(--ink); }
+.list .sheets a { font-size: 1rem; font-weight: 400; }
 
 @media (min-width: 75rem) {
   .bar, .page, .foot { margin-left: max(50% - 22.5rem, 18rem); }

@@ -2,6 +2,7 @@
 // The page and its style stand in the folder beside this file.
 
 import { InputError } from "../door.js";
+import { avoidedIn } from "../assess/assess.js";
 import type { HazardScreening } from "../lab/hazards.js";
 import type { MasterBatch, Portion, WeighOutSheet } from "../lab/batch.js";
 import { isHonest } from "../lab/batch/balance.js";
@@ -20,7 +21,8 @@ export interface SheetInput {
   readonly sheet: WeighOutSheet;
   /** The screening of the same formulation. */
   readonly screening: HazardScreening;
-  readonly brief: Pick<Brief, "title">;
+  /** What it says to avoid stands as a warning on the sheet. */
+  readonly brief: Pick<Brief, "title" | "avoid">;
   /** What the names of its files begin with: small letters, digits, hyphens; "weigh-out" unless given. */
   readonly name?: string;
 }
@@ -53,7 +55,12 @@ export function sheetOf({ sheet, screening, brief, name = "weigh-out" }: SheetIn
     title: `Weigh out ${numberText(batch_g, 9)} g: ${formulation.title}`,
     label: `${formulation.id}, ${numberText(batch_g, 9)} g`,
     facts: factsOf(sheet, brief),
-    warnings: sheet.warnings.map(({ message }) => message),
+    warnings: [
+      ...avoidedIn({ brief, formulation }).map(
+        ({ ingredient, reason }) => `Do not mix this: the brief says to avoid ${ingredient} (${reason}).`,
+      ),
+      ...sheet.warnings.map(({ message }) => `${message}.`),
+    ],
     protection: screening.protection.map(({ text }) => text),
     masterBatches: sheet.masterBatches.map((one) => masterBatchOf(one, sheet)),
     portions: sheet.portions.map((portion) => portionOf(portion, sheet)),

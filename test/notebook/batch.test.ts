@@ -140,7 +140,7 @@ describe("madeTable", () => {
   it("names what is off by more than was asked", () => {
     const { rows } = madeTable(back({ 4: 150 }).made);
     const mid = rows.find(([ingredient]) => ingredient === "MID")!;
-    expect(mid.slice(3)).toEqual(["21", "off by more than was asked"]);
+    expect(mid.slice(3)).toEqual(["21", "too far off"]);
   });
 });
 

@@ -324,7 +324,7 @@ describe("a weigh-out sheet", () => {
 
   it("is linked from the page that shows it and handed on to be written beside it", () => {
     const { html: written, sheets } = page(shown(html(sheet)));
-    expect(mainOf(written)).toContain(`<p>To print and write on: ${links}</p>`);
+    expect(mainOf(written)).toContain(`<p>${links}</p>`);
     expect(mainOf(written)).not.toContain("live fallback");
     expect(sheets).toEqual([sheet]);
     expect(page(prose("a")).sheets).toEqual([]);

@@ -96,16 +96,24 @@ describe("sheetOf", () => {
       sheetOf({
         sheet: weighOut({ formulation: plain, batch_g, balance }),
         screening: screened(plain),
-        brief,
+        brief: { ...brief, avoid: [] },
       });
     const small = of(10);
     expect(small.portions.find(({ portion }) => portion === "PI")!.notes).toContain(
       "Too little for this balance: see the warning",
     );
     expect(small.warnings).toEqual([
-      "PI: 0.2 g is below the 1.6 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 80 g or use a balance whose minimum weight is 0.2 g",
+      "PI: 0.2 g is below the 1.6 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 80 g or use a balance whose minimum weight is 0.2 g.",
     ]);
     expect(of(1500).portions[0]!.notes).toContain("In 3 loads");
+  });
+
+  it("warns of what the brief says to avoid", () => {
+    const avoid = [{ ingredient: "BAPO", reason: "for a test" }];
+    expect(sheetOf({ sheet, screening, brief: { ...brief, avoid } }).warnings).toEqual([
+      "Do not mix this: the brief says to avoid BAPO (for a test).",
+    ]);
+    expect(content.warnings).toEqual([]);
   });
 
   it("gives size, volume, balance, limits and cost as facts", () => {
@@ -230,13 +238,13 @@ describe("weighOutPage", () => {
       origin,
     });
     expect(bare).not.toContain("Make first");
-    expect(bare).not.toContain("Stop: the balance cannot do this");
-    expect(page).not.toContain("Stop: the balance cannot do this");
+    expect(bare).not.toContain("Stop: read this first");
+    expect(page).not.toContain("Stop: read this first");
   });
 
   it("shows warnings before anything else is weighed", () => {
     const text = sheetHtml({ content: { ...content, warnings: ["PI: too little"] }, paper: "A4", origin });
-    expect(text.indexOf("PI: too little")).toBeGreaterThan(text.indexOf("Stop: the balance cannot do this"));
+    expect(text.indexOf("PI: too little")).toBeGreaterThan(text.indexOf("Stop: read this first"));
     expect(text.indexOf("PI: too little")).toBeLessThan(text.indexOf("Make first"));
   });
 

@@ -75,7 +75,7 @@ describe("the notebooks", () => {
       const batches = readRecords(records).filter(({ kind }) => kind === "batch");
       expect(batches.map(({ from, brief }) => [from, brief])).toEqual([["06-weigh-it-out", brief]]);
     },
-    300_000,
+    600_000,
   );
 
   it("06 says what to do for a formulation that nobody has weighed yet", async () => {

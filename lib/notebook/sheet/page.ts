@@ -53,7 +53,7 @@ function mainOf(content: SheetContent, paper: Paper, origin: Origin): string {
     `<p class="screen-only">Made to be printed across ${papers[paper]} paper and written on with a pen.</p>`,
     writtenFields,
     factsHtml(content, origin),
-    content.warnings.length === 0 ? "" : `<h2>Stop: the balance cannot do this</h2>${list(content.warnings)}`,
+    content.warnings.length === 0 ? "" : `<h2>Stop: read this first</h2>${list(content.warnings)}`,
     `<h2>Before a bottle is opened</h2>`,
     `<div class="side-by-side">${list(content.protection)}</div>`,
     `<p>${decides}</p>`,
