@@ -82,7 +82,7 @@ ${scrolling(tableHtml(table), `Data behind figure ${number}`)}</details>
 }
 
 function panelHtml(content: PanelContent, number: number): string {
-  return `<section class="panel" id="resinwright-panel-${number}" aria-label="Panel ${number}">
+  return `<section class="panel" id="resinwright-panel-${number}" aria-label="Panel ${number}: other settings">
 <script type="application/json">${toJson(content, "panel")}</script>
 <noscript><p>This panel computes in the page. It needs a browser that may run scripts; everything else on this page stands without.</p></noscript>
 </section>

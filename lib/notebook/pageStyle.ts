@@ -181,10 +181,13 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
 ${sheet("A4")}
 @media print {
   html { font-size: 10pt; line-height: 1.45; background: #fff; }
-  .bar, .skip, .contents, .copy, .buttons, .panel input[type="range"], details:not(.panel-warnings) { display: none; }
+  .bar, .skip, .contents, .copy, .panel .buttons, .panel input[type="range"], details:not(.panel-warnings) { display: none; }
   .panel-warnings summary { list-style: none; }
   .card, .control, .caution { break-inside: avoid; }
-  .amount input { border: 0; padding: 0; }
+  .panel { padding: 0; border: 0; }
+  .control { grid-template-columns: 16rem 11rem 1fr; padding-block: 0.125rem; }
+  .control .at-start { grid-column: 3; }
+  .amount input { border: 0; padding: 0; background: none; }
   .print-only { display: block; }
   .bar, .page, .foot { width: 100%; padding-block: 0; }
   .foot { margin-top: 2rem; padding-top: 0.5rem; }

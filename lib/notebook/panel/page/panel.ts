@@ -4,7 +4,6 @@
 
 import { assess, assessing } from "../../../assess/assess.js";
 import type { Case } from "../../../assess/case.js";
-import type { Property } from "../../../assess/property.js";
 import { InputError } from "../../../door.js";
 import { propertyNames } from "../../../recipe/propertyNames.js";
 import { numberText } from "../../digits.js";
@@ -56,7 +55,12 @@ function openPanel(section: HTMLElement): void {
     file.node,
   );
   for (const row of rows) row.mark(settings);
+  file.show(work, []);
   show(content.start);
+
+  function changed(): Control[] {
+    return controls.filter(({ field, start }) => settings[field] !== start);
+  }
 
   // An empty box is refused with the others that hold no number, where the settings are put in place.
   function move(field: keyof Settings, value: number | ""): void {
@@ -75,6 +79,7 @@ function openPanel(section: HTMLElement): void {
       const tried = attempt(() => {
         const tried = withSettings(work, settings);
         results.showStated(statedValues(tried));
+        file.show(tried, changed());
         return tried;
       });
       if (tried !== undefined) rest = setTimeout(() => settle(tried), REST_ms);
@@ -100,7 +105,7 @@ function openPanel(section: HTMLElement): void {
       return made;
     } catch (error) {
       if (!(error instanceof InputError)) throw error;
-      refusal.textContent = `${error.message}. The table stays as it was.`;
+      refusal.textContent = `${error.message}. Table and recipe stay as they were.`;
       results.showLast();
       section.removeAttribute("aria-busy");
       return undefined;
@@ -108,13 +113,11 @@ function openPanel(section: HTMLElement): void {
   }
 
   function show(reading: Reading): void {
-    const changed = controls.filter(({ field, start }) => settings[field] !== start);
     results.show(reading);
     warnings.replaceChildren(...reading.warnings.map((message) => element("li", {}, text(message))));
     if (reading.warnings.length === 0) warnings.append(element("li", {}, text("No warning.")));
-    file.show(withSettings(work, settings), changed);
-    status.textContent = statusText(reading, changed);
     section.removeAttribute("aria-busy");
+    status.textContent = statusText(reading, changed());
   }
 }
 
@@ -126,7 +129,7 @@ function statedValues(work: Case): string[] {
   const { properties } = assess({ ...work, draws: FEW_DRAWS });
   return propertyNames.map((name) => {
     const property = properties[name];
-    return property.outcome === "value" ? numberText((property as Property).value, 3) : "never cures";
+    return property.outcome === "value" ? numberText(property.value, 3) : "never cures";
   });
 }
 
@@ -137,7 +140,10 @@ function statusText({ rows, draws, level }: Reading, changed: readonly Control[]
     changed.length === 0
       ? "As in the brief"
       : `Changed from the brief: ${changed.map(({ label }) => label).join(", ")}`;
-  const targets = `${counted("meets")} of ${verdicts.length} targets met, ${counted("fails")} failed, ${counted("cannot tell")} cannot be told`;
+  const targets =
+    verdicts.length === 0
+      ? "The brief sets no target"
+      : `${counted("meets")} of ${verdicts.length} targets met, ${counted("fails")} failed, ${counted("cannot tell")} cannot be told`;
   return `${what}. ${targets}. ${numberText(100 * level)} % intervals from ${draws} draws.`;
 }
 
