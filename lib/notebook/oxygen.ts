@@ -1,7 +1,7 @@
 // How oxygen at a window is shown: a map of the dead zone, what readings changed, which resistance rules, what changes would do.
 
 import type { Case } from "../assess/case.js";
-import { deadZoneOf } from "../assess/oxygen.js";
+import { statedDeadZone } from "../assess/oxygen.js";
 import type { ResistanceEstimate } from "../assess/resistance.js";
 import type { ChangeComparison } from "../decide/changes.js";
 import type { LearntOxygen } from "../decide/calibrateOxygen.js";
@@ -32,19 +32,15 @@ export function deadZoneMap(work: Case): FigureContent {
   const around = (value: number) =>
     evenSteps({ from: value / 8, to: 8 * value, count: 13, logarithmic: true });
   const [x, y] = [around(power_mWcm2), around(film_um)];
-  const at = (power: number, thickness: number): number | null => {
-    const zone = deadZoneOf({
+  const at = (power: number, thickness: number): number | null =>
+    statedDeadZone({
       ...work,
-      draws: 20,
-      level: 0.9,
       brief: {
         ...brief,
         light: { ...light, irradiance_mWcm2: { ...light.irradiance_mWcm2, value: power } },
         window: { ...window, filmThickness_um: { ...window.filmThickness_um, value: thickness } },
       },
     });
-    return zone.outcome === "value" ? zone.value : null;
-  };
   const values = mapOver({ x, y, at });
   const known = values.flat().filter((value) => value !== null);
   // The thick end is the one that matters; six lines stay readable.

@@ -98,3 +98,13 @@ describe("changeTable and changeFigure", () => {
     expect(changeFigure(never, "A test")).toBeUndefined();
   });
 });
+
+describe("deadZoneMap, where hardly anything cures", () => {
+  it("is drawn all the same", () => {
+    const light = { ...brief.light, irradiance_mWcm2: sure(0.4) };
+    const { table } = deadZoneMap({ ...work, brief: { ...brief, light } });
+    const cells = table.rows.flatMap((row) => row.slice(1));
+    expect(cells).toContain(null);
+    expect(cells.some((cell) => typeof cell === "number")).toBe(true);
+  });
+});
