@@ -50,6 +50,12 @@ export function deadZoneOf(input: Case & DrawOptions): DeadZoneEstimate {
   return drawDeadZone(input, startDraws(input)).property;
 }
 
+/** The dead zone at the stated figures alone, µm, or null where nothing ever cures: for maps. @internal */
+export function statedDeadZone(input: Case): number | null {
+  const zone = deadZoneModel(input)(({ value }) => value);
+  return zone.outcome === "dead-zone" ? zone.thickness_um : null;
+}
+
 /** @internal */
 export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate> {
   const property = "deadZone_um" as const;
@@ -67,9 +73,15 @@ export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate>
     doubt: doubtShares(ranked, inputs, draws),
     sources: sourcesOf(inputs),
   };
-  if (stated.outcome === "never-cures")
+  if (stated.outcome === "never-cures" || cured.length === 0)
     return { values, property: { ...common, outcome: "never-cures", share } };
-  const interval = intervalOf({ stated: stated.thickness_um, values: cured, level: draws.level });
+  const { thickness_um: value } = stated;
+  const { level } = draws;
+  // Of too few that cure none can be left out at either end.
+  const interval =
+    cured.length < 2 / (1 - level)
+      ? { value, low: Math.min(value, ...cured), high: Math.max(value, ...cured), level }
+      : intervalOf({ stated: value, values: cured, level });
   return { values, property: { ...common, outcome: "value", ...interval, neverCuresShare: share } };
 }
 

@@ -21,6 +21,7 @@ export * from "./oxygen/steadyProfile.js";
 export * from "./oxygen/supplyCut.js";
 export * from "./oxygen/windowReadings.js";
 export type { CureRates } from "./oxygen/balance.js";
+export type { Bleaching } from "./oxygen/bleaching.js";
 export type { OxygenWindow } from "./oxygen/column.js";
 export type { PeroxylRates } from "./oxygen/fullRadicals.js";
 export type { LayerExposure } from "./oxygen/layerExposure.js";

@@ -1,11 +1,12 @@
 // How oxygen at a window is shown: a map of the dead zone, what readings changed, which resistance rules, what changes would do.
 
 import type { Case } from "../assess/case.js";
-import { deadZoneOf } from "../assess/oxygen.js";
+import { statedDeadZone } from "../assess/oxygen.js";
 import type { ResistanceEstimate } from "../assess/resistance.js";
 import type { ChangeComparison } from "../decide/changes.js";
 import type { LearntOxygen } from "../decide/calibrateOxygen.js";
 import { evenSteps, mapOver } from "../decide/sweep.js";
+import type { Interval } from "../result.js";
 import type { FigureContent, TableContent } from "./content.js";
 import { intervalText, numberText } from "./digits.js";
 import { contourFigure } from "./figure/contour.js";
@@ -31,30 +32,35 @@ export function deadZoneMap(work: Case): FigureContent {
   const around = (value: number) =>
     evenSteps({ from: value / 8, to: 8 * value, count: 13, logarithmic: true });
   const [x, y] = [around(power_mWcm2), around(film_um)];
-  const at = (power: number, thickness: number): number | null => {
-    const zone = deadZoneOf({
+  const at = (power: number, thickness: number): number | null =>
+    statedDeadZone({
       ...work,
-      draws: 40,
       brief: {
         ...brief,
         light: { ...light, irradiance_mWcm2: { ...light.irradiance_mWcm2, value: power } },
         window: { ...window, filmThickness_um: { ...window.filmThickness_um, value: thickness } },
       },
     });
-    return zone.outcome === "value" ? zone.value : null;
-  };
+  const values = mapOver({ x, y, at });
+  const known = values.flat().filter((value) => value !== null);
+  // The thick end is the one that matters; six lines stay readable.
+  const levels = roundThicknesses
+    .filter((level) => known.some((value) => value < level) && known.some((value) => value > level))
+    .slice(-6);
   const feasible = targetRegion(brief.targets.deadZone_um);
   return contourFigure({
     caption: "Dead zone over irradiance and film thickness",
     conditions: `${formulation.title}, ${window.film} film over ${gasText(brief)}, stated figures; blank where the resin never cures`,
     x: { label: "irradiance at the window", unit: "mW/cm²", logarithmic: true, values: x },
     y: { label: "film thickness", unit: "µm", logarithmic: true, values: y },
-    z: { label: "dead-zone thickness", unit: "µm", values: mapOver({ x, y, at }) },
-    levels: [0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 50, 100, 200],
+    z: { label: "dead-zone thickness", unit: "µm", values },
+    ...(levels.length > 0 && { levels }),
     ...(feasible && { feasible }),
     marks: [{ label: "this printer", x: power_mWcm2, y: film_um }],
   });
 }
+
+const roundThicknesses = [0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 50, 100, 200, 500];
 
 /**
  * What readings on the window changed: each reading against what was expected, then each figure before and after, as a multiple of
@@ -74,7 +80,7 @@ export function learntTable(learnt: LearntOxygen | undefined): TableContent {
   }
   const readings = learnt.readings.map(({ reading, value, u, unit, surprise }) => ({
     about: reading,
-    before: `${numberText(Math.abs(surprise), 2)} standard deviations ${surprise < 0 ? "less" : "more"} than expected`,
+    before: `${numberText(Math.abs(surprise), 2)} times its standard deviation ${surprise < 0 ? "below" : "above"} what was expected`,
     after: `read ${numberText(value)} ± ${numberText(u)} ${unit}`,
   }));
   const figures = learnt.figures.map(({ figure, before, after }) => ({
@@ -83,7 +89,7 @@ export function learntTable(learnt: LearntOxygen | undefined): TableContent {
     after: `× ${intervalText(after)}`,
   }));
   return tableOf({
-    caption: `${caption}, with 95 % intervals. ${learnt.source}`,
+    caption: `${caption}, with 95 % intervals. Source: ${learnt.source}.`,
     rows: [...readings, ...figures],
     columns: [
       { key: "about", name: "reading or figure" },
@@ -141,22 +147,29 @@ export function resistanceText({
 export function changeTable({ effects, notModelled }: ChangeComparison): TableContent {
   const withGel = effects.some(({ gelTime_s }) => gelTime_s !== undefined);
   return tableOf({
-    caption: `What a change would do, with 95 % intervals of the factor. ${notModelled.join(" ")}`,
+    caption: `What a change would do, with 95 % intervals of its factors. ${notModelled.join(" ")}`,
     rows: effects.map(({ change, deadZone_um, inductionTime_s, gelTime_s }) => ({
       change,
       deadZone_um: deadZone_um === undefined ? "never cures" : numberText(deadZone_um.then.value, 2),
-      zoneFactor: deadZone_um === undefined ? null : `× ${intervalText(deadZone_um.factor)}`,
-      inductionFactor: inductionTime_s === undefined ? null : `× ${intervalText(inductionTime_s.factor)}`,
-      gelFactor: gelTime_s === undefined ? null : `× ${intervalText(gelTime_s.factor)}`,
+      zoneFactor: deadZone_um && factorText(deadZone_um.factor),
+      inductionFactor: inductionTime_s && factorText(inductionTime_s.factor),
+      gelFactor: gelTime_s && factorText(gelTime_s.factor),
     })),
     columns: [
       { key: "change" },
-      { key: "deadZone_um", align: "right" },
-      { key: "zoneFactor", name: "dead zone", align: "right" },
-      { key: "inductionFactor", name: "induction time", align: "right" },
-      ...(withGel ? [{ key: "gelFactor", name: "time to first gel", align: "right" as const }] : []),
+      { key: "deadZone_um", name: "dead zone then", align: "right" },
+      { key: "zoneFactor", name: "on the dead zone", align: "right" },
+      { key: "inductionFactor", name: "on the induction time", align: "right" },
+      ...(withGel ? [{ key: "gelFactor", name: "on the time to first gel", align: "right" as const }] : []),
     ],
   });
+}
+
+/** A factor in two digits with its interval; none where it is the same in every draw. */
+function factorText({ value, low, high }: Interval): string {
+  if (low === 1 && high === 1) return "unchanged";
+  const [v, l, h] = [value, low, high].map((one) => numberText(one, 2));
+  return l === h ? `× ${v}` : `× ${v} (${l} to ${h})`;
 }
 
 /**

@@ -43,6 +43,7 @@ export const bareFields: Readonly<Record<string, string>> = {
   solidMassFraction: "mass of particles over mass of the whole",
   glycerolMassFraction: "mass of glycerol over mass of glycerol and water",
   meanConversion: "conversion averaged over a layer",
+  initiatorShare: "initiator left over that at the start",
   interfaceConversion: "conversion where a layer meets the one before",
   conversionLevel: "conversion at which a depth counts as out of the dead zone",
   oxygenLevel: "oxygen over its saturation at which a depth counts as out of the dead zone",

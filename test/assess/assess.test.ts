@@ -59,6 +59,13 @@ describe("deadZoneOf", () => {
     );
   });
 
+  it("spans all draws that cure where they are too few to leave any out", () => {
+    const dim = { ...brief, light: { ...brief.light, irradiance_mWcm2: sure(0.12) } };
+    const few = deadZoneOf({ formulation, brief: dim, shelf, draws: 40 });
+    expect(few.outcome === "value" && few.neverCuresShare).toBeGreaterThan(0);
+    expect(few.outcome === "value" && few.low < few.value && few.value < few.high).toBe(true);
+  });
+
   it("refuses a film it does not know", () => {
     expect(() => zone({ window: { ...brief.window, film: "OPN" } })).toThrow(
       'brief "test": unknown film "OPN"; did you mean "OPEN"?',

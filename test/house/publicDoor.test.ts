@@ -8,7 +8,7 @@ const functions = names.filter(({ kind }) => kind === "function");
 
 // Names that carry no quantity of their own: places in a list or figure, counts, settings of a run, statistics of a fit.
 const placesAndCounts = `
-  value values low high min max x y from to range levels over present never spectrum first second repeat
+  value values low high min max x y from to range levels over present never at before after then shown spectrum first second repeat
   cell cells points shape count digits draws seed parallel layer layers baseLayers transitionLayers fromLayer toLayer
   linearUpTo liquids terms dimensions state start stepLimit tolerance iterations accepted rejected reach
   parameters coefficients standardErrors residuals leverage scores outliers response weights remainingStep

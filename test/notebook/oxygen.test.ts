@@ -46,7 +46,7 @@ describe("learntTable", () => {
       ],
     });
     expect(table.rows).toEqual([
-      ["uncured layer", "1.2 standard deviations less than expected", "read 12 ± 1 µm"],
+      ["uncured layer", "1.2 times its standard deviation below what was expected", "read 12 ± 1 µm"],
       ["oxygen diffusivity", "× 1.00 (0.50 to 2.00)", "× 1.00 (0.90 to 1.10)"],
     ]);
   });
@@ -74,12 +74,14 @@ describe("changeTable and changeFigure", () => {
     const table = changeTable(effects);
     expect(table.columns.map(({ name }) => name)).toEqual([
       "change",
-      "dead zone",
-      "dead zone",
-      "induction time",
-      "time to first gel",
+      "dead zone then",
+      "on the dead zone",
+      "on the induction time",
+      "on the time to first gel",
     ]);
     expect(table.rows.map(([change]) => change)).toContain("nitrogen under the film");
+    const nitrogen = table.rows.find(([change]) => change === "nitrogen under the film")!;
+    expect(nitrogen.slice(1, 4)).toEqual(["0", "× 0", "unchanged"]);
     const figure = changeFigure(effects, "A test")!;
     expect(figure.table.rows.map(([change]) => change)).not.toContain("nitrogen under the film");
     expect(figure.table.rows).toHaveLength(3);
@@ -94,5 +96,15 @@ describe("changeTable and changeFigure", () => {
     expect(changeTable(never).rows[0]!.slice(0, 3)).toEqual(["hardly any light", "never cures", null]);
     expect(changeTable(never).columns).toHaveLength(4);
     expect(changeFigure(never, "A test")).toBeUndefined();
+  });
+});
+
+describe("deadZoneMap, where hardly anything cures", () => {
+  it("is drawn all the same", () => {
+    const light = { ...brief.light, irradiance_mWcm2: sure(0.4) };
+    const { table } = deadZoneMap({ ...work, brief: { ...brief, light } });
+    const cells = table.rows.flatMap((row) => row.slice(1));
+    expect(cells).toContain(null);
+    expect(cells.some((cell) => typeof cell === "number")).toBe(true);
   });
 });

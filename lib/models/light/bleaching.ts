@@ -118,6 +118,33 @@ export function bleachingExposure(
   return checkNumber(exposure_Jm2 / 10, { where, field: "the exposure in mJ/cm2" });
 }
 
+/**
+ * Share of a bleaching initiator that is lost per second at the window, 1/s.
+ *
+ * - `molarAbsorption_Lmolcm`: decadic, above 0; `quantumYield` phi: above 0, at most 4; `photonFlux_molm2s` I0: at least 0.
+ *
+ * b = phi kappa I0, kappa = ln 10 * eps: what `exposeLayer` takes as the rate of its bleaching.
+ *
+ * Assumes what `bleachedFractions` does.
+ * @throws InputError when an argument is out of range.
+ * @source d(tau)/dt in the solution of `bleachedFractions`.
+ * @example
+ * ```ts
+ * import { bleachingRate } from "resinwright";
+ * bleachingRate({ molarAbsorption_Lmolcm: 500, quantumYield: 0.5, photonFlux_molm2s: 1.7e-4 }); // → 0.009786
+ * ```
+ */
+export function bleachingRate(
+  input: Pick<BleachingInput, "molarAbsorption_Lmolcm" | "quantumYield" | "photonFlux_molm2s">,
+): number {
+  const where = "bleachingRate";
+  checkNumbers(where, input, { molarAbsorption_Lmolcm, quantumYield, photonFlux_molm2s: notNegative });
+  return checkNumber(input.quantumYield * napierianMolar_m2mol(input) * input.photonFlux_molm2s, {
+    where,
+    field: "the rate in 1/s",
+  });
+}
+
 const molarAbsorption_Lmolcm = positive;
 const concentration_molL = positive;
 const quantumYield = { ...positive, max: 4 };

@@ -37,6 +37,8 @@ export interface ColumnBalance extends EulerProblem {
   readonly growth: Float64Array;
   /** Oxygen that came in through the lowest face, and oxygen used up, since the start, mol/m2. */
   readonly ledger: Float64Array;
+  /** Initiator left per resin cell, over that at the start; undefined where it is not followed. */
+  readonly initiator: Float64Array | undefined;
   readonly setConditions: (conditions: Conditions) => void;
   readonly window: () => AtWindow;
   /** Writes the chain radicals per resin cell, mol/m3. */

@@ -2,6 +2,7 @@
 // One layer, or many in a row with what each leaves for the next. Radicals are taken to adjust at once.
 import { checkNumbers, fraction, InputError, positive, show } from "../../door.js";
 import { checkRates, type CureRates } from "./balance.js";
+import { checkBleaching, type Bleaching } from "./bleaching.js";
 import { columnOf } from "./column.js";
 import { checkLayer, edgesOf, layerDefaults, type LayerConditions } from "./layerInput.js";
 import { exposureOf, type LayerExposure } from "./layerExposure.js";
@@ -12,6 +13,8 @@ import { quasiSteadyBalance } from "./quasiSteady.js";
 export interface LayerInput extends CureRates, LayerConditions {
   /** Oxygen molecules used up per radical, s, above 0; 1 unless measured. */
   readonly oxygenPerRadical: number;
+  /** Follow an initiator that loses its colour; it keeps it unless given. */
+  readonly bleaching?: Bleaching | undefined;
 }
 
 /** Layers to be exposed one after the other. */
@@ -32,13 +35,17 @@ export interface LayersInput extends LayerInput {
  * - `window`: a film that resists, a tight plate, or a film that stores oxygen.
  * - `schedule`: steps of light, dark and gas; `times_s`: when to read the column besides the end.
  * - `gelConversion`, `oxygenLevel`, `conversionLevel`: what counts as cured, and as out of the dead zone.
+ * - `bleaching`: the initiator's part of the absorption and how fast it fades; it does not fade unless given.
  * - `cells`, `grid`, `tolerance`, `stepLimit`: how finely it is computed; the defaults hold 1e-3 in mean conversion.
  *
  * dC/dt = d/dz(D dC/dz) - s kO C R, R = 2 Ri / (kO C + sqrt((kO C)^2 + 8 kt Ri)), Ri falling as exp(-alpha z),
  * X = 1 - exp(-kp int R dt), D = D_liquid share^X; flux at the window (C* - C) / (l/D), none at the part.
  * Finite volumes; linearly implicit Euler, extrapolated, with controlled steps.
  *
- * Assumes no flow during the schedule, no bleaching, no heat, and radicals that adjust at once: with the usual rate constants
+ * With `bleaching` the initiator c fades, dc/dt = -b m c I / I0 with its rate b, and the light with it: dI/dz = -(alpha - alpha_PI
+ * (1 - c)) I, Ri falling as c I; products do not absorb, and initiator does not diffuse.
+ *
+ * Assumes no flow during the schedule, no heat, and radicals that adjust at once: with the usual rate constants
  * that is good to 0.1 % in the edge of the dead zone and 1 % in conversion, not for pulses under 0.1 s or cure in the dark.
  * @throws InputError when a field is out of range, or the steps allowed do not reach the end.
  * @source Rate law: C. Decker, A. D. Jenkins, Macromolecules 18 (1985) 1241-1244, doi 10.1021/ma00148a034 (from memory).
@@ -121,7 +128,8 @@ export function exposeLayers(input: LayersInput): LayerExposure[] {
 function exposeSeries(where: string, input: LayersInput): LayerExposure[] {
   checkRates(where, input, "above 0");
   checkLayer(where, input);
-  const { oxygenPerRadical, layerThickness_um, freshFraction } = input;
+  const { oxygenPerRadical, layerThickness_um, freshFraction, bleaching } = input;
+  if (bleaching !== undefined) checkBleaching(where, bleaching, input.napierianAbsorption_percm);
   checkNumbers(
     where,
     { oxygenPerRadical, layerThickness_um, freshFraction },
@@ -164,6 +172,7 @@ function nextStart(left: Leftover, { freshFraction, oxygen_molm3 }: LayersInput)
   return {
     oxygen: (1 - stale) * oxygen_molm3 + stale * left.oxygen,
     growth: stale * left.growth,
+    initiator: 1 - stale + stale * left.initiator,
     film: left.film,
   };
 }

@@ -43,7 +43,7 @@ export interface FullLayerInput extends CureRates, LayerConditions {
  *   schedule: [{ duration_s: 5, relativeIrradiance: 1 }],
  *   gelConversion: 0.2,
  * });
- * layer.end.deadZone.byGel_um ?? NaN; // → 22.05
+ * layer.end.deadZone.byGel_um ?? NaN; // → 22.06
  * ```
  */
 export function exposeLayerFully(input: FullLayerInput): LayerExposure {

@@ -46,7 +46,7 @@ export interface ScalingLawFit {
  *     { curingRate_pers: 4, thickness_um: 15.5, relativeU: 0.1 },
  *   ],
  * });
- * fit.scalingConstant_umsqrts.value; // → 30.2
+ * fit.scalingConstant_umsqrts.value; // → 30.1
  * fit.exponent?.value ?? NaN; // → -0.51
  * ```
  */

@@ -117,6 +117,7 @@ export function fullRadicalBalance(
     oxygen: state.subarray(0, cells),
     growth: state.subarray(atQ + filmCells, atR),
     ledger: state.subarray(atLedger),
+    initiator: undefined,
     tolerance: options.tolerance,
     start: () => undefined,
     partStep,

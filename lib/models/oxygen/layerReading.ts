@@ -30,6 +30,8 @@ export interface LayerReading {
   readonly oxygen_molm3: readonly number[];
   readonly conversion: readonly number[];
   readonly radicals_molm3: readonly number[];
+  /** Initiator left at these depths over that at the start; undefined where bleaching is not followed. */
+  readonly initiatorShare: readonly number[] | undefined;
   /** Oxygen in the resin at the window. */
   readonly wallOxygen_molm3: number;
   /** Oxygen entering the resin at the window; below 0 when it leaves. */
@@ -52,7 +54,7 @@ export function readLayer(
   levels: Required<DeadZoneLevels>,
   oxygenScale_molm3: number,
 ): LayerReading {
-  const { column, oxygen, growth } = balance;
+  const { column, oxygen, growth, initiator } = balance;
   const resin = Array.from(oxygen.subarray(column.filmCells), (C) => Math.max(C, 0));
   const inCells = Array.from(growth, (Q) => -Math.expm1(-Math.max(Q, 0)));
   const radicals = new Float64Array(growth.length);
@@ -78,6 +80,7 @@ export function readLayer(
     oxygen_molm3,
     conversion,
     radicals_molm3: withEnds(centres_um, Array.from(radicals), top_um),
+    initiatorShare: initiator && withEnds(centres_um, Array.from(initiator), top_um),
     ...window,
     deadZone: {
       byOxygen_um: fromWindow(oxygen_molm3, levels.oxygenLevel * oxygenScale_molm3, false),

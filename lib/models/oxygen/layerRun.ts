@@ -12,12 +12,15 @@ export interface Leftover {
   /** Means over the liquid: oxygen, mol/m3, and Q. */
   readonly oxygen: number;
   readonly growth: number;
+  /** Mean initiator over that at the start; 1 where it is not followed. */
+  readonly initiator: number;
 }
 
 /** What a layer of resin is at its start, the same at every depth. */
 export interface StartState {
   readonly oxygen: number;
   readonly growth: number;
+  readonly initiator: number;
   /** Oxygen in the film's cells, or one number for all of them. */
   readonly film: Float64Array | number;
 }
@@ -70,6 +73,7 @@ export function runInput(where: string, input: LayerConditions): LayerRunInput {
 export const freshStart = (input: LayerConditions): StartState => ({
   oxygen: input.oxygen_molm3,
   growth: 0,
+  initiator: 1,
   film: input.filmOxygen_molm3 ?? input.saturation_molm3,
 });
 
@@ -105,15 +109,16 @@ export function runLayer(balance: ColumnBalance, from: StartState, input: LayerR
   };
 }
 
-function begin(balance: ColumnBalance, { oxygen, growth, film }: StartState): void {
+function begin(balance: ColumnBalance, { oxygen, growth, initiator, film }: StartState): void {
   const { filmCells } = balance.column;
   if (typeof film === "number") balance.oxygen.fill(film, 0, filmCells);
   else balance.oxygen.set(film);
   balance.oxygen.fill(oxygen, filmCells);
   balance.growth.fill(growth);
+  balance.initiator?.fill(initiator);
 }
 
-function leftoverOf({ column, oxygen, growth }: ColumnBalance, end: LayerReading): Leftover {
+function leftoverOf({ column, oxygen, growth, initiator }: ColumnBalance, end: LayerReading): Leftover {
   const gap_um = end.depths_um.at(-1)!;
   const liquid_um = end.deadZone.byGel_um ?? gap_um;
   const mean = (values: Float64Array): number => {
@@ -131,5 +136,6 @@ function leftoverOf({ column, oxygen, growth }: ColumnBalance, end: LayerReading
     liquid_um,
     oxygen: mean(oxygen.subarray(column.filmCells)),
     growth: mean(growth),
+    initiator: initiator === undefined ? 1 : mean(initiator),
   };
 }

@@ -1,6 +1,7 @@
 // The balance of oxygen in a column of resin whose radicals adjust at once, as one linearly implicit Euler step.
 import { solveTridiagonal } from "../../numerics/tridiagonal.js";
 import { differenceIn, type ColumnBalance, type CureRates } from "./balance.js";
+import { bleach, bleachedLight, shineThrough, type Bleaching } from "./bleaching.js";
 import { atWindow, type Column } from "./column.js";
 import {
   diffusivityShare,
@@ -11,7 +12,10 @@ import {
 } from "./transport.js";
 
 /** Rate constants with the oxygen used per radical. */
-export type QuasiSteadyConstants = CureRates & { readonly oxygenPerRadical: number };
+export type QuasiSteadyConstants = CureRates & {
+  readonly oxygenPerRadical: number;
+  readonly bleaching?: Bleaching | undefined;
+};
 
 /** R and the oxygen use s kO C R of each cell with its slope in C, as `ratesAt` leaves them, and the light they are for. */
 export interface QuasiSteadyRates {
@@ -101,6 +105,8 @@ export function addUse({ column, diagonal, right }: TransportSystem, { use, slop
  *
  * the first term takes the use as the oxygen was stepped with it, so that a cell that empties within a step starts to cure as much
  * later as it had oxygen; the second, which is small but for that moment, is taken at the end of the part-step.
+ *
+ * With bleaching the state goes on with the initiator left in each cell; the light stands as at the start of the part-step.
  */
 export function quasiSteadyBalance(
   column: Column,
@@ -109,36 +115,72 @@ export function quasiSteadyBalance(
 ): ColumnBalance {
   const { cells, filmCells } = column;
   const { curedDiffusivityShare: share = 1 } = constants;
-  const state = new Float64Array(2 * cells + 2);
-  const rates = quasiSteadyRates(column, constants);
+  const { bleaching } = constants;
+  const bleaches = bleaching !== undefined && bleaching.rate_pers > 0;
+  const atInitiator = 2 * cells + 2;
+  const state = new Float64Array(bleaches ? atInitiator + cells : atInitiator);
+  const light = bleaches ? bleachedLight(column, bleaching, constants.napierianAbsorption_percm) : undefined;
+  const rates = quasiSteadyRates(
+    light === undefined ? column : { ...column, relativeLight: new Float64Array(cells) },
+    constants,
+  );
   const system = transportSystem(column, share);
-  const conditions = { saturation: 0, gasResistance: 0 };
+  const conditions = { saturation: 0, gasResistance: 0, relativeIrradiance: 0 };
+  const plainDifference = differenceIn(column, options.oxygenScale);
+  /** Lets the light follow the initiator left in `u`. */
+  function follow(u: Float64Array): void {
+    if (light === undefined) return;
+    shineThrough(light, u, atInitiator, rates.relativeLight);
+    setLight(rates, conditions.relativeIrradiance);
+  }
   return {
     column,
     state,
     oxygen: state.subarray(0, cells),
     growth: state.subarray(cells + filmCells, 2 * cells),
-    ledger: state.subarray(2 * cells),
+    ledger: state.subarray(2 * cells, atInitiator),
+    initiator: light === undefined ? undefined : state.subarray(atInitiator + filmCells),
     tolerance: options.tolerance,
-    difference: differenceIn(column, options.oxygenScale),
-    start: (u) => ratesAt(rates, u),
+    difference:
+      light === undefined
+        ? plainDifference
+        : (better, worse) =>
+            Math.hypot(plainDifference(better, worse), greatestDistance(better, worse, atInitiator)),
+    start(u) {
+      follow(u);
+      ratesAt(rates, u);
+    },
     partStep(u, h) {
       if (share < 1) setConductances(system, conditions.gasResistance, u, cells);
       stepQuasiSteady(system, rates, u, h, conditions.saturation);
+      if (light === undefined) return;
+      bleach(light, u, atInitiator, conditions.relativeIrradiance, h);
+      follow(u);
+      ratesAt(rates, u);
     },
     setConditions({ relativeIrradiance, saturation_molm3, supplyCut }) {
+      conditions.relativeIrradiance = relativeIrradiance;
       conditions.saturation = saturation_molm3;
       conditions.gasResistance = supplyCut ? Infinity : column.gasResistance;
       setConductances(system, conditions.gasResistance, state, cells);
       setLight(rates, relativeIrradiance);
+      follow(state);
     },
     window: () =>
       atWindow(column, state, { ...conditions, share: diffusivityShare(share, state[cells + filmCells]!) }),
     radicalsOf(out) {
+      follow(state);
       ratesAt(rates, state);
       out.set(rates.radicals.subarray(filmCells));
     },
   };
+}
+
+/** The greatest difference of two states from a place on. */
+function greatestDistance(a: Float64Array, b: Float64Array, from: number): number {
+  let most = 0;
+  for (let i = from; i < a.length; i++) most = Math.max(most, Math.abs(a[i]! - b[i]!));
+  return most;
 }
 
 /** One part-step of the state `u` in place; `rates` stand at its oxygen before and after. */
