@@ -92,6 +92,7 @@ export { viscosityOf } from "./assess/viscosity.js";
 export { opticalDepthOf } from "./assess/light.js";
 export { penetrationDepthOf } from "./assess/depth.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
+export { bleachingOf, type BleachingEstimate } from "./assess/bleaching.js";
 export { deadZoneOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export { layersOf, type LayerEstimate, type LayerSeries, type SeriesOptions } from "./assess/layers.js";
 export { assess, verdictOf, type Assessment } from "./assess/assess.js";
