@@ -95,6 +95,7 @@ export { viscosityOf } from "./assess/viscosity.js";
 export { opticalDepthOf } from "./assess/light.js";
 export { penetrationDepthOf } from "./assess/depth.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
+export { bleachingOf, type BleachingEstimate } from "./assess/bleaching.js";
 export { deadZoneOf, inductionTimeOf, type DeadZoneEstimate } from "./assess/oxygen.js";
 export type { OxygenCorrection } from "./assess/windowCorrection.js";
 export { resistanceOf, type ResistanceEstimate } from "./assess/resistance.js";

@@ -108,6 +108,7 @@ export const shelf: Shelf = {
     termination_m3mols: sure(1250, 250),
     oxygenCapture_m3mols: sure(5e5, 1e5),
     gelConversion: sure(0.1, 0.02),
+    bleachingYield: sure(0.6, 0.1),
     slopeFactor: sure(1, 0.15),
     backgroundAbsorption_percm: sure(1, 0.5),
     unmeasuredInteraction: sure(0, 1.1),

@@ -108,6 +108,7 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   termination_m3mols: "termination rate constant",
   oxygenCapture_m3mols: "oxygen capture rate constant",
   gelConversion: "gel conversion",
+  bleachingYield: "initiator lost per photon absorbed",
   slopeFactor: "working-curve slope against optical depth",
   backgroundAbsorption_percm: "absorption of the resin itself",
   unmeasuredInteraction: "interaction of an unmeasured pair",
@@ -115,10 +116,11 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   intrinsicViscosity: "intrinsic viscosity of the particles",
 };
 
-/** A photon starts at most two radicals; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
+/** A photon splits at most one molecule and starts at most two radicals; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
 const limits: Readonly<Partial<Record<keyof IngredientFigures | keyof ResinConstants, number>>> = {
   radicalsPerPhoton: 2,
   solubility_pct: 100,
+  bleachingYield: 1,
   gelConversion: 0.9,
 };
 

@@ -10,6 +10,7 @@ import {
   lightEngine,
   opticalDepth,
   type LightEngine,
+  type SpectralAbsorber,
 } from "../models/light.js";
 import { densityOf, type Component } from "../recipe/formulation.js";
 import type { Ingredient } from "../recipe/ingredient.js";
@@ -32,6 +33,7 @@ export interface LightInResin {
   readonly wavelength_nm: number;
   /** Everything that absorbs, at each node of the engine. */
   readonly napierianAbsorptions_percm: Float64Array;
+  readonly initiators: readonly SpectralAbsorber[];
   /** The engine by the radicals that each node starts at the window; by its power where nothing starts any. */
   readonly starting: LightEngine;
 }
@@ -105,6 +107,7 @@ export function lightModel(input: Case): (read: Read) => LightInResin {
       radicalsPerPhoton: absorbed > 0 ? started / absorbed : 0,
       wavelength_nm: meanOver(engine, engine.wavelengths_nm),
       napierianAbsorptions_percm,
+      initiators,
       starting: byRadicals(engine, initiators),
     };
   };
@@ -128,7 +131,8 @@ function byRadicals(
   return { wavelengths_nm, shares: parts };
 }
 
-function meanOver({ shares }: LightEngine, values: ArrayLike<number>): number {
+/** Mean over the light of an engine. @internal */
+export function meanOver({ shares }: LightEngine, values: ArrayLike<number>): number {
   let mean = 0;
   for (let k = 0; k < shares.length; k++) mean += shares[k]! * values[k]!;
   return mean;

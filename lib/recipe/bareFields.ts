@@ -17,6 +17,8 @@ export const bareFields: Readonly<Record<string, string>> = {
   refractiveIndex: "refractive index at the sodium line",
   conversion: "double bonds reacted over double bonds at the start",
   gelConversion: "conversion at which the resin holds as a solid",
+  bleachingYield: "initiator molecules lost per photon that they absorb",
+  bleachedShare: "part of the initiator that is gone",
   slopeFactor: "slope of a working curve over the slope that the absorption gives it",
   radicalsPerPhoton: "chain-starting radicals per photon absorbed by the initiator",
   oxygenPerRadical: "oxygen molecules used per radical started, while oxygen lasts",

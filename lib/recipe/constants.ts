@@ -23,6 +23,8 @@ export interface ResinConstants {
   readonly gelConversion: SourcedValue;
   /** Slope of a measured working curve over the slope that the absorption gives it. */
   readonly slopeFactor: SourcedValue;
+  /** Initiator molecules lost per photon that they absorb. */
+  readonly bleachingYield: SourcedValue;
   /** Napierian absorption of the resin without initiator and absorber. */
   readonly backgroundAbsorption_percm: SourcedValue;
   /** Grunberg–Nissan G of a pair of liquids that nobody has measured. */
@@ -58,6 +60,7 @@ const constantsSchema: z.ZodType<ResinConstants> = strict({
   oxygenCapture_m3mols: sourced("oxygenCapture_m3mols", { above: 0 }),
   gelConversion: sourced("gelConversion", { above: 0, max: 0.9 }),
   slopeFactor: sourced("slopeFactor", { above: 0, max: 10 }),
+  bleachingYield: sourced("bleachingYield", { above: 0, max: 1 }),
   backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { min: 0 }),
   unmeasuredInteraction: sourced("unmeasuredInteraction"),
   packingLimit: sourced("packingLimit", { above: 0.1, max: 0.9 }),

@@ -36,7 +36,7 @@ export type BleachedCureDepth =
  *   exposure_mJcm2: 200,
  *   criticalExposure_mJcm2: 10,
  * });
- * depth.outcome === "cures" && depth.cureDepth_um; // → 339.2
+ * depth.outcome === "cures" && depth.cureDepth_um; // → 323.9
  * ```
  */
 export function bleachedCureDepth(input: {

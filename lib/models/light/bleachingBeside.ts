@@ -29,8 +29,8 @@ import type { Bleached, BleachingInput } from "./bleaching.js";
  *   depth_um: 100,
  *   time_s: 100,
  * });
- * left.initiator.share; // → 0.5791
- * left.light.share; // → 0.4606
+ * left.initiator.share; // → 0.6592
+ * left.light.share; // → 0.4582
  * ```
  */
 export function bleachedBesideAbsorber(
