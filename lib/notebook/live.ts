@@ -53,7 +53,7 @@ const drawLive = `function (figure) {
     const { define } = page;
     page.define = undefined;
     const script = document.createElement("script");
-    script.src = baseUrl + "files/node_modules/plotly.js-cartesian-dist-min/plotly-cartesian.min.js";
+    script.src = baseUrl + "files/node_modules/plotly.js-dist/plotly.js";
     const restored = (next) => () => { page.define = define; next(); };
     script.onload = restored(resolve);
     script.onerror = restored(reject);

@@ -72,7 +72,7 @@ describe("in a notebook", () => {
     );
     expect(html).toContain("Data behind this figure");
     expect(html).toContain("<p>Run this cell to see the drawing.</p>");
-    expect(html).toContain("files/node_modules/plotly.js-cartesian-dist-min/plotly-cartesian.min.js");
+    expect(html).toContain("files/node_modules/plotly.js-dist/plotly.js");
   });
 
   it("a table arrives as its data and as HTML", async () => {
