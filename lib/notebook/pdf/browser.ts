@@ -7,7 +7,7 @@ import { pathToFileURL } from "node:url";
 import { InputError } from "../../door.js";
 import { beforeExit } from "../cleanup.js";
 
-const programs = ["chromium", "chromium-browser", "chrome", "google-chrome", "google-chrome-stable"];
+const programs = ["chromium", "chromium-browser", "chrome"];
 const pageLimit_ms = 120_000;
 
 /**
