@@ -127,6 +127,20 @@ async function checkView(place, { width, colorScheme }) {
     });
   }
 
+  for (const slider of await page.locator(".moments input").all()) {
+    const told = slider.locator("xpath=following-sibling::output");
+    const before = await told.textContent();
+    await slider.focus();
+    await page.keyboard.press("Home");
+    const after = await told.textContent();
+    check(`${name}: the keyboard moves the slider`, before !== after, `${before} to ${after}`);
+    check(
+      `${name}: the slider says where it stands`,
+      (await slider.getAttribute("aria-valuetext")) === after,
+    );
+    await page.keyboard.press("End");
+  }
+
   const pdf = await page.pdf({ preferCSSPageSize: true, printBackground: true });
   check(
     `${name}: prints`,

@@ -129,6 +129,17 @@ describe("renderNotebook, what cells show", () => {
     expect(main).not.toContain("live fallback");
   });
 
+  it("gives a figure of several moments a slider that a script has to unhide, and its steps in place of its data", () => {
+    const steps = ["1 s", "2 s"].map((name, i) => ({ name, data: [{ x: [1], y: [i] }] }));
+    const main = mainOf(page(shown(html({ ...figure, moments: { label: "light", shown: 1, steps } }))).html);
+    expect(main).toContain(`<script type="application/json">{"layout":{"height":300},"moments":{`);
+    expect(main).toContain(
+      `<div class="moments" hidden><label for="resinwright-figure-1-moment">light</label>`,
+    );
+    expect(main).toContain(`type="range" min="0" max="1" step="1" value="1" aria-valuetext="2 s">`);
+    expect(main).toContain(`<output for="resinwright-figure-1-moment">2 s</output>`);
+  });
+
   it("carries the figure library once, and only where there is a figure", () => {
     const withFigures = page(shown(html(figure), html(figure))).html;
     const scripts = [...withFigures.matchAll(/<script>([^]*?)<\/script>/g)];
