@@ -93,6 +93,7 @@ export type { Case } from "./assess/case.js";
 export type { NeverCures, Property, Verdict } from "./assess/property.js";
 export { viscosityOf } from "./assess/viscosity.js";
 export { opticalDepthOf } from "./assess/light.js";
+export { lightTakenOf, type LightTaken, type LightTaker } from "./assess/lightTaken.js";
 export { penetrationDepthOf } from "./assess/depth.js";
 export { workingCurveOf, type WorkingCurveEstimate } from "./assess/cure.js";
 export { bleachingOf, type BleachingEstimate } from "./assess/bleaching.js";

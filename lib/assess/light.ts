@@ -33,6 +33,11 @@ export interface LightInResin {
   readonly wavelength_nm: number;
   /** Everything that absorbs, at each node of the engine. */
   readonly napierianAbsorptions_percm: Float64Array;
+  readonly engine: LightEngine;
+  /** Initiators and absorbers, by name, in the order of the formulation. */
+  readonly substances: readonly (SpectralAbsorber & { readonly id: string })[];
+  /** The resin itself, at every node. */
+  readonly background_percm: number;
   readonly initiators: readonly SpectralAbsorber[];
   /** The engine by the radicals that each node starts at the window; by its power where nothing starts any. */
   readonly starting: LightEngine;
@@ -78,16 +83,18 @@ export function lightModel(input: Case): (read: Read) => LightInResin {
   return (read) => {
     const engine = engineAt(read);
     const density_gcm3 = densityOf(formulation, figureReader(read));
-    const taken = substances.map(({ massFraction, scale, molarMass, spectrum, radicals }) => ({
+    const taken = substances.map(({ id, massFraction, scale, molarMass, spectrum, radicals }) => ({
+      id,
       radicalsPerPhoton: radicals && read(radicals),
       molarAbsorptions_Lmolcm: absorptionsOn(engine, spectrum),
       // The scale of the spectrum moves the absorption as the concentration does.
       concentration_molL:
         read(scale) * absorberConcentration({ massFraction, density_gcm3, molarMass_gmol: read(molarMass) }),
     }));
+    const background_percm = read(background);
     const napierianAbsorptions_percm = absorptionSpectrum({
       absorbers: taken,
-      backgrounds_percm: new Float64Array(engine.shares.length).fill(read(background)),
+      backgrounds_percm: new Float64Array(engine.shares.length).fill(background_percm),
     });
     const initiators = taken
       .filter(({ radicalsPerPhoton }) => radicalsPerPhoton !== undefined)
@@ -107,6 +114,9 @@ export function lightModel(input: Case): (read: Read) => LightInResin {
       radicalsPerPhoton: absorbed > 0 ? started / absorbed : 0,
       wavelength_nm: meanOver(engine, engine.wavelengths_nm),
       napierianAbsorptions_percm,
+      engine,
+      substances: taken,
+      background_percm,
       initiators,
       starting: byRadicals(engine, initiators),
     };
@@ -176,6 +186,7 @@ function substanceOf({ formulation, shelf }: Case, { ingredient, massFraction }:
   if (lack !== undefined) throw new InputError(`${where}: ${ingredient.id} ${lack}`);
   const spectrum = spectrumOn(shelf, where, ingredient.spectrum!);
   return {
+    id: ingredient.id,
     massFraction,
     molarMass: figureOf(ingredient, "molarMass_gmol")!,
     radicals: ingredient.role === "photoinitiator" ? figureOf(ingredient, "radicalsPerPhoton") : undefined,

@@ -61,6 +61,8 @@ export { valueText, verdictText } from "./verdicts.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
 export { layerMoments, layerTable, profileFigure, settlingFigure } from "./layers.js";
 export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
+export { candidateTable, engineTable, spectraFigure, takenTable } from "./light.js";
+export { cureDepthFigure, exposureTable, layerFactsTable, spotTable, stackFigure } from "./exposure.js";
 export { handlingTable, screeningTable } from "./safety.js";
 export { recordFrame } from "./recordFrame.js";
 export {
