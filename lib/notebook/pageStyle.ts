@@ -140,7 +140,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
 .panel .buttons { display: flex; flex-wrap: wrap; gap: 0.5rem 0.75rem; align-items: center; margin: 0.75rem 0 1rem; }
 .panel .buttons [role="status"] { margin: 0; }
 .panel td.value { white-space: nowrap; }
-.panel-status { font-size: 0.9375rem; }
+.panel-status { margin-top: 0.75rem; font-size: 0.9375rem; }
 .refusal { padding-left: 0.75rem; border-left: 3px solid var(--ink); font-weight: 600; }
 .refusal:empty { display: none; }
 .panel .caution { padding-left: 0.75rem; border-left: 3px solid var(--accent); font-size: 0.9375rem; }

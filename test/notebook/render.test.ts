@@ -200,8 +200,12 @@ describe("renderNotebook, the panel and the card", () => {
   it("puts a panel where the cell shows it, its data inert, its script once", () => {
     const { html: whole } = page(shown(html(panelOf(work)), html(panelOf(work))));
     const main = mainOf(whole);
-    expect(main).toContain(`<section class="panel" id="resinwright-panel-1" aria-label="Panel 1: other settings">`);
-    expect(main).toContain(`<section class="panel" id="resinwright-panel-2" aria-label="Panel 2: other settings">`);
+    expect(main).toContain(
+      `<section class="panel" id="resinwright-panel-1" aria-label="Panel 1: other settings">`,
+    );
+    expect(main).toContain(
+      `<section class="panel" id="resinwright-panel-2" aria-label="Panel 2: other settings">`,
+    );
     expect(main).toContain(`<script type="application/json">{"kind":"panel","work":{"formulation":`);
     expect(main).toContain(
       "<noscript><p>This panel computes in the page. It needs a browser that may run scripts;",
