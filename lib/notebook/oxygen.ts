@@ -43,10 +43,14 @@ export function deadZoneMap(work: Case): FigureContent {
     });
   const values = mapOver({ x, y, at });
   const known = values.flat().filter((value) => value !== null);
-  // The thick end is the one that matters; six lines stay readable.
+  // Six lines stay readable: those nearest to what this printer has.
+  const present = at(power_mWcm2, film_um) ?? 100;
+  const fromPresent = (level: number) => Math.abs(Math.log(level / Math.max(present, 1e-3)));
   const levels = roundThicknesses
     .filter((level) => known.some((value) => value < level) && known.some((value) => value > level))
-    .slice(-6);
+    .sort((a, b) => fromPresent(a) - fromPresent(b))
+    .slice(0, 6)
+    .sort((a, b) => a - b);
   const feasible = targetRegion(brief.targets.deadZone_um);
   return contourFigure({
     caption: "Dead zone over irradiance and film thickness",
@@ -125,11 +129,14 @@ export function resistanceText({
     low: 100 * filmShare.low,
     high: 100 * filmShare.high,
   });
-  const follows =
-    rules === "film"
+  const shared = filmShare.value > 0.35 && filmShare.value < 0.65;
+  const opening = shared ? "Film and resin share the resistance" : `The ${rules} rules`;
+  const follows = shared
+    ? "film, gas, light, viscosity and temperature all count"
+    : rules === "film"
       ? "a thinner or more open film and more oxygen below thicken the zone about one to one; viscosity hardly counts"
       : "the zone goes with square roots of light and gas; viscosity and temperature count, the film little";
-  return `The ${rules} rules: ${percent} % of the fall in oxygen happens across the film, more than half in ${sharePercent(filmRulesShare)} % of the draws, so ${follows}. The gas counts as mixed; where it stands still, it adds a resistance that is not in here.`;
+  return `${opening}: ${percent} % of the fall in oxygen happens across the film, more than half of it in ${sharePercent(filmRulesShare)} % of the draws, so ${follows}. The gas counts as mixed; where it stands still, it adds a resistance that is not in here.`;
 }
 
 /**
@@ -165,10 +172,10 @@ export function changeTable({ effects, notModelled }: ChangeComparison): TableCo
   });
 }
 
-/** A factor in two digits with its interval; none where it is the same in every draw. */
+/** A factor with its interval, in two digits, near 1 in three; no interval where it is the same in every draw. */
 function factorText({ value, low, high }: Interval): string {
   if (low === 1 && high === 1) return "unchanged";
-  const [v, l, h] = [value, low, high].map((one) => numberText(one, 2));
+  const [v, l, h] = [value, low, high].map((one) => numberText(one, one > 0.8 && one < 1.25 ? 3 : 2));
   return l === h ? `× ${v}` : `× ${v} (${l} to ${h})`;
 }
 

@@ -54,8 +54,23 @@ describe("learntTable", () => {
 
 describe("resistanceText", () => {
   it("says which rules and what follows, or that nothing cures", () => {
-    const text = resistanceText(resistanceOf({ ...work, draws: 100 }));
-    expect(text).toMatch(/^The (film|resin) rules: .* % of the fall in oxygen happens across the film/);
+    const on = (thickness: number) => {
+      const window = { ...brief.window, filmThickness_um: sure(thickness) };
+      return resistanceText(resistanceOf({ ...work, brief: { ...brief, window }, draws: 100 }));
+    };
+    expect(on(1)).toMatch(/^The resin rules: .* % of the fall in oxygen happens across the film/);
+    expect(on(1e5)).toMatch(/^The film rules: .*viscosity hardly counts/);
+    const between = { value: 0.5, low: 0.4, high: 0.6, level: 0.95 };
+    const shared = {
+      rules: "film" as const,
+      filmShare: between,
+      filmRulesShare: 0.5,
+      neverCuresShare: 0,
+      warnings: [],
+    };
+    expect(resistanceText(shared)).toMatch(
+      /^Film and resin share the resistance: 50 \(40 to 60\) %.*all count/,
+    );
     expect(resistanceText(resistanceOf({ ...dim, draws: 100 }))).toMatch(
       /^Nothing cures in 100 % of the draws: .* comes first\.$/,
     );
