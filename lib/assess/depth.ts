@@ -4,7 +4,7 @@
 import { broadExposureForDepth } from "../models/cure.js";
 import { constantOf, layerCureDepth, type Case } from "./case.js";
 import { startDraws, type DrawOptions, type Draws, type Read } from "./doubt.js";
-import { lightModel, lightWarnings } from "./light.js";
+import { lightModel } from "./light.js";
 import { curveWarnings, measuredFor, readDepth } from "./measuredCurve.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
@@ -43,7 +43,7 @@ export function drawPenetrationDepth(input: Case, draws: Draws): Drawn {
   return drawProperty(
     "penetrationDepth_um",
     (read) => depth(read)(cureDepth_um),
-    [...lightWarnings(input), ...curveWarnings(input)],
+    curveWarnings(input),
     draws,
   );
 }

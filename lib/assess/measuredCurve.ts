@@ -6,6 +6,7 @@ import type { Formulation } from "../recipe/formulation.js";
 import type { SourcedValue, Warning } from "../result.js";
 import { irradianceOf, layerCureDepth, uncertain, type Case } from "./case.js";
 import type { Read } from "./doubt.js";
+import { lightWarnings } from "./light.js";
 
 /** A measured curve for a case. */
 export interface MeasuredFor {
@@ -63,10 +64,11 @@ export function readCritical(curve: MeasuredWorkingCurve, read: Read, input: Cas
 /** What to know before using the working curve of this case, measured or estimated. */
 export function curveWarnings(input: Case): Warning[] {
   const measured = measuredFor(input);
-  if (measured === undefined) return [estimated, ...elsewhere(input)];
+  if (measured === undefined) return [...lightWarnings(input), estimated, ...elsewhere(input)];
   const { curve, differs } = measured;
   const warnings = [...curve.warnings];
   if (differs.length > 0) {
+    warnings.push(...lightWarnings(input));
     warnings.push({
       code: "working-curve-carried-over",
       message: `The working curve was measured with ${differs.join(", ")} (${curve.series.id}) and is carried over by the models. Measure again before printing.`,

@@ -21,7 +21,7 @@ import {
   type DrawOptions,
   type Read,
 } from "../assess/doubt.js";
-import { lightModel, lightWarnings } from "../assess/light.js";
+import { lightModel } from "../assess/light.js";
 import { curveWarnings } from "../assess/measuredCurve.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 
@@ -146,7 +146,6 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
       pointsPerLayer: 11,
     }),
     warnings: [
-      ...lightWarnings(input),
       ...curveWarnings(input),
       ...plan.warnings.filter(({ code }) => code !== MAY_NOT_HOLD),
       ...bondWarning(gelled),
