@@ -77,8 +77,7 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   const { draws = 60, layers = 3 } = input;
   checkNumber(layers, { where: "layersOf", field: "layers", min: 1, max: 50 });
   const started = startDraws({ ...input, draws });
-  // The draws differ by far more than what their coarser grid leaves out.
-  const { outcomes, inputs } = propagate(seriesModel(input, { cells: 80, tolerance: 1e-3 }), started);
+  const { outcomes, inputs } = propagate(seriesModel(input, coarse), started);
   const stated = seriesModel(input)(({ value }) => value);
   const estimates = stated.series.map((run, k): LayerEstimate => {
     const runs = outcomes.map(({ series }) => series[k]!);
@@ -108,7 +107,10 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   };
 }
 
-function seriesModel(input: Case & SeriesOptions, fineness: { cells?: number; tolerance?: number } = {}) {
+/** For draws, which differ by far more than this leaves out; figures at the far end of their doubt may need many steps. */
+const coarse = { cells: 80, tolerance: 1e-3, stepLimit: 1_000_000 };
+
+function seriesModel(input: Case & SeriesOptions, fineness: Partial<typeof coarse> = {}) {
   const { brief, shelf, layers = 3, times_s } = input;
   const oxygen = oxygenModel(input);
   const cure = cureModel(input);
@@ -204,7 +206,7 @@ export function drawGelTime(
   input: Case & SeriesOptions,
   draws: Draws,
 ): { stated: number; values: readonly number[] } {
-  const model = seriesModel({ ...input, layers: 1 }, { cells: 80, tolerance: 1e-3 });
+  const model = seriesModel({ ...input, layers: 1 }, coarse);
   const gelTime = (read: Read) => lightTime(model(read).series[0]!.gelTime_s, input) ?? NaN;
   const { stated, outcomes } = propagate(gelTime, draws);
   return { stated, values: outcomes };

@@ -97,7 +97,7 @@ export function spotTable({
       { key: "spot", align: "left" },
       { key: "time_s", digits: 3 },
       { key: "exposure_mJcm2", digits: 3 },
-      { key: "expected_um", name: "expected thickness", digits: 2 },
+      { key: "expected_um", name: "expected thickness", digits: 3 },
     ],
   });
 }
@@ -173,9 +173,9 @@ export function layerFactsTable({
       `${um(roof.drift_um)} of it from the layers after the first`,
     ],
     [
-      "channel that stays open",
+      "channel that light alone leaves open",
       `above ${um(channel.smallest_um)}`,
-      `channels below ${numberText(low_um, 2)} to ${numberText(high_um, 2)} µm were found to clog in practice at this optical depth`,
+      `in practice channels below ${numberText(low_um, 2)} to ${numberText(high_um, 2)} µm were found to clog at this optical depth`,
     ],
   ];
   return tableOf({

@@ -4,10 +4,11 @@ import { checkNumber, InputError, notNegative } from "../../door.js";
 import { assess } from "../../assess/assess.js";
 import type { DrawOptions } from "../../assess/doubt.js";
 import type { NeverCures, Property, Verdict } from "../../assess/property.js";
-import type { Brief, PropertyName } from "../../recipe/brief.js";
+import type { Case } from "../../assess/case.js";
+import type { PropertyName } from "../../recipe/brief.js";
 import type { Formulation } from "../../recipe/formulation.js";
 import { propertyNames } from "../../recipe/propertyNames.js";
-import { ingredientOn, type Shelf } from "../../recipe/shelf.js";
+import { ingredientOn } from "../../recipe/shelf.js";
 import { weighingUncertainty } from "./balance.js";
 import { mixtureUncertainties } from "./uncertainty.js";
 import type { Portion, WeighOutSheet } from "./weighOut.js";
@@ -90,7 +91,7 @@ export function asMade({
 }: DrawOptions & {
   sheet: WeighOutSheet;
   weighings: readonly Weighing[];
-  work?: { readonly brief: Brief; readonly shelf: Shelf };
+  work?: Omit<Case, "formulation">;
 }): AsMade {
   const { formulation: planned, accuracy } = sheet;
   const where = `batch of "${planned.id}"`;
@@ -130,10 +131,7 @@ export function asMade({
       target_g: portion.target_g,
       actual_g: mass_g,
     })),
-    changes:
-      work === undefined
-        ? []
-        : changesOf({ ...options, planned, formulation, accuracy, brief: work.brief, shelf: work.shelf }),
+    changes: work === undefined ? [] : changesOf({ ...options, planned, formulation, accuracy, work }),
   };
 }
 
@@ -197,18 +195,16 @@ function changesOf({
   planned,
   formulation,
   accuracy,
-  brief,
-  shelf,
+  work,
   ...options
 }: DrawOptions & {
   planned: Formulation;
   formulation: Formulation;
   accuracy: number;
-  brief: Brief;
-  shelf: Shelf;
+  work: Omit<Case, "formulation">;
 }): PropertyChange[] {
-  const was = assess({ formulation: planned, brief, shelf, ...options });
-  const is = assess({ formulation, brief, shelf, ...options });
+  const was = assess({ ...work, ...options, formulation: planned });
+  const is = assess({ ...work, ...options, formulation });
   return propertyNames.map((property): PropertyChange => {
     const [before, after] = [was.properties[property], is.properties[property]];
     const verdict = (verdicts: readonly Verdict[]) =>
