@@ -2,6 +2,8 @@
 
 import { resolve } from "node:path";
 import { assess, type Assessment } from "../assess/assess.js";
+import type { Case } from "../assess/case.js";
+import { measuredFor } from "../assess/measuredCurve.js";
 import { calibrate } from "../decide/calibrate.js";
 import { InputError, show } from "../door.js";
 import { dataHashOf } from "../lab/dataHash.js";
@@ -22,7 +24,7 @@ export interface AssessDocument extends Assessment {
   /** {@link dataHashOf} the case as calibrated. */
   readonly dataHash: string;
   readonly temperature_C: number;
-  /** Ids of the readings that corrected figures of its liquids. */
+  /** Ids of the readings that stand behind it: blends of its liquids, cure depths, readings on the window. */
   readonly calibratedBy: readonly string[];
 }
 
@@ -30,14 +32,11 @@ export const run: Run = (given, { folder, width, print }) => {
   const draws = drawsOf(given);
   const opened = caseOf(given, folder);
   const work = calibrate(opened);
-  const ids = new Set(work.formulation.components.map(({ ingredient }) => ingredient.id));
   const document: AssessDocument = {
     libraryVersion: libraryVersion(),
     dataHash: dataHashOf(work),
     temperature_C: work.brief.temperature_C,
-    calibratedBy: work.shelf.readings.flatMap(({ id, pair }) =>
-      pair.some((one) => ids.has(one)) ? [id] : [],
-    ),
+    calibratedBy: readingsBehind(work),
     ...assess({ ...work, ...(draws === undefined ? {} : { draws }) }),
   };
   const text = given.isOn("json")
@@ -47,6 +46,17 @@ export const run: Run = (given, { folder, width, print }) => {
   const fails = document.verdicts.some(({ outcome }) => outcome === "fails");
   return fails || document.avoided.length > 0 ? 1 : 0;
 };
+
+function readingsBehind(work: Case): string[] {
+  const ids = new Set(work.formulation.components.map(({ ingredient }) => ingredient.id));
+  const { readings } = work.shelf;
+  return [
+    ...readings.flatMap(({ id, pair }) => (pair.some((one) => ids.has(one)) ? [id] : [])),
+    ...[measuredFor(work)?.curve.series.id, work.oxygenCorrection?.readings.id].filter(
+      (id) => id !== undefined,
+    ),
+  ];
+}
 
 function caseOf({ operand, text }: Given, folder: string): Workbench {
   const work = readWorkbench(resolve(folder, operand!));

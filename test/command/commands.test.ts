@@ -165,7 +165,7 @@ describe("assess", () => {
       libraryVersion: version,
       dataHash: dataHashOf(work),
       temperature_C: 28,
-      calibratedBy: ["udma-iboa-25C"],
+      calibratedBy: ["udma-iboa-25C", "flow-cell-a-412", "flow-cell-window"],
       ...assess({ ...work, draws: 100 }),
     });
     // The shape that scripts rely on; a change of it is a new version of the format.
@@ -190,10 +190,12 @@ describe("assess", () => {
   });
 
   it("prints text, and ends with 0 where nothing fails, even where something cannot be told", async () => {
-    const { code, out, err } = await run(["assess", flowCell, "--draws", "100"]);
+    const targets = { viscosity_mPas: { max: 320 } };
+    const { code, out, err } = await run(["assess", briefWith("open.json", { targets }), "--draws", "100"]);
     expect([code, err]).toEqual([0, ""]);
-    expect(out).toMatch(/^Assessment of flow-cell-a under flow-cell: /);
+    expect(out).toMatch(/^Assessment of flow-cell-a under /);
     expect(out).toContain("cannot tell (");
+    expect(out).toContain("corrected by the readings udma-iboa-25C, flow-cell-a-412, flow-cell-window.");
   });
 
   it.each([

@@ -31,7 +31,8 @@ describe("assessText", () => {
     expect(lines[3]).toMatch(
       /^viscosity at print temperature {2}mPa s {3}\d+ \(\d+ to \d+\) +at most 20 +fails \(0 % of draws\)$/,
     );
-    expect(lines[4]).toMatch(/^penetration depth .* at least 1 +meets \(100 % of draws\)$/);
+    expect(lines[4]).toMatch(/^optical depth .* {3}/);
+    expect(lines[5]).toMatch(/^penetration depth .* at least 1 +meets \(100 % of draws\)$/);
   });
 
   it("says what is to be avoided, what to know, what it rests on and how it was made", () => {
