@@ -174,7 +174,7 @@ export function madeTable({ formulation, parts }: AsMade): TableContent {
  * import { batchChangeTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const batch = openBatch({ ...work, draws: 200 })!;
- * batchChangeTable({ ...batch, brief: work.brief }).rows.length; // → 7
+ * batchChangeTable({ ...batch, brief: work.brief }).rows.length; // → 8
  * ```
  */
 export function batchChangeTable({

@@ -120,7 +120,7 @@ await check("computes in a page, bundled, what it computes in Node", async () =>
     await page.locator("pre:not(:empty)").waitFor();
     const [inPage, inNode] = [await page.locator("pre").textContent(), run("node", ["print.mjs"], user)];
     if (inPage.trim() !== inNode.trim()) throw new Error(`in the page ${inPage}\nin Node ${inNode}`);
-    if (JSON.parse(inPage).length !== 7) throw new Error(`seven properties were expected: ${inPage}`);
+    if (JSON.parse(inPage).length !== 8) throw new Error(`eight properties were expected: ${inPage}`);
   } finally {
     await browser.close();
     await server.close();

@@ -52,7 +52,7 @@ describe("openBatch", () => {
       target_g: 68,
       actual_g: 76.415,
     });
-    expect(made.changes).toHaveLength(7);
+    expect(made.changes).toHaveLength(8);
     expect(plan).toEqual({ outcome: "within", total_g: made.total_g });
   });
 
