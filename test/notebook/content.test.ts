@@ -79,7 +79,10 @@ describe("embed and extract", () => {
   const script = (kind: string, json: string) =>
     `<script type="application/json" data-resinwright="${kind}">${json}</script>`;
   it.each([
-    [script("verdict", "{}"), 'output: unknown content "verdict"; known: figure, table, panel, sheet, summary'],
+    [
+      script("verdict", "{}"),
+      'output: unknown content "verdict"; known: figure, table, panel, sheet, summary',
+    ],
     [script("table", "{"), "output table: the data: "],
     [script("table", JSON.stringify(figure)), "output table: kind: "],
     [
