@@ -1,8 +1,12 @@
 // Readings taken on the window, carried into every draw: the figures of a draw are corrected until they say what was read,
 // give or take the doubt of the reading. Draws stay draws, and figures that the readings tie together stay tied.
 
-import { oxygenPartialPressure } from "../models/oxygen.js";
-import { correctByReadings, type PerWindowFigure, type WindowReading } from "../models/oxygen.js";
+import {
+  correctByReadings,
+  oxygenPartialPressure,
+  type PerWindowFigure,
+  type WindowReading,
+} from "../models/oxygen.js";
 import type { WindowReadings } from "../recipe/windowReadings.js";
 import type { Warning } from "../result.js";
 import { constantOf, uncertain, type Case } from "./case.js";

@@ -20,7 +20,7 @@ export const acts: readonly Act[] = [
       json,
     },
     notes: [
-      "Viscometer readings on the shelf correct the shipped figures first, as in the notebooks that fit them.",
+      "Readings on the shelf (viscosities of blends, cure depths, readings on the window) correct the shipped figures first.",
       "Exit code 1 says that a target fails or that something the brief avoids is in it; a target that cannot be told is neither.",
     ],
     example: 'resinwright assess data/briefs/flow-cell.json --temperature "35 °C"',

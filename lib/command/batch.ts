@@ -5,6 +5,7 @@ import { fraction, positive } from "../door.js";
 import { dataHashOf } from "../lab/dataHash.js";
 import { weighOut, type MasterBatch, type Portion, type WeighOutSheet } from "../lab/batch.js";
 import { libraryVersion } from "../lab/record/version.js";
+import { massText } from "../notebook/batch.js";
 import type { TableContent } from "../notebook/content.js";
 import { numberText } from "../notebook/digits.js";
 import { tableOf } from "../notebook/table.js";
@@ -96,7 +97,7 @@ function documentOf(sheet: WeighOutSheet) {
 /** The sheet as it lies beside the balance. */
 export function sheetText(sheet: WeighOutSheet, width: number): string {
   const { formulation, balance, batch_g, tolerance, minimumWeight_g, masterBatches, warnings } = sheet;
-  const grams = (mass_g: number) => mass_g.toFixed(decimalsOf(balance.readability_g));
+  const grams = (mass_g: number) => massText(mass_g, balance);
   const caption = `Weigh-out of ${formulation.id}, ${formulation.title}: ${numberText(batch_g, 7)} g, each mass within ${numberText(100 * tolerance, 2)} % of itself; the balance weighs honestly from ${numberText(minimumWeight_g)} g on`;
   const tables = [
     portionTable(caption, sheet.portions, grams),
@@ -163,9 +164,4 @@ function masterTable(
       { key: "diluent", unit: "g", align: "right" },
     ],
   });
-}
-
-/** Places that a balance of this readability shows. */
-function decimalsOf(readability_g: number): number {
-  return Math.min(9, Math.max(0, Math.ceil(-Math.log10(readability_g) - 1e-9)));
 }

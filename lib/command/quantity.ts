@@ -21,6 +21,9 @@ export function quantityOf({
     return checkNumber(toFieldUnit(field, given), { where: act, field: `--${option}`, ...range });
   } catch (error) {
     if (!(error instanceof InputError)) throw error;
-    throw error.message.startsWith("is ") ? new InputError(`${act}: --${option} ${error.message}`) : error;
+    if (!error.message.startsWith("is ")) throw error;
+    // "35 C" is a charge, as units are read.
+    const hint = / converts to °C$/.test(error.message) ? '; write it as "35 °C" or "35 degC"' : "";
+    throw new InputError(`${act}: --${option} ${error.message}${hint}`);
   }
 }

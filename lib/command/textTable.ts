@@ -90,7 +90,8 @@ function sum(values: readonly number[]): number {
 }
 
 /** Breaks at spaces, and inside a word only where it does not fit at all. */
-function wrapped(text: string, width: number): string[] {
+function wrapped(text: string, room: number): string[] {
+  const width = Math.max(1, room);
   const done: string[] = [];
   let line = "";
   for (let word of oneLine(text).split(" ")) {

@@ -262,12 +262,14 @@ export function rescueText({ sheet, plan }: { sheet: WeighOutSheet; plan: Rescue
     return "Every share is within the accuracy that was asked for: nothing is to be added.";
   if (plan.outcome === "impossible") return `It cannot be put right: ${plan.reason}.`;
   const { total_g, growth, setBy } = plan;
+  if (growth <= 1)
+    return `It is brought back to its recipe by adding what is missing, up to the planned ${massText(total_g, sheet.balance)} g.`;
   return `To be brought back to its recipe the batch has to grow to ${massText(total_g, sheet.balance)} g, ${numberText(growth, 3)} times what was planned; ${setBy} asks for that much.`;
 }
 
 /**
- * What to do with a batch that came back, with the figures behind it: use it as it was made where no target is worse met than
- * planned; else put it right, or keep it apart where that cannot be done.
+ * What to do with a batch that came back, with the figures behind it: use it as it was made where every share is as it was asked
+ * for and no target is worse met than planned; else put it right, or keep it apart where that cannot be done.
  * @example
  * ```ts
  * import { openBatch, openBrief } from "resinwright/files";
@@ -290,7 +292,7 @@ export function batchDecision({ weighed, sheet, made, plan }: ReturnedBatch): {
   const targets =
     worse.length === 0 ? "no target is worse met than planned" : `worse than planned: ${worse.join(", ")}`;
   const act =
-    worse.length === 0
+    outside.length === 0 && worse.length === 0
       ? `Use batch ${weighed.id} as it was made`
       : plan.outcome === "add"
         ? `Put batch ${weighed.id} right before it is used`

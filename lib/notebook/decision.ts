@@ -1,7 +1,8 @@
 // The end of a notebook: what was decided, and what was made, shown and appended to the lab record.
 
+import { isDeepStrictEqual } from "node:util";
 import { dataHashOf } from "../lab/dataHash.js";
-import { appendRecord } from "../lab/record.js";
+import { appendRecord, readRecords } from "../lab/record.js";
 import { checkRecord, type BatchRecord, type DecisionRecord } from "../lab/record/kinds.js";
 import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Case } from "../assess/case.js";
@@ -62,7 +63,8 @@ export function decide({
 }
 
 /**
- * Shows and appends a batch as it was weighed, portion by portion with lots, as {@link decide} does a decision.
+ * Shows and appends a batch as it was weighed, portion by portion with lots, as {@link decide} does a decision. A batch that stands
+ * in the record with the same weighings is not appended again.
  * @param input - The case as planned; `from`, the notebook; the `batch`; the `statement`.
  * @throws InputError when the statement is empty; outside a notebook.
  * @example
@@ -88,6 +90,14 @@ export function recordBatch({
 }): void {
   const { brief, formulation } = work;
   const { lines, total_g } = made;
+  const stands = readRecords(recordFolder()).some(
+    (record) =>
+      record.kind === "batch" && record.batch === weighed.id && isDeepStrictEqual(record.lines, lines),
+  );
+  if (stands) {
+    showMarkdown(`${statement} It stands in the lab record already.`);
+    return;
+  }
   showAndAppend({
     say: () => showMarkdown(statement),
     record: {
@@ -116,8 +126,7 @@ function showAndAppend({
 }): void {
   checkRecord(record);
   say();
-  const folder = process.env["RESINWRIGHT_RECORDS"] || "../records";
-  const { file, record: written } = appendRecord({ folder, record });
+  const { file, record: written } = appendRecord({ folder: recordFolder(), record });
   const rows = Object.entries(figures).map(([figure, value]) => ({
     figure,
     value: typeof value === "number" ? numberText(value) : value,
@@ -134,6 +143,10 @@ function showAndAppend({
       ],
     }),
   );
+}
+
+function recordFolder(): string {
+  return process.env["RESINWRIGHT_RECORDS"] || "../records";
 }
 
 /** On a page twelve digits tell hashes apart; the record holds all of them. */

@@ -67,7 +67,7 @@ export function cureDepthFigure(series: CureDepthSeries): FigureContent {
 
 /**
  * Which spots to expose before a working curve is known, and how thick they are expected to be.
- * @param seconds - Irradiance that the times are for, mW/cm².
+ * @param input - The plan; the irradiance that its times are for.
  * @example
  * ```ts
  * import { planCureDepths } from "resinwright";

@@ -59,7 +59,7 @@ export {
 } from "./views.js";
 export { valueText, verdictText } from "./verdicts.js";
 export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
-export { layerMoments, layerTable, profileFigure, settlingFigure } from "./layers.js";
+export { layerMoments, layerTable, settlingFigure } from "./layers.js";
 export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
 export { candidateTable, engineTable, spectraFigure, takenTable } from "./light.js";
 export { cureDepthFigure, exposureTable, layerFactsTable, spotTable, stackFigure } from "./exposure.js";

@@ -42,55 +42,8 @@ export function layerTable({ exposure_s, layers }: LayerSeries): TableContent {
 }
 
 /**
- * Profiles of one layer from the window up, at the stated figures, one line for each time that was asked for.
- * @param layer - One layer of a series run with `times_s`.
- * @param quantity - Double-bond conversion or oxygen.
- * @param conditions - What stands under the figure.
- * @param dark_s - Dark time before the light, taken off the times so that they count light.
- * @example
- * ```ts
- * import { layersOf } from "resinwright";
- * import { openBrief } from "resinwright/files";
- * import { profileFigure } from "resinwright/notebook";
- * const work = openBrief("data/briefs/flow-cell.json");
- * const { dark_s } = work.brief.betweenLayers;
- * const { layers } = layersOf({ ...work, layers: 1, exposure_s: 6, times_s: [dark_s + 2, dark_s + 4] });
- * const figure = profileFigure({ layer: layers[0]!, quantity: "conversion", conditions: "Flow-cell resin", dark_s });
- * figure.caption; // → "Conversion in layer 1 from the window up. Flow-cell resin."
- * ```
- */
-export function profileFigure({
-  layer,
-  quantity,
-  conditions,
-  dark_s,
-}: {
-  layer: LayerEstimate;
-  quantity: "conversion" | "oxygen_molm3";
-  conditions: string;
-  dark_s: number;
-}): FigureContent {
-  const readings = [...layer.stated.readings, layer.stated.end].slice(0, 6);
-  const name = quantity === "conversion" ? "Conversion" : "Oxygen";
-  return lineFigure({
-    caption: `${name} in layer ${layer.layer} from the window up`,
-    conditions,
-    x: { label: "distance from the window", unit: "µm" },
-    y:
-      quantity === "conversion"
-        ? { label: "conversion", range: [0, 1] }
-        : { label: "oxygen", unit: "mol/m³" },
-    series: readings.map((reading) => ({
-      name: `after ${numberText(reading.time_s - dark_s, 2)} s of light`,
-      x: reading.depths_um,
-      y: reading[quantity],
-    })),
-  });
-}
-
-/**
- * Oxygen and conversion of one layer from the window up, moment by moment in the light, at the stated figures: oxygen over that of
- * the layer's fresh resin, so that both run from 0 to 1.
+ * Oxygen and conversion of one layer from the window up, moment by moment in the light, at the stated figures: oxygen over its
+ * highest at any of the moments, so that both run from 0 to 1.
  * @param layer - One layer of a series run with `times_s`, 1 to 39 of them.
  * @param conditions - What stands under the figure.
  * @param dark_s - Dark time before the light, taken off the times so that they count light.

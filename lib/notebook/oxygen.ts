@@ -135,7 +135,7 @@ export function resistanceText({
     ? "film, gas, light, viscosity and temperature all count"
     : rules === "film"
       ? "a thinner or more open film and more oxygen below thicken the zone about one to one; viscosity hardly counts"
-      : "the zone goes with square roots of light and gas; viscosity and temperature count, the film little";
+      : "the zone thins with the square root of the light and thickens with that of the oxygen below; viscosity and temperature count, the film little";
   return `${opening}: ${percent} % of the fall in oxygen happens across the film, more than half of it in ${sharePercent(filmRulesShare)} % of the draws, so ${follows}. The gas counts as mixed; where it stands still, it adds a resistance that is not in here.`;
 }
 

@@ -49,6 +49,11 @@ export function sheetOf({ sheet, screening, brief, name = "weigh-out" }: SheetIn
       `sheet of "${formulation.id}": the screening is of "${screening.formulation}"; screen the formulation that is weighed out`,
     );
   }
+  if (!/^[a-z0-9-]+$/.test(name)) {
+    throw new InputError(
+      `sheet of "${formulation.id}": name is "${name}"; it becomes part of a file name: use small letters, digits and hyphens`,
+    );
+  }
   return {
     kind: "sheet",
     name,
@@ -148,6 +153,7 @@ function masterBatchOf(master: MasterBatch, { balance, portions }: WeighOutSheet
       { what: stageText(stages, k, carrier.id), target: massText(carrier_g, balance) },
     ]),
     notes: [
+      ...(solute.role === "photoinitiator" ? ["Under amber light, in a covered vessel."] : []),
       `The batch needs ${massText(massFraction * dose_g, balance)} g of ${solute.id}, too little to weigh by itself.`,
       `Weigh to the last digit: it is taken to hold ${numberText(100 * massFraction)} % ${solute.id}, to ${numberText(100 * relativeU, 2)} % of that (one standard uncertainty).`,
       `Makes ${massText(made_g, balance)} g, enough for ${enoughFor} of this batch. Try a little first: whether it dissolves is not known here. Stir until clear.`,

@@ -7,6 +7,7 @@ import type * as Tslab from "tslab";
 import type { Case } from "../assess/case.js";
 import { InputError } from "../door.js";
 import { embed, type FigureContent, type TableContent } from "./content.js";
+import { escapeHtml } from "./html.js";
 import { liveFigure, liveTable } from "./live.js";
 import { originOf } from "./origin.js";
 import { panelOf } from "./panel/panel.js";
@@ -72,7 +73,7 @@ export function showSheet({ file, ...input }: SheetInput & { readonly file: stri
   const origin = originOf(file);
   const links = (Object.keys(papers) as Paper[]).map((paper) => {
     const html = Buffer.from(sheetHtml({ content, paper, origin })).toString("base64");
-    return `<a download="${sheetFile(content, paper)}" href="data:text/html;base64,${html}">${papers[paper]}</a>`;
+    return `<a download="${escapeHtml(sheetFile(content, paper))}" href="data:text/html;base64,${html}">${papers[paper]}</a>`;
   });
   display("showSheet", `${embed(content)}<p>Save the weigh-out sheet to print it: ${links.join(" · ")}</p>`);
 }

@@ -4,6 +4,7 @@
 import { spawnSync } from "node:child_process";
 import { readFileSync, readdirSync, rmSync } from "node:fs";
 import path from "node:path";
+import { isSheet } from "./sheet.mjs";
 
 let passed = 0;
 let failed = 0;
@@ -43,11 +44,14 @@ function checkPdf(page, paper, width_pt) {
   check(`${name} is a PDF`, pdf.startsWith("%PDF-"));
   check(`${name} has pages`, /\/Type ?\/Page\b/.test(pdf));
   const width = Number(/\/MediaBox ?\[0 0 ([\d.]+)/.exec(pdf)?.[1]);
-  check(`${name} has its width`, Math.abs(width - width_pt) < 1, `${width} pt`);
+  const place = path.join("rendered", page);
+  // A sheet is drawn up for one paper, across, whatever the pages are printed on.
+  const wanted_pt = !isSheet(place) ? width_pt : page.includes("letter") ? 792 : 842;
+  check(`${name} has its width`, Math.abs(width - wanted_pt) < 1, `${width} pt`);
   check(`${name} is tagged`, /\/Marked true/.test(pdf));
   check(`${name} tells no path of this machine`, !pdf.includes("file:"));
   if (!canReadWords) return;
-  const title = /<title>([^<]*)</.exec(readFileSync(path.join("rendered", page), "utf8"))[1];
+  const title = /<h1>([^<]*)</.exec(readFileSync(place, "utf8"))[1];
   const words = spawnSync("pdftotext", [file, "-"], { encoding: "utf8" }).stdout;
   // Lines break at blanks and after hyphens.
   const letters = (text) => text.replaceAll("&amp;", "&").replace(/[\s-]/g, "");

@@ -6,9 +6,11 @@ import { readFileSync } from "node:fs";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
 
+/** Whether a page is a weigh-out sheet. */
+export const isSheet = (place) => /<main [^>]*class="page sheet"/.test(readFileSync(place, "utf8"));
+
 /** The sheet as it prints, and again with forty portions, so that it runs over pages. */
 export async function checkSheet({ browser, place, check }) {
-  if (!/<main [^>]*class="page sheet"/.test(readFileSync(place, "utf8"))) return;
   const file = path.basename(place);
   const paper_mm = file.includes("letter") ? [279.4, 215.9] : [297, 210];
   // The side margins of a sheet are 12 mm.

@@ -221,6 +221,10 @@ describe("a rescue", () => {
     expect(rescueText(back({ 5: 605 }))).toMatch(
       /^To be brought back to its recipe the batch has to grow to \d+\.\d\d g, [\d.]+ times what was planned; .* asks for that much\.$/,
     );
+    const missing = { outcome: "add", total_g: 1000, growth: 1, setBy: "the sheet", additions: [] } as const;
+    expect(rescueText({ sheet, plan: missing })).toBe(
+      "It is brought back to its recipe by adding what is missing, up to the planned 1000.00 g.",
+    );
     const reason = "the vessel is too small";
     expect(rescueText({ sheet, plan: { outcome: "impossible", reason } })).toBe(
       "It cannot be put right: the vessel is too small.",
@@ -247,10 +251,14 @@ describe("batchDecision", () => {
     expect(figures["THICK_pct"]).toBeCloseTo(55, 9);
   });
 
-  it("uses a batch that is off where no target suffers, and says what putting it right would take", () => {
+  it("puts right a batch that is off although no target suffers: what was left out may be the inhibitor", () => {
     const { statement } = decided({ 4: 150 }, [change("cannot tell", "meets")]);
     expect(statement).toMatch(
-      /^Use batch T-1 as it was made: the share of MID is off by 21 % of itself; no target is worse met than planned\. To be brought back/,
+      /^Put batch T-1 right before it is used: the share of MID is off by 21 % of itself; no target is worse met than planned\. To be brought back/,
+    );
+    const plan = { outcome: "impossible", reason: "the vessel is too small" } as const;
+    expect(decided({ 4: 0 }, [change("fails", "fails")], { plan }).statement).toMatch(
+      /^Keep batch T-1 apart: /,
     );
   });
 

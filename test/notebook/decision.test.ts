@@ -160,6 +160,24 @@ describe("recordBatch", () => {
     ]);
   });
 
+  it("appends a batch once, however often its notebook runs, and again where a weighing was corrected", () => {
+    recordIt();
+    vi.mocked(showMarkdown).mockClear();
+    recordIt();
+    expect(readRecords(folder)).toHaveLength(1);
+    expect(vi.mocked(showMarkdown).mock.calls).toEqual([
+      ["Weighed as batch T-1. It stands in the lab record already."],
+    ]);
+    const corrected = asMade({ sheet, weighings: [{ line: 1, mass_g: 600, lot: "T-22" }, weighings[1]!] });
+    recordBatch({
+      work,
+      from: "06",
+      batch: { weighed, sheet, made: corrected, plan },
+      statement: "Read again.",
+    });
+    expect(readRecords(folder)).toHaveLength(2);
+  });
+
   it("writes nothing that says nothing", () => {
     expect(() => recordIt(" ")).toThrow("record: statement is empty; say what was decided or found");
     expect(readdirSync(folder)).toEqual([]);

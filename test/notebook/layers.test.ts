@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { layersOf } from "../../lib/assess/layers.js";
 import { embed } from "../../lib/notebook/content.js";
-import { layerMoments, layerTable, profileFigure, settlingFigure } from "../../lib/notebook/layers.js";
+import { layerMoments, layerTable, settlingFigure } from "../../lib/notebook/layers.js";
 import { brief, formulationOf, shelf } from "../fixtures.js";
 
 const formulation = formulationOf({ THIN: 60, THICK: 38.9, PI: 1, AB: 0.1 });
@@ -34,23 +34,6 @@ describe("layerTable", () => {
   it("shows no time for what never gels", () => {
     const dim = layersOf({ formulation, brief, shelf, draws: 40, layers: 1, exposure_s: 0.01 });
     expect(layerTable(dim).rows[0]!.slice(0, 3)).toEqual([1, "0 % of draws", null]);
-  });
-});
-
-describe("profileFigure", () => {
-  it("draws the times asked for and the end, counted in light, and holds the numbers drawn", () => {
-    const layer = series.layers[1]!;
-    const figure = profileFigure({
-      layer,
-      quantity: "oxygen_molm3",
-      conditions: "A test",
-      dark_s: brief.betweenLayers.dark_s,
-    });
-    const names = (figure.data as { name: string }[]).map(({ name }) => name);
-    expect(names).toEqual(["after 3 s of light", "after 6 s of light", "after 12 s of light"]);
-    expect(figure.caption).toBe("Oxygen in layer 2 from the window up. A test.");
-    expect(figure.table.rows).toHaveLength(layer.stated.end.depths_um.length);
-    expect(() => embed(figure)).not.toThrow();
   });
 });
 

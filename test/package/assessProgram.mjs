@@ -36,6 +36,9 @@ export function numbers() {
     films: byId(given.films, readFilm),
     interactions: [],
     readings: [],
+    windowReadings: [],
+    cureDepths: [],
+    workingCurves: [],
     constants: readConstants(parseJson(given.constants, "resin.json")),
   };
   const formulation = formulate({ recipe: readRecipe(parseJson(given.recipe, "flow-cell-a.json")), shelf });

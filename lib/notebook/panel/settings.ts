@@ -60,9 +60,9 @@ export function withSettings(work: Case, settings: Settings): Case {
     if (value !== start) moved.set(field, value);
   }
   return {
+    ...work,
     formulation: withLevels(withShare(work.formulation, moved), moved),
     brief: withConditions(work.brief, moved),
-    shelf: work.shelf,
   };
 }
 

@@ -1,4 +1,6 @@
 import { describe, expect, it } from "vitest";
+import type { Case } from "../../../lib/assess/case.js";
+import { calibrate } from "../../../lib/decide/calibrate.js";
 import { massFractionOf } from "../../../lib/recipe/formulation.js";
 import { readWorkbench } from "../../../lib/recipe/files.js";
 import { controlsOf, withSettings, type Settings } from "../../../lib/notebook/panel/settings.js";
@@ -43,6 +45,12 @@ describe("controlsOf", () => {
 });
 
 describe("withSettings", () => {
+  it("keeps what readings on the window have corrected", () => {
+    const known: Case = calibrate<Case>(work);
+    expect(known.oxygenCorrection).toBeDefined();
+    expect(withSettings(known, start).oxygenCorrection).toBe(known.oxygenCorrection);
+  });
+
   it("leaves a case untouched where nothing was moved", () => {
     const same = withSettings(work, start);
     expect(same.formulation).toBe(work.formulation);
