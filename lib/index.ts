@@ -69,6 +69,7 @@ export {
   type CureDepthSpot,
   type MeasuredWorkingCurve,
 } from "./recipe/cureDepths.js";
+export type { MeasuredParts } from "./recipe/measuredParts.js";
 export { readNumberTable } from "./recipe/table.js";
 export {
   readRheometerTable,

@@ -1,7 +1,7 @@
 // Layers printed one after the other, followed in time: what the steady dead zone cannot say. Whether each layer gels, when,
 // what stays liquid at the window, how far it is cured where it meets the layer before, and what the next one starts from.
 
-import { checkNumber } from "../door.js";
+import { checkNumber, InputError } from "../door.js";
 import { exposeLayers, type LayerExposure, type OxygenWindow } from "../models/oxygen.js";
 import { filmOn } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
@@ -77,6 +77,12 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   const { draws = 60, layers = 3 } = input;
   checkNumber(layers, { where: "layersOf", field: "layers", min: 1, max: 50 });
   const started = startDraws({ ...input, draws });
+  const least = Math.ceil(2 / (1 - started.level) - 1e-9);
+  if (draws < least) {
+    throw new InputError(
+      `layersOf: draws is ${draws}; an interval that holds ${100 * started.level} % needs at least ${least}`,
+    );
+  }
   const { outcomes, inputs } = propagate(seriesModel(input, coarse), started);
   const stated = seriesModel(input)(({ value }) => value);
   const estimates = stated.series.map((run, k): LayerEstimate => {
@@ -232,7 +238,7 @@ function seriesWarnings(layers: readonly LayerEstimate[]): Warning[] {
   warnings.push({
     code: "series-estimated",
     message:
-      "Rate constants are those of the class, from memory. The lift is taken to mix the gap at once; no heat, no bleaching, no flow while the light is on.",
+      "Rate constants are those of the shelf, mostly of the class and from memory: see the sources. The lift is taken to mix the gap at once; no heat, no bleaching, no flow while the light is on.",
   });
   return warnings;
 }

@@ -7,6 +7,7 @@ import type { SourcedValue, Warning } from "../result.js";
 import { irradianceOf, layerCureDepth, uncertain, type Case } from "./case.js";
 import type { Read } from "./doubt.js";
 import { lightWarnings } from "./light.js";
+import { asMeasured, otherAmounts, sameIngredients } from "./measuredParts.js";
 
 /** A measured curve for a case. */
 export interface MeasuredFor {
@@ -19,8 +20,6 @@ export interface MeasuredFor {
   readonly differs: readonly string[];
 }
 
-/** Amounts weighed to the same target differ by less, as a fraction of the amount. */
-const SAME_AMOUNT = 0.005;
 const SAME_IRRADIANCE = 0.02;
 
 /** The nearest measured curve of these ingredients under this light, or undefined. */
@@ -33,9 +32,9 @@ export function measuredFor(input: Case): MeasuredFor | undefined {
         curve.series.light.irradiance_mWcm2.value / brief.light.irradiance_mWcm2.value;
       return {
         curve,
-        formulation: asMeasured(curve, input.formulation),
+        formulation: asMeasured(curve.series.parts, input.formulation),
         relativeIrradiance,
-        differs: [...otherAmounts(curve, input), ...otherIrradiance(relativeIrradiance, curve, input)],
+        differs: [...amountsInWords(curve, input), ...otherIrradiance(relativeIrradiance, curve, input)],
       };
     })
     .reduce<MeasuredFor | undefined>(
@@ -119,10 +118,8 @@ function misfit({ series }: MeasuredWorkingCurve, { brief, formulation }: Case):
     spectrum === undefined
       ? wavelength_nm!.value === brief.light.wavelength_nm?.value
       : spectrum === brief.light.spectrum;
-  const present = idsOf(formulation.components.map(({ ingredient }) => ingredient.id));
-  const measured = idsOf(series.parts.map(({ ingredient }) => ingredient));
   const other = [
-    ...(present === measured ? [] : ["another resin"]),
+    ...(sameIngredients(series.parts, formulation) ? [] : ["another resin"]),
     ...(sameLight ? [] : [`another light, ${spectrum ?? `${wavelength_nm!.value} nm`}`]),
   ];
   return other.length === 0 ? undefined : other.join(" and ");
@@ -140,23 +137,9 @@ function elsewhere(input: Case): Warning[] {
   ];
 }
 
-/** The formulation with the amounts of the series; lots of one ingredient keep their proportions. */
-function asMeasured({ series }: MeasuredWorkingCurve, formulation: Formulation): Formulation {
-  const now = massFractionsOf(formulation);
-  const then = measuredFractions(series);
-  const components = formulation.components.map((one) => {
-    const { id } = one.ingredient;
-    const lots = formulation.components.filter(({ ingredient }) => ingredient.id === id).length;
-    const share = now.get(id)! > 0 ? one.massFraction / now.get(id)! : 1 / lots;
-    return { ...one, massFraction: share * then.get(id)! };
-  });
-  return { ...formulation, components };
-}
-
-function otherAmounts({ series }: MeasuredWorkingCurve, { formulation }: Case): string[] {
-  const now = massFractionsOf(formulation);
-  return [...measuredFractions(series)].flatMap(([id, then]) =>
-    Math.abs(now.get(id)! - then) > SAME_AMOUNT * then ? [`${format(100 * then)} % ${id}`] : [],
+function amountsInWords({ series }: MeasuredWorkingCurve, { formulation }: Case): string[] {
+  return otherAmounts(series.parts, formulation).map(
+    ({ id, massFraction }) => `${format(100 * massFraction)} % ${id}`,
   );
 }
 
@@ -166,22 +149,5 @@ function otherIrradiance(relative: number, { series }: MeasuredWorkingCurve, { b
     `${format(series.light.irradiance_mWcm2.value)} in place of ${format(brief.light.irradiance_mWcm2.value)} mW/cm²`,
   ];
 }
-
-function massFractionsOf({ components }: Formulation): Map<string, number> {
-  const fractions = new Map<string, number>();
-  for (const { ingredient, massFraction } of components)
-    fractions.set(ingredient.id, (fractions.get(ingredient.id) ?? 0) + massFraction);
-  return fractions;
-}
-
-function measuredFractions({ parts }: MeasuredWorkingCurve["series"]): Map<string, number> {
-  const total = parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
-  const fractions = new Map<string, number>();
-  for (const { ingredient, mass_pct } of parts)
-    fractions.set(ingredient, (fractions.get(ingredient) ?? 0) + mass_pct / total);
-  return fractions;
-}
-
-const idsOf = (ids: readonly string[]): string => [...new Set(ids)].sort().join(" ");
 
 const format = (value: number): string => String(Number(value.toPrecision(3)));

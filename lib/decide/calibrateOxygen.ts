@@ -2,6 +2,7 @@
 
 import { intervalOf, propagate, startDraws, type DrawOptions } from "../assess/doubt.js";
 import type { Case } from "../assess/case.js";
+import { asMeasured, sameIngredients } from "../assess/measuredParts.js";
 import { questionOf, type OxygenCorrection } from "../assess/windowCorrection.js";
 import { correctByReadings, figureNames, type PerWindowFigure } from "../models/oxygen.js";
 import type { WindowReadings } from "../recipe/windowReadings.js";
@@ -35,9 +36,9 @@ export interface LearntOxygen {
 /**
  * The case with its window readings carried into everything said of oxygen; the case itself where the shelf has none for it.
  *
- * Readings count for the formulation they name, in the light they name; of several, those of the last shelf folder. Calibrate
- * before you vary a formulation: the readings hold for it as it was read. The factors found go with every change of formulation,
- * light, gas and temperature; that of the film only with the film that was read on.
+ * Readings count for the ingredients they were taken on, in the light they name; of several, those of the last shelf folder. They
+ * are held against the amounts that were on the window; the factors found go with every change of amounts, light, gas and
+ * temperature, that of the film only with the film that was read on.
  * @source Model: `correctByReadings`.
  * @example
  * ```ts
@@ -54,7 +55,7 @@ export function correctOxygen<C extends Case>(work: C): C {
   const { brief, formulation, shelf } = work;
   const { film, filmThickness_um, temperature_C, source, status } = readings;
   const takenOn = {
-    formulation,
+    formulation: asMeasured(readings.parts, formulation),
     shelf,
     brief: {
       ...brief,
@@ -137,11 +138,11 @@ const figureTitles: Readonly<Record<keyof PerWindowFigure, string>> = {
   propagation: "propagation rate constant",
 };
 
-function holdFor({ formulation, spectrum, wavelength_nm }: WindowReadings, work: Case): boolean {
+function holdFor({ parts, spectrum, wavelength_nm }: WindowReadings, work: Case): boolean {
   const { light } = work.brief;
   const sameLight =
     spectrum === undefined ? wavelength_nm === light.wavelength_nm?.value : spectrum === light.spectrum;
-  return formulation === work.formulation.id && sameLight;
+  return sameIngredients(parts, work.formulation) && sameLight;
 }
 
 /** The readings in the order in which the model counts them. */

@@ -45,7 +45,7 @@ export interface ChangeComparison {
  * Every draw stands for one possible truth, the same before and after a change. The factor's interval therefore holds only
  * what the change itself leaves in doubt: a film that is known no better than its table stays wide, twice the light is narrow.
  * @param input - The case; `changes`, {@link usualChanges} unless given; `gelTimes`, how many of the draws are followed in time
- * (40 to 1000; none unless given: each is a transient run); draw options.
+ * (40 to 10,000, and 2 / (1 - level) at least; none unless given: each is a transient run); draw options.
  * @throws InputError as `deadZoneOf`; when `changes` is empty.
  * @example
  * ```ts
@@ -66,8 +66,10 @@ export function compareChanges({
   const considered = changes ?? usualChanges(input);
   if (considered.length === 0)
     throw new InputError("compareChanges: changes is empty; give at least one, or leave it out");
-  if (gelTimes !== undefined)
-    checkNumber(gelTimes, { where: "compareChanges", field: "gelTimes", min: 40, max: 1000 });
+  if (gelTimes !== undefined) {
+    const least = Math.max(40, Math.ceil(2 / (1 - (input.level ?? 0.95)) - 1e-9));
+    checkNumber(gelTimes, { where: "compareChanges", field: "gelTimes", min: least, max: 10000 });
+  }
   const ask = (work: Case) => quantitiesOf(work, input, gelTimes);
   const now = ask(input);
   const effects = considered.map(({ change, then }): ChangeEffect => {

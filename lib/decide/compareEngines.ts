@@ -6,6 +6,7 @@ import { workingCurveOf, type WorkingCurveEstimate } from "../assess/cure.js";
 import type { DrawOptions } from "../assess/doubt.js";
 import { lightModel, opticalDepthOf } from "../assess/light.js";
 import type { Property } from "../assess/property.js";
+import { densityOf } from "../recipe/formulation.js";
 
 /** A formulation under one engine, or why it cannot be said. */
 export type EngineComparison =
@@ -60,6 +61,8 @@ export function compareEngines(input: Case & DrawOptions): EngineComparison[] {
 /** The absorptions are read at every node of the engine; the first that ends short of it says so. */
 function notCovered(input: Case): string | undefined {
   const light = lightModel(input);
+  // What is missing for every engine alike is an error, not a property of this one.
+  densityOf(input.formulation);
   try {
     light(({ value }) => value);
   } catch (error) {

@@ -64,6 +64,11 @@ export function withOnly(
 ): Formulation {
   const others = formulation.components.filter((one) => one.ingredient.role !== ingredient.role);
   const rest = others.reduce((sum, one) => sum + one.massFraction, 0);
+  if (rest === 0) {
+    throw new InputError(
+      `formulation "${formulation.id}": nothing but ${ingredient.role} in it; add the liquids`,
+    );
+  }
   const scaled = others.map((one) => ({
     ...one,
     massFraction: (one.massFraction * (1 - massFraction)) / rest,
@@ -83,6 +88,7 @@ export function refusal(input: Case, ingredient: Ingredient): LevelRefused | und
   });
   const [avoid] = avoidReasons(input.brief, ingredient);
   if (avoid !== undefined) return refused("avoided", `The brief avoids ${id}: ${avoid}.`);
+  withOnly(input.formulation, ingredient, 0.001);
   const lack = lightLack(ingredient);
   if (lack !== undefined) return refused("unknown", `${id} ${lack}.`);
   try {

@@ -55,8 +55,18 @@ export function workingCurveFrom(series: CureDepthSeries): MeasuredWorkingCurve 
   const { id, depthU_um, source, status } = series;
   const fit = fitCureDepths(series);
   const n = fit.degreesOfFreedom;
+  if (n < 3) {
+    throw new InputError(
+      `${id}: ${fit.points} depths leave ${n} degrees of freedom; a working curve with its doubt needs 3: measure at least 5 depths`,
+    );
+  }
+  if (fit.residualStandardDeviation_um === 0) {
+    throw new InputError(
+      `${id}: the depths lie on a line to the last digit, which no gauge reads; give them as they were read`,
+    );
+  }
   const gauge = Math.max(1, depthU_um / fit.residualStandardDeviation_um);
-  const enlarged = Math.sqrt(n / (n - 2)) * (Number.isFinite(gauge) ? gauge : 1);
+  const enlarged = Math.sqrt(n / (n - 2)) * gauge;
   const [[varD, cov], [, varE]] = fit.covariance;
   const Ec = fit.criticalExposure_mJcm2.value;
   const ground = { source: `working curve through ${fit.points} spots of ${id}: ${source}`, status };

@@ -4,18 +4,19 @@
 import { createHash } from "node:crypto";
 import type { Case } from "../assess/case.js";
 import { InputError } from "../door.js";
-import type { CureDepthSeries } from "../recipe/cureDepths.js";
 import type { Formulation } from "../recipe/formulation.js";
+import type { MeasuredParts } from "../recipe/measuredParts.js";
 import type { Shelf } from "../recipe/shelf.js";
 
 /**
  * SHA-256, as 64 hex digits, over the data that a case uses.
  *
  * In it: the formulation with its ingredients as they stand in the case (lots and calibration included), their spectra and that
- * of the light engine, the film, the class constants, interactions between its liquids, readings that name one of them, cure
- * depths of these ingredients, readings on the window with this formulation, what calibration made of them, and the brief. Not in it: what else stands on the shelf, where files lie, prices and safety rules. The same hash, library version,
- * draws and seed give the same assessment. Of a formulation alone, as a batch is weighed out from, it is the hash of the
- * formulation with its ingredients.
+ * of the light engine, the film, the class constants, interactions between its liquids, readings that name one of them,
+ * cure depths and readings on the window of these ingredients, what calibration made of them, and the brief. Not in it: what
+ * else stands on the shelf, where files lie, prices and safety rules. The same hash, library version, draws and seed give the
+ * same assessment. Of a formulation alone, as a batch is weighed out from, it is the hash of the formulation with its
+ * ingredients.
  *
  * The data is written as JSON without spaces, keys in the order of their UTF-16 code units, absent fields left out, numbers as
  * ECMAScript writes them; the order of parts and lists counts.
@@ -58,7 +59,7 @@ function dataUsedBy(work: Case | { readonly formulation: Formulation }): object 
     readings: readingsOf(shelf, inIt),
     cureDepths: shelf.cureDepths.filter((series) => ofThisResin(series, inIt)),
     workingCurves: shelf.workingCurves.filter(({ series }) => ofThisResin(series, inIt)),
-    windowReadings: shelf.windowReadings.filter(({ formulation: on }) => on === id),
+    windowReadings: shelf.windowReadings.filter((readings) => ofThisResin(readings, inIt)),
     oxygenCorrection: oxygenCorrection && {
       ...oxygenCorrection,
       takenOn: dataUsedBy(oxygenCorrection.takenOn),
@@ -66,8 +67,8 @@ function dataUsedBy(work: Case | { readonly formulation: Formulation }): object 
   };
 }
 
-/** A working curve counts for the same ingredients, in whatever amounts. */
-function ofThisResin({ parts }: CureDepthSeries, inIt: ReadonlySet<string>): boolean {
+/** What was measured on a resin counts for the same ingredients, in whatever amounts. */
+function ofThisResin({ parts }: { readonly parts: MeasuredParts }, inIt: ReadonlySet<string>): boolean {
   return parts.every(({ ingredient }) => inIt.has(ingredient));
 }
 

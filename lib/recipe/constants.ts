@@ -61,7 +61,7 @@ const constantsSchema: z.ZodType<ResinConstants> = strict({
   gelConversion: sourced("gelConversion", { above: 0, max: 0.9 }),
   slopeFactor: sourced("slopeFactor", { above: 0, max: 10 }),
   bleachingYield: sourced("bleachingYield", { above: 0, max: 1 }),
-  backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { min: 0 }),
+  backgroundAbsorption_percm: sourced("backgroundAbsorption_percm", { above: 0 }),
   unmeasuredInteraction: sourced("unmeasuredInteraction"),
   packingLimit: sourced("packingLimit", { above: 0.1, max: 0.9 }),
   intrinsicViscosity: sourced("intrinsicViscosity", { min: 2.5, max: 20 }),

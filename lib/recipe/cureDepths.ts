@@ -5,6 +5,7 @@ import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourcedValue, SourceStatus, Warning } from "../result.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
+import { checkMeasuredParts, measuredPartsSchema, type MeasuredParts } from "./measuredParts.js";
 import { idSchema, sourced, sourceText, statusSchema } from "./sourced.js";
 
 /** One exposed spot. */
@@ -28,7 +29,7 @@ export interface CureDepthSeries {
   /** The formulation's name, for people; what counts is `parts`. */
   readonly formulation: string;
   /** What was in the bottle. */
-  readonly parts: readonly { readonly ingredient: string; readonly mass_pct: number }[];
+  readonly parts: MeasuredParts;
   readonly light: {
     readonly spectrum?: string;
     readonly wavelength_nm?: SourcedValue;
@@ -78,12 +79,7 @@ const FEWEST_EXPOSURES = 3;
 export function readCureDepths(document: JsonDocument): CureDepthSeries {
   const series = readDocument(seriesSchema, document);
   const { where } = document;
-  const total = series.parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
-  if (!(Math.abs(total - 100) <= 0.05)) {
-    throw new InputError(
-      `${where}: mass_pct of parts adds up to ${Number(total.toPrecision(8))}; it must add up to 100 ± 0.05`,
-    );
-  }
+  checkMeasuredParts(where, series.parts);
   const { spectrum, wavelength_nm } = series.light;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";
@@ -109,9 +105,7 @@ const seriesSchema = strict({
   id: idSchema,
   kind: z.literal("cure depths"),
   formulation: idSchema,
-  parts: z
-    .array(strict({ ingredient: idSchema, mass_pct: quantity("mass_pct", { above: 0, max: 100 }) }))
-    .min(2),
+  parts: measuredPartsSchema,
   light: strict({
     spectrum: idSchema.optional(),
     wavelength_nm: sourced("wavelength_nm", { min: 250, max: 700 }).optional(),

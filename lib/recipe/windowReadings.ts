@@ -5,6 +5,7 @@ import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourceStatus } from "../result.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
+import { checkMeasuredParts, measuredPartsSchema, type MeasuredParts } from "./measuredParts.js";
 import { idSchema, sourceText, statusSchema } from "./sourced.js";
 
 /** A reading with its standard uncertainty, both in the unit of the field that holds it. */
@@ -33,8 +34,10 @@ export interface UncuredReading {
 export interface WindowReadings {
   readonly kind: "window";
   readonly id: string;
-  /** The formulation they were taken with. */
+  /** The formulation's name, for people; what counts is `parts`. */
   readonly formulation: string;
+  /** What was on the window. */
+  readonly parts: MeasuredParts;
   /** The engine: its spectrum on the shelf, or its nominal wavelength. */
   readonly spectrum?: string | undefined;
   readonly wavelength_nm?: number | undefined;
@@ -50,12 +53,13 @@ export interface WindowReadings {
 
 /**
  * Reads a file of window readings.
- * @throws InputError with file, line and field; when it holds no reading; when it names both a spectrum and a wavelength, or neither.
+ * @throws InputError with file, line and field; when it holds no reading; when parts do not add up to 100 ± 0.05; when it names both a spectrum and a wavelength, or neither.
  * @example
  * ```ts
  * import { parseJson, readWindowReadings } from "resinwright";
  * const file = {
  *   kind: "window", id: "our-window", formulation: "first", wavelength_nm: 405, temperature_C: 25,
+ *   parts: [{ ingredient: "HDDA", mass_pct: 99 }, { ingredient: "BAPO", mass_pct: 1 }],
  *   film: "FEP", filmThickness_um: { value: 100, u: 5 },
  *   inductionTimes: [{ until: "first gel", irradiance_mWcm2: 6, time_s: { value: "900 ms", u: 0.1 } }],
  *   source: "shutter and needle, notebook 12", status: "measured here",
@@ -66,6 +70,7 @@ export interface WindowReadings {
 export function readWindowReadings(document: JsonDocument): WindowReadings {
   const readings = readDocument(windowReadingsSchema, document);
   const { where } = document;
+  checkMeasuredParts(where, readings.parts);
   const { spectrum, wavelength_nm, inductionTimes, uncuredLayers } = readings;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";
@@ -90,6 +95,7 @@ const windowReadingsSchema: z.ZodType<WindowReadings> = strict({
   kind: z.literal("window"),
   id: idSchema,
   formulation: idSchema,
+  parts: measuredPartsSchema,
   spectrum: idSchema.optional(),
   wavelength_nm: quantity("wavelength_nm", { min: 250, max: 700 }).optional(),
   temperature_C: quantity("temperature_C", { min: 0, max: 120 }),

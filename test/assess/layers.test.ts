@@ -10,6 +10,15 @@ const run = (options: SeriesOptions = {}, change: Partial<Brief> = {}) =>
 const window = (gasOxygenFraction: number) => ({ window: { ...brief.window, gasOxygenFraction } });
 
 describe("layersOf", () => {
+  it("refuses fewer draws than an interval of its level needs", () => {
+    expect(() => run({ draws: 20 })).toThrow(
+      "layersOf: draws is 20; an interval that holds 95 % needs at least 40",
+    );
+    expect(() => run({ draws: 60, level: 0.99 })).toThrow(
+      "layersOf: draws is 60; an interval that holds 99 % needs at least 200",
+    );
+  });
+
   it("gives as many layers as asked for, the first in a gap of one layer and later ones in what was left plus one", () => {
     const { layers } = run({ layers: 3, exposure_s: 20 });
     expect(layers.map(({ layer }) => layer)).toEqual([1, 2, 3]);

@@ -22,6 +22,13 @@ const stocked = (...more: Partial<Ingredient>[]): Shelf => ({
 });
 
 describe("absorberFor", () => {
+  it("refuses a formulation of absorber alone", () => {
+    const alone = { ...work.formulation, components: [{ ingredient: AB, massFraction: 1 }] };
+    expect(() => search({ penetrationDepth_um: 60 }, { formulation: alone })).toThrow(
+      'formulation "test": nothing but absorber in it; add the liquids',
+    );
+  });
+
   // The test shelf absorbs alike at every wavelength and every density but THICK's is 1: Beer-Lambert for the level w, with the
   // initiator's 1 % of the rest, is linear in w. 400 g/mol and density 1 make 2.5 mol/L of a mass fraction of 1.
   it("is the level of the Beer-Lambert law where every wavelength is absorbed alike", () => {

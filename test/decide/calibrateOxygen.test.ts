@@ -30,6 +30,12 @@ const readings = (
   kind: "window" as const,
   id: "w1",
   formulation: "test",
+  parts: [
+    { ingredient: "THIN", mass_pct: 60 },
+    { ingredient: "THICK", mass_pct: 38.9 },
+    { ingredient: "PI", mass_pct: 1 },
+    { ingredient: "AB", mass_pct: 0.1 },
+  ],
   spectrum: "lamp",
   temperature_C: 25,
   film: "OPEN",
@@ -54,9 +60,27 @@ const knowing = (...files: WindowReadings[]): Case =>
 const width = ({ low, high }: { low: number; high: number }) => Math.log(high / low);
 
 describe("correctOxygen", () => {
+  it("holds readings against the amounts that were on the window, whatever stands in the case now", () => {
+    const file = readings([[expected.oxygen_s, 0.01 * expected.oxygen_s]], []);
+    const strong = formulationOf({ THIN: 60, THICK: 34.9, PI: 5, AB: 0.1 });
+    const now: Case = { ...work, formulation: strong, shelf: { ...shelf, windowReadings: [file] } };
+    // It was read as expected, and stays so: five times the initiator does not make the reading a surprise.
+    const told = correctOxygen(now);
+    expect(told.oxygenCorrection?.warnings).toEqual([]);
+    const fractions = (one: Case) => one.formulation.components.map(({ massFraction }) => massFraction);
+    const takenOn = fractions(told.oxygenCorrection!.takenOn);
+    takenOn.forEach((massFraction, i) => expect(massFraction).toBeCloseTo(fractions(work)[i]!, 12));
+    const ratio = inductionTimeOf({ ...told, draws }).value / inductionTimeOf({ ...now, draws }).value;
+    expect(ratio).toBeCloseTo(1, 2);
+  });
+
   it("leaves a case alone that no readings are there for: other formulation, other light", () => {
     expect(correctOxygen(work)).toBe(work);
-    for (const change of [{ formulation: "other" }, { spectrum: undefined, wavelength_nm: 405 }])
+    const parts = [
+      { ingredient: "MID", mass_pct: 99 },
+      { ingredient: "PI", mass_pct: 1 },
+    ];
+    for (const change of [{ parts }, { spectrum: undefined, wavelength_nm: 405 }])
       expect(knowing(readings([[1, 0.1]], [], change)).oxygenCorrection).toBeUndefined();
   });
 

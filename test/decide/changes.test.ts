@@ -11,6 +11,13 @@ const effectOf = (name: string, more: { gelTimes?: number } = {}) =>
   compareChanges({ ...work, changes: named(name), draws: 200, ...more }).effects[0]!;
 
 describe("compareChanges", () => {
+  it("asks for as many gel times as an interval of its level needs", () => {
+    const changes: Change[] = [{ change: "nothing", then: work }];
+    expect(() => compareChanges({ ...work, changes, draws: 400, level: 0.99, gelTimes: 40 })).toThrow(
+      "compareChanges: gelTimes is 40; it must be a number from 200 to 10000",
+    );
+  });
+
   it("finds nothing in no change: a factor of 1 without width", () => {
     const changes: Change[] = [{ change: "nothing", then: work }];
     const [same] = compareChanges({ ...work, changes, draws: 100, gelTimes: 40 }).effects;

@@ -18,6 +18,16 @@ const on: Shelf = {
 const work = { formulation: formulationOf({ THIN: 98.9, PI: 1, AB: 0.1 }), brief, shelf: on, draws: 50 };
 
 describe("compareEngines", () => {
+  it("says what is missing for every engine alike, and blames none of them", () => {
+    const components = work.formulation.components.map((one) => ({
+      ...one,
+      ingredient: { ...one.ingredient, density_gcm3: undefined },
+    }));
+    expect(() => compareEngines({ ...work, formulation: { ...work.formulation, components } })).toThrow(
+      /density_gcm3/,
+    );
+  });
+
   const engines = compareEngines(work);
 
   it("takes each engine on the shelf once, with what the case gives under it", () => {

@@ -41,6 +41,12 @@ const codes = (work: Case) =>
 const width = ({ low, high }: { low: number; high: number }) => high / low;
 
 describe("workingCurveFrom", () => {
+  it.each([3, 4])("refuses %d depths: a doubt needs more", (count) => {
+    expect(() => workingCurveFrom({ ...series, spots: series.spots.slice(0, count) })).toThrow(
+      `s1: ${count} depths leave ${count - 2} degrees of freedom; a working curve with its doubt needs 3: measure at least 5 depths`,
+    );
+  });
+
   // Constructed without scatter: the curve that made the depths comes back, with no doubt of its own.
   it("finds the curve that made the depths", () => {
     const { penetrationDepth_um, criticalExposure_mJcm2 } = workingCurveFrom({

@@ -44,10 +44,11 @@ const depthsOf = (id: string, parts: CureDepthSeries["parts"]): CureDepthSeries 
   })),
   ...made,
 });
-const windowReadingsOf = (formulation: string): WindowReadings => ({
+const windowReadingsOf = (formulation: string, parts: CureDepthSeries["parts"]): WindowReadings => ({
   kind: "window",
   id: `window of ${formulation}`,
   formulation,
+  parts,
   spectrum: "lamp",
   temperature_C: 25,
   film: "OPEN",
@@ -74,7 +75,10 @@ const stocked: Shelf = {
   ].reduce(withInteraction, shelf),
   readings: [readingsOf("THICK", "THIN"), readingsOf("THICK", "MID"), readingsOf("MID", "OTHER")],
   cureDepths: [depthsOf("ours", recipe.parts), depthsOf("other", [{ ingredient: "MID", mass_pct: 100 }])],
-  windowReadings: [windowReadingsOf("made"), windowReadingsOf("other")],
+  windowReadings: [
+    windowReadingsOf("made", recipe.parts),
+    windowReadingsOf("other", [{ ingredient: "MID", mass_pct: 100 }]),
+  ],
 };
 const workOn = (on: Shelf, change: Partial<Case["brief"]> = {}): Case => ({
   brief: { ...brief, targets: { viscosity_mPas: { max: 300 } }, ...change },

@@ -57,6 +57,10 @@ describe("readShelf", () => {
   it("tells window readings from blend readings by their kind, and refuses a kind it does not know", () => {
     const window = {
       ...{ kind: "window", id: "w", formulation: "f", wavelength_nm: 405, temperature_C: 25, film: "OPEN" },
+      parts: [
+        { ingredient: "A", mass_pct: 99 },
+        { ingredient: "B", mass_pct: 1 },
+      ],
       filmThickness_um: { value: 100, u: 5 },
       inductionTimes: [{ until: "first gel", irradiance_mWcm2: 8, time_s: { value: 1, u: 0.1 } }],
       ...{ source: "a test", status: "measured here" },

@@ -30,7 +30,8 @@ export interface ScalingLawFit {
  * - `readings`: at least one, each with curing rate, thickness and its relative standard uncertainty.
  *
  * ln C_s is the mean of ln thickness + ln(rate) / 2, weighted by 1 / ln(1 + u^2). Its u is that of the weights, or larger by
- * sqrt(chi^2 / (n - 1)) where the readings scatter more than they say. The exponent is the slope of ln thickness with ln rate.
+ * sqrt(chi^2 / (n - 1)) where the readings scatter more than they say. The exponent is the slope of ln thickness with ln rate;
+ * its u is that of the fit, or that of the readings where they agree better than they were read.
  *
  * Assumes errors of the thickness only, log-normal and independent; a common error of all curing rates goes into the constant.
  * @throws InputError when no reading is given or a number is out of range.
@@ -95,5 +96,9 @@ function exponentOf(rows: readonly Row[]): ScalingLawFit["exponent"] {
     response: rows.map(({ lnThickness }) => lnThickness),
     weights: rows.map(({ weight }) => weight),
   });
-  return { value: coefficients[1]!, u: standardErrors[1]! };
+  // Three readings can agree by chance better than they were read: the doubt of the readings is the least.
+  const total = rows.reduce((sum, { weight }) => sum + weight, 0);
+  const mean = rows.reduce((sum, { weight, lnRate }) => sum + weight * lnRate, 0) / total;
+  const spread = rows.reduce((sum, { weight, lnRate }) => sum + weight * (lnRate - mean) ** 2, 0);
+  return { value: coefficients[1]!, u: Math.max(standardErrors[1]!, 1 / Math.sqrt(spread)) };
 }

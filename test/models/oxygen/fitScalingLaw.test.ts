@@ -14,6 +14,8 @@ describe("fitScalingLaw", () => {
     });
     expect(scalingConstant_umsqrts.value).toBeCloseTo(30, 12);
     expect(exponent!.value).toBeCloseTo(-0.5, 12);
+    // Without scatter the doubt of the exponent is that of the readings: sigma over the spread of ln rate, ln 4 either way.
+    expect(exponent!.u).toBeCloseTo(Math.sqrt(Math.log1p(0.01) / (2 * Math.log(4) ** 2)), 12);
     for (const surprise of surprises) expect(surprise).toBeCloseTo(0, 12);
     // Three readings of 10 % each, without scatter: the mean is known to 10 % over root 3.
     expect(scalingConstant_umsqrts.u / 30).toBeCloseTo(Math.sqrt(Math.log1p(0.01) / 3), 12);
