@@ -8,6 +8,7 @@ import { irradianceOf, layerCureDepth, uncertain, type Case } from "./case.js";
 import type { Read } from "./doubt.js";
 import { lightWarnings } from "./light.js";
 import { asMeasured, otherAmounts, sameIngredients } from "./measuredParts.js";
+import { shortText } from "./shortText.js";
 
 /** A measured curve for a case. */
 export interface MeasuredFor {
@@ -81,7 +82,7 @@ export function curveWarnings(input: Case): Warning[] {
   if (wanted < least || wanted > most) {
     warnings.push({
       code: "beyond-measured-depths",
-      message: `A layer is to cure ${format(wanted)} µm deep; ${curve.series.id} measured ${format(least)} to ${format(most)} µm. The curve is extended beyond its readings: add spots there.`,
+      message: `A layer is to cure ${shortText(wanted)} µm deep; ${curve.series.id} measured ${shortText(least)} to ${shortText(most)} µm. The curve is extended beyond its readings: add spots there.`,
     });
   }
   return warnings;
@@ -139,15 +140,13 @@ function elsewhere(input: Case): Warning[] {
 
 function amountsInWords({ series }: MeasuredWorkingCurve, { formulation }: Case): string[] {
   return otherAmounts(series.parts, formulation).map(
-    ({ id, massFraction }) => `${format(100 * massFraction)} % ${id}`,
+    ({ id, massFraction }) => `${shortText(100 * massFraction)} % ${id}`,
   );
 }
 
 function otherIrradiance(relative: number, { series }: MeasuredWorkingCurve, { brief }: Case): string[] {
   if (Math.abs(relative - 1) <= SAME_IRRADIANCE) return [];
   return [
-    `${format(series.light.irradiance_mWcm2.value)} in place of ${format(brief.light.irradiance_mWcm2.value)} mW/cm²`,
+    `${shortText(series.light.irradiance_mWcm2.value)} in place of ${shortText(brief.light.irradiance_mWcm2.value)} mW/cm²`,
   ];
 }
-
-const format = (value: number): string => String(Number(value.toPrecision(3)));

@@ -13,6 +13,7 @@ import {
   type Read,
 } from "../assess/doubt.js";
 import { curveWarnings } from "../assess/measuredCurve.js";
+import { shortText } from "../assess/shortText.js";
 import { propertyTitles } from "../assess/property.js";
 import { largestOf } from "../recipe/formulation.js";
 import { unitLabel } from "../recipe/units.js";
@@ -23,7 +24,6 @@ import {
   percentText,
   refusal,
   SEARCH_DRAWS,
-  shortText,
   inOrder,
   solubilityModel,
   soughtIngredient,

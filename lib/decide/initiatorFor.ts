@@ -13,6 +13,7 @@ import {
   type Read,
 } from "../assess/doubt.js";
 import { curveWarnings } from "../assess/measuredCurve.js";
+import { shortText } from "../assess/shortText.js";
 import { findMaximum } from "../numerics/maximum.js";
 import { largestOf } from "../recipe/formulation.js";
 import type { Interval } from "../result.js";
@@ -23,7 +24,6 @@ import {
   percentText,
   refusal,
   SEARCH_DRAWS,
-  shortText,
   solubilityModel,
   soughtIngredient,
   withOnly,

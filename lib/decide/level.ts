@@ -6,6 +6,7 @@ import { avoidReasons } from "../assess/avoided.js";
 import { figureOf, type Case } from "../assess/case.js";
 import type { Read } from "../assess/doubt.js";
 import { lightLack, lightModel } from "../assess/light.js";
+import { shortText } from "../assess/shortText.js";
 import type { Formulation } from "../recipe/formulation.js";
 import type { Ingredient } from "../recipe/ingredient.js";
 import { ingredientOn } from "../recipe/shelf.js";
@@ -130,11 +131,6 @@ export function candidateWarnings({ brief }: Case, ingredient: Ingredient): Warn
 /** Percent of the mass, as a sentence says it. @internal */
 export function percentText(massFraction: number): string {
   return `${shortText(100 * massFraction)} %`;
-}
-
-/** A number as a sentence says it. @internal */
-export function shortText(value: number): string {
-  return String(Number(value.toPrecision(3)));
 }
 
 const outcomeOrder: readonly LevelAnswer["outcome"][] = [
