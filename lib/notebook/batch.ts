@@ -1,6 +1,6 @@
 // How a batch is shown: what to weigh, what was weighed, what that changed, and what puts it right.
 
-import type { AsMade, Balance, PropertyChange, Rescue, WeighOutSheet } from "../lab/batch.js";
+import type { AsMade, Balance, MasterBatch, PropertyChange, Rescue, WeighOutSheet } from "../lab/batch.js";
 import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Brief } from "../recipe/brief.js";
 import type { TableContent } from "./content.js";
@@ -69,17 +69,18 @@ export function masterBatchTable({
   if (masterBatches.length === 0) return undefined;
   return tableOf({
     caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. Whether a solid dissolves at that share is not known here: try a little`,
-    rows: masterBatches.flatMap(({ label, carrier, stages, massFraction, dose_g, enoughFor }) =>
-      stages.map(({ of, mass_g, carrier_g }) => ({
-        "master batch": label,
+    rows: masterBatches.flatMap((master) => {
+      const { label, carrier, stages, massFraction, dose_g, enoughFor } = master;
+      return stages.map(({ of, mass_g, carrier_g }) => ({
+        "master batch": [label, ...lightNotes(master)].join(". "),
         needed_g: massText(massFraction * dose_g, balance),
         weigh_g: `${massText(mass_g, balance)} of ${of}`,
         with_g: `${massText(carrier_g, balance)} of ${carrier.id}`,
         holds_pct: numberText(100 * massFraction),
         dose_g: massText(dose_g, balance),
         enoughFor,
-      })),
-    ),
+      }));
+    }),
     columns: [
       { key: "master batch", name: "master batch" },
       { key: "needed_g", name: "too little", align: "right" },
@@ -310,6 +311,11 @@ export function batchDecision({ weighed, sheet, made, plan }: ReturnedBatch): {
       putRight: plan.outcome,
     },
   };
+}
+
+/** What light means for a master batch; nothing where it holds no initiator. */
+export function lightNotes({ solute }: MasterBatch): string[] {
+  return solute.role === "photoinitiator" ? ["Under amber light, in a covered vessel"] : [];
 }
 
 /** A mass as the balance shows it, without its unit: as many decimals as its last digit has. */

@@ -9,7 +9,7 @@ import { isHonest } from "../lab/batch/balance.js";
 import type { Brief } from "../recipe/brief.js";
 import { densityOf } from "../recipe/formulation.js";
 import { flagText, riseText } from "./safety.js";
-import { costText, massText } from "./batch.js";
+import { costText, lightNotes, massText } from "./batch.js";
 import { numberText } from "./digits.js";
 import type { Origin } from "./page.js";
 import type { SheetContent, SheetMasterBatch, SheetPortion } from "./sheet/content.js";
@@ -153,7 +153,7 @@ function masterBatchOf(master: MasterBatch, { balance, portions }: WeighOutSheet
       { what: stageText(stages, k, carrier.id), target: massText(carrier_g, balance) },
     ]),
     notes: [
-      ...(solute.role === "photoinitiator" ? ["Under amber light, in a covered vessel."] : []),
+      ...lightNotes(master).map((note) => `${note}.`),
       `The batch needs ${massText(massFraction * dose_g, balance)} g of ${solute.id}, too little to weigh by itself.`,
       `Weigh to the last digit: it is taken to hold ${numberText(100 * massFraction)} % ${solute.id}, to ${numberText(100 * relativeU, 2)} % of that (one standard uncertainty).`,
       `Makes ${massText(made_g, balance)} g, enough for ${enoughFor} of this batch. Try a little first: whether it dissolves is not known here. Stir until clear.`,

@@ -8,7 +8,7 @@ import { cpSync, mkdirSync, mkdtempSync, readFileSync, readdirSync, rmSync, syml
 import { createServer } from "node:net";
 import path from "node:path";
 import { setTimeout as pause } from "node:timers/promises";
-import { chromium } from "playwright-core";
+import { launchBrowser } from "./launch.mjs";
 
 const shotsAt = process.argv.indexOf("--shots");
 const shots = shotsAt === -1 ? undefined : process.argv[shotsAt + 1];
@@ -27,16 +27,7 @@ const folder = workbenchCopy();
 const token = "only-for-this-check";
 const origin = `http://127.0.0.1:${await freePort()}`;
 const lab = startLab();
-const browser = await chromium.launch({
-  executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
-  args: [
-    "--no-sandbox",
-    "--disable-gpu",
-    "--disable-quic",
-    "--no-first-run",
-    "--disable-background-networking",
-  ],
-});
+const browser = await launchBrowser();
 try {
   await until("Jupyter answers", startLimit_ms, async () => {
     if (lab.hasEnded()) throw new Error("npm run lab ended");

@@ -7,7 +7,7 @@ import { mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from "n
 import { createRequire } from "node:module";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
-import { chromium } from "playwright-core";
+import { launchBrowser } from "./launch.mjs";
 import { checkCopying } from "./copying.mjs";
 import { checkPanel } from "./panel.mjs";
 import { checkSheet, isSheet } from "./sheet.mjs";
@@ -32,18 +32,7 @@ const check = (what, met, found = "") => {
   console.log(`FAILED ${what} ${found}`.trim());
 };
 
-const browser = await chromium.launch({
-  executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
-  args: [
-    "--no-sandbox",
-    "--disable-gpu",
-    "--disable-quic",
-    "--no-first-run",
-    "--disable-background-networking",
-    "--disable-component-update",
-    "--disable-sync",
-  ],
-});
+const browser = await launchBrowser();
 if (shots !== undefined) mkdirSync(shots, { recursive: true });
 try {
   for (const folder of folders) await checkFolder(folder);

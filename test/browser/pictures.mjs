@@ -4,12 +4,9 @@
 import { mkdirSync } from "node:fs";
 import { resolve } from "node:path";
 import { pathToFileURL } from "node:url";
-import { chromium } from "playwright-core";
+import { launchBrowser } from "./launch.mjs";
 
-const browser = await chromium.launch({
-  executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
-  args: ["--no-sandbox", "--disable-gpu", "--disable-background-networking", "--disable-sync"],
-});
+const browser = await launchBrowser();
 const page = await browser.newPage({ viewport: { width: 1000, height: 760 }, colorScheme: "light" });
 await page.goto(pathToFileURL(resolve("rendered/02-viscosity-and-ratio.html")).href);
 await page.waitForSelector(".main-svg");

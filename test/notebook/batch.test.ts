@@ -7,6 +7,7 @@ import {
   costText,
   madeTable,
   massText,
+  lightNotes,
   masterBatchTable,
   rescueTable,
   rescueText,
@@ -14,6 +15,7 @@ import {
   weighOutTable,
 } from "../../lib/notebook/batch.js";
 import { formulationOf } from "../fixtures.js";
+import { readWorkbench } from "../../lib/recipe/files.js";
 
 const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
 const formulation = formulationOf({ THICK: 55, THIN: 30, MID: 12, PI: 2, AB: 1 });
@@ -95,6 +97,24 @@ describe("costText", () => {
   it("says that no price was given rather than that it costs nothing", () => {
     expect(costText(sheetOf({ prices: { currency: "EUR", prices_perkg: { OTHER: 5 } } }))).toBe(
       "no prices given",
+    );
+  });
+});
+
+describe("lightNotes", () => {
+  it("keeps the light off a master batch that holds the initiator, and says nothing of others", () => {
+    const { formulation } = readWorkbench("data/briefs/flow-cell.json");
+    const small = weighOut({
+      formulation,
+      batch_g: 100,
+      balance: { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 },
+    });
+    const notes = small.masterBatches.map((master) => [master.solute.id, lightNotes(master).length]);
+    expect(notes).toContainEqual(["BAPO", 1]);
+    expect(notes).toContainEqual(["MEHQ", 0]);
+    const cells = masterBatchTable(small)!.rows.map(([label]) => String(label));
+    expect(cells.filter((cell) => cell.includes("amber light"))).toHaveLength(
+      small.masterBatches.filter(({ solute }) => solute.id === "BAPO").flatMap(({ stages }) => stages).length,
     );
   });
 });

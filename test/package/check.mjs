@@ -5,7 +5,7 @@ import { execFileSync, spawnSync } from "node:child_process";
 import { cpSync, existsSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join, resolve } from "node:path";
-import { chromium } from "playwright-core";
+import { launchBrowser } from "../browser/launch.mjs";
 import { build, preview } from "vite";
 import { assessProgram } from "./assessProgram.mjs";
 
@@ -110,10 +110,7 @@ await check("computes in a page, bundled, what it computes in Node", async () =>
   const quiet = { root: user, configFile: false, logLevel: "warn" };
   await build({ ...quiet, build: { target: "es2022", chunkSizeWarningLimit: 2000 } });
   const server = await preview({ ...quiet, preview: { host: "127.0.0.1", port: 4179 } });
-  const browser = await chromium.launch({
-    executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
-    args: ["--no-sandbox", "--disable-gpu"],
-  });
+  const browser = await launchBrowser();
   try {
     const page = await browser.newPage();
     await page.goto(server.resolvedUrls.local[0]);
