@@ -54,6 +54,18 @@ function flatSpectrum(id: string, value: number, quantity: "molarAbsorption_Lmol
   return { ...common, wavelengths_nm: [380, 400, 420], values: [value, value, value] };
 }
 
+const inhibitor: Ingredient = {
+  ...initiator,
+  id: "KEEP",
+  name: "an inhibitor",
+  role: "inhibitor",
+  molarMass_gmol: sure(125),
+  radicalsPerPhoton: undefined,
+  spectrum: undefined,
+  peroxylCapture_m3mols: sure(30, 10),
+  radicalsCaught: sure(2, 0.2),
+};
+
 const filler: Ingredient = {
   ...initiator,
   id: "SAND",
@@ -72,6 +84,7 @@ export const shelf: Shelf = {
       liquid("MID", 100, 300, 1),
       initiator,
       absorber,
+      inhibitor,
       filler,
     ].map((one) => [one.id, one]),
   ),
@@ -103,6 +116,8 @@ export const shelf: Shelf = {
   constants: {
     oxygenSolubility_molm3Pa: sure(5e-5, 1e-5),
     oxygenPerRadical: sure(1, 0.2),
+    peroxylTermination_m3mols: sure(500, 1000),
+    oxygenReturned: sure(0.5, 0.2),
     diffusivityFactor: sure(1, 0.5),
     propagation_m3mols: sure(25, 5),
     termination_m3mols: sure(1250, 250),
@@ -141,7 +156,7 @@ export const brief: Brief = {
 };
 
 /** Parts as `{ THIN: 60, THICK: 40 }` in mass percent. */
-export function formulationOf(parts: Record<string, number>): Formulation {
+export function formulationOf(parts: Record<string, number>, on: Shelf = shelf): Formulation {
   const list = Object.entries(parts).map(([ingredient, mass_pct]): Part => ({ ingredient, mass_pct }));
-  return formulate({ recipe: { id: "test", title: "test", normalise: false, parts: list }, shelf });
+  return formulate({ recipe: { id: "test", title: "test", normalise: false, parts: list }, shelf: on });
 }

@@ -2,12 +2,13 @@
 
 import { checkNumber, positive } from "../door.js";
 import { bleachedCureDepth, exposureForDepth } from "../models/cure.js";
-import { absorptionCoefficient, bleachingExposure } from "../models/light.js";
+import { absorptionCoefficient, bleachingExposure, bleachingRate, photonFlux } from "../models/light.js";
+import type { Bleaching } from "../models/oxygen.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
-import { constantOf, layerCureDepth, type Case } from "./case.js";
+import { constantOf, irradianceOf, layerCureDepth, type Case } from "./case.js";
 import { curveModel } from "./cure.js";
 import { intervalOf, propagate, sourcesOf, startDraws, type DrawOptions, type Read } from "./doubt.js";
-import { lightModel, lightWarnings, meanOver } from "./light.js";
+import { lightModel, lightWarnings, meanOver, type LightInResin } from "./light.js";
 
 /** What bleaching does to the cure depth of a layer. */
 export interface BleachingEstimate {
@@ -77,6 +78,31 @@ function layerExposure(input: Case, read: Read): number {
   return exposureForDepth({ cureDepth_um, penetrationDepth_um, criticalExposure_mJcm2 });
 }
 
+/** How the initiator fades in the engine's light, for a layer that is followed in time. @internal */
+export function fadingModel(input: Case): (read: Read) => Bleaching {
+  const light = lightModel(input);
+  const irradiance = irradianceOf(input);
+  const lost = constantOf(input.shelf.constants, "bleachingYield");
+  return (read) => {
+    const { initiators, wavelength_nm, ...inResin } = light(read);
+    const initiatorAbsorption_percm = Math.min(
+      inResin.initiatorAbsorption_percm,
+      inResin.napierianAbsorption_percm,
+    );
+    return {
+      initiatorAbsorption_percm,
+      rate_pers: bleachingRate({
+        molarAbsorption_Lmolcm: initiatorAbsorption_percm / (Math.LN10 * amountOf(initiators)),
+        quantumYield: read(lost),
+        photonFlux_molm2s: photonFlux({ irradiance_mWcm2: read(irradiance), wavelength_nm }),
+      }),
+    };
+  };
+}
+
+const amountOf = (initiators: LightInResin["initiators"]): number =>
+  initiators.reduce((sum, { concentration_molL }) => sum + concentration_molL, 0);
+
 function bleachingModel(input: Case, exposure_mJcm2: number) {
   const light = lightModel(input);
   const curve = curveModel(input);
@@ -85,7 +111,7 @@ function bleachingModel(input: Case, exposure_mJcm2: number) {
     const { starting, napierianAbsorptions_percm, initiators } = light(read);
     const { criticalExposure_mJcm2 } = curve(read);
     const all_percm = meanOver(starting, napierianAbsorptions_percm);
-    const concentration_molL = initiators.reduce((sum, one) => sum + one.concentration_molL, 0);
+    const concentration_molL = amountOf(initiators);
     const initiator_percm = absorptionCoefficient({
       absorbers: initiators.map((one) => ({
         ...one,

@@ -97,12 +97,16 @@ const figureTitles: Readonly<Record<keyof IngredientFigures, string>> = {
   refractiveIndex: "refractive index",
   homopolymerGlassTransition_C: "homopolymer glass transition",
   radicalsPerPhoton: "radicals per photon",
+  peroxylCapture_m3mols: "peroxyl capture rate constant",
+  radicalsCaught: "radicals caught per molecule",
   solubility_pct: "solubility",
 };
 
 const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   oxygenSolubility_molm3Pa: "oxygen solubility in the resin",
-  oxygenPerRadical: "oxygen used per radical",
+  oxygenPerRadical: "oxygen used per radical without inhibitor",
+  peroxylTermination_m3mols: "termination of peroxyl pairs",
+  oxygenReturned: "oxygen given back by peroxyl pairs",
   diffusivityFactor: "oxygen diffusivity against the two-thirds law",
   propagation_m3mols: "propagation rate constant",
   termination_m3mols: "termination rate constant",
@@ -116,11 +120,13 @@ const constantTitles: Readonly<Record<keyof ResinConstants, string>> = {
   intrinsicViscosity: "intrinsic viscosity of the particles",
 };
 
-/** A photon splits at most one molecule and starts at most two radicals; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
+/** A photon splits at most one molecule and starts at most two radicals; a pair of peroxyls gives one oxygen back at most; no more dissolves than there is; a gel holds before nine bonds in ten have reacted. */
 const limits: Readonly<Partial<Record<keyof IngredientFigures | keyof ResinConstants, number>>> = {
   radicalsPerPhoton: 2,
+  radicalsCaught: 10,
   solubility_pct: 100,
   bleachingYield: 1,
+  oxygenReturned: 1,
   gelConversion: 0.9,
 };
 

@@ -5,6 +5,7 @@ import { checkNumber, InputError } from "../door.js";
 import { exposeLayers, type LayerExposure, type OxygenWindow } from "../models/oxygen.js";
 import { filmOn } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
+import { fadingModel } from "./bleaching.js";
 import { constantOf, uncertain, type Case } from "./case.js";
 import { cureModel } from "./cure.js";
 import {
@@ -16,7 +17,7 @@ import {
   type Draws,
   type Read,
 } from "./doubt.js";
-import { oxygenModel } from "./oxygen.js";
+import { oxygenModel, radicalWarnings } from "./oxygen.js";
 
 /** One layer of a series: shares and intervals over the draws, and the run at the stated figures. */
 export interface LayerEstimate {
@@ -60,8 +61,8 @@ export interface SeriesOptions extends DrawOptions {
 /**
  * Prints layers in the model: dark, light, lift, each layer with what the one before has left in the gap.
  *
- * Oxygen diffuses in and is burnt by radicals that adjust at once ({@link exposeLayers}); before each light the brief's dark
- * time passes, and its fresh share of the gap is new resin. The first gap is one layer thickness. 60 draws unless more are
+ * Oxygen diffuses in and is burnt by radicals that adjust at once, and the initiator bleaches ({@link exposeLayers}); before each
+ * light the brief's dark time passes, and its fresh share of the gap is new resin. The first gap is one layer thickness. 60 draws unless more are
  * asked for: each is a whole transient run.
  * @throws InputError as {@link deadZoneOf}; when layers, exposure or times are out of range.
  * @source Models: {@link exposeLayers}. Propagation: JCGM 101:2008.
@@ -120,6 +121,7 @@ function seriesModel(input: Case & SeriesOptions, fineness: Partial<typeof coars
   const { brief, shelf, layers = 3, times_s } = input;
   const oxygen = oxygenModel(input);
   const cure = cureModel(input);
+  const fading = fadingModel(input);
   const window = windowModel(input);
   const constant = (name: "termination_m3mols" | "oxygenCapture_m3mols" | "gelConversion") =>
     constantOf(shelf.constants, name);
@@ -137,6 +139,7 @@ function seriesModel(input: Case & SeriesOptions, fineness: Partial<typeof coars
       ...fineness,
       oxygen_molm3: drawn.freshOxygen_molm3,
       window: window(read, drawn),
+      bleaching: fading(read),
       termination_m3mols: read(constant("termination_m3mols")),
       oxygenCapture_m3mols: read(constant("oxygenCapture_m3mols")),
       gelConversion: read(constant("gelConversion")),
@@ -183,13 +186,9 @@ function windowModel({ brief, shelf, filmStores = false }: Case & SeriesOptions)
   };
 }
 
-function windowWarnings({
-  brief,
-  shelf,
-  oxygenCorrection,
-  filmStores = false,
-}: Case & SeriesOptions): Warning[] {
-  const warnings: Warning[] = [...(oxygenCorrection?.warnings ?? [])];
+function windowWarnings(input: Case & SeriesOptions): Warning[] {
+  const { brief, shelf, filmStores = false } = input;
+  const warnings = radicalWarnings(input);
   const film = filmOn(shelf, `brief "${brief.id}"`, brief.window.film);
   if (filmStores && film.oxygenDiffusivity_m2s === undefined) {
     warnings.push({
@@ -238,7 +237,7 @@ function seriesWarnings(layers: readonly LayerEstimate[]): Warning[] {
   warnings.push({
     code: "series-estimated",
     message:
-      "Rate constants are those of the shelf, mostly of the class and from memory: see the sources. The lift is taken to mix the gap at once; no heat, no bleaching, no flow while the light is on.",
+      "Rate constants are those of the shelf, mostly of the class and from memory: see the sources. The lift is taken to mix the gap at once; what the initiator becomes, not to absorb; no heat, no flow while the light is on.",
   });
   return warnings;
 }

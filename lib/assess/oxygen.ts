@@ -20,6 +20,7 @@ import {
   type Draws,
   type Read,
 } from "./doubt.js";
+import { inhibitorWarnings } from "./inhibitor.js";
 import { drawProperty, propertyTitles, type Drawn, type NeverCures, type Property } from "./property.js";
 import { correctionModel } from "./windowCorrection.js";
 import { radicalFigures, transportFigures } from "./windowFigures.js";
@@ -102,8 +103,7 @@ export function inductionTimeOf(input: Case & DrawOptions): Property {
 
 /** @internal */
 export function drawInductionTime(input: Case, draws: Draws): Drawn {
-  const { warnings = [] } = input.oxygenCorrection ?? {};
-  return drawProperty("inductionTime_s", inductionModel(input), warnings, draws);
+  return drawProperty("inductionTime_s", inductionModel(input), radicalWarnings(input), draws);
 }
 
 /** Radicals started at the window and the oxygen figures that go with them, corrected by what was read on it. @internal */
@@ -176,15 +176,20 @@ export function oxygenModel(input: Case) {
   };
 }
 
-function deadZoneWarnings({ brief, oxygenCorrection }: Case, neverCuresShare: number): Warning[] {
-  const warnings: Warning[] = [...(oxygenCorrection?.warnings ?? [])];
+/** What there is to say of the figures behind every answer on oxygen. @internal */
+export function radicalWarnings(input: Case): Warning[] {
+  return [...(input.oxygenCorrection?.warnings ?? []), ...inhibitorWarnings(input)];
+}
+
+function deadZoneWarnings(input: Case, neverCuresShare: number): Warning[] {
+  const warnings = radicalWarnings(input);
   if (neverCuresShare > 0) {
     warnings.push({
       code: "may-never-cure",
       message: `In ${Number((100 * neverCuresShare).toPrecision(2))} % of the draws this light never cures this resin at this window: oxygen comes in faster than it is burnt. More light, more initiator or a tighter film cures it.`,
     });
   }
-  if (brief.window.gasOxygenFraction === 0) {
+  if (input.brief.window.gasOxygenFraction === 0) {
     warnings.push({
       code: "no-oxygen-below",
       message:

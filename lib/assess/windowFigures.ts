@@ -7,6 +7,7 @@ import { photonFlux } from "../models/light.js";
 import { filmOn } from "../recipe/shelf.js";
 import { componentsIn, constantOf, irradianceOf, uncertain, type Case } from "./case.js";
 import type { Read } from "./doubt.js";
+import { inhibitorModel } from "./inhibitor.js";
 import { lightModel } from "./light.js";
 import { viscosityModel } from "./viscosity.js";
 
@@ -20,15 +21,17 @@ export function radicalFigures(input: Case) {
   }
   const light = lightModel(input);
   const irradiance = irradianceOf(input);
+  const oxygenPerRadical = inhibitorModel(input);
   return (read: Read) => {
     const inResin = light(read);
     const irradiance_mWcm2 = read(irradiance);
     const photonFlux_molm2s = photonFlux({ irradiance_mWcm2, wavelength_nm: inResin.wavelength_nm });
+    const radicalGeneration_molm3s = radicalGeneration({ ...inResin, photonFlux_molm2s });
     return {
       ...inResin,
       irradiance_mWcm2,
-      radicalGeneration_molm3s: radicalGeneration({ ...inResin, photonFlux_molm2s }),
-      oxygenPerRadical: read(constantOf(shelf.constants, "oxygenPerRadical")),
+      radicalGeneration_molm3s,
+      oxygenPerRadical: oxygenPerRadical(read, radicalGeneration_molm3s),
       solubility_molm3Pa: read(constantOf(shelf.constants, "oxygenSolubility_molm3Pa")),
       propagation_m3mols: read(constantOf(shelf.constants, "propagation_m3mols")),
     };

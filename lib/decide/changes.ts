@@ -2,7 +2,7 @@
 // that what both share drops out and the effect of the change is known better than either figure.
 
 import { checkNumber, InputError } from "../door.js";
-import type { Case } from "../assess/case.js";
+import { componentsIn, type Case } from "../assess/case.js";
 import { intervalOf, startDraws, type DrawOptions, type Draws } from "../assess/doubt.js";
 import { drawGelTime } from "../assess/layers.js";
 import { drawDeadZone, drawInductionTime } from "../assess/oxygen.js";
@@ -87,15 +87,16 @@ export function compareChanges({
   return {
     effects: effects.sort((a, b) => strength(b) - strength(a)),
     notModelled: [
-      "Inhibitor level: hydroquinones and phenols need oxygen to work and keep the resin in the bottle; what little they add to the induction time is not in the model. Measure it.",
+      "Inhibitors: counted as catchers of peroxyl radicals, which phenols are; without oxygen these hardly slow a cure. What phenothiazine and the like do to chain radicals is not modelled: measure it.",
+      "Storage: the inhibitor keeps resin from setting in the bottle, and nothing here says how much that takes. Stay at the suppliers' levels.",
       "Gas flow: the gas under the film counts as mixed. Where it stands still, move it.",
     ],
   };
 }
 
 /**
- * Changes a chemist would think of: every other film on the shelf, film thickness, gas, temperature, light, initiator, and the
- * ratio of the main pair of liquids, which sets the viscosity.
+ * Changes a chemist would think of: every other film on the shelf, film thickness, gas, temperature, light, initiator, inhibitor,
+ * and the ratio of the main pair of liquids, which sets the viscosity.
  * @throws InputError when the formulation has no photoinitiator or fewer than two liquids.
  * @example
  * ```ts
@@ -136,14 +137,16 @@ export function usualChanges(work: Case): Change[] {
     ...(temperature_C >= 10 ? [withBrief("10 K cooler", { temperature_C: temperature_C - 10 })] : []),
     bright("twice the light", 2),
     bright("half the light", 0.5),
-    ...initiatorChanges(work),
+    ...amountChanges(work, largestOf(formulation, "photoinitiator").id),
+    ...componentsIn(formulation, ["inhibitor"]).flatMap(({ ingredient }) =>
+      amountChanges(work, ingredient.id),
+    ),
     ...ratioChanges(work, formulation),
   ];
 }
 
-function initiatorChanges(work: Case): Change[] {
+function amountChanges(work: Case, id: string): Change[] {
   const { formulation } = work;
-  const { id } = largestOf(formulation, "photoinitiator");
   const massFraction = massFractionOf(formulation, id);
   return (
     [

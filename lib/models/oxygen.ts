@@ -11,6 +11,7 @@ export * from "./oxygen/exposeLayerFully.js";
 export * from "./oxygen/film.js";
 export * from "./oxygen/fitScalingLaw.js";
 export * from "./oxygen/induction.js";
+export * from "./oxygen/inhibitor.js";
 export * from "./oxygen/radicalRich.js";
 export * from "./oxygen/radicals.js";
 export * from "./oxygen/refill.js";

@@ -22,6 +22,8 @@ export const bareFields: Readonly<Record<string, string>> = {
   slopeFactor: "slope of a working curve over the slope that the absorption gives it",
   radicalsPerPhoton: "chain-starting radicals per photon absorbed by the initiator",
   oxygenPerRadical: "oxygen molecules used per radical started, while oxygen lasts",
+  radicalsCaught: "radicals that one molecule of inhibitor ends",
+  caughtShare: "share of the radicals that inhibitors end",
   diffusivityFactor: "factor on the oxygen diffusivity of the two-thirds law",
   oxygenFraction: "mole fraction of oxygen in a gas",
   gasOxygenFraction: "mole fraction of oxygen in the gas under the film",

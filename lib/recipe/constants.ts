@@ -9,8 +9,12 @@ import { sourced } from "./sourced.js";
 export interface ResinConstants {
   /** Oxygen dissolved per pascal of oxygen above the resin. */
   readonly oxygenSolubility_molm3Pa: SourcedValue;
-  /** Oxygen molecules used up per radical started, while oxygen lasts. */
+  /** Oxygen molecules used up per radical started, while oxygen lasts, without inhibitor. */
   readonly oxygenPerRadical: SourcedValue;
+  /** Termination of two peroxyl radicals, kxx in d[X]/dt = -2 kxx [X]². */
+  readonly peroxylTermination_m3mols: SourcedValue;
+  /** Oxygen given back per pair of peroxyl radicals that end each other. */
+  readonly oxygenReturned: SourcedValue;
   /** Factor on the oxygen diffusivity that the two-thirds law gives. */
   readonly diffusivityFactor: SourcedValue;
   /** Propagation kp. */
@@ -54,6 +58,8 @@ export function readConstants(document: JsonDocument): ResinConstants {
 const constantsSchema: z.ZodType<ResinConstants> = strict({
   oxygenSolubility_molm3Pa: sourced("oxygenSolubility_molm3Pa", { above: 0 }),
   oxygenPerRadical: sourced("oxygenPerRadical", { above: 0 }),
+  peroxylTermination_m3mols: sourced("peroxylTermination_m3mols", { above: 0 }),
+  oxygenReturned: sourced("oxygenReturned", { above: 0, max: 1 }),
   diffusivityFactor: sourced("diffusivityFactor", { above: 0 }),
   propagation_m3mols: sourced("propagation_m3mols", { above: 0 }),
   termination_m3mols: sourced("termination_m3mols", { above: 0 }),

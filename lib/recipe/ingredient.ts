@@ -49,6 +49,10 @@ export interface IngredientFigures {
   readonly homopolymerGlassTransition_C?: SourcedValue;
   /** Chain-starting radicals per photon the initiator absorbs. */
   readonly radicalsPerPhoton?: SourcedValue;
+  /** Rate constant of peroxyl radical + inhibitor. */
+  readonly peroxylCapture_m3mols?: SourcedValue;
+  /** Radicals that one molecule of the inhibitor ends. */
+  readonly radicalsCaught?: SourcedValue;
   /** The most that stays dissolved in a liquid acrylate resin at room temperature, percent of the mass. */
   readonly solubility_pct?: SourcedValue;
 }
@@ -130,6 +134,8 @@ const figureShape = {
   refractiveIndex: sourcedAtTemperature("refractiveIndex", { min: 1, max: 4 }).optional(),
   homopolymerGlassTransition_C: sourced("homopolymerGlassTransition_C", { above: -150, max: 400 }).optional(),
   radicalsPerPhoton: sourced("radicalsPerPhoton", { above: 0, max: 2 }).optional(),
+  peroxylCapture_m3mols: sourced("peroxylCapture_m3mols", { above: 0 }).optional(),
+  radicalsCaught: sourced("radicalsCaught", { above: 0, max: 10 }).optional(),
   solubility_pct: sourced("solubility_pct", { above: 0, max: 100 }).optional(),
 };
 

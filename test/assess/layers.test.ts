@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { bleachingOf } from "../../lib/assess/bleaching.js";
 import { layersOf, type SeriesOptions } from "../../lib/assess/layers.js";
 import { deadZoneOf } from "../../lib/assess/oxygen.js";
 import type { Brief } from "../../lib/recipe/brief.js";
@@ -33,6 +34,42 @@ describe("layersOf", () => {
     const long = run({ layers: 1, exposure_s: 60 }).layers[0]!.deadZone_um!.value;
     const steady = deadZoneOf({ formulation, brief, shelf, draws: 40 });
     expect(steady.outcome === "value" && Math.abs(long / steady.value - 1)).toBeLessThan(0.25);
+  });
+
+  // The same initiator in the same light by two ways: followed in time, and exp(-E / Hb) at the window.
+  it("lets the initiator fade as bleachingOf says, and hands on what the liquid has left", () => {
+    const exposure_s = 30;
+    const [first, second] = run({ layers: 2, exposure_s }).layers.map(
+      ({ stated }) => stated.end.initiatorShare!,
+    );
+    const { bleachedShare } = bleachingOf({
+      formulation,
+      brief,
+      shelf,
+      draws: 40,
+      exposure_mJcm2: brief.light.irradiance_mWcm2.value * exposure_s,
+    });
+    const [atWindow, ...deeper] = first!;
+    expect(bleachedShare.value).toBeGreaterThan(0.02);
+    expect(Math.abs((1 - atWindow!) / bleachedShare.value - 1)).toBeLessThan(1e-3);
+    expect(deeper.every((share) => share >= atWindow!)).toBe(true);
+    expect(second![0]).toBeLessThan(atWindow!);
+  });
+
+  it("cures less where the initiator fades faster", () => {
+    const yields = [0.01, 1].map((bleachingYield) => {
+      const constants = { ...shelf.constants, bleachingYield: sure(bleachingYield) };
+      const { layers } = layersOf({
+        formulation,
+        brief,
+        shelf: { ...shelf, constants },
+        draws: 40,
+        layers: 1,
+        exposure_s: 30,
+      });
+      return layers[0]!.meanConversion.value;
+    });
+    expect(yields[1]).toBeLessThan(yields[0]!);
   });
 
   it("leaves nothing liquid over nitrogen, and more over oxygen than over air", () => {

@@ -296,12 +296,12 @@ const knownWords = new Set(
   [
     "About Absorbs Alpha Amorphous Below Beware Bleaches Consider Corrosive Density Do Exposure Fluoresces From",
     "Highly It Its Keep Known Lets Made May Melts Needs No Radicals Serious Skin Suspected The Toxic Treat Usually Works",
-    "Alentiev Anseth Bowman Chang Chen Chignell Coretsopoulos Decker Dendukuri Einstein Jenkins Iersel Kruif Russel Vrij Ferracane G P Kolibaba Nordin Gong Gou Iida Jasim Mansour",
-    "Mark Merkel Peppas Perry Pinnau Prahl Prohaska Robb Scranton Sideridou Toy Al",
-    "A Acta Addit Adv Appl Bull CRC Chem Chemical Chemistry Data Dent Eng Engineers Front Handbook Int J Macromolecules Manuf Mater",
-    "Physics Polym Polymer Pure R RSC Sci Table Thermochim Thermophys C5RA23855B PMC9555746 PhotochemCAD HomoPolymer",
+    "Alentiev Anseth Bartlett Bowman Burton Chang Chen Chignell Coretsopoulos Decker Dendukuri Einstein Jenkins Iersel Kruif Russel Vrij Ferracane G P Kolibaba Nordin Gong Gou Iida Ingold Jasim Mansour",
+    "Mark Merkel Peppas Perry Pinnau Prahl Prohaska Robb Scranton Sideridou Toy Traylor Al",
+    "A Acta Addit Adv Am Appl Bull CRC Chem Chemical Chemistry Data Dent Eng Engineers Front Handbook Int J Macromolecules Manuf Mater",
+    "Physics Polym Polymer Pure R RSC Sci Soc Table Thermochim Thermophys C5RA23855B PMC9555746 PhotochemCAD HomoPolymer",
     "Annex C Carc Court Delegated EC EU General H319 H334 H335 H360Fd IARC ICSC L MIT Regulation VI",
-    "B BAPO BBOT C2 C3 H-benzotriazol-2-yl HMPP I K N N-dimethylacrylamide N-vinyl-2-pyrrolidone Pa Sudan T TMPTA TPO",
+    "B BAPO BBOT C2 C3 D H-benzotriazol-2-yl HMPP I K N N-dimethylacrylamide N-vinyl-2-pyrrolidone Pa Sudan T TMPTA TPO",
     "TPO-L X dT mL mPa",
   ].flatMap((line) => line.split(" ")),
 );

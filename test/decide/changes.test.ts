@@ -50,6 +50,25 @@ describe("compareChanges", () => {
     expect(effectOf("nitrogen under the film").inductionTime_s!.factor.value).toBe(1);
   });
 
+  // Two oxygen per radical without inhibitor, one with very much of it: no change of its level can do more than a factor of two.
+  it("says what an inhibitor does: lengthens the induction where chains use oxygen up, never beyond their length", () => {
+    const constants = { ...shelf.constants, oxygenPerRadical: sure(2, 0.1) };
+    const kept = {
+      formulation: formulationOf({ THIN: 60, THICK: 38.89, PI: 1, AB: 0.1, KEEP: 0.01 }),
+      brief,
+      shelf: { ...shelf, constants },
+    };
+    const changes = usualChanges(kept).filter(({ change }) => change.endsWith("the KEEP"));
+    expect(changes.map(({ change }) => change)).toEqual(["twice the KEEP", "half the KEEP"]);
+    const { effects } = compareChanges({ ...kept, changes, draws: 200 });
+    const induction = (name: string) =>
+      effects.find(({ change }) => change === name)!.inductionTime_s!.factor;
+    expect(induction("twice the KEEP").low).toBeGreaterThan(1.02);
+    expect(induction("twice the KEEP").high).toBeLessThan(2);
+    expect(induction("half the KEEP").high).toBeLessThan(0.98);
+    expect(usualChanges(work).some(({ change }) => change.includes("KEEP"))).toBe(false);
+  });
+
   it("follows layers in time when asked: twice the light halves the time to the first gel, or nearly", () => {
     expect(effectOf("twice the light").gelTime_s).toBeUndefined();
     const { gelTime_s } = effectOf("twice the light", { gelTimes: 40 });
@@ -72,7 +91,8 @@ describe("compareChanges", () => {
     const { effects, notModelled } = compareChanges({ ...work, draws: 60 });
     const strengths = effects.map(({ deadZone_um }) => Math.abs(Math.log(deadZone_um!.factor.value || 1e-9)));
     expect(strengths).toEqual([...strengths].sort((a, b) => b - a));
-    expect(notModelled[0]).toMatch(/^Inhibitor level:/);
+    expect(notModelled[0]).toMatch(/^Inhibitors: counted as catchers of peroxyl radicals/);
+    expect(notModelled[1]).toMatch(/^Storage: .* Stay at the suppliers' levels\.$/);
   });
 
   it("leaves a zone out that no light ever makes, and counts the draws that never cure", () => {

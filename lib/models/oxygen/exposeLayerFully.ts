@@ -1,6 +1,6 @@
 // A layer exposed with radicals that take time: for short pulses, for cure that goes on in the dark, and for what peroxyls,
 // thiols and amines do. Slower than exposeLayer, and asks for rate constants hardly anyone has measured.
-import { checkNumbers, fraction, notNegative, refuseUnknownKeys } from "../../door.js";
+import { checkNumbers, fraction, notNegative, positive, refuseUnknownKeys } from "../../door.js";
 import { checkRates, type CureRates } from "./balance.js";
 import { columnOf } from "./column.js";
 import { fullRadicalBalance, inertPeroxyls, type PeroxylRates } from "./fullRadicals.js";
@@ -17,10 +17,12 @@ export interface FullLayerInput extends CureRates, LayerConditions {
  * Exposes one layer of resin with full radical kinetics.
  *
  * - all fields of `exposeLayer` but `oxygenPerRadical`, which follows from the kinetics here; `termination_m3mols` may be 0;
- * - `peroxyls`: rate constants of the peroxyl radicals, hydrogen donor and double bonds; each 0 unless given.
+ * - `peroxyls`: rate constants of the peroxyl radicals, hydrogen donor, double bonds and inhibitor; nothing of
+ *   them unless given.
  *
- * dR/dt = Ri - 2 kt R^2 - kO R C - kx R X + b X, dX/dt = kO R C - kx R X - 2 kxx X^2 - b X, b = kpx M + kH DH,
- * dC/dt = d/dz(D dC/dz) - kO R C + rho kxx X^2, X_conv = 1 - exp(-int (kp R + kpx X) dt). Start: no radicals.
+ * dR/dt = Ri - 2 kt R^2 - kO R C - kx R X + b X, dX/dt = kO R C - kx R X - 2 kxx X^2 - (b + n kI I) X,
+ * b = kpx M + kH DH, dI/dt = -kI I X, dC/dt = d/dz(D dC/dz) - kO R C + rho kxx X^2,
+ * X_conv = 1 - exp(-int (kp R + kpx X) dt). Start: no radicals.
  *
  * Assumes radicals and peroxyls that do not move, rate constants that do not change with conversion, and no bleaching.
  * @throws InputError as `exposeLayer`.
@@ -59,6 +61,9 @@ export function exposeLayerFully(input: FullLayerInput): LayerExposure {
     doubleBonds_molm3: notNegative,
     donorTransfer_m3mols: notNegative,
     donor_molm3: notNegative,
+    inhibitorCapture_m3mols: notNegative,
+    inhibitor_molm3: notNegative,
+    radicalsCaught: { ...positive, max: 10 },
   });
   const { cells, tolerance, grid } = { ...layerDefaults, ...input };
   const run = runInput(where, input);

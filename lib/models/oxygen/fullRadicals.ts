@@ -5,7 +5,7 @@ import { differenceIn, type ColumnBalance, type CureRates } from "./balance.js";
 import { atWindow, type Column } from "./column.js";
 import { diffusivityShare, fillTransport, setConductances, transportSystem } from "./transport.js";
 
-/** What peroxyl radicals, made by radical + oxygen, do next. All at least 0. */
+/** What peroxyl radicals, made by radical + oxygen, do next. All at least 0 unless stated. */
 export interface PeroxylRates {
   /** kx of peroxyl + chain radical, both ending, m3/(mol s). */
   readonly crossTermination_m3mols: number;
@@ -21,6 +21,12 @@ export interface PeroxylRates {
   readonly donorTransfer_m3mols: number;
   /** Hydrogen donor (thiol, amine, ether) at the start, mol/m3. */
   readonly donor_molm3: number;
+  /** kI of peroxyl + inhibitor, which ends the peroxyl, m3/(mol s). */
+  readonly inhibitorCapture_m3mols: number;
+  /** Inhibitor at the start, mol/m3. */
+  readonly inhibitor_molm3: number;
+  /** Radicals that one inhibitor molecule ends, n, above 0, at most 10; 2 for a simple phenol. */
+  readonly radicalsCaught: number;
 }
 
 /** Peroxyls that do nothing more: each radical takes one oxygen and both are gone. */
@@ -32,14 +38,18 @@ export const inertPeroxyls: PeroxylRates = {
   doubleBonds_molm3: 0,
   donorTransfer_m3mols: 0,
   donor_molm3: 0,
+  inhibitorCapture_m3mols: 0,
+  inhibitor_molm3: 0,
+  radicalsCaught: 2,
 };
 
 /**
- * A column with full radical kinetics, ready to be followed. State: oxygen, Q, R, X (peroxyl), donor, oxygen taken up, oxygen used.
+ * A column with full radical kinetics, ready to be followed. State: oxygen, Q, R, X (peroxyl), donor, inhibitor, oxygen taken up,
+ * oxygen used.
  *
- * dR/dt = Ri - 2 kt R^2 - kO R C - kx R X + b X, dX/dt = kO R C - kx R X - 2 kxx X^2 - b X, b = kpx M + kH DH,
- * dC/dt = diffusion - kO R C + rho kxx X^2, dQ/dt = kp R + kpx X, dDH/dt = -kH DH X, M = M0 exp(-Q).
- * R, X and C are stepped together with all their slopes; b and D stand as at the start of the part-step.
+ * dR/dt = Ri - 2 kt R^2 - kO R C - kx R X + b X, dX/dt = kO R C - kx R X - 2 kxx X^2 - (b + n kI I) X,
+ * b = kpx M + kH DH, dC/dt = diffusion - kO R C + rho kxx X^2, dQ/dt = kp R + kpx X, dDH/dt = -kH DH X, dI/dt = -kI I X,
+ * M = M0 exp(-Q). R, X and C are stepped together with all their slopes; b, I and D stand as at the start of the part-step.
  */
 export function fullRadicalBalance(
   column: Column,
@@ -51,9 +61,12 @@ export function fullRadicalBalance(
   const { curedDiffusivityShare: share = 1, peroxyls } = rates;
   const { crossTermination_m3mols: kx, selfTermination_m3mols: kxx, oxygenReturned: rho } = peroxyls;
   const { propagation_m3mols: kpx, doubleBonds_molm3: M0, donorTransfer_m3mols: kH } = peroxyls;
-  const [atQ, atR, atX, atDonor, atLedger] = [cells, 2 * cells, 3 * cells, 4 * cells, 5 * cells];
+  const { inhibitorCapture_m3mols: kI, radicalsCaught } = peroxyls;
+  const [atQ, atR, atX, atDonor, atInhibitor] = [cells, 2 * cells, 3 * cells, 4 * cells, 5 * cells];
+  const atLedger = 6 * cells;
   const state = new Float64Array(atLedger + 2);
-  state.fill(peroxyls.donor_molm3, atDonor, atLedger);
+  state.fill(peroxyls.donor_molm3, atDonor, atInhibitor);
+  state.fill(peroxyls.inhibitor_molm3, atInhibitor, atLedger);
   const system = transportSystem(column, share);
   const { diagonal, right } = system;
   // Per cell: change of R and X at no change of C, and per unit of it; net use of oxygen likewise.
@@ -68,14 +81,15 @@ export function fullRadicalBalance(
       const R = u[atR + i]!;
       const X = u[atX + i]!;
       const b = kpx * M0 * Math.exp(-u[atQ + i]!) + kH * u[atDonor + i]!;
+      const ended = b + radicalsCaught * kI * u[atInhibitor + i]!;
       const captured = kO * R * C;
       const fR = conditions.light * relativeLight[i]! - 2 * kt * R * R - captured - kx * R * X + b * X;
-      const fX = captured - kx * R * X - 2 * kxx * X * X - b * X;
+      const fX = captured - kx * R * X - 2 * kxx * X * X - ended * X;
       const capture = kO * Math.max(C, 0);
       const a11 = 1 / h + 4 * kt * R + capture + kx * X;
       const a12 = kx * R - b;
       const a21 = kx * X - capture;
-      const a22 = 1 / h + kx * R + 4 * kxx * X + b;
+      const a22 = 1 / h + kx * R + 4 * kxx * X + ended;
       const determinant = a11 * a22 - a12 * a21;
       const perC = kO * R;
       r0[i] = (a22 * fR - a12 * fX) / determinant;
@@ -105,7 +119,9 @@ export function fullRadicalBalance(
       u[atR + i]! += r0[i]! + r1[i]! * change;
       u[atX + i]! += x0[i]! + x1[i]! * change;
       u[atQ + i]! += h * (kp * u[atR + i]! + kpx * u[atX + i]!);
-      u[atDonor + i]! /= 1 + h * kH * Math.max(u[atX + i]!, 0);
+      const perX = h * Math.max(u[atX + i]!, 0);
+      u[atDonor + i]! /= 1 + kH * perX;
+      u[atInhibitor + i]! /= 1 + kI * perX;
     }
     u[atLedger]! += h * system.conductance[0]! * (conditions.saturation - u[0]!);
     u[atLedger + 1]! += h * used;

@@ -15,7 +15,9 @@ interface Case {
     Record<"Ri" | "alpha" | "D" | "s" | "kO" | "kp" | "kt" | "L" | "C0" | "Cg" | "l" | "share", number>
   > & {
     readonly film?: { readonly h: number; readonly D: number; readonly K: number; readonly sealed: boolean };
-    readonly peroxyls?: Readonly<Record<"kx" | "kxx" | "rho" | "kpx" | "M" | "kH" | "DH", number>>;
+    readonly peroxyls?: Readonly<
+      Record<"kx" | "kxx" | "rho" | "kpx" | "M" | "kH" | "DH" | "kI" | "I" | "n", number>
+    >;
   };
   readonly cells: number;
   readonly schedule: readonly { readonly duration: number; readonly light?: number; readonly gas?: number }[];
@@ -80,6 +82,9 @@ function readingsOf({ parameters: p, cells, schedule, states }: Case): readonly 
       doubleBonds_molm3: x.M,
       donorTransfer_m3mols: x.kH,
       donor_molm3: x.DH,
+      inhibitorCapture_m3mols: x.kI,
+      inhibitor_molm3: x.I,
+      radicalsCaught: x.n,
     },
   }).readings;
 }
@@ -111,7 +116,7 @@ describe("a second opinion by another program", () => {
     });
   });
 
-  it("covers films that resist and store, gas, s, falling diffusion, pulses, and full radicals", () => {
-    expect(Object.keys(cases)).toHaveLength(5);
+  it("covers films that resist and store, gas, s, falling diffusion, pulses, full radicals and an inhibitor", () => {
+    expect(Object.keys(cases)).toHaveLength(6);
   });
 });

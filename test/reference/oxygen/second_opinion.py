@@ -104,24 +104,27 @@ def full(p, n, schedule, times):
     x = p["peroxyls"]
 
     def rhs(y, step):
-        C, Q, R, X, DH = (y[k::5] for k in range(5))
+        C, Q, R, X, DH, inhibitor = (y[k::6] for k in range(6))
         b = x["kpx"] * x["M"] * numpy.exp(-Q) + x["kH"] * DH
+        caught = x["kI"] * inhibitor * X
         captured, cross = p["kO"] * R * C, x["kx"] * R * X
         out = numpy.empty_like(y)
         net = transport(col, C, Q, p, p["Cg"])
-        out[0::5] = net / col["capacity"] - captured + x["rho"] * x["kxx"] * X**2
-        out[1::5] = p["kp"] * R + x["kpx"] * X
-        out[2::5] = p["Ri"] * step.get("light", 1) * col["light"] - 2 * p["kt"] * R**2 - captured - cross + b * X
-        out[3::5] = captured - cross - 2 * x["kxx"] * X**2 - b * X
-        out[4::5] = -x["kH"] * DH * X
+        out[0::6] = net / col["capacity"] - captured + x["rho"] * x["kxx"] * X**2
+        out[1::6] = p["kp"] * R + x["kpx"] * X
+        out[2::6] = p["Ri"] * step.get("light", 1) * col["light"] - 2 * p["kt"] * R**2 - captured - cross + b * X
+        out[3::6] = captured - cross - 2 * x["kxx"] * X**2 - b * X - x["n"] * caught
+        out[4::6] = -x["kH"] * DH * X
+        out[5::6] = -caught
         return out
 
-    y0 = numpy.zeros(5 * n)
-    y0[0::5], y0[4::5] = p["C0"], x["DH"]
-    states = follow(rhs, y0, schedule, times, 9)
-    return {t: dict(oxygen=y[0::5], conversion=-numpy.expm1(-y[1::5]), radicals=y[2::5]) for t, y in states.items()}
+    y0 = numpy.zeros(6 * n)
+    y0[0::6], y0[4::6], y0[5::6] = p["C0"], x["DH"], x["I"]
+    states = follow(rhs, y0, schedule, times, 11)
+    return {t: dict(oxygen=y[0::6], conversion=-numpy.expm1(-y[1::6]), radicals=y[2::6]) for t, y in states.items()}
 
 
+nothing = dict(kx=0.0, kxx=0.0, rho=0.0, kpx=0.0, M=0.0, kH=0.0, DH=0.0, kI=0.0, I=0.0, n=2.0)
 pulses = [dict(duration=3.0), dict(duration=4.0, light=0), dict(duration=3.0)]
 cases = {
     "film that resists": (quasi_steady, {**P0, "l": 1e-5}, 100, [dict(duration=5.0)], [2.5, 5.0]),
@@ -133,8 +136,11 @@ cases = {
         quasi_steady, {**P0, "l": 1e-5, "share": 0.01, "kp": 100.0, "D": 4e-10}, 100,
         [dict(duration=8.0), dict(duration=5.0, light=0)], [8.0, 13.0]),
     "full radicals with peroxyls and donor, pulses": (
-        full, {**P0, "peroxyls": dict(kx=2500.0, kxx=1000.0, rho=1.0, kpx=1e-3, M=5000.0, kH=0.02, DH=50.0)}, 60,
-        [dict(duration=3.0), dict(duration=0.5, light=0), dict(duration=3.0)], [3.0, 3.5, 6.5]),
+        full, {**P0, "peroxyls": {**nothing, "kx": 2500.0, "kxx": 1000.0, "rho": 1.0, "kpx": 1e-3, "M": 5000.0, "kH": 0.02, "DH": 50.0}},
+        60, [dict(duration=3.0), dict(duration=0.5, light=0), dict(duration=3.0)], [3.0, 3.5, 6.5]),
+    "inhibitor that catches peroxyls and is used up near the window": (
+        full, {**P0, "l": 1e-5, "peroxyls": {**nothing, "kxx": 500.0, "rho": 0.5, "kpx": 1e-3, "M": 5000.0, "kI": 30.0, "I": 0.4}},
+        60, [dict(duration=5.0)], [1.0, 2.5, 5.0]),
 }
 
 if __name__ == "__main__":
