@@ -10,7 +10,8 @@ export interface DepthProfile {
 }
 
 /**
- * The value of a profile at a depth within it, by the cubic through the four nearest points.
+ * The value of a profile at a depth within it, by the cubic through the four nearest points, but never beyond these: beside a
+ * steep front a cubic swings out, and a conversion would come out above 1.
  *
  * - `depths_um`: rising, um; `values`: one per depth, any unit.
  * - `depth_um`: from the first to the last depth, um.
@@ -30,7 +31,10 @@ export function valueAtDepth(input: DepthProfile & { readonly depth_um: number }
   checkNumber(depth_um, { where, field: "depth_um", min: depths_um[0]!, max: depths_um[last]! });
   let i = 1;
   while (i < last && depths_um[i]! < depth_um) i++;
-  return cubicAt(depth_um, depths_um, (k) => values[k]!, firstOfFour(i, last));
+  const first = firstOfFour(i, last);
+  const four = [0, 1, 2, 3].map((k) => values[first + k]!);
+  const cubic = cubicAt(depth_um, depths_um, (k) => values[k]!, first);
+  return Math.min(Math.max(cubic, Math.min(...four)), Math.max(...four));
 }
 
 /**

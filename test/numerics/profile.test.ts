@@ -12,6 +12,16 @@ describe("valueAtDepth", () => {
     }
   });
 
+  it("stays within its points beside a step", () => {
+    const values = [0, 0, 0, 1, 1, 1];
+    for (let depth_um = 0; depth_um <= 4; depth_um += 0.1) {
+      const value = valueAtDepth({ depths_um, values, depth_um });
+      expect(value).toBeGreaterThanOrEqual(0);
+      expect(value).toBeLessThanOrEqual(1);
+    }
+    expect(valueAtDepth({ depths_um, values, depth_um: 2.4 })).toBeGreaterThan(0.1);
+  });
+
   it.each([
     [{ depths_um, values: [1, 2], depth_um: 1 }, "valueAtDepth: depths_um holds 6, values holds 2"],
     [

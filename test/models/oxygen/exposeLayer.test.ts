@@ -23,17 +23,15 @@ const distance = (found: number, expected: number, floor: number): number =>
   Math.abs(found - expected) / Math.max(Math.abs(expected), floor);
 
 /**
- * The grid error of 0.25 um is 1e-3, and up to 1.5e-3 in oxygen close to the edge. Values below 1e-2 stand for "hardly any" and are
- * held to 1e-2 times this. On a front or an edge, conversion changes tenfold within a micrometre or two, and more is allowed.
+ * How far a value may lie off at cells of h = 0.25 um. Means (over no less than 1e-2), fronts and fluxes: 1e-3. At a point as well,
+ * but a front, which is thinner than a cell, stands anywhere within it: that moves what lies beside it by up to h^2 s Ri / 8 D = 4e-5
+ * of saturation. One reference point, 20 um in even light, lies between two cells on the resting edge itself, where conversion goes
+ * from 0.05 to 0.9 within a micrometre; it is held to 1e-2.
  */
-function allowedAtQuarterMicrometre(name: string, field: string): number {
-  if (name.startsWith("T1g") && field === "X@20") return 1.5e-2;
-  if (field === "X@100") return 5e-3;
-  return /^X@[13]0|^zX=0.05/.test(field)
-    ? 3e-3
-    : field.startsWith("mean") || field === "zX=0.2#0"
-      ? 1e-3
-      : 1.5e-3;
+function allowedAtQuarterMicrometre(name: string, field: string, value: number): number {
+  if (name.startsWith("T1g") && field === "X@20") return 1e-2;
+  if (field.startsWith("mean")) return 1e-3 * Math.max(value, 1e-2);
+  return 1e-3 * Math.abs(value) + (field.includes("@") ? 4e-5 : 0);
 }
 
 // Reference: solutions of an independent program, converged in the grid to 1e-8 or better (see the note in the file).
@@ -43,10 +41,8 @@ describe("exposeLayer against grid-converged solutions", () => {
     let compared = 0;
     for (const reading of readings) {
       for (const [field, { value }] of Object.entries(at(reading.time_s))) {
-        const floor = field.startsWith("z") ? 0 : field === "flux" ? 1e-6 : 1e-2;
-        const found = distance(named(reading, field), value, floor);
-        expect(found, `${field} at ${reading.time_s} s`).toBeLessThan(
-          allowedAtQuarterMicrometre(name, field),
+        expect(Math.abs(named(reading, field) - value), `${field} at ${reading.time_s} s`).toBeLessThan(
+          allowedAtQuarterMicrometre(name, field, value),
         );
         compared++;
       }
