@@ -27,7 +27,7 @@ export const bareFields: Readonly<Record<string, string>> = {
   diffusivityFactor: "factor on the oxygen diffusivity of the two-thirds law",
   oxygenFraction: "mole fraction of oxygen in a gas",
   gasOxygenFraction: "mole fraction of oxygen in the gas under the film",
-  freshFraction: "share of the resin in the gap that is fresh from the vat after a lift",
+  freshFraction: "share of the liquid left at the window that a lift exchanges for fresh resin",
   cureDepthPerLayer: "cure depth over layer thickness",
   neverCuresShare: "share of the draws in which the resin never cures",
   G: "Grunberg–Nissan interaction, on the basis named beside it",

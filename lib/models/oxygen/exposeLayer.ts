@@ -23,7 +23,7 @@ export interface LayersInput extends LayerInput {
   readonly layers: number;
   /** How far the part rises between layers, above 0, um. */
   readonly layerThickness_um: number;
-  /** Share of the resin in the new gap that is fresh from the vat, 0 to 1; the rest is the liquid left at the window, mixed. */
+  /** Share of the liquid left at the window that the lift exchanges for fresh resin, 0 to 1. */
   readonly freshFraction: number;
 }
 
@@ -88,8 +88,8 @@ export function exposeLayer(input: LayerInput): LayerExposure {
  * - `layers`, `layerThickness_um`, `freshFraction`.
  *
  * After each layer the part rises by the layer thickness and the gelled resin with it. The new gap is the liquid left at the
- * window plus the layer thickness; its resin is `freshFraction` fresh and for the rest like the liquid left, mixed (oxygen and
- * conversion). A film that stores oxygen keeps its profile. Time for diffusion between layers is a dark step of the schedule.
+ * window plus the layer thickness. What flows in is fresh, and so is the share `freshFraction` of the liquid that was left; the rest
+ * of that liquid is mixed into the gap with what it has of oxygen, conversion and initiator. A film that stores oxygen keeps its profile. Time for diffusion between layers is a dark step of the schedule.
  *
  * Assumes that the lift mixes the resin at once and that the window stays flat.
  * @throws InputError as `exposeLayer`.
@@ -166,9 +166,12 @@ function runSeries(where: string, input: LayersInput, cells: number, tolerance: 
   return runs;
 }
 
-/** f of fresh resin and 1 - f of the liquid left; where nothing liquid is left, all is fresh. */
-function nextStart(left: Leftover, { freshFraction, oxygen_molm3 }: LayersInput): StartState {
-  const stale = left.liquid_um > 0 ? 1 - freshFraction : 0;
+/** What the lift leaves of the liquid, mixed into the new gap; all else in it is fresh. */
+function nextStart(
+  left: Leftover,
+  { freshFraction, oxygen_molm3, layerThickness_um }: LayersInput,
+): StartState {
+  const stale = ((1 - freshFraction) * left.liquid_um) / (left.liquid_um + layerThickness_um);
   return {
     oxygen: (1 - stale) * oxygen_molm3 + stale * left.oxygen,
     growth: stale * left.growth,

@@ -38,11 +38,13 @@ describe("exposeLayers", () => {
     expect(dark.map(({ gapThickness_um }) => gapThickness_um)).toEqual([50, 100, 150]);
   });
 
-  it("starts each layer with the fresh share and the mean of the liquid left", () => {
-    const layers = print({ freshFraction: 0.3 });
+  it("starts each layer with what the lift leaves of the liquid, mixed into fresh resin", () => {
+    const layers = print({ freshFraction: 0.3, layerThickness_um: 10 });
     layers.slice(1).forEach((layer, k) => {
       const { end } = layers[k]!;
-      const liquid = end.depths_um.filter((depth) => depth < end.deadZone.byGel_um!);
+      const left_um = end.deadZone.byGel_um!;
+      const stale = (0.7 * left_um) / (left_um + 10);
+      const liquid = end.depths_um.filter((depth) => depth < left_um);
       // Means by the trapezoid rule over the points of the profile: 1 % is enough to tell it from any other rule.
       let [sum, all] = [0, 0];
       liquid.slice(1).forEach((depth, i) => {
@@ -50,23 +52,30 @@ describe("exposeLayers", () => {
         sum += (width * (end.oxygen_molm3[i]! + end.oxygen_molm3[i + 1]!)) / 2;
         all += width;
       });
-      expect(layer.startOxygen_molm3 / (0.3 + (0.7 * sum) / all)).toBeCloseTo(1, 2);
+      expect(layer.startOxygen_molm3 / (1 - stale + (stale * sum) / all)).toBeCloseTo(1, 2);
       expect(layer.startOxygen_molm3).toBeLessThan(1);
     });
   });
 
-  it("gels later in fresh resin than in resin left over, and settles unless none is ever renewed", () => {
-    const [fresh, half, stale] = [1, 0.5, 0].map((freshFraction) => print({ freshFraction, layers: 10 }));
-    const last = (layers: ReturnType<typeof print>) => layers.at(-1)!;
-    expect(last(half!).gelTime_s!).toBeLessThan(last(fresh!).gelTime_s!);
-    expect(last(stale!).gelTime_s!).toBeLessThan(last(half!).gelTime_s!);
-    for (const layers of [fresh!, half!]) {
+  it("starts from fresh resin the nearer, the less liquid is left", () => {
+    const tight = { film: "resists", filmEquivalentThickness_um: 300 } as const;
+    const layers = print({ window: tight, freshFraction: 0, layers: 3 });
+    layers.slice(1).forEach((layer, k) => {
+      const left_um = layers[k]!.end.deadZone.byGel_um!;
+      expect(left_um).toBeLessThan(2);
+      expect(1 - layer.startOxygen_molm3).toBeLessThan(left_um / 50);
+    });
+  });
+
+  it("gels later in fresh resin than with resin left over, and settles", () => {
+    const series = [1, 0.9, 0].map((freshFraction) => print({ freshFraction, layers: 10 }));
+    const gelTimes = series.map((layers) => layers.at(-1)!.gelTime_s!);
+    expect(gelTimes[1]).toBeLessThan(gelTimes[0]!);
+    expect(gelTimes[2]).toBeLessThan(gelTimes[1]!);
+    for (const layers of series) {
       const [before, end] = layers.slice(-2).map(({ end: { meanConversion } }) => meanConversion);
       expect(Math.abs(end! / before! - 1)).toBeLessThan(1e-3);
     }
-    // Resin that is never renewed carries its conversion along and gels a little sooner in every layer.
-    const times = stale!.slice(2).map(({ gelTime_s }) => gelTime_s!);
-    times.slice(1).forEach((time, k) => expect(time).toBeLessThan(times[k]!));
   });
 
   it("drains a film on glass from layer to layer, and hands its oxygen on exactly", () => {
