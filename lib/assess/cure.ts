@@ -113,12 +113,29 @@ function criticalModel(input: Case): (read: Read) => number {
   return (read) => (readCritical(curve, read, input) * here(read)) / there(read);
 }
 
-/** Light that burns the dissolved oxygen, and light that brings the resin to its gel conversion. */
 function estimatedCritical(input: Case, relativeIrradiance: number): (read: Read) => number {
+  const parts = estimatedParts(input, relativeIrradiance);
+  return (read) => {
+    const { oxygen_mJcm2, gel_mJcm2 } = parts(read);
+    return oxygen_mJcm2 + gel_mJcm2;
+  };
+}
+
+/** The share of the critical exposure that the dissolved oxygen takes, as the estimate has it. @internal */
+export function inductionShareModel(input: Case): (read: Read) => number {
+  const parts = estimatedParts(input, 1);
+  return (read) => {
+    const { oxygen_mJcm2, gel_mJcm2 } = parts(read);
+    return oxygen_mJcm2 / (oxygen_mJcm2 + gel_mJcm2);
+  };
+}
+
+/** Light that burns the dissolved oxygen, and light that brings the resin to its gel conversion. */
+function estimatedParts(input: Case, relativeIrradiance: number) {
   const { shelf } = input;
   const radicals = radicalModel(input);
   const constant = (name: "termination_m3mols" | "gelConversion") => constantOf(shelf.constants, name);
-  return (read) => {
+  return (read: Read) => {
     const drawn = radicals(read);
     const radicalGeneration_molm3s = relativeIrradiance * drawn.radicalGeneration_molm3s;
     const oxygenTime_s = inductionTime({
@@ -132,6 +149,7 @@ function estimatedCritical(input: Case, relativeIrradiance: number): (read: Read
       termination_m3mols: read(constant("termination_m3mols")),
       radicalGeneration_molm3s,
     });
-    return relativeIrradiance * drawn.irradiance_mWcm2 * (oxygenTime_s + gelTime_s);
+    const irradiance_mWcm2 = relativeIrradiance * drawn.irradiance_mWcm2;
+    return { oxygen_mJcm2: irradiance_mWcm2 * oxygenTime_s, gel_mJcm2: irradiance_mWcm2 * gelTime_s };
   };
 }

@@ -4,7 +4,7 @@
 import { checkNumber } from "../door.js";
 import { normalQuantile } from "../numerics/distributions.js";
 import { latinHypercube } from "../numerics/sampling.js";
-import { coverageInterval, rankCorrelation } from "../numerics/summary.js";
+import { coverageInterval, drawsNeeded, rankCorrelation } from "../numerics/summary.js";
 import type { Interval, SourcedValue, UsedSource } from "../result.js";
 
 /**
@@ -101,6 +101,23 @@ export function intervalOf({
   const { low, high } = coverageInterval(values, level);
   // A model that bends can put the stated answer outside the middle of its own draws; the interval never excludes it.
   return { value: stated, low: Math.min(low, stated), high: Math.max(high, stated), level };
+}
+
+/**
+ * As {@link intervalOf}, of the draws that have the quantity at all. Where these are fewer than the level needs, none can be left out
+ * at either end.
+ */
+export function intervalAmong({
+  stated,
+  values,
+  level,
+}: {
+  stated: number;
+  values: readonly number[];
+  level: number;
+}): Interval {
+  if (values.length >= drawsNeeded(level)) return intervalOf({ stated, values, level });
+  return { value: stated, low: Math.min(stated, ...values), high: Math.max(stated, ...values), level };
 }
 
 /**

@@ -3,13 +3,14 @@
 
 import { checkNumber, InputError } from "../door.js";
 import { exposeLayers, type LayerExposure, type OxygenWindow } from "../models/oxygen.js";
+import { drawsNeeded } from "../numerics/summary.js";
 import { filmOn } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 import { fadingModel } from "./bleaching.js";
 import { constantOf, uncertain, type Case } from "./case.js";
 import { cureModel } from "./cure.js";
 import {
-  intervalOf,
+  intervalAmong,
   propagate,
   sourcesOf,
   startDraws,
@@ -19,7 +20,10 @@ import {
 } from "./doubt.js";
 import { oxygenModel, radicalWarnings } from "./oxygen.js";
 
-/** One layer of a series: shares and intervals over the draws, and the run at the stated figures. */
+/**
+ * One layer of a series: shares and intervals over the draws, and the run at the stated figures. An interval is that of the draws that
+ * have the quantity, where at least half of them do.
+ */
 export interface LayerEstimate {
   /** 1 for the first. */
   readonly layer: number;
@@ -78,7 +82,7 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
   const { draws = 60, layers = 3 } = input;
   checkNumber(layers, { where: "layersOf", field: "layers", min: 1, max: 50 });
   const started = startDraws({ ...input, draws });
-  const least = Math.ceil(2 / (1 - started.level) - 1e-9);
+  const least = drawsNeeded(started.level);
   if (draws < least) {
     throw new InputError(
       `layersOf: draws is ${draws}; an interval that holds ${100 * started.level} % needs at least ${least}`,
@@ -90,10 +94,9 @@ export function layersOf(input: Case & SeriesOptions): LayerSeries {
     const runs = outcomes.map(({ series }) => series[k]!);
     const interval = (of: (run: LayerExposure) => number | undefined) => {
       const [value, values] = [of(run), runs.map(of).filter((one) => one !== undefined)];
-      const enough = values.length >= Math.max(runs.length / 2, 2 / (1 - started.level));
-      return value === undefined || !enough
+      return value === undefined || values.length < runs.length / 2
         ? undefined
-        : intervalOf({ stated: value, values, level: started.level });
+        : intervalAmong({ stated: value, values, level: started.level });
     };
     return {
       layer: k + 1,

@@ -12,7 +12,7 @@ import type { Warning } from "../result.js";
 import type { Case } from "./case.js";
 import {
   doubtShares,
-  intervalOf,
+  intervalAmong,
   propagate,
   sourcesOf,
   startDraws,
@@ -77,12 +77,7 @@ export function drawDeadZone(input: Case, draws: Draws): Drawn<DeadZoneEstimate>
   if (stated.outcome === "never-cures" || cured.length === 0)
     return { values, property: { ...common, outcome: "never-cures", share } };
   const { thickness_um: value } = stated;
-  const { level } = draws;
-  // Of too few that cure none can be left out at either end.
-  const interval =
-    cured.length < 2 / (1 - level)
-      ? { value, low: Math.min(value, ...cured), high: Math.max(value, ...cured), level }
-      : intervalOf({ stated: value, values: cured, level });
+  const interval = intervalAmong({ stated: value, values: cured, level: draws.level });
   return { values, property: { ...common, outcome: "value", ...interval, neverCuresShare: share } };
 }
 
@@ -141,7 +136,8 @@ function inductionModel(input: Case) {
   };
 }
 
-function deadZoneModel(input: Case) {
+/** @internal */
+export function deadZoneModel(input: Case) {
   const oxygen = oxygenModel(input);
   return (read: Read) => deadZone(oxygen(read));
 }

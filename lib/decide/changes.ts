@@ -3,10 +3,11 @@
 
 import { checkNumber, InputError } from "../door.js";
 import { componentsIn, type Case } from "../assess/case.js";
-import { intervalOf, startDraws, type DrawOptions, type Draws } from "../assess/doubt.js";
+import { intervalAmong, startDraws, type DrawOptions, type Draws } from "../assess/doubt.js";
 import { drawGelTime } from "../assess/layers.js";
 import { drawDeadZone, drawInductionTime } from "../assess/oxygen.js";
 import { viscosityOf } from "../assess/viscosity.js";
+import { drawsNeeded } from "../numerics/summary.js";
 import { largestOf, mainPair, massFractionOf, withMassFraction, withRatio } from "../recipe/formulation.js";
 import type { Interval } from "../result.js";
 
@@ -67,7 +68,7 @@ export function compareChanges({
   if (considered.length === 0)
     throw new InputError("compareChanges: changes is empty; give at least one, or leave it out");
   if (gelTimes !== undefined) {
-    const least = Math.max(40, Math.ceil(2 / (1 - (input.level ?? 0.95)) - 1e-9));
+    const least = Math.max(40, drawsNeeded(input.level ?? 0.95));
     checkNumber(gelTimes, { where: "compareChanges", field: "gelTimes", min: least, max: 10000 });
   }
   const ask = (work: Case) => quantitiesOf(work, input, gelTimes);
@@ -222,11 +223,10 @@ function effectOf(
     Number.isFinite(value / before.values[k]!) ? [[value, value / before.values[k]!] as const] : [],
   );
   const statedFactor = after.stated / before.stated;
-  if (!Number.isFinite(statedFactor) || both.length < Math.max(after.values.length / 2, 2 / (1 - level)))
-    return undefined;
+  if (!Number.isFinite(statedFactor) || both.length < after.values.length / 2) return undefined;
   return {
-    then: intervalOf({ stated: after.stated, values: both.map(([value]) => value), level }),
-    factor: intervalOf({ stated: statedFactor, values: both.map(([, factor]) => factor), level }),
+    then: intervalAmong({ stated: after.stated, values: both.map(([value]) => value), level }),
+    factor: intervalAmong({ stated: statedFactor, values: both.map(([, factor]) => factor), level }),
   };
 }
 

@@ -11,7 +11,7 @@ import {
 import type { ExposureQuestion, ExposureRow, StackPoint } from "../models/cure.js";
 import { opticalDepth } from "../models/light.js";
 import { constantOf, layerCureDepth, type Case } from "../assess/case.js";
-import { curveModel } from "../assess/cure.js";
+import { curveModel, inductionShareModel } from "../assess/cure.js";
 import { cureDepthOn } from "../assess/curveDepth.js";
 import {
   intervalOf,
@@ -23,6 +23,7 @@ import {
 } from "../assess/doubt.js";
 import { lightModel } from "../assess/light.js";
 import { curveWarnings } from "../assess/measuredCurve.js";
+import { deadZoneModel } from "../assess/oxygen.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 
 /** The layers of a part: fields as in `ExposureQuestion`. */
@@ -51,6 +52,10 @@ export interface ExposurePlanEstimate {
   readonly totalTime_s: number;
   /** Cure depth of a normal layer over its thickness. */
   readonly cureDepthPerLayer: Interval;
+  /** Left liquid on the window, which the light passes first; steady dead zone. */
+  readonly liquid_um: Interval;
+  /** How far a normal layer, the liquid below it and its own thickness taken off, cures into the one before; below 0 it falls short. */
+  readonly reach_um: Interval;
   /** Conversion where a normal layer meets the one before: the new side is the weaker and sets the green strength. */
   readonly bond: {
     readonly newSide: { readonly conversion: Interval };
@@ -65,7 +70,7 @@ export interface ExposurePlanEstimate {
     readonly smallest_um: Interval;
     readonly foundToClog: { readonly low_um: number; readonly high_um: number };
   };
-  /** Exposure and conversion through the last layers at the stated figures, from the window on. */
+  /** Exposure and conversion through the last layers at the stated figures, from the face of the part on. */
   readonly stack: readonly StackPoint[];
   readonly warnings: readonly Warning[];
   readonly sources: readonly UsedSource[];
@@ -78,7 +83,9 @@ export interface ExposurePlanEstimate {
  * Times follow from the working curve ({@link workingCurveOf}; measured where calibrated) by {@link exposurePlan}, once at the
  * stated figures, which is what to set, and once a draw, which is the interval of the right time. Depths and conversions are
  * those of the set times in each draw. Light in the stack is taken to fall off as the working curve shows, with the penetration
- * depth. Holds for the resin at rest on this engine; a first print with a test piece comes before a part.
+ * depth. The part hangs above the dead zone ({@link deadZoneOf}): light passes the liquid first, and what is left of it makes the bond.
+ * Of the critical exposure oxygen takes the share that the estimate has; conversion rises from there. The print-through leaves the
+ * dead zone out, so it is an upper bound. Holds for the resin at rest on this engine; a first print with a test piece comes before a part.
  * @param input - The case; `layers`, `baseLayers`, `baseFactor`, `transitionLayers`; draw options.
  * @throws InputError as {@link workingCurveOf} and {@link exposurePlan}; when no layer is a normal one.
  * @source Models: {@link exposurePlan}, {@link interfaceConversion}, {@link printThrough}, {@link stackProfile},
@@ -128,6 +135,10 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
     })),
     totalTime_s: plan.totalTime_s,
     cureDepthPerLayer: interval(({ cureDepths_um }) => cureDepths_um.at(-1)! / input.brief.layerThickness_um),
+    liquid_um: interval(({ liquid_um }) => liquid_um),
+    reach_um: interval(
+      ({ cureDepths_um, liquid_um }) => cureDepths_um.at(-1)! - liquid_um - input.brief.layerThickness_um,
+    ),
     bond: {
       newSide: { conversion: interval(({ bond }) => bond.newSide.conversion) },
       oldSide: { conversion: interval(({ bond }) => bond.oldSide.conversion) },
@@ -141,7 +152,7 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
       }),
     },
     stack: stackProfile({
-      ...statedRun.layer,
+      ...statedRun.onPart,
       layers: Math.min(input.layers, STACK_SHOWN),
       pointsPerLayer: 11,
     }),
@@ -163,12 +174,19 @@ function planModel(input: Case & PlannedLayers, level: number) {
   const { layerThickness_um, cureDepthPerLayer } = brief;
   const curve = curveModel(input);
   const gel = constantOf(input.shelf.constants, "gelConversion");
+  const zone = deadZoneModel(input);
+  const inductionShare = inductionShareModel(input);
   return (read: Read) => {
     const drawn = curve(read);
     const { criticalExposure_mJcm2, irradiance_mWcm2 } = drawn;
     const penetrationDepth_um = drawn.penetrationDepthAt(layerCureDepth(input));
     const workingCurve = { penetrationDepth_um, criticalExposure_mJcm2 };
     const gelConversion = read(gel);
+    const deadZone = zone(read);
+    // Beyond so many depths no light is left to speak of, and a resin that never cures has no end of liquid.
+    const most_um = 20 * penetrationDepth_um;
+    const liquid_um = deadZone.outcome === "dead-zone" ? Math.min(deadZone.thickness_um, most_um) : most_um;
+    const inductionExposure_mJcm2 = inductionShare(read) * criticalExposure_mJcm2;
     const plan = exposurePlan({
       ...workingCurve,
       layerThickness_um,
@@ -183,18 +201,21 @@ function planModel(input: Case & PlannedLayers, level: number) {
     /** What the part gets in this draw when these times are set. */
     const runWith = (times_s: readonly number[]) => {
       const exposures = times_s.map((time_s) => time_s * irradiance_mWcm2);
-      const layer = {
-        layerExposure_mJcm2: exposures.at(-1)!,
+      const layerExposure_mJcm2 = exposures.at(-1)!;
+      const onPart = {
+        layerExposure_mJcm2: layerExposure_mJcm2 * Math.exp(-liquid_um / penetrationDepth_um),
         layerThickness_um,
         opticalDepth_um: penetrationDepth_um,
         criticalExposure_mJcm2,
         gelConversion,
+        inductionExposure_mJcm2,
       };
       return {
-        layer,
+        onPart,
+        liquid_um,
         cureDepths_um: exposures.map((exposure) => Math.max(cureDepthOn(drawn, exposure), 0)),
-        bond: interfaceConversion(layer),
-        roof: printThrough({ ...layer, ...workingCurve }),
+        bond: interfaceConversion(onPart),
+        roof: printThrough({ layerExposure_mJcm2, layerThickness_um, ...workingCurve }),
       };
     };
     return { plan, runWith };

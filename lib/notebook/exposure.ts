@@ -150,6 +150,8 @@ export function exposureTable(caption: string, { rows, totalTime_s }: ExposurePl
  */
 export function layerFactsTable({
   cureDepthPerLayer,
+  liquid_um,
+  reach_um,
   bond,
   roof,
   channel,
@@ -160,12 +162,18 @@ export function layerFactsTable({
     [
       "cure depth over layer thickness",
       intervalText(cureDepthPerLayer),
-      "above 1 a layer reaches into the one before",
+      "counted from the window, where the liquid of the dead zone comes first",
+    ],
+    ["left liquid on the window", um(liquid_um), "steady dead zone: the part hangs above it"],
+    [
+      "reaches into the layer before",
+      um(reach_um),
+      "cure depth less the liquid and the layer itself; below 0 it falls short",
     ],
     [
       "conversion where a layer meets the one before",
       intervalText(bond.newSide.conversion),
-      `has gelled in ${sharePercent(bond.gelsShare)} % of draws; the older side stands at ${intervalText(bond.oldSide.conversion)}`,
+      `has gelled in ${sharePercent(bond.gelsShare)} % of draws; page 04 follows it in time; the older side stands at ${intervalText(bond.oldSide.conversion)}`,
     ],
     [
       "cured into the void behind a roof",
@@ -190,7 +198,7 @@ export function layerFactsTable({
 }
 
 /**
- * Conversion through the newest layers of a stack, from the window on.
+ * Conversion through the newest layers of a stack, from the face of the part on.
  * @example
  * ```ts
  * import { calibrate, exposurePlanOf } from "resinwright";
@@ -206,7 +214,7 @@ export function stackFigure({ stack }: ExposurePlanEstimate, conditions: string)
   return lineFigure({
     caption: "Conversion through the newest layers",
     conditions,
-    x: { label: "distance from the window", unit: "µm" },
+    x: { label: "distance from the face of the part", unit: "µm" },
     y: { label: "conversion", range: [0, 1] },
     series: layers.map((layer) => {
       const points = stack.filter((point) => point.layer === layer);

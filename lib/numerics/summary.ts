@@ -36,7 +36,7 @@ export function quantile(sortedValues: NumberList, probability: number): number 
 /**
  * The median of a sample and its probabilistically symmetric coverage interval.
  *
- * - `values`: finite draws in any order; at least 2/(1 - level), so that one is expected beyond each end, and 1/level.
+ * - `values`: finite draws in any order, at least `drawsNeeded`.
  * - `level`: coverage probability p, above 0 and below 1.
  *
  * With M draws sorted as y(1) ... y(M): q is p M rounded to a whole number, r is (M - q)/2 rounded up,
@@ -70,6 +70,24 @@ export function coverageInterval(values: NumberList, level: number): CoverageInt
     );
   }
   return { value: interpolated(y, 0.5), low: y[r - 1]!, high: y[r + q - 1]!, level };
+}
+
+/**
+ * How many draws a coverage interval needs at least: 2 / (1 - level), so that one is expected beyond each end, and 1 / level.
+ *
+ * - `level`: coverage probability, above 0 and below 1.
+ * @throws InputError when the level is out of range.
+ * @example
+ * ```ts
+ * import { drawsNeeded } from "resinwright";
+ * drawsNeeded(0.95); // → 40
+ * ```
+ */
+export function drawsNeeded(level: number): number {
+  const field = "level";
+  checkNumber(level, { where: "drawsNeeded", field, min: 0, above: true, max: 1 - Number.EPSILON });
+  // A hair is taken off first: 2 / (1 - 0.9) is 20.000000000000004.
+  return Math.ceil(Math.max(2 / (1 - level), 1 / level) - 1e-9);
 }
 
 /**
@@ -120,11 +138,6 @@ function spread(field: string, deviations: Float64Array): number {
 }
 
 const dot = (a: Float64Array, b: Float64Array): number => a.reduce((sum, x, i) => sum + x * b[i]!, 0);
-
-/** Whole, with a hair taken off first: 2 / (1 - 0.9) is 20.000000000000004. */
-function drawsNeeded(level: number): number {
-  return Math.ceil(Math.max(2 / (1 - level), 1 / level) - 1e-9);
-}
 
 function checkRising(values: NumberList): void {
   for (let i = 1; i < values.length; i++) {

@@ -92,6 +92,15 @@ describe("layersOf", () => {
     ]);
   });
 
+  it("has the gel time of the draws that gel, though some of them do not", () => {
+    const { gelsShare, gelTime_s } = run({ layers: 1, exposure_s: 3 }).layers[0]!;
+    expect(gelsShare).toBeGreaterThan(0.5);
+    expect(gelsShare).toBeLessThan(1);
+    // 40 draws, the fewest that are taken: all that gel count, and none later than the light goes off.
+    expect(gelTime_s!.low).toBeLessThan(gelTime_s!.value);
+    expect(gelTime_s!.high).toBeLessThanOrEqual(3);
+  });
+
   it("counts light, not dark: twice the light gels in half the time or less", () => {
     const gelTime = (irradiance: number) =>
       run({ layers: 1, exposure_s: 30 }, { light: { ...brief.light, irradiance_mWcm2: sure(irradiance) } })

@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import type { Case } from "../../lib/assess/case.js";
 import { workingCurveOf } from "../../lib/assess/cure.js";
 import { opticalDepthOf } from "../../lib/assess/light.js";
+import { deadZoneOf } from "../../lib/assess/oxygen.js";
 import { exposurePlanOf, type PlannedLayers } from "../../lib/decide/exposurePlanOf.js";
 import { printThrough } from "../../lib/models/cure.js";
 import type { Brief } from "../../lib/recipe/brief.js";
@@ -53,14 +54,36 @@ describe("exposurePlanOf", () => {
     expect(channel.foundToClog.low_um).toBeCloseTo(3.5 * value, 8);
   });
 
-  // At the stated figures the exposure at the cure depth is the critical one, and the layer before is reached by half a layer:
-  // the new side of the bond has gelled, and the old side is ahead of it.
+  it("takes the liquid on the window off what a layer reaches, and off the light that makes the bond", () => {
+    const { liquid_um, reach_um, bond, rows } = plan();
+    const zone = deadZoneOf({ ...work, draws: 40 });
+    expect(zone.outcome === "value" && zone.value).toBeCloseTo(liquid_um.value, 9);
+    expect(reach_um.value).toBeCloseTo(rows.at(-1)!.cureDepth_um.value - liquid_um.value - 50, 9);
+    // By Beer-Lambert, the bond has gelled where the layer reaches the one before, in the very same draws.
+    expect(bond.newSide.conversion.value > shelf.constants.gelConversion.value).toBe(reach_um.value > 0);
+    const oxygen = plan({ window: { ...brief.window, gasOxygenFraction: 1 } });
+    expect(oxygen.liquid_um.value).toBeGreaterThan(liquid_um.value);
+    expect(oxygen.bond.newSide.conversion.value).toBeLessThan(bond.newSide.conversion.value);
+    expect(oxygen.roof).toEqual(plan().roof);
+  });
+
+  it("counts a resin that never cures on this window as one whose light never reaches the part", () => {
+    const dim = { ...brief.light, irradiance_mWcm2: sure(1e-6) };
+    const { bond, liquid_um, reach_um } = plan({ light: dim });
+    expect(liquid_um.value).toBeGreaterThan(1000);
+    expect(reach_um.high).toBeLessThan(0);
+    expect(bond.newSide.conversion.high).toBe(0);
+    expect(bond.gelsShare).toBe(0);
+  });
+
+  // Nitrogen below the film: no liquid. At the stated figures the exposure at the cure depth is then the critical one, and the layer
+  // before is reached by half a layer: the new side of the bond has gelled, and the old side is ahead of it.
   it("bonds at a conversion above the gel's, the old side ahead of the new one", () => {
-    const { bond } = plan();
+    const { bond } = plan({ window: { ...brief.window, gasOxygenFraction: 0 } });
     expect(bond.newSide.conversion.value).toBeGreaterThan(shelf.constants.gelConversion.value);
     expect(bond.oldSide.conversion.value).toBeGreaterThan(bond.newSide.conversion.value);
     expect(bond.gelsShare).toBeGreaterThan(0.5);
-    const tighter = plan({ cureDepthPerLayer: 3 });
+    const tighter = plan({ cureDepthPerLayer: 3, window: { ...brief.window, gasOxygenFraction: 0 } });
     expect(tighter.bond.gelsShare).toBeGreaterThan(bond.gelsShare);
     expect(tighter.roof.printThrough_um.value).toBeGreaterThan(plan().roof.printThrough_um.value);
   });

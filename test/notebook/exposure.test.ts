@@ -83,8 +83,8 @@ describe("exposureTable", () => {
 describe("layerFactsTable", () => {
   it("tells what light does and, beside it, what was found in practice", () => {
     const { rows } = layerFactsTable(plan);
-    expect(rows).toHaveLength(4);
-    expect(rows[3]![2]).toMatch(/^in practice channels below \d+ to \d+ µm were found to clog/);
+    expect(rows).toHaveLength(6);
+    expect(rows[5]![2]).toMatch(/^in practice channels below \d+ to \d+ µm were found to clog/);
   });
 });
 

@@ -2,7 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { normalQuantile } from "../../lib/numerics/distributions.js";
 import { latinHypercube } from "../../lib/numerics/sampling.js";
-import { coverageInterval, quantile, rankCorrelation } from "../../lib/numerics/summary.js";
+import { coverageInterval, drawsNeeded, quantile, rankCorrelation } from "../../lib/numerics/summary.js";
 
 const oneTo = (n: number): number[] => Array.from({ length: n }, (_, i) => i + 1);
 
@@ -23,6 +23,16 @@ describe("quantile", () => {
     [[1, 2], 1.1, "quantile: probability is 1.1; it must be a number from 0 to 1"],
   ])("refuses %j at %d", (values, probability, message) => {
     expect(() => quantile(values, probability)).toThrow(message);
+  });
+});
+
+describe("drawsNeeded", () => {
+  it("expects one draw beyond each end", () => {
+    expect([0.5, 0.9, 0.95, 0.99].map(drawsNeeded)).toEqual([4, 20, 40, 200]);
+    expect(drawsNeeded(0.1)).toBe(10);
+    expect(() => drawsNeeded(1)).toThrow("drawsNeeded: level is 1; it must be a number above 0 and at most");
+    expect(() => coverageInterval(oneTo(39), 0.95)).toThrow("draw at least 40");
+    expect(coverageInterval(oneTo(40), 0.95).level).toBe(0.95);
   });
 });
 

@@ -6,12 +6,14 @@ import { checkNumber, checkNumbers, InputError, notNegative, positive } from "..
  *
  * - `exposure_mJcm2`: at the place, at least 0, mJ/cm2.
  * - `criticalExposure_mJcm2`: above 0, mJ/cm2; `gelConversion`: above 0, below 1.
+ * - `inductionExposure_mJcm2`: what of the critical exposure burns oxygen before any bond reacts, at least 0, below the critical
+ *   exposure, mJ/cm2; 0 unless given.
  *
- * X = 1 - exp(-K E), K = -ln(1 - X_gel) / Ec, so X = 1 - (1 - X_gel)^(E / Ec). With E falling as exp(-mu z) it is the front
- * X(z) = 1 - exp(-K I0 t e^(-mu z)), whose gel lies at the working curve with Dp = 1 / mu.
+ * X = 1 - exp(-K (E - Ei)), K = -ln(1 - X_gel) / (Ec - Ei), so X = 1 - (1 - X_gel)^((E - Ei) / (Ec - Ei)), 0 up to Ei. With Ei = 0
+ * and E falling as exp(-mu z) it is the front X(z) = 1 - exp(-K I0 t e^(-mu z)), whose gel lies at the working curve with Dp = 1 / mu.
  *
- * Assumes that conversion depends on exposure alone, first order in the double bonds: no induction by oxygen, no slowing as
- * the resin sets. Good near the gel point, too high far beyond it.
+ * Assumes that conversion depends on exposure alone, first order in the double bonds, with no slowing as the resin sets. Good near
+ * the gel point, too high far beyond it. The more of the critical exposure is oxygen's, the steeper conversion rises beyond the gel.
  * @throws InputError when an argument is out of range.
  * @source A. Vitale, J. T. Cabral, Materials 9 (2016) 760, doi 10.3390/ma9090760 (form and doi from memory).
  * @example
@@ -24,14 +26,27 @@ export function conversionAfterExposure(input: {
   readonly exposure_mJcm2: number;
   readonly criticalExposure_mJcm2: number;
   readonly gelConversion: number;
+  readonly inductionExposure_mJcm2?: number;
 }): number {
-  checkNumbers("conversionAfterExposure", input, {
-    exposure_mJcm2: notNegative,
-    criticalExposure_mJcm2: positive,
-    gelConversion: partial,
-  });
+  const where = "conversionAfterExposure";
   const { exposure_mJcm2: E, criticalExposure_mJcm2: Ec, gelConversion } = input;
-  return -Math.expm1((E / Ec) * Math.log1p(-gelConversion));
+  const { inductionExposure_mJcm2: Ei = 0 } = input;
+  checkNumbers(
+    where,
+    { exposure_mJcm2: E, criticalExposure_mJcm2: Ec, gelConversion, inductionExposure_mJcm2: Ei },
+    {
+      exposure_mJcm2: notNegative,
+      criticalExposure_mJcm2: positive,
+      gelConversion: partial,
+      inductionExposure_mJcm2: notNegative,
+    },
+  );
+  if (Ei >= Ec) {
+    throw new InputError(
+      `${where}: inductionExposure_mJcm2 is ${Ei}; it must be below criticalExposure_mJcm2, ${Ec}, of which it is a part`,
+    );
+  }
+  return -Math.expm1((Math.max(E - Ei, 0) / (Ec - Ei)) * Math.log1p(-gelConversion));
 }
 
 /**

@@ -193,7 +193,8 @@ export interface InterfaceSide {
  * Conversion on both sides of the plane where a new layer meets the one before it, when the new layer is peeled off the window.
  *
  * - `layerExposure_mJcm2` D0, `layerThickness_um` L; `opticalDepth_um`: 1 over the absorption, above 0, um.
- * - `criticalExposure_mJcm2`: above 0; `gelConversion`: above 0, below 1.
+ * - `criticalExposure_mJcm2`: above 0; `gelConversion`: above 0, below 1; `inductionExposure_mJcm2`: as for
+ *   `conversionAfterExposure`, 0 unless given.
  *
  * New side: D0 e^-zeta, zeta = L / depth; old side: D0 (1 + e^-zeta), for it was the window side of the layer before. Conversion
  * from exposure as `conversionAfterExposure`. The new side is the weaker: it sets the green strength of the bond.
@@ -220,6 +221,7 @@ export function interfaceConversion(
     readonly opticalDepth_um: number;
     readonly criticalExposure_mJcm2: number;
     readonly gelConversion: number;
+    readonly inductionExposure_mJcm2?: number;
   },
 ): { readonly newSide: InterfaceSide; readonly oldSide: InterfaceSide } {
   const where = "interfaceConversion";
@@ -283,6 +285,7 @@ export function stackProfile(
     readonly opticalDepth_um: number;
     readonly criticalExposure_mJcm2: number;
     readonly gelConversion: number;
+    readonly inductionExposure_mJcm2?: number;
     readonly pointsPerLayer: number;
   },
 ): StackPoint[] {
