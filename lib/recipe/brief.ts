@@ -67,7 +67,7 @@ export interface Brief {
   readonly crossSection_mm2: number;
   /** Speed at which the plate leaves the window. */
   readonly liftSpeed_mms: number;
-  /** What happens between two layers: how long it stays dark, and which share of the resin in the gap is fresh afterwards. */
+  /** What happens between two layers: how long it stays dark, and which share of the liquid left at the window is exchanged for fresh. */
   readonly betweenLayers: { readonly dark_s: number; readonly freshFraction: number };
   readonly targets: Readonly<Partial<Record<PropertyName, Target>>>;
   readonly avoid: readonly Avoid[];
