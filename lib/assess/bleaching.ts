@@ -3,6 +3,7 @@
 import { checkNumber, positive } from "../door.js";
 import { bleachedCureDepth, exposureForDepth } from "../models/cure.js";
 import { absorptionCoefficient, bleachingExposure } from "../models/light.js";
+import { um_per_cm } from "../models/scales.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 import { constantOf, layerCureDepth, type Case } from "./case.js";
 import { curveModel } from "./cure.js";
@@ -102,7 +103,7 @@ function bleachingModel(input: Case, exposure_mJcm2: number) {
       exposure_mJcm2,
       criticalExposure_mJcm2,
     };
-    const straight_um = (1e4 * Math.log(exposure_mJcm2 / criticalExposure_mJcm2)) / all_percm;
+    const straight_um = (um_per_cm * Math.log(exposure_mJcm2 / criticalExposure_mJcm2)) / all_percm;
     const depth = bleachedCureDepth(bleaching);
     const bleached_um = depth.outcome === "cures" ? depth.cureDepth_um : 0;
     return {

@@ -1,6 +1,7 @@
 // Rate constants and the rate of a radical polymerisation, with the convention for termination said out loud.
 import { checkNumber, checkNumbers, InputError, notNegative, positive, unknownName } from "../../door.js";
 import { celsius } from "../ranges.js";
+import { kelvin } from "../scales.js";
 
 /**
  * Rate at which double bonds are used up, Rp in mol/(m3 s), at steady radicals and without oxygen.
@@ -102,7 +103,7 @@ export function rateConstant(input: {
     activationEnergy_Jmol: notNegative,
     temperature_C: celsius,
   });
-  const T = input.temperature_C + 273.15;
+  const T = kelvin(input.temperature_C);
   return input.prefactor_m3mols * Math.exp(-input.activationEnergy_Jmol / (R * T));
 }
 

@@ -5,6 +5,7 @@ import { deletedResidualLimit, deletedResiduals } from "../../numerics/deletedRe
 import { linearLeastSquares, type LinearFit } from "../../numerics/linear.js";
 import { robustScores } from "../../numerics/runs.js";
 import type { Interval, Warning } from "../../result.js";
+import { zeroCelsius_K } from "../scales.js";
 import { judge, type Adequacy, type Scatter } from "./adequacy.js";
 import { blendRow, placeOfPair, shapeOf, type BlendShape } from "./blendDesign.js";
 import { blendWarnings } from "./blendWarnings.js";
@@ -123,7 +124,7 @@ export function fitBlend(table: {
   const temperatures = readings.map(({ temperature_C }) => temperature_C);
   const common = {
     basis,
-    referenceTemperature_C: shape.referenceTemperature_K - 273.15,
+    referenceTemperature_C: shape.referenceTemperature_K - zeroCelsius_K,
     coefficients: fit.coefficients,
     covariance: fit.covariance,
     residuals: fit.residuals,

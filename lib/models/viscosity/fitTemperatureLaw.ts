@@ -6,13 +6,8 @@ import { linearLeastSquares, type LinearFit } from "../../numerics/linear.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import type { Interval, Warning } from "../../result.js";
 import { celsius } from "../ranges.js";
-import {
-  andradeViscosity,
-  checkTwoTemperatures,
-  findRise,
-  kelvin,
-  type AndradeParameters,
-} from "./andrade.js";
+import { kelvin } from "../scales.js";
+import { andradeViscosity, checkTwoTemperatures, findRise, type AndradeParameters } from "./andrade.js";
 import { vogelViscosity, type VogelParameters } from "./vogel.js";
 
 /** A temperature law with its parameters. */
