@@ -1,4 +1,4 @@
-// Scales between units that more than one model needs: the conversion of each stands here and nowhere else.
+// Scales between units that more than one model needs, the zero of Celsius and the gas constant.
 // A length over `um_per_cm` goes from um to cm; factors that a single formula needs stay in that formula.
 
 export const um_per_cm = 1e4;
