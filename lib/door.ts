@@ -42,6 +42,16 @@ export function checkNumbers<I extends object>(
   }
 }
 
+/**
+ * Returns `value` if it is a whole number within the rule, and refuses it otherwise.
+ * @throws InputError as {@link checkNumber}.
+ */
+export function checkWhole(value: unknown, rule: NumberRule): number {
+  const number = checkNumber(value, rule);
+  if (Number.isInteger(number)) return number;
+  throw new InputError(`${rule.where}: ${rule.field} is ${number}; it must be a whole number`);
+}
+
 export const positive = { min: 0, above: true } as const;
 export const notNegative = { min: 0 } as const;
 export const fraction = { min: 0, max: 1 } as const;

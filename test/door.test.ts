@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import {
   checkNumber,
   checkNumbers,
+  checkWhole,
   fraction,
   nearestName,
   positive,
@@ -39,6 +40,15 @@ describe("checkNumber", () => {
     expect(() => checkNumbers("w", { a: 1, b: -1, c: "text" }, { a: positive, b: positive })).toThrow(
       "w: b is -1",
     );
+  });
+});
+
+describe("checkWhole", () => {
+  it("gives back a whole number in range, and refuses what lies out of it or between", () => {
+    const rule = { where: "w", field: "n", min: 1, max: 9 };
+    expect(checkWhole(9, rule)).toBe(9);
+    expect(() => checkWhole(2.5, rule)).toThrow("w: n is 2.5; it must be a whole number");
+    expect(() => checkWhole(0.5, rule)).toThrow("w: n is 0.5; it must be a number from 1 to 9");
   });
 });
 

@@ -1,8 +1,10 @@
 // A small shelf of round numbers chosen for testing; these are not materials.
 
+import type { Balance, WeighedBatch } from "../lib/lab/batch.js";
 import type { Brief } from "../lib/recipe/brief.js";
 import { formulate, type Formulation, type Part } from "../lib/recipe/formulation.js";
 import type { Ingredient } from "../lib/recipe/ingredient.js";
+import type { BlendReadings } from "../lib/recipe/readings.js";
 import type { Shelf } from "../lib/recipe/shelf.js";
 import type { SourcedValue } from "../lib/result.js";
 
@@ -160,3 +162,34 @@ export function formulationOf(parts: Record<string, number>, on: Shelf = shelf):
   const list = Object.entries(parts).map(([ingredient, mass_pct]): Part => ({ ingredient, mass_pct }));
   return formulate({ recipe: { id: "test", title: "test", normalise: false, parts: list }, shelf: on });
 }
+
+/** Neat 5000 and 20 mPa s with an interaction `G` on mass fractions. */
+export const blendLaw = (w: number, G: number): number =>
+  5000 ** w * 20 ** (1 - w) * Math.exp(G * w * (1 - w));
+
+const massFractions = [0, 0.25, 0.5, 0.75, 1];
+
+/** Constructed so that the answer is exact: {@link blendLaw} with G = -1.5, no scatter. */
+export const exactReadings: BlendReadings = {
+  id: "r1",
+  pair: ["THICK", "THIN"],
+  temperature_C: 25,
+  relativeU: 0.02,
+  massFractions,
+  viscosities_mPas: massFractions.map((w) => blendLaw(w, -1.5)),
+  source: "constructed for a test",
+  status: "invented for the demo",
+};
+
+export const balance: Balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
+
+/** A batch on {@link balance} before its weighings. */
+export const weighedBatch: WeighedBatch = {
+  id: "T-1",
+  formulation: "test",
+  batch_g: 1000,
+  balance,
+  weighings: [],
+  source: "round numbers chosen for a test",
+  status: "invented for the demo",
+};

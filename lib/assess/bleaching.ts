@@ -4,6 +4,7 @@ import { checkNumber, positive } from "../door.js";
 import { bleachedCureDepth, exposureForDepth } from "../models/cure.js";
 import { absorptionCoefficient, bleachingExposure, bleachingRate, photonFlux } from "../models/light.js";
 import type { Bleaching } from "../models/oxygen.js";
+import { um_per_cm } from "../models/scales.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 import { constantOf, irradianceOf, layerCureDepth, type Case } from "./case.js";
 import { curveModel } from "./cure.js";
@@ -128,7 +129,7 @@ function bleachingModel(input: Case, exposure_mJcm2: number) {
       exposure_mJcm2,
       criticalExposure_mJcm2,
     };
-    const straight_um = (1e4 * Math.log(exposure_mJcm2 / criticalExposure_mJcm2)) / all_percm;
+    const straight_um = (um_per_cm * Math.log(exposure_mJcm2 / criticalExposure_mJcm2)) / all_percm;
     const depth = bleachedCureDepth(bleaching);
     const bleached_um = depth.outcome === "cures" ? depth.cureDepth_um : 0;
     return {

@@ -3,6 +3,7 @@
 
 import { checkNumber, InputError } from "../door.js";
 import { exposeLayers, type LayerExposure, type OxygenWindow } from "../models/oxygen.js";
+import { m_per_um } from "../models/scales.js";
 import { drawsNeeded } from "../numerics/summary.js";
 import { filmOn } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
@@ -178,7 +179,7 @@ function windowModel({ brief, shelf, filmStores = false }: Case & SeriesOptions)
   ): OxygenWindow => {
     const filmThickness_um = read(thickness);
     const filmDiffusivity_m2s = read(diffusivity);
-    const filmSolubility_molm3Pa = (permeance_molm2sPa * 1e-6 * filmThickness_um) / filmDiffusivity_m2s;
+    const filmSolubility_molm3Pa = (permeance_molm2sPa * m_per_um * filmThickness_um) / filmDiffusivity_m2s;
     return {
       film: "stores",
       filmThickness_um,

@@ -19,12 +19,12 @@ import { largestOf } from "../recipe/formulation.js";
 import { unitLabel } from "../recipe/units.js";
 import { findRoot } from "../numerics/root.js";
 import {
+  answersFor,
   candidateWarnings,
   MOST_TRIED,
   percentText,
   refusal,
   SEARCH_DRAWS,
-  inOrder,
   solubilityModel,
   soughtIngredient,
   withOnly,
@@ -69,10 +69,7 @@ export function absorberFor(
   if (refused !== undefined) return refused;
 
   const draws = startDraws({ ...input, draws: input.draws ?? SEARCH_DRAWS });
-  const caseAt = (massFraction: number): Case => ({
-    ...input,
-    formulation: withOnly(input.formulation, ingredient, massFraction),
-  });
+  const caseAt = (massFraction: number): Case => withOnly(input, ingredient, massFraction);
   const solubility = solubilityModel(ingredient);
   const model = (read: Read) => {
     const level = levelFor(caseAt, wanted, read);
@@ -124,11 +121,7 @@ export function absorberFor(
 export function absorberCandidates(
   input: Case & DrawOptions & { readonly wanted: WantedOfAbsorber },
 ): LevelAnswer[] {
-  return inOrder(
-    [...input.shelf.ingredients.values()]
-      .filter(({ role }) => role === "absorber")
-      .map(({ id }) => absorberFor({ ...input, ingredient: id })),
-  );
+  return answersFor(input.shelf, "absorber", (id) => absorberFor({ ...input, ingredient: id }));
 }
 
 interface Wanted {

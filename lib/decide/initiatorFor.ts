@@ -18,8 +18,8 @@ import { findMaximum } from "../numerics/maximum.js";
 import { largestOf } from "../recipe/formulation.js";
 import type { Interval } from "../result.js";
 import {
+  answersFor,
   candidateWarnings,
-  inOrder,
   MOST_TRIED,
   percentText,
   refusal,
@@ -78,10 +78,7 @@ export function initiatorFor(given: Case & InitiatorSearch): InitiatorAnswer {
   if (refused !== undefined) return refused;
 
   const draws = startDraws({ ...input, draws: input.draws ?? SEARCH_DRAWS });
-  const caseAt = (massFraction: number): Case => ({
-    ...input,
-    formulation: withOnly(input.formulation, ingredient, massFraction),
-  });
+  const caseAt = (massFraction: number): Case => withOnly(input, ingredient, massFraction);
   const depthAt = (massFraction: number, read: Read): number =>
     cureDepthOn(curveModel(caseAt(massFraction))(read), exposure_mJcm2);
   const bestLevel = (read: Read): number => {
@@ -155,11 +152,7 @@ export function initiatorFor(given: Case & InitiatorSearch): InitiatorAnswer {
  * ```
  */
 export function initiatorCandidates(input: Case & Omit<InitiatorSearch, "ingredient">): InitiatorAnswer[] {
-  return inOrder(
-    [...input.shelf.ingredients.values()]
-      .filter(({ role }) => role === "photoinitiator")
-      .map(({ id }) => initiatorFor({ ...input, ingredient: id })),
-  );
+  return answersFor(input.shelf, "photoinitiator", (id) => initiatorFor({ ...input, ingredient: id }));
 }
 
 const LEAST_TRIED = 1e-5;

@@ -7,9 +7,8 @@ import { figureOf, type Case } from "../assess/case.js";
 import type { Read } from "../assess/doubt.js";
 import { lightLack, lightModel } from "../assess/light.js";
 import { shortText } from "../assess/shortText.js";
-import type { Formulation } from "../recipe/formulation.js";
 import type { Ingredient } from "../recipe/ingredient.js";
-import { ingredientOn } from "../recipe/shelf.js";
+import { ingredientOn, type Shelf } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
 
 /** A level that does what is wanted, or would if it dissolved. */
@@ -40,29 +39,28 @@ export type LevelAnswer = LevelFound | LevelRefused;
 /** Nobody puts more than a tenth of the mass of an initiator or absorber into a resin (common practice). @internal */
 export const MOST_TRIED = 0.1;
 
+/** What a level can be sought of. @internal */
+export type SoughtRole = "absorber" | "photoinitiator";
+
 /** A search for a level costs many runs of the model a draw. @internal */
 export const SEARCH_DRAWS = 200;
 
 /** The ingredient to search a level of: the one in the formulation (its lot counts), otherwise the one on the shelf. @internal */
-export function soughtIngredient(
-  { formulation, shelf }: Case,
-  role: "absorber" | "photoinitiator",
-  id: string,
-): Ingredient {
+export function soughtIngredient({ formulation, shelf }: Case, role: SoughtRole, id: string): Ingredient {
   const where = `formulation "${formulation.id}"`;
   const present = formulation.components.find(({ ingredient }) => ingredient.id === id)?.ingredient;
   const ingredient = present ?? ingredientOn(shelf, where, id);
   if (ingredient.role === role) return ingredient;
-  const known = [...shelf.ingredients.values()].filter((one) => one.role === role).map((one) => one.id);
-  throw new InputError(unknownName(where, role, id, known));
+  throw new InputError(unknownName(where, role, id, idsOf(shelf, role)));
 }
 
-/** The formulation with one ingredient at a level in place of all of its role; the others keep their proportions. @internal */
-export function withOnly(
-  formulation: Formulation,
-  ingredient: Ingredient,
-  massFraction: number,
-): Formulation {
+function idsOf({ ingredients }: Shelf, role: SoughtRole): string[] {
+  return [...ingredients.values()].filter((one) => one.role === role).map(({ id }) => id);
+}
+
+/** The case with one ingredient at a level in place of all of its role; the others keep their proportions. @internal */
+export function withOnly(input: Case, ingredient: Ingredient, massFraction: number): Case {
+  const { formulation } = input;
   const others = formulation.components.filter((one) => one.ingredient.role !== ingredient.role);
   const rest = others.reduce((sum, one) => sum + one.massFraction, 0);
   if (rest === 0) {
@@ -74,7 +72,10 @@ export function withOnly(
     ...one,
     massFraction: (one.massFraction * (1 - massFraction)) / rest,
   }));
-  return { ...formulation, components: [...scaled, { ingredient, massFraction }] };
+  return {
+    ...input,
+    formulation: { ...formulation, components: [...scaled, { ingredient, massFraction }] },
+  };
 }
 
 /** Why an ingredient cannot be searched at all; undefined where it can. @internal */
@@ -89,13 +90,11 @@ export function refusal(input: Case, ingredient: Ingredient): LevelRefused | und
   });
   const [avoid] = avoidReasons(input.brief, ingredient);
   if (avoid !== undefined) return refused("avoided", `The brief avoids ${id}: ${avoid}.`);
-  withOnly(input.formulation, ingredient, 0.001);
+  const trial = withOnly(input, ingredient, 0.001);
   const lack = lightLack(ingredient);
   if (lack !== undefined) return refused("unknown", `${id} ${lack}.`);
   try {
-    lightModel({ ...input, formulation: withOnly(input.formulation, ingredient, 0.001) })(
-      ({ value }) => value,
-    );
+    lightModel(trial)(({ value }) => value);
   } catch (error) {
     if (error instanceof InputError) return refused("unknown", `${error.message}.`);
     throw error;
@@ -141,10 +140,16 @@ const outcomeOrder: readonly LevelAnswer["outcome"][] = [
   "avoided",
 ];
 
-/** Answers for a table: what can be done first, least needed first. @internal */
-export function inOrder<A extends LevelAnswer>(answers: readonly A[]): A[] {
+/** The answers for every ingredient of a role on the shelf: what can be done first, least needed first. @internal */
+export function answersFor<A extends LevelAnswer>(
+  shelf: Shelf,
+  role: SoughtRole,
+  answer: (id: string) => A,
+): A[] {
   const amount = (one: LevelAnswer): number => ("massFraction" in one ? one.massFraction.value : 0);
-  return [...answers].sort(
-    (a, b) => outcomeOrder.indexOf(a.outcome) - outcomeOrder.indexOf(b.outcome) || amount(a) - amount(b),
-  );
+  return idsOf(shelf, role)
+    .map(answer)
+    .sort(
+      (a, b) => outcomeOrder.indexOf(a.outcome) - outcomeOrder.indexOf(b.outcome) || amount(a) - amount(b),
+    );
 }

@@ -108,6 +108,11 @@ export function tableHtml(table: TableContent, label = ""): string {
   ].join("\n");
 }
 
+/** A table that scrolls in a frame of its own, which the keyboard reaches and a screen reader calls `name`. */
+export function scrolling(table: string, name: string): string {
+  return `<div class="scroll" role="region" aria-label="${escapeHtml(name)}" tabindex="0">${table}</div>`;
+}
+
 function columnTitle({ name, unit }: TableColumn): string {
   return escapeHtml(name) + (unit === undefined ? "" : ` <span class="unit">(${escapeHtml(unit)})</span>`);
 }

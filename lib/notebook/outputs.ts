@@ -2,7 +2,15 @@
 // Nothing a cell writes reaches the page as HTML of its own.
 
 import { InputError } from "../door.js";
-import { extract, sliderHtml, tableHtml, toJson, type Content, type FigureContent } from "./content.js";
+import {
+  extract,
+  scrolling,
+  sliderHtml,
+  tableHtml,
+  toJson,
+  type Content,
+  type FigureContent,
+} from "./content.js";
 import { escapeHtml } from "./html.js";
 import { markdownHtml, type Heading } from "./markdown.js";
 import type { Output } from "./notebookFile.js";
@@ -57,7 +65,7 @@ function contentHtml(content: Content, counts: Counts): string {
   if (content.kind === "panel") return panelHtml(content, ++counts.panels);
   // The card stands at the head of the page, not here.
   if (content.kind === "summary") return "";
-  return scrolling(tableHtml(content, `Table ${++counts.tables}.`), `Table ${counts.tables}`);
+  return `${scrolling(tableHtml(content, `Table ${++counts.tables}.`), `Table ${counts.tables}`)}\n`;
 }
 
 function figureHtml(
@@ -76,7 +84,8 @@ function figureHtml(
 </figcaption>
 <details class="data"><summary>Figure ${number} in words and numbers</summary>
 <p id="${id}-words">${escapeHtml(alternativeText)}</p>
-${scrolling(tableHtml(table), `Data behind figure ${number}`)}</details>
+${scrolling(tableHtml(table), `Data behind figure ${number}`)}
+</details>
 </figure>
 `;
 }
@@ -87,10 +96,6 @@ function panelHtml(content: PanelContent, number: number): string {
 <noscript><p>This panel computes in the page. It needs a browser that may run scripts; everything else on this page stands without.</p></noscript>
 </section>
 `;
-}
-
-function scrolling(table: string, name: string): string {
-  return `<div class="scroll" role="region" aria-label="${name}" tabindex="0">${table}</div>\n`;
 }
 
 function textHtml(text: string): string {

@@ -6,6 +6,7 @@ import path from "node:path";
 import { InputError } from "../door.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
+import type { Call, Telling } from "./call.js";
 import { notebooksIn, type CodeCell, type MarkdownCell, type Notebook, type Output } from "./notebookFile.js";
 import { originOf } from "./origin.js";
 import { renderIndex, renderNotebook, renderSheet } from "./render.js";
@@ -13,19 +14,11 @@ import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
 
 const defaultBrief = path.join("data", "briefs", "flow-cell.json");
 
-/** Where a run is told of: progress and pages on one side, what went wrong on the other. */
-interface Telling {
-  readonly print: (line: string) => void;
-  readonly printError: (line: string) => void;
-}
-
 /**
  * Runs the notebooks of the workbench in `folder` with the brief named first in `words`, and writes their pages.
  * Returns the exit code: 0 done, 1 a notebook failed, 2 there was nothing to start with.
  */
-export async function start(
-  given: Telling & { readonly words: readonly string[]; readonly folder: string },
-): Promise<0 | 1 | 2> {
+export async function start(given: Omit<Call, "environment">): Promise<0 | 1 | 2> {
   const [brief = defaultBrief, ...others] = given.words;
   if (others.length > 0) {
     given.printError(

@@ -1,6 +1,6 @@
 // The card at the head of a page, as HTML.
 
-import { tableHtml, type TableContent } from "./content.js";
+import { scrolling, tableHtml, type TableContent } from "./content.js";
 import { escapeHtml } from "./html.js";
 import type { SummaryContent } from "./summary.js";
 
@@ -13,7 +13,7 @@ export function summaryHtml({ asked, formulation, decided, rows, cautions }: Sum
   ] as const;
   const said = parts.map(([name, lines]) => `<dt>${name}</dt>${lines.map(definition).join("")}`);
   const warned = cautions.map((line) => `<li>${escapeHtml(line)}</li>`);
-  const table = rows.length === 0 ? "" : scrolling(tableHtml(verdictTable(rows)));
+  const table = rows.length === 0 ? "" : scrolling(tableHtml(verdictTable(rows)), "Summary table");
   return `<section class="card" aria-label="Summary">
 <dl>${said.join("\n")}</dl>
 ${table}
@@ -23,10 +23,6 @@ ${table}
 
 function definition(line: string): string {
   return `<dd>${escapeHtml(line)}</dd>`;
-}
-
-function scrolling(table: string): string {
-  return `<div class="scroll" role="region" aria-label="Summary table" tabindex="0">${table}</div>`;
 }
 
 function verdictTable(rows: SummaryContent["rows"]): TableContent {

@@ -1,6 +1,7 @@
 // Nonlinear least squares by Levenberg and Marquardt, with a plain answer to the question whether it arrived.
 // Every step, and the errors at the end, are a linear least-squares problem: one QR for the whole library.
 import { checkNumber, InputError, positive } from "../door.js";
+import { dot } from "./dot.js";
 import { linearLeastSquares, type LinearFit } from "./linear.js";
 import { checkList, checkSameLength, type NumberList } from "./lists.js";
 
@@ -220,9 +221,6 @@ function linearAt(where: string, problem: Parameters<typeof linearLeastSquares>[
     );
   }
 }
-
-const dot = (a: readonly number[], b: readonly number[]): number =>
-  a.reduce((sum, x, i) => sum + x * b[i]!, 0);
 
 const norm = (values: readonly number[], scale: readonly number[]): number =>
   Math.hypot(...values.map((x, j) => x * scale[j]!));

@@ -1,6 +1,7 @@
 // Linear least squares by Householder QR, with the standard errors, covariance and leverages a chemist asks for next.
 // Columns are scaled to unit length first, so that a column in the hundred thousands beside one near zero does no harm.
 import { InputError, positive } from "../door.js";
+import { dot } from "./dot.js";
 import { checkList, checkSameLength, type NumberList } from "./lists.js";
 
 /** A linear model y = X b: one row of `design` per reading, one column per coefficient. */
@@ -153,8 +154,5 @@ function invertUpper(R: readonly (readonly number[])[]): number[][] {
 
 const timesUpper = (row: readonly number[], upper: readonly (readonly number[])[]): number[] =>
   row.map((_, j) => row.reduce((sum, x, i) => sum + x * upper[i]![j]!, 0));
-
-const dot = (a: readonly number[], b: readonly number[]): number =>
-  a.reduce((sum, x, i) => sum + x * b[i]!, 0);
 
 const sumOfSquares = (values: readonly number[]): number => dot(values, values);

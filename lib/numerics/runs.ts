@@ -1,6 +1,7 @@
 // Do residuals look like chance? Signs that come in long runs mean a model that bends differently from the readings,
 // one residual far from the rest means a reading to look at again.
 import { checkList, type NumberList } from "./lists.js";
+import { median } from "./median.js";
 
 /** Signs of residuals, counted in the order given. */
 export interface RunsTest {
@@ -100,10 +101,4 @@ function lnChoose(n: number, k: number): number {
   let sum = 0;
   for (let i = 1; i <= k; i++) sum += Math.log((n - k + i) / i);
   return sum;
-}
-
-function median(values: readonly number[]): number {
-  const sorted = [...values].sort((a, b) => a - b);
-  const half = sorted.length / 2;
-  return (sorted[Math.ceil(half) - 1]! + sorted[Math.floor(half)]!) / 2;
 }

@@ -1,6 +1,6 @@
 // Random numbers that can be had again: a seeded generator, and Latin hypercube samples drawn with it.
 // The same seed gives the same numbers on every machine; nothing here reads a clock or Math.random.
-import { checkNumber, InputError, show } from "../door.js";
+import { checkWhole, InputError } from "../door.js";
 
 /** The four 32-bit words a xoshiro128** generator carries; not all zero. */
 export type XoshiroState = readonly [number, number, number, number];
@@ -88,8 +88,8 @@ export function latinHypercube(input: {
   readonly seed: number;
 }): Float64Array[] {
   const { dimensions, draws, seed } = input;
-  checkWhole("latinHypercube", "dimensions", dimensions, 1, 1000);
-  checkWhole("latinHypercube", "draws", draws, 1, 1_000_000);
+  checkWhole(dimensions, { where: "latinHypercube", field: "dimensions", min: 1, max: 1000 });
+  checkWhole(draws, { where: "latinHypercube", field: "draws", min: 1, max: 1_000_000 });
   checkWord("latinHypercube", "seed", seed);
   const uniform = seededUniform({ seed });
   return Array.from({ length: dimensions }, () => {
@@ -116,11 +116,5 @@ function mixBits(word: number): number {
 
 const rotateLeft = (word: number, bits: number): number => (word << bits) | (word >>> (32 - bits));
 
-const checkWord = (where: string, field: string, value: number): void =>
-  checkWhole(where, field, value, 0, 2 ** 32 - 1);
-
-function checkWhole(where: string, field: string, value: number, min: number, max: number): void {
-  checkNumber(value, { where, field, min, max });
-  if (Number.isInteger(value)) return;
-  throw new InputError(`${where}: ${field} is ${show(value)}; it must be a whole number`);
-}
+const checkWord = (where: string, field: string, value: number): number =>
+  checkWhole(value, { where, field, min: 0, max: 2 ** 32 - 1 });

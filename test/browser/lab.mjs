@@ -8,20 +8,13 @@ import { cpSync, mkdirSync, mkdtempSync, readFileSync, readdirSync, rmSync, syml
 import { createServer } from "node:net";
 import path from "node:path";
 import { setTimeout as pause } from "node:timers/promises";
+import { check, tellCounts } from "./check.mjs";
 import { launchBrowser } from "./launch.mjs";
 
 const shotsAt = process.argv.indexOf("--shots");
 const shots = shotsAt === -1 ? undefined : process.argv[shotsAt + 1];
 const startLimit_ms = 240_000;
 const notebookLimit_ms = 480_000;
-
-let passed = 0;
-let failed = 0;
-const check = (what, met, found = "") => {
-  if (met) return void passed++;
-  failed++;
-  console.log(`FAILED ${what} ${found}`.trim());
-};
 
 const folder = workbenchCopy();
 const token = "only-for-this-check";
@@ -46,8 +39,7 @@ try {
   await lab.ended;
   rmSync(folder, { recursive: true });
 }
-console.log(`${passed} passed, ${failed} failed`);
-process.exitCode = failed === 0 ? 0 : 1;
+tellCounts();
 
 function workbenchCopy() {
   mkdirSync(".vitest", { recursive: true });

@@ -7,6 +7,7 @@ import { mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from "n
 import { createRequire } from "node:module";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
+import { check, tellCounts } from "./check.mjs";
 import { launchBrowser } from "./launch.mjs";
 import { checkCopying } from "./copying.mjs";
 import { checkPanel } from "./panel.mjs";
@@ -24,14 +25,6 @@ const views = [
   { width: 360, colorScheme: "dark" },
 ];
 
-let passed = 0;
-let failed = 0;
-const check = (what, met, found = "") => {
-  if (met) return void passed++;
-  failed++;
-  console.log(`FAILED ${what} ${found}`.trim());
-};
-
 const browser = await launchBrowser();
 if (shots !== undefined) mkdirSync(shots, { recursive: true });
 try {
@@ -39,8 +32,7 @@ try {
 } finally {
   await browser.close();
 }
-console.log(`${passed} passed, ${failed} failed`);
-process.exitCode = failed === 0 ? 0 : 1;
+tellCounts();
 
 async function checkFolder(folder) {
   const files = readdirSync(folder).filter((name) => name.endsWith(".html"));

@@ -4,15 +4,8 @@
 import { spawnSync } from "node:child_process";
 import { readFileSync, readdirSync, rmSync } from "node:fs";
 import path from "node:path";
+import { check, tellCounts } from "./check.mjs";
 import { isSheet } from "./sheet.mjs";
-
-let passed = 0;
-let failed = 0;
-const check = (what, met, found = "") => {
-  if (met) return void passed++;
-  failed++;
-  console.log(`FAILED ${what} ${found}`.trim());
-};
 
 const pages = readdirSync("rendered").filter((name) => name.endsWith(".html"));
 const canReadWords = spawnSync("pdftotext", ["-v"]).status === 0;
@@ -29,8 +22,7 @@ for (const [paper, width_pt] of Object.entries({ Letter: 612, A4: 595 })) {
 }
 const left = readdirSync("rendered").filter((name) => !name.endsWith(".html") && name !== "pdf");
 check("nothing is left over", left.length === 0, left.join(" "));
-console.log(`${passed} passed, ${failed} failed`);
-process.exitCode = failed === 0 ? 0 : 1;
+tellCounts();
 
 function checkPdf(page, paper, width_pt) {
   const name = `${page} on ${paper}`;

@@ -47,7 +47,7 @@ describe("absorberFor", () => {
   ])("put into the formulation gives what was wanted: %j", (wanted, valueOf) => {
     const { massFraction, outcome } = found(search(wanted));
     expect(outcome).toBe("reached");
-    const value = valueOf({ ...work, formulation: withOnly(work.formulation, AB, massFraction.value) });
+    const value = valueOf(withOnly(work, AB, massFraction.value));
     expect(value / Object.values(wanted)[0]!).toBeCloseTo(1, 9);
     expect(massFraction.low).toBeLessThan(massFraction.value);
     expect(massFraction.high).toBeGreaterThan(massFraction.value);
@@ -61,7 +61,7 @@ describe("absorberFor", () => {
 
   it("stops at what dissolves, and says how much would be needed and how sure that is", () => {
     const on = stocked({ id: "AB", solubility_pct: sure(0.2, 0.05) });
-    const formulation = withOnly(work.formulation, on.ingredients.get("AB")!, 0.001);
+    const { formulation } = withOnly(work, on.ingredients.get("AB")!, 0.001);
     const answer = found(search({ penetrationDepth_um: 30 }, { shelf: on, formulation }));
     expect(answer.outcome).toBe("above solubility");
     expect(answer.reason).toMatch(

@@ -2,21 +2,9 @@ import { describe, expect, it } from "vitest";
 import { viscosityOf } from "../../lib/assess/viscosity.js";
 import { calibrate, interactionFrom } from "../../lib/decide/calibrate.js";
 import { parseJson } from "../../lib/recipe/document.js";
-import { readBlendReadings, type BlendReadings } from "../../lib/recipe/readings.js";
-import { brief, formulationOf, shelf } from "../fixtures.js";
+import { readBlendReadings } from "../../lib/recipe/readings.js";
+import { brief, exactReadings as readings, formulationOf, shelf } from "../fixtures.js";
 
-// Constructed so that the answer is exact: neat 20 and 5000 mPa s, G = -1.5 on mass fractions, no scatter.
-const massFractions = [0, 0.25, 0.5, 0.75, 1];
-const readings: BlendReadings = {
-  id: "r1",
-  pair: ["THICK", "THIN"],
-  temperature_C: 25,
-  relativeU: 0.02,
-  massFractions,
-  viscosities_mPas: massFractions.map((w) => 5000 ** w * 20 ** (1 - w) * Math.exp(-1.5 * w * (1 - w))),
-  source: "constructed for a test",
-  status: "invented for the demo",
-};
 const work = {
   formulation: formulationOf({ THIN: 50, THICK: 50 }),
   brief,

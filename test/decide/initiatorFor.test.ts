@@ -46,11 +46,8 @@ describe("initiatorFor", () => {
   it("cures no deeper a little to either side", () => {
     const { massFraction, cureDepth_um } = best({ exposure_mJcm2: 200 }, { shelf });
     for (const factor of [0.8, 1.25]) {
-      const formulation = withOnly(work.formulation, PI, massFraction.value * factor);
       const { penetrationDepth_um, criticalExposure_mJcm2 } = workingCurveOf({
-        formulation,
-        brief,
-        shelf,
+        ...withOnly({ ...work, shelf }, PI, massFraction.value * factor),
         draws: 40,
       });
       const depth = penetrationDepth_um.value * Math.log(200 / criticalExposure_mJcm2.value);
@@ -67,7 +64,7 @@ describe("initiatorFor", () => {
   it("stops at what dissolves, with the depth that this much cures", () => {
     const dissolves = { ...PI, solubility_pct: sure(0.3, 0.03) };
     const free = best({ exposure_mJcm2: 200 });
-    const bound = best({ exposure_mJcm2: 200 }, { formulation: withOnly(work.formulation, dissolves, 0.01) });
+    const bound = best({ exposure_mJcm2: 200 }, withOnly(work, dissolves, 0.01));
     expect(bound.outcome).toBe("above solubility");
     expect(bound.massFraction.value).toBe(free.massFraction.value);
     expect(bound.cureDepth_um.value).toBeLessThan(free.cureDepth_um.value);

@@ -14,10 +14,9 @@ import {
   weighedTable,
   weighOutTable,
 } from "../../lib/notebook/batch.js";
-import { formulationOf } from "../fixtures.js";
+import { balance, formulationOf, weighedBatch } from "../fixtures.js";
 import { readWorkbench } from "../../lib/recipe/files.js";
 
-const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
 const formulation = formulationOf({ THICK: 55, THIN: 30, MID: 12, PI: 2, AB: 1 });
 const prices = { currency: "EUR", prices_perkg: { THIN: 10, THICK: 20, MID: 30, PI: 400 } };
 const sheetOf = (change: Partial<Parameters<typeof weighOut>[0]> = {}) =>
@@ -32,15 +31,7 @@ const back = (masses: Record<number, number> = {}): ReturnedBatch => {
     lot: `L-${line}`,
   }));
   return {
-    weighed: {
-      id: "T-1",
-      formulation: "test",
-      batch_g: 1000,
-      balance,
-      weighings: [],
-      source: "round numbers",
-      status: "invented for the demo",
-    },
+    weighed: weighedBatch,
     sheet,
     made: asMade({ sheet, weighings }),
     plan: rescue({ sheet, weighings }),

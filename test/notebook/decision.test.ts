@@ -8,7 +8,7 @@ import { readRecords } from "../../lib/lab/record.js";
 import type { TableContent } from "../../lib/notebook/content.js";
 import { decide, recordBatch } from "../../lib/notebook/decision.js";
 import { showMarkdown, showSummary, showTable } from "../../lib/notebook/show.js";
-import { brief, formulationOf, shelf } from "../fixtures.js";
+import { balance, brief, formulationOf, shelf, weighedBatch } from "../fixtures.js";
 
 vi.mock("../../lib/notebook/show.js", () => ({
   showMarkdown: vi.fn(),
@@ -115,25 +115,15 @@ describe("decide", () => {
 });
 
 describe("recordBatch", () => {
-  const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
   const sheet = weighOut({ formulation: work.formulation, batch_g: 1000, balance });
   const weighings = [
     { line: 1, mass_g: 599.5, lot: "T-22" },
     { line: 2, mass_g: 400.25 },
   ];
   const made = asMade({ sheet, weighings });
-  const weighed = {
-    id: "T-1",
-    formulation: "test",
-    batch_g: 1000,
-    balance,
-    weighings: [],
-    source: "round numbers",
-    status: "invented for the demo" as const,
-  };
   const plan = { outcome: "within", total_g: made.total_g } as const;
   const recordIt = (said = "Weighed as batch T-1.") =>
-    recordBatch({ work, from: "06", batch: { weighed, sheet, made, plan }, statement: said });
+    recordBatch({ work, from: "06", batch: { weighed: weighedBatch, sheet, made, plan }, statement: said });
 
   it("appends the batch portion by portion with its lots, and shows that it did", () => {
     recordIt();
@@ -172,7 +162,7 @@ describe("recordBatch", () => {
     recordBatch({
       work,
       from: "06",
-      batch: { weighed, sheet, made: corrected, plan },
+      batch: { weighed: weighedBatch, sheet, made: corrected, plan },
       statement: "Read again.",
     });
     expect(readRecords(folder)).toHaveLength(2);

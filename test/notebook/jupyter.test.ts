@@ -13,6 +13,7 @@ import { findJupyter } from "../../lib/notebook/jupyter/find.js";
 import { openNotebooks } from "../../lib/notebook/jupyter/open.js";
 import { writeProject } from "../../lib/notebook/jupyter/project.js";
 import { scratchFolder, writeNotebook } from "./scratch.js";
+import { told } from "./told.js";
 
 /** A folder for the path, with programs that are lines of shell. */
 const pathWith = (programs: Record<string, string>) => {
@@ -35,18 +36,8 @@ const workbench = () => {
   return folder;
 };
 
-const open = async (folder: string, environment: NodeJS.ProcessEnv, ...words: string[]) => {
-  const printed: string[] = [];
-  const errors: string[] = [];
-  const code = await openNotebooks({
-    words,
-    folder,
-    environment,
-    print: (line) => printed.push(line),
-    printError: (line) => errors.push(line),
-  });
-  return { code, printed: printed.join("\n"), errors: errors.join("\n") };
-};
+const open = (folder: string, environment: NodeJS.ProcessEnv, ...words: string[]) =>
+  told((telling) => openNotebooks({ words, folder, environment, ...telling }));
 
 describe("findJupyter", () => {
   it.each([

@@ -4,6 +4,7 @@ import { describe, expect, it } from "vitest";
 import { printPages } from "../../lib/notebook/pdf/print.js";
 import { pageHtml } from "../../lib/notebook/page.js";
 import { scratchFolder } from "./scratch.js";
+import { told } from "./told.js";
 
 const origin = { brief: "a.json", libraryVersion: "0.1.0", nodeVersion: "20.20.2", date: "2026-01-05" };
 const links = `<a href="index.html">All</a> <a href="#main">here</a> <a href="https://example.org/">there</a>`;
@@ -33,25 +34,15 @@ const browserThat = (program: string, name = "browser") => {
   return path.join(folder, name);
 };
 
-const run = async (folder: string, environment: NodeJS.ProcessEnv, ...words: string[]) => {
-  const printed: string[] = [];
-  const errors: string[] = [];
-  const code = await printPages({
-    words,
-    folder,
-    environment,
-    print: (line) => printed.push(line),
-    printError: (line) => errors.push(line),
-  });
-  return { code, printed, errors: errors.join("\n") };
-};
+const run = (folder: string, environment: NodeJS.ProcessEnv, ...words: string[]) =>
+  told((telling) => printPages({ words, folder, environment, ...telling }));
 
 describe("printPages", () => {
   it("leaves a PDF a page, and nothing else", async () => {
     const folder = workbench("01-a.html", "index.html");
     const { code, printed, errors } = await run(folder, { RESINWRIGHT_BROWSER: browserThat(printing) });
     expect([code, errors]).toEqual([0, ""]);
-    expect(printed).toEqual(["rendered/pdf/01-a.pdf", "rendered/pdf/index.pdf"]);
+    expect(printed).toBe("rendered/pdf/01-a.pdf\nrendered/pdf/index.pdf");
     expect(readdirSync(path.join(folder, "rendered"))).toEqual(["01-a.html", "index.html", "pdf"]);
     expect(readdirSync(path.join(folder, "rendered", "pdf"))).toEqual(["01-a.pdf", "index.pdf"]);
   });

@@ -12,8 +12,7 @@ import {
   targetFigure,
 } from "../../lib/notebook/plots.js";
 import type { Brief } from "../../lib/recipe/brief.js";
-import type { BlendReadings } from "../../lib/recipe/readings.js";
-import { brief, formulationOf, shelf, sure } from "../fixtures.js";
+import { blendLaw, brief, exactReadings as readings, formulationOf, shelf, sure } from "../fixtures.js";
 
 const formulation = formulationOf({ THIN: 60, THICK: 38.9, PI: 1, AB: 0.1 });
 const caseUnder = (change: Partial<Brief> = {}) => ({ formulation, brief: { ...brief, ...change }, shelf });
@@ -21,22 +20,6 @@ const run = (change: Partial<Brief> = {}) => assess({ ...caseUnder(change), draw
 const dark = { ...brief.light, irradiance_mWcm2: sure(0.001) };
 const { viscosity_mPas: viscosity, penetrationDepth_um: depth } = run().properties;
 const wide = { viscosity_mPas: { min: 1, max: 1e6 } };
-
-// Constructed so that the answer is exact: neat 20 and 5000 mPa s, G = -1.5 on mass fractions, no scatter.
-const G = -1.5;
-const law = (w: number, interaction: number) =>
-  5000 ** w * 20 ** (1 - w) * Math.exp(interaction * w * (1 - w));
-const massFractions = [0, 0.25, 0.5, 0.75, 1];
-const readings: BlendReadings = {
-  id: "r1",
-  pair: ["THICK", "THIN"],
-  temperature_C: 25,
-  relativeU: 0.02,
-  massFractions,
-  viscosities_mPas: massFractions.map((w) => law(w, G)),
-  source: "constructed for a test",
-  status: "invented for the demo",
-};
 
 const trace = (figure: FigureContent, name: string) =>
   (figure.data as { name: string; x: number[]; y: number[] }[]).find((one) => one.name.startsWith(name))!;
@@ -172,7 +155,7 @@ describe("blendFigure", () => {
 
   it("shows the readings as they were read", () => {
     const { x, y } = trace(figure, "readings");
-    expect([x, y]).toEqual([massFractions, readings.viscosities_mPas]);
+    expect([x, y]).toEqual([readings.massFractions, readings.viscosities_mPas]);
     expect(figure.table.rows[1]).toEqual(["readings", 0.25, readings.viscosities_mPas[1]]);
   });
 
@@ -182,8 +165,8 @@ describe("blendFigure", () => {
     expect([fitted.x.length, fitted.x[0], fitted.x.at(-1)]).toEqual([41, 0, 1]);
     // Constructed readings without scatter: only rounding of the fit stands between.
     fitted.x.forEach((w, i) => {
-      expect(fitted.y[i]! / law(w, G)).toBeCloseTo(1, 10);
-      expect(ideal.y[i]! / law(w, 0)).toBeCloseTo(1, 10);
+      expect(fitted.y[i]! / blendLaw(w, -1.5)).toBeCloseTo(1, 10);
+      expect(ideal.y[i]! / blendLaw(w, 0)).toBeCloseTo(1, 10);
     });
   });
 

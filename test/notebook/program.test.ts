@@ -14,38 +14,14 @@ import path from "node:path";
 import { describe, expect, it, onTestFinished, vi } from "vitest";
 import { embed } from "../../lib/notebook/content.js";
 import { start } from "../../lib/notebook/program.js";
+import { figure, sheet } from "./contents.js";
 import { scratchFolder, writeNotebook } from "./scratch.js";
-
-const figure = embed({
-  kind: "figure",
-  caption: "A line",
-  alternativeText: "It rises.",
-  data: [{ x: [1, 2], y: [3, 4] }],
-  layout: {},
-  table: { kind: "table", caption: "Numbers", columns: [{ name: "x", align: "right" }], rows: [[1], [2]] },
-});
-
-const sheet = embed({
-  kind: "sheet",
-  name: "weigh-out",
-  title: "Weigh out 500 g",
-  label: "a, 500 g",
-  facts: [],
-  warnings: [],
-  protection: [],
-  masterBatches: [],
-  portions: [],
-  hazards: [],
-  findings: [],
-  storage: [],
-  law: [],
-  caution: "",
-});
+import { told } from "./told.js";
 
 const twoNotebooks = {
   "02-light.ipynb": [
     `md: # Light\n\nHow deep.`,
-    `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(figure)})`,
+    `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(embed(figure))})`,
   ],
   "01-flow.ipynb": [
     `md: # Flow\n\nHow fast.`,
@@ -67,17 +43,7 @@ const workbench = (notebooks: Record<string, string[]>, brief = briefCalled("Thi
   return folder;
 };
 
-const run = async (folder: string, ...words: string[]) => {
-  const printed: string[] = [];
-  const errors: string[] = [];
-  const code = await start({
-    words,
-    folder,
-    print: (line) => printed.push(line),
-    printError: (line) => errors.push(line),
-  });
-  return { code, printed: printed.join("\n"), errors: errors.join("\n") };
-};
+const run = (folder: string, ...words: string[]) => told((telling) => start({ words, folder, ...telling }));
 
 const rendered = (folder: string, name: string) => readFileSync(path.join(folder, "rendered", name), "utf8");
 
@@ -119,7 +85,7 @@ describe("start", () => {
   });
 
   it("writes the sheets that a notebook shows beside its page", async () => {
-    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(sheet)})`;
+    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(embed(sheet))})`;
     const folder = workbench({ "01-a.ipynb": [show] });
     const { code, printed } = await run(folder);
     expect(code).toBe(0);
@@ -132,7 +98,7 @@ describe("start", () => {
   });
 
   it("refuses two sheets of one name, and writes no page", async () => {
-    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(sheet)})`;
+    const show = `import * as tslab from "tslab";\ntslab.display.html(${JSON.stringify(embed(sheet))})`;
     const folder = workbench({ "01-a.ipynb": [show], "02-b.ipynb": [show] });
     const { code, errors } = await run(folder);
     expect([code, errors]).toEqual([

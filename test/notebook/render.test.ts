@@ -1,14 +1,14 @@
 import { createHash } from "node:crypto";
 import { describe, expect, it } from "vitest";
-import { embed, type Content, type FigureContent, type TableContent } from "../../lib/notebook/content.js";
+import { embed, type Content } from "../../lib/notebook/content.js";
 import type { Notebook, Output } from "../../lib/notebook/notebookFile.js";
 import { darkPalette, lightPalette, type Palette } from "../../lib/notebook/palette.js";
 import * as pages from "../../lib/notebook/pages.js";
 import { panelOf } from "../../lib/notebook/panel/panel.js";
 import { renderIndex, renderNotebook, renderSheet } from "../../lib/notebook/render.js";
-import type { SheetContent } from "../../lib/notebook/sheet/content.js";
 import { summaryOf } from "../../lib/notebook/summary.js";
 import { readWorkbench } from "../../lib/recipe/files.js";
+import { figure, sheet, table } from "./contents.js";
 
 const origin = {
   brief: "flow-cell.json",
@@ -26,36 +26,6 @@ const display = (type: string, text: string): Output => ({ kind: "display", data
 const page = (...cells: Notebook["cells"]) => renderNotebook({ notebook: notebook(...cells), origin });
 const mainOf = (html: string) => /<main[^]*<\/main>/.exec(html)![0];
 
-const table: TableContent = {
-  kind: "table",
-  caption: "Numbers",
-  columns: [{ name: "x", align: "right" }],
-  rows: [[1]],
-};
-const figure: FigureContent = {
-  kind: "figure",
-  caption: "A line",
-  alternativeText: "It rises.",
-  data: [{ x: [1, 2], y: [3, 4] }],
-  layout: { height: 300 },
-  table,
-};
-const sheet: SheetContent = {
-  kind: "sheet",
-  name: "weigh-out",
-  title: "Weigh out 500 g",
-  label: "a, 500 g",
-  facts: [],
-  warnings: [],
-  protection: [],
-  masterBatches: [],
-  portions: [],
-  hazards: [],
-  findings: [],
-  storage: [],
-  law: [],
-  caution: "",
-};
 const html = (content: Content) =>
   display("text/html", `${embed(content)}<div onclick="alert(1)">live fallback</div>`);
 

@@ -20,7 +20,7 @@ import { composition, formulate } from "../../lib/recipe/formulation.js";
 import { valueText, verdictText } from "../../lib/notebook/verdicts.js";
 import { unitLabel } from "../../lib/recipe/units.js";
 import { sourceStatuses } from "../../lib/result.js";
-import { brief, formulationOf, shelf, sure } from "../fixtures.js";
+import { blendLaw, brief, exactReadings, formulationOf, shelf, sure } from "../fixtures.js";
 import type { BlendReadings } from "../../lib/recipe/readings.js";
 
 const formulation = formulationOf({ THIN: 60, THICK: 38.9, PI: 1, AB: 0.1 });
@@ -317,19 +317,16 @@ describe("valueText and verdictText", () => {
 });
 
 describe("readingTable", () => {
-  // Constructed: neat 5000 and 20 mPa s, G = -1.5 on mass fractions, and one reading a third too high.
+  // One reading a third too high, the others with little scatter.
   const massFractions = [0, 0.1, 0.25, 0.4, 0.5, 0.6, 0.75, 0.9, 1];
-  const law = (w: number) => 5000 ** w * 20 ** (1 - w) * Math.exp(-1.5 * w * (1 - w));
   const scatter = [0.01, -0.012, 0.008, -0.009, 0.011, -0.01, 0.012, -0.008, 0.009];
   const readings: BlendReadings = {
-    id: "r",
-    pair: ["THICK", "THIN"],
-    temperature_C: 25,
+    ...exactReadings,
     relativeU: 0,
     massFractions,
-    viscosities_mPas: massFractions.map((w, i) => law(w) * (i === 4 ? 1.33 : Math.exp(scatter[i]!))),
-    source: "constructed for a test",
-    status: "invented for the demo",
+    viscosities_mPas: massFractions.map(
+      (w, i) => blendLaw(w, -1.5) * (i === 4 ? 1.33 : Math.exp(scatter[i]!)),
+    ),
   };
 
   it("has a row a reading, read over fitted as a deviation, and names the one that stands out", () => {

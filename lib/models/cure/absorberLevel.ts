@@ -4,6 +4,7 @@ import { checkList, checkSameLength, type NumberList } from "../../numerics/list
 import { findRoot } from "../../numerics/root.js";
 import { decayAt } from "../light/broadband.js";
 import type { LightEngine } from "../light/engine.js";
+import { um_per_cm } from "../scales.js";
 import { broadCureDepth } from "./bendingCurve.js";
 
 /** The level of absorber, or why there is none; the depth is of the kind that was asked for. */
@@ -144,5 +145,3 @@ export function absorberForCureDepth(input: {
   const concentration_molL = findRoot({ f: excess, low: 0, high: solubility_molL, where });
   return { outcome: "found", concentration_molL };
 }
-
-const um_per_cm = 1e4;

@@ -3,6 +3,7 @@ import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js"
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import { absorbing, checkLitResin, decayAt, type LitResin } from "../light/broadband.js";
 import type { LightEngine } from "../light/engine.js";
+import { um_per_cm } from "../scales.js";
 
 /** A resin under an engine, with the exposure that just begins to gel it at the window. */
 export interface BroadCure extends LitResin {
@@ -193,5 +194,3 @@ function depthAtLight(resin: LitResin, lnNeeded: number, start: number): number 
     if (Math.abs(step) <= 1e-4 * z || Math.abs(step) * alpha < 1e-13) return z;
   }
 }
-
-const um_per_cm = 1e4;

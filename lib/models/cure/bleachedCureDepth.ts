@@ -2,6 +2,7 @@
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { bleachingExposure } from "../light/bleaching.js";
 import { depthBetween } from "../light/bleachingBeside.js";
+import { um_per_cm } from "../scales.js";
 
 /** The depth, or the finding that the initiator is used up before the resin gels. */
 export type BleachedCureDepth =
@@ -72,5 +73,3 @@ export function bleachedCureDepth(input: {
   });
   return { outcome: "cures", cureDepth_um };
 }
-
-const um_per_cm = 1e4;

@@ -3,6 +3,7 @@ import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js"
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import { findRoot } from "../../numerics/root.js";
 import type { LightEngine } from "../light/engine.js";
+import { um_per_cm } from "../scales.js";
 import { broadCureDepth } from "./bendingCurve.js";
 import { exponentOf, type InitiatorQuestion } from "./initiatorLevel.js";
 
@@ -107,5 +108,3 @@ export function deepestBroadInitiatorLevel(
   });
   return levelAt("deepest", findRoot({ f: gain, low: justCures, high: most, where }));
 }
-
-const um_per_cm = 1e4;

@@ -1,5 +1,5 @@
 // From a working curve to the seconds a printer asks for: base layers, the way down from them, and the layers of the part.
-import { checkNumber, checkNumbers, InputError, positive, show } from "../../door.js";
+import { checkNumber, checkNumbers, checkWhole, InputError, positive } from "../../door.js";
 import { normalQuantile } from "../../numerics/distributions.js";
 import type { Warning } from "../../result.js";
 import { exposureForDepth, type WorkingCurve } from "./workingCurve.js";
@@ -128,10 +128,8 @@ function checkQuestion(input: ExposureQuestion): void {
     transitionLayers: { min: 0 },
     level: { min: 0.5, max: 0.999 },
   });
-  for (const field of ["layers", "baseLayers", "transitionLayers"] as const) {
-    if (!Number.isInteger(input[field]))
-      throw new InputError(`${where}: ${field} is ${show(input[field])}; it must be a whole number`);
-  }
+  for (const field of ["layers", "baseLayers", "transitionLayers"] as const)
+    checkWhole(input[field], { where, field });
   const { layers, baseLayers, transitionLayers } = input;
   if (baseLayers + transitionLayers > layers) {
     throw new InputError(

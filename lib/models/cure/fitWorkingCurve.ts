@@ -11,6 +11,7 @@ import {
 import { studentQuantile } from "../../numerics/distributions.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import type { Interval, Warning } from "../../result.js";
+import { percent } from "../percent.js";
 import { depthLine, lineAt, type DepthPoint } from "./depthLine.js";
 import {
   curvatureOf,
@@ -281,7 +282,7 @@ function warningsOf(
   if (fit.lackOfFit !== undefined && fit.lackOfFit.probability < SIGNIFICANT) {
     warn(
       "lack-of-fit",
-      `the depths lie further from the line than repeats from each other (chance ${chance(fit.lackOfFit.probability)}); ` +
+      `the depths lie further from the line than repeats from each other (chance ${percent(fit.lackOfFit.probability)}); ` +
         "the curve is not straight, or exposures were not what they were set to",
     );
   }
@@ -294,7 +295,5 @@ function bentMessage({ lowestSlope_um, highestSlope_um, probability }: Curvature
     highestSlope_um > lowestSlope_um
       ? "a broad light engine or a bleaching initiator bends it upward"
       : "a gauge that presses thick films, or exposures that did not add up, bend it downward";
-  return `${change} along the curve (chance ${chance(probability)} if it were straight): ${cause}; Dp and Ec hold for these exposures only`;
+  return `${change} along the curve (chance ${percent(probability)} if it were straight): ${cause}; Dp and Ec hold for these exposures only`;
 }
-
-const chance = (probability: number): string => `${+(100 * probability).toPrecision(2)} %`;

@@ -1,6 +1,7 @@
 // How much initiator cures deepest at a given exposure: too little starts too slowly, too much takes the light to itself.
 import { checkNumber, checkNumbers, InputError, notNegative, positive, unknownName } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
+import { um_per_cm } from "../scales.js";
 
 /** What the best level of initiator depends on. */
 export interface InitiatorQuestion {
@@ -90,8 +91,6 @@ export function deepestInitiatorLevel(input: InitiatorQuestion): InitiatorLevel 
 }
 
 const where = "deepestInitiatorLevel";
-const um_per_cm = 1e4;
-
 function checkInput(input: InitiatorQuestion): void {
   const { dependence, ...numbers } = input;
   checkNumbers(where, numbers, {

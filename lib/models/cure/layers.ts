@@ -1,6 +1,15 @@
 // Layers on layers: each exposure also reaches the layers already there, and the resin left liquid behind an overhang.
 // From the window upwards: a new layer of thickness L lies at the window, the older ones behind it.
-import { checkNumber, checkNumbers, fraction, InputError, notNegative, positive, show } from "../../door.js";
+import {
+  checkNumber,
+  checkNumbers,
+  checkWhole,
+  fraction,
+  InputError,
+  notNegative,
+  positive,
+  show,
+} from "../../door.js";
 import { conversionAfterExposure } from "./conversion.js";
 import { cureDepth, type WorkingCurve } from "./workingCurve.js";
 
@@ -291,10 +300,9 @@ export function stackProfile(
 ): StackPoint[] {
   const where = "stackProfile";
   checkLayers(where, input);
-  checkNumbers(where, input, { layers: { min: 1, max: 10_000 }, pointsPerLayer: { min: 2, max: 1000 } });
+  checkNumbers(where, input, { layers: { min: 1, max: 10_000 } });
+  checkWhole(input.pointsPerLayer, { where, field: "pointsPerLayer", min: 2, max: 1000 });
   const { layers, pointsPerLayer, layerThickness_um: L, opticalDepth_um } = input;
-  if (!Number.isInteger(pointsPerLayer))
-    throw new InputError(`${where}: pointsPerLayer is ${show(pointsPerLayer)}; it must be a whole number`);
   return Array.from({ length: layers * pointsPerLayer }, (_, i) => {
     const layer = Math.floor(i / pointsPerLayer) + 1;
     const x = ((i % pointsPerLayer) * L) / (pointsPerLayer - 1);

@@ -1,7 +1,9 @@
 // Is a working curve straight? A quadratic term beside the line, the scatter of repeats beside the scatter about the line, and
 // single readings far from the line of the others.
 import { studentQuantile } from "../../numerics/distributions.js";
+import { extraScatter } from "../../numerics/extraScatter.js";
 import { linearLeastSquares } from "../../numerics/linear.js";
+import { median } from "../../numerics/median.js";
 import { varianceRatioProbability } from "../../numerics/varianceRatio.js";
 import { leastSquaresLine, type DepthPoint } from "./depthLine.js";
 
@@ -59,13 +61,11 @@ export function lackOfFitOf(
   const total = residuals.reduce((sum, r, i) => sum + points[i]!.weight * r * r, 0);
   const within = exposures.reduce((sum, lnE) => sum + scatterWithin(points.filter((p) => p.lnE === lnE)), 0);
   if (within === 0) return undefined;
-  const repeats = within / (n - k);
-  const ratio = Math.max(total - within, 0) / (k - 2) / repeats;
-  return {
-    ratio,
-    probability: varianceRatioProbability({ ratio, degreesAbove: k - 2, degreesBelow: n - k }),
-    repeatability_um: Math.sqrt(repeats),
-  };
+  const { ratio, probability, standardDeviation } = extraScatter(
+    { sum: total, degrees: n - 2 },
+    { sum: within, degrees: n - k },
+  );
+  return { ratio, probability, repeatability_um: standardDeviation };
 }
 
 /** Chance of calling anything an outlier in readings without one. */
@@ -115,10 +115,4 @@ function scatterWithin(group: readonly DepthPoint[]): number {
   const weights = group.reduce((sum, { weight }) => sum + weight, 0);
   const mean = group.reduce((sum, { weight, depth_um }) => sum + weight * depth_um, 0) / weights;
   return group.reduce((sum, { weight, depth_um }) => sum + weight * (depth_um - mean) ** 2, 0);
-}
-
-function median(values: readonly number[]): number {
-  const sorted = [...values].sort((a, b) => a - b);
-  const half = sorted.length / 2;
-  return (sorted[Math.ceil(half) - 1]! + sorted[Math.floor(half)]!) / 2;
 }

@@ -1,5 +1,5 @@
 // Penetration depth and critical exposure in doubt together: the region that holds both, which their two intervals hide.
-import { checkNumber, InputError, show } from "../../door.js";
+import { checkNumber, checkWhole } from "../../door.js";
 import type { WorkingCurveFit } from "./fitWorkingCurve.js";
 import type { WorkingCurve } from "./workingCurve.js";
 
@@ -36,9 +36,7 @@ export function workingCurveRegion(input: {
   const where = "workingCurveRegion";
   const { fit, level, count } = input;
   checkNumber(level, { where, field: "level", min: 0.5, max: 0.999 });
-  checkNumber(count, { where, field: "count", min: 8, max: 1000 });
-  if (!Number.isInteger(count))
-    throw new InputError(`${where}: count is ${show(count)}; it must be a whole number`);
+  checkWhole(count, { where, field: "count", min: 8, max: 1000 });
   const f = fit.degreesOfFreedom;
   const F = (Math.expm1((-2 / f) * Math.log1p(-level)) * f) / 2;
   const [[varD, cov], [, varE]] = fit.covariance;

@@ -1,6 +1,7 @@
 // Who takes the light: the share that each component of a resin absorbs, and the share that goes through.
 import { checkNumber, notNegative } from "../../door.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
+import { um_per_cm } from "../scales.js";
 import type { LightEngine } from "./engine.js";
 
 /** One component of a resin and its Napierian absorption at each node of the engine, 1/cm. */
@@ -56,7 +57,7 @@ export function absorbedShares(input: {
     checkSameLength(where, { "engine.shares": engine.shares, [field]: napierianAbsorptions_percm });
   });
   checkNumber(depth_um, { where, field: "depth_um", ...notNegative });
-  const z = depth_um / 1e4;
+  const z = depth_um / um_per_cm;
   const alpha = engine.shares.map((_, k) =>
     components.reduce((sum, { napierianAbsorptions_percm }) => sum + napierianAbsorptions_percm[k]!, 0),
   );

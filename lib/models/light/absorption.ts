@@ -2,6 +2,7 @@
 // Inside the library a linear coefficient is always Napierian, a molar one always decadic; the factor ln 10 is here.
 import { checkNumber, checkNumbers, fraction, notNegative, positive } from "../../door.js";
 import { density, molarMass } from "../ranges.js";
+import { um_per_cm } from "../scales.js";
 
 /** One absorbing substance dissolved in the resin. */
 export interface Absorber {
@@ -177,8 +178,6 @@ export function absorberConcentration(input: {
   });
   return (1000 * w * rho) / M;
 }
-
-const um_per_cm = 1e4;
 
 const finite = (where: string, field: string, value: number): number =>
   checkNumber(value, { where, field, advice: "an input is beyond any real substance" });

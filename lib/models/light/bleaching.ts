@@ -2,6 +2,7 @@
 // Exact for one bleaching absorber whose products do not absorb, in steady light of one wavelength, without diffusion.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { wavelength } from "../ranges.js";
+import { m_per_um, um_per_m } from "../scales.js";
 import { photonEnergy } from "./photons.js";
 
 /** A bleaching initiator in steady light. */
@@ -60,7 +61,7 @@ export function bleachedFractions(
   const { depth_um, time_s } = input;
   checkNumbers(where, { depth_um, time_s }, { depth_um: notNegative, time_s: notNegative });
   const kappa = napierianMolar_m2mol(input);
-  const Z = kappa * 1e3 * input.concentration_molL * 1e-6 * depth_um;
+  const Z = kappa * 1e3 * input.concentration_molL * m_per_um * depth_um;
   const tau = input.quantumYield * kappa * input.photonFlux_molm2s * time_s;
   checkNumbers(where, { Z, tau }, { Z: {}, tau: {} });
   // Divided by e^Z and by e^tau, so that neither overflows nor cancels.
@@ -90,7 +91,7 @@ export function bleachingFrontSpeed(input: Omit<BleachingInput, "molarAbsorption
   const where = "bleachingFrontSpeed";
   checkNumbers(where, input, { concentration_molL, quantumYield, photonFlux_molm2s: notNegative });
   const v_ms = (input.quantumYield * input.photonFlux_molm2s) / (1e3 * input.concentration_molL);
-  return checkNumber(1e6 * v_ms, { where, field: "the speed in um/s" });
+  return checkNumber(um_per_m * v_ms, { where, field: "the speed in um/s" });
 }
 
 /**

@@ -2,6 +2,7 @@
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { areaUnder } from "../../numerics/quadrature.js";
 import { findRoot } from "../../numerics/root.js";
+import { um_per_cm } from "../scales.js";
 import type { Bleached, BleachingInput } from "./bleaching.js";
 
 /**
@@ -93,5 +94,3 @@ const takenOver = (lnU: number, b: number): number => {
   const u = Math.exp(lnU);
   return (u === 0 ? 1 : -Math.expm1(-u) / u) + b;
 };
-
-const um_per_cm = 1e4;

@@ -2,6 +2,7 @@
 // The strongly absorbed wavelengths go first, so the light that is left reaches further: its optical depth grows.
 import { checkNumber, notNegative, positive, type NumberRule } from "../../door.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
+import { um_per_cm } from "../scales.js";
 import type { LightEngine } from "./engine.js";
 
 /** A resin under a light engine. */
@@ -162,5 +163,3 @@ export function decayAt(
     variance_percm2: Math.max(second / light - mean * mean, 0),
   };
 }
-
-const um_per_cm = 1e4;

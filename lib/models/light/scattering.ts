@@ -1,5 +1,6 @@
 // Filled resins: particles of another refractive index scatter the light, which shortens the depth it cures.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
+import { um_per_cm } from "../scales.js";
 
 /** What the scattering of a filled resin depends on. */
 export interface ScatteringResin {
@@ -91,5 +92,3 @@ export function filledPenetrationDepth(
   });
   return um_per_cm / total_percm;
 }
-
-const um_per_cm = 1e4;

@@ -4,6 +4,7 @@ import { checkNumber, InputError, positive } from "../../door.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import { checkFractions } from "../fractions.js";
 import { celsius } from "../ranges.js";
+import { kelvin, zeroCelsius_K } from "../scales.js";
 
 /** What a mixing rule of glass transitions takes; one element a component, in the same order. */
 export interface GlassTransitionInput {
@@ -30,7 +31,7 @@ export interface GlassTransitionInput {
  */
 export function foxTemperature(input: GlassTransitionInput): number {
   const { w, T } = kelvins("foxTemperature", input);
-  return 1 / w.reduce((sum, wi, i) => sum + wi / T[i]!, 0) - 273.15;
+  return 1 / w.reduce((sum, wi, i) => sum + wi / T[i]!, 0) - zeroCelsius_K;
 }
 
 /**
@@ -57,12 +58,12 @@ export function gordonTaylorTemperature(input: GlassTransitionInput & { readonly
       `${where}: massFractions holds ${w.length}; the equation is for 2 components; use foxTemperature for more`,
     );
   }
-  return (w[0]! * T[0]! + k * w[1]! * T[1]!) / (w[0]! + k * w[1]!) - 273.15;
+  return (w[0]! * T[0]! + k * w[1]! * T[1]!) / (w[0]! + k * w[1]!) - zeroCelsius_K;
 }
 
 function kelvins(where: string, { massFractions, glassTransitions_C }: GlassTransitionInput) {
   checkFractions(where, "massFractions", massFractions);
   checkList(where, "glassTransitions_C", glassTransitions_C, celsius);
   checkSameLength(where, { massFractions, glassTransitions_C });
-  return { w: Array.from(massFractions), T: Array.from(glassTransitions_C, (t) => t + 273.15) };
+  return { w: Array.from(massFractions), T: Array.from(glassTransitions_C, kelvin) };
 }

@@ -2,6 +2,7 @@
 // Meant for loose networks: for dense acrylates the numbers rank, they do not predict.
 import { checkNumbers, fraction, InputError, positive } from "../../door.js";
 import { celsius, density } from "../ranges.js";
+import { gasConstant_JmolK as R, kelvin } from "../scales.js";
 
 /** Moduli of an incompressible rubber, E = 3 G. */
 export interface RubberModuli {
@@ -85,7 +86,7 @@ export function strandsFromModulus(input: {
     temperature_C: celsius,
     density_gcm3: density,
   });
-  const strands_molm3 = (input.modulus_MPa * 1e6) / (3 * R * (input.temperature_C + 273.15));
+  const strands_molm3 = (input.modulus_MPa * 1e6) / (3 * R * kelvin(input.temperature_C));
   return { strands_molm3, strandMass_gmol: (input.density_gcm3 * 1e6) / strands_molm3 };
 }
 
@@ -117,10 +118,7 @@ export function cycleRankPerMonomer(input: {
   return f * p - 1 + (1 - p) ** f;
 }
 
-/** J/(mol K), exact since 2019. */
-const R = 8.31446261815324;
-
 function moduli(strands_molm3: number, temperature_C: number): RubberModuli {
-  const shearModulus_MPa = strands_molm3 * R * (temperature_C + 273.15) * 1e-6;
+  const shearModulus_MPa = strands_molm3 * R * kelvin(temperature_C) * 1e-6;
   return { shearModulus_MPa, modulus_MPa: 3 * shearModulus_MPa };
 }

@@ -1,6 +1,7 @@
 // Light that changes while it bleaches the initiator: what each cell gets of it, and what it has left. The light is there at once,
 // so it follows from the initiator left; the initiator is part of the state that is followed through time.
 import { checkNumbers, notNegative, positive } from "../../door.js";
+import { cm_per_m } from "../scales.js";
 import type { Column } from "./column.js";
 
 /** An initiator whose products do not absorb. */
@@ -52,8 +53,8 @@ export function bleachedLight(
   const rest_percm = napierianAbsorption_percm - initiatorAbsorption_percm;
   return {
     column,
-    initiatorThickness: reacting.map((width) => 100 * initiatorAbsorption_percm * width),
-    restThickness: reacting.map((width) => 100 * rest_percm * width),
+    initiatorThickness: reacting.map((width) => cm_per_m * initiatorAbsorption_percm * width),
+    restThickness: reacting.map((width) => cm_per_m * rest_percm * width),
     meanLight: new Float64Array(cells),
     rate_pers,
   };

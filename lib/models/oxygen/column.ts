@@ -2,6 +2,7 @@
 // and how much light each gets. A film that stores oxygen is the lowest part of the column. Oxygen is counted as the
 // concentration the resin would have in equilibrium, so that it is continuous where film and resin meet.
 import { gradedFaces, type Focus } from "../../numerics/grid.js";
+import { cm_per_m, m_per_um } from "../scales.js";
 
 /** What lies between the gas and the resin. */
 export type OxygenWindow =
@@ -65,7 +66,7 @@ export interface ColumnInput {
 export function columnOf(input: ColumnInput): Column {
   const { diffusivity_m2s: D, window } = input;
   const faces_m = gradedFaces({
-    length: 1e-6 * input.gapThickness_um,
+    length: m_per_um * input.gapThickness_um,
     cells: input.cells,
     focuses: input.grid === "even" ? [] : focusesOf(input),
   });
@@ -87,7 +88,7 @@ export function columnOf(input: ColumnInput): Column {
     gasResistance: gasResistanceOf(window, D),
     relativeLight: Float64Array.of(
       ...film.map(() => 0),
-      ...lightIn(faces_m, 100 * input.napierianAbsorption_percm),
+      ...lightIn(faces_m, cm_per_m * input.napierianAbsorption_percm),
     ),
     gapThickness_um: input.gapThickness_um,
   };
@@ -122,15 +123,15 @@ export function atClosedEnd(near: number, far: number, toNear: number, toFar: nu
 
 function gasResistanceOf(window: OxygenWindow, D: number): number {
   if (window.film === "tight") return Infinity;
-  if (window.film === "resists") return (1e-6 * window.filmEquivalentThickness_um) / D;
+  if (window.film === "resists") return (m_per_um * window.filmEquivalentThickness_um) / D;
   return window.sealed ? Infinity : 0;
 }
 
 /** Narrow cells at each expected edge and at the window; light that dies out near the window needs them narrower still. */
 function focusesOf(input: ColumnInput): Focus[] {
-  const length = 1e-6 * input.gapThickness_um;
-  const edges = input.edges_um.map((edge) => 1e-6 * edge).filter((edge) => edge > 0 && edge < length);
-  const lightDepth = 1 / (100 * input.napierianAbsorption_percm);
+  const length = m_per_um * input.gapThickness_um;
+  const edges = input.edges_um.map((edge) => m_per_um * edge).filter((edge) => edge > 0 && edge < length);
+  const lightDepth = 1 / (cm_per_m * input.napierianAbsorption_percm);
   const nearest = Math.min(length, lightDepth, ...edges);
   return [
     { at: 0, width: nearest / 4, share: 0.2 },
@@ -140,7 +141,7 @@ function focusesOf(input: ColumnInput): Focus[] {
 
 /** The film's cells, narrow towards the resin, m; listed from the gas up. */
 function filmWidths(thickness_um: number, resinCells: number): number[] {
-  const length = 1e-6 * thickness_um;
+  const length = m_per_um * thickness_um;
   const cells = Math.max(4, Math.round(resinCells / 4));
   const faces = gradedFaces({ length, cells, focuses: [{ at: length, width: length / 10, share: 0.5 }] });
   return widthsOf(faces);

@@ -1,5 +1,6 @@
 // The dead zone as a part shows it: the layer that has not reached gel conversion when the light goes off.
 import { checkNumbers, notNegative, positive } from "../../door.js";
+import { um_per_m } from "../scales.js";
 import { deadZone, type DeadZoneInput } from "./deadZone.js";
 
 /** A dead zone read from conversion, or the finding that this exposure gels no depth at all. */
@@ -77,6 +78,6 @@ export function conversionEdge(
     return { outcome: "stays-liquid", neededTime_s: growth / (kp * Math.sqrt(Ri / (2 * kt))) };
   const zone = deadZone({ ...input, napierianAbsorption_percm: 0 });
   const whole = zone.outcome === "dead-zone" ? zone.thickness_um : Infinity;
-  const tail = 1e6 * Math.sqrt((2 * D * edgeOxygen_molm3) / (s * Ri));
+  const tail = um_per_m * Math.sqrt((2 * D * edgeOxygen_molm3) / (s * Ri));
   return { outcome: "dead-zone", thickness_um: Math.max(whole - tail, 0), edgeOxygen_molm3 };
 }

@@ -2,6 +2,7 @@
 // Closed form for a sink of order zero, with the resistance of the film and the decay of the light.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
+import { cm_per_m, m_per_um, um_per_m } from "../scales.js";
 import { burnt } from "./burnt.js";
 
 /** What the dead zone depends on. */
@@ -74,8 +75,8 @@ export function deadZone(input: DeadZoneInput): DeadZone {
     saturation: input.saturation_molm3,
     Ri: input.radicalGeneration_molm3s,
     s: input.oxygenPerRadical,
-    alpha: 100 * input.napierianAbsorption_percm,
-    l: 1e-6 * input.filmEquivalentThickness_um,
+    alpha: cm_per_m * input.napierianAbsorption_percm,
+    l: m_per_um * input.filmEquivalentThickness_um,
   });
   if (!isStated(zone)) checkZone(zone);
   return zone;
@@ -204,7 +205,7 @@ function farRoot(film: number, share: number, uniform: number): number {
 
 const zoneOf = (thickness_m: number, wallOxygen_molm3: number, flux_molm2s: number): DeadZone => ({
   outcome: "dead-zone",
-  thickness_um: thickness_m * 1e6,
+  thickness_um: thickness_m * um_per_m,
   wallOxygen_molm3,
   flux_molm2s,
 });

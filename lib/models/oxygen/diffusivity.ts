@@ -1,6 +1,7 @@
 // How fast oxygen diffuses in a resin nobody has measured: an estimate from the viscosity.
 import { checkNumber, checkNumbers, positive } from "../../door.js";
 import { celsius } from "../ranges.js";
+import { kelvin } from "../scales.js";
 
 /**
  * Diffusivity of oxygen in m2/s, estimated from the viscosity of the liquid.
@@ -28,7 +29,7 @@ export function diffusivityFromViscosity(input: {
 }): number {
   const where = "diffusivityFromViscosity";
   checkNumbers(where, input, { viscosity_mPas: positive, temperature_C: celsius });
-  const T_K = input.temperature_C + 273.15;
+  const T_K = kelvin(input.temperature_C);
   return checkNumber(
     waterDiffusivity_m2s * (waterViscosity_mPas / input.viscosity_mPas) ** (2 / 3) * (T_K / 298.15),
     {

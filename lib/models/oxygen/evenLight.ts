@@ -2,6 +2,7 @@
 // at which oxygen has fallen to a given level. What the numerical models are held to.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
+import { m_per_um, um_per_m } from "../scales.js";
 
 /** What steady oxygen in even light depends on. */
 export interface EvenLightInput {
@@ -99,7 +100,7 @@ export function evenLightDepth(input: EvenLightInput & { readonly oxygen_molm3: 
     to,
     1 + Math.ceil(4 * (to - from)),
   );
-  return checkNumber(1e6 * depth_m, { where, field: "the depth in um", ...notNegative });
+  return checkNumber(um_per_m * depth_m, { where, field: "the depth in um", ...notNegative });
 }
 
 function checkInput(where: string, input: EvenLightInput): void {
@@ -130,7 +131,7 @@ function checkInput(where: string, input: EvenLightInput): void {
 
 function steadyFlux(where: string, input: EvenLightInput) {
   const { diffusivity_m2s: D, saturation_molm3: saturation } = input;
-  const filmResistance = (1e-6 * input.filmEquivalentThickness_um) / D;
+  const filmResistance = (m_per_um * input.filmEquivalentThickness_um) / D;
   const flux = (C: number): number => Math.sqrt(2 * D * firstIntegral(input, C));
   const wallOxygen_molm3 =
     filmResistance === 0

@@ -1,9 +1,9 @@
 // How easily oxygen comes through the window film: from a permeability in barrer to a thickness of resin that
 // would resist as much.
 import { checkNumber, checkNumbers, fraction, positive } from "../../door.js";
+import { cm_per_m, gasConstant_JmolK, m_per_um, um_per_m, zeroCelsius_K } from "../scales.js";
 
-const gasConstant_JmolK = 8.31446261815324;
-const molPerCm3STP = (101_325 * 1e-6) / (gasConstant_JmolK * 273.15);
+const molPerCm3STP = (101_325 * 1e-6) / (gasConstant_JmolK * zeroCelsius_K);
 const Pa_per_cmHg = 1333.22387415;
 
 /**
@@ -15,7 +15,7 @@ const Pa_per_cmHg = 1333.22387415;
  * BARRER_molmm2sPa; // → 3.346402e-16
  * ```
  */
-export const BARRER_molmm2sPa = (1e-10 * molPerCm3STP * 100) / Pa_per_cmHg;
+export const BARRER_molmm2sPa = (1e-10 * molPerCm3STP * cm_per_m) / Pa_per_cmHg;
 
 /**
  * Partial pressure of oxygen in a gas, Pa.
@@ -61,7 +61,7 @@ export function filmPermeance(input: {
 }): number {
   const where = "filmPermeance";
   checkNumbers(where, input, { permeability_barrer: positive, thickness_um: positive });
-  const thickness_m = input.thickness_um * 1e-6;
+  const thickness_m = input.thickness_um * m_per_um;
   return stated(where, "the permeance", (input.permeability_barrer * BARRER_molmm2sPa) / thickness_m);
 }
 
@@ -112,7 +112,11 @@ export function filmEquivalentThickness(input: {
 }): number {
   const where = "filmEquivalentThickness";
   checkNumbers(where, input, { diffusivity_m2s: positive, transferCoefficient_ms: positive });
-  return stated(where, "the thickness in um", (input.diffusivity_m2s / input.transferCoefficient_ms) * 1e6);
+  return stated(
+    where,
+    "the thickness in um",
+    (input.diffusivity_m2s / input.transferCoefficient_ms) * um_per_m,
+  );
 }
 
 const stated = (where: string, field: string, value: number): number =>

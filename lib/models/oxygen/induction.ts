@@ -2,6 +2,7 @@
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { photonEnergy } from "../light/photons.js";
 import { radicalYield, wavelength } from "../ranges.js";
+import { cm_per_m, um_per_cm } from "../scales.js";
 
 /** What the induction time at the window depends on. */
 export interface InductionInput {
@@ -73,7 +74,7 @@ export function inductionTimeAtDepth(
     { napierianAbsorption_percm, depth_um },
     { napierianAbsorption_percm: notNegative, depth_um: notNegative },
   );
-  return stated(where, atWindow(input) * Math.exp((napierianAbsorption_percm * depth_um) / 1e4));
+  return stated(where, atWindow(input) * Math.exp((napierianAbsorption_percm * depth_um) / um_per_cm));
 }
 
 /**
@@ -118,7 +119,7 @@ export function oxygenCriticalExposure(input: {
     initiatorAbsorption_percm: positive,
   });
   const { oxygen_molm3: C0, radicalsPerPhoton: phi, oxygenPerRadical: s } = input;
-  const initiatorAbsorption_perm = 100 * input.initiatorAbsorption_percm;
+  const initiatorAbsorption_perm = cm_per_m * input.initiatorAbsorption_percm;
   const exposure_Jm2 = (C0 * photonEnergy(input)) / (s * phi * initiatorAbsorption_perm);
   return checkNumber(exposure_Jm2 / 10, { where, field: "the exposure in mJ/cm2" });
 }

@@ -2,6 +2,7 @@
 import {
   checkNumber,
   checkNumbers,
+  checkWhole,
   InputError,
   notNegative,
   positive,
@@ -72,8 +73,8 @@ export function checkLayer(where: string, input: LayerConditions): void {
   );
   if (input.filmOxygen_molm3 !== undefined)
     checkNumber(input.filmOxygen_molm3, { where, field: "filmOxygen_molm3", ...notNegative });
-  checkWhole(where, "cells", given.cells, 8, 20_000);
-  checkWhole(where, "stepLimit", given.stepLimit, 1, 1e9);
+  checkWhole(given.cells, { where, field: "cells", min: 8, max: 20_000 });
+  checkWhole(given.stepLimit, { where, field: "stepLimit", min: 1, max: 1e9 });
   if (given.grid !== "graded" && given.grid !== "even")
     throw new InputError(unknownName(where, "grid", String(given.grid), ["graded", "even"]));
   checkWindow(where, input);
@@ -148,10 +149,4 @@ function checkWindow(where: string, { window, filmOxygen_molm3 }: LayerCondition
         ]),
       );
   }
-}
-
-function checkWhole(where: string, field: string, value: number, min: number, max: number): void {
-  checkNumber(value, { where, field, min, max });
-  if (!Number.isInteger(value))
-    throw new InputError(`${where}: ${field} is ${value}; it must be a whole number`);
 }

@@ -1,5 +1,6 @@
 // What the column looks like at one moment, in a chemist's terms: the layer left liquid, how deep and how far it is cured.
 import { depthsAtLevel } from "../../numerics/profile.js";
+import { um_per_m } from "../scales.js";
 import type { ColumnBalance } from "./balance.js";
 import { atClosedEnd } from "./column.js";
 
@@ -62,7 +63,7 @@ export function readLayer(
   const window = balance.window();
   const last = resin.length - 1;
   const top_um = column.gapThickness_um;
-  const centres_um = Array.from(column.depths_m, (depth) => 1e6 * depth);
+  const centres_um = Array.from(column.depths_m, (depth) => um_per_m * depth);
   const conversion = withEnds(centres_um, inCells, top_um);
   const atTop = conversion.at(-1)!;
   const depths_um = [0, ...centres_um, top_um];

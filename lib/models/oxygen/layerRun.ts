@@ -1,4 +1,5 @@
 // Runs one layer, or layers in a row, on a given grid: what a layer starts from, and what it hands on to the next.
+import { m_per_um } from "../scales.js";
 import { contentOf, type ColumnBalance } from "./balance.js";
 import { layerDefaults, type LayerConditions } from "./layerInput.js";
 import { readLayer, type DeadZoneLevels, type LayerReading } from "./layerReading.js";
@@ -124,7 +125,7 @@ function leftoverOf({ column, oxygen, growth, initiator }: ColumnBalance, end: L
   const mean = (values: Float64Array): number => {
     let [sum, all] = [0, 0];
     for (let i = 0; i < values.length; i++) {
-      const upper = Math.min(column.faces_m[i + 1]!, 1e-6 * liquid_um);
+      const upper = Math.min(column.faces_m[i + 1]!, m_per_um * liquid_um);
       const share = Math.max(upper - column.faces_m[i]!, 0);
       sum += share * values[i]!;
       all += share;

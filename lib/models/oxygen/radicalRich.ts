@@ -1,6 +1,7 @@
 // The other end of the range: so many radicals that oxygen hardly lowers their number, and every oxygen has the same chance
 // of being taken. Oxygen then falls exponentially from the window.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
+import { um_per_m } from "../scales.js";
 
 /**
  * Rate in 1/s at which radicals take oxygen where they are many: k = s kO sqrt(Ri / (2 kt)).
@@ -87,9 +88,9 @@ export function radicalRichProfile(input: {
     depth_um: { min: 0, max: input.gapThickness_um },
   });
   const { diffusivity_m2s: D, depth_um: z, gapThickness_um: L, filmEquivalentThickness_um: l } = input;
-  const m = Math.sqrt(input.rate_pers / D) / 1e6;
+  const m = Math.sqrt(input.rate_pers / D) / um_per_m;
   const wall = input.saturation_molm3 / (1 + m * l * Math.tanh(m * L));
-  const flux_molm2s = wall * D * 1e6 * m * Math.tanh(m * L);
+  const flux_molm2s = wall * D * um_per_m * m * Math.tanh(m * L);
   checkNumber(flux_molm2s, { where, field: "the flux", advice: "the rate is beyond any real resin" });
   // cosh(m (L - z)) / cosh(m L), without the overflow of either.
   const share = (depth: number): number =>

@@ -1,6 +1,7 @@
 // How many radicals the light starts at the window, and how many live beside a given amount of oxygen.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { radicalYield } from "../ranges.js";
+import { cm_per_m } from "../scales.js";
 
 /**
  * Rate at which light starts radicals at the window, Ri in mol/(m3 s).
@@ -31,7 +32,7 @@ export function radicalGeneration(input: {
     initiatorAbsorption_percm: notNegative,
     radicalsPerPhoton: radicalYield,
   });
-  const initiatorAbsorption_perm = 100 * input.initiatorAbsorption_percm;
+  const initiatorAbsorption_perm = cm_per_m * input.initiatorAbsorption_percm;
   return checkNumber(input.radicalsPerPhoton * initiatorAbsorption_perm * input.photonFlux_molm2s, {
     where,
     field: "the radical generation",

@@ -2,6 +2,7 @@
 import { checkNumber, checkNumbers, InputError, notNegative, positive, unknownName } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
 import { robinRoot, scaledErfc } from "../../numerics/robin.js";
+import { m_per_um } from "../scales.js";
 
 /** A gap of resin that holds no oxygen at the start of the dark. */
 export interface DarkGap {
@@ -97,7 +98,7 @@ function checkGap(where: string, gap: DarkGap): void {
 }
 
 const timeUnit = ({ gapThickness_um, diffusivity_m2s }: DarkGap): number =>
-  (1e-6 * gapThickness_um) ** 2 / diffusivity_m2s;
+  (m_per_um * gapThickness_um) ** 2 / diffusivity_m2s;
 
 function refillAt({ gapThickness_um, filmEquivalentThickness_um }: DarkGap, Fo: number): DarkRefill {
   const film = filmEquivalentThickness_um / gapThickness_um;

@@ -1,6 +1,7 @@
 // Follows a column through a schedule of light, dark and gas, and notes when a conversion is first reached anywhere.
 import { checkNumber, InputError, notNegative, positive, show } from "../../door.js";
 import { extrapolatedEuler } from "../../numerics/extrapolation.js";
+import { um_per_m } from "../scales.js";
 import type { ColumnBalance } from "./balance.js";
 
 /** One stretch of a schedule with steady light and gas. */
@@ -148,5 +149,5 @@ function steepest(balance: ColumnBalance): number {
   for (let i = 2; i < R.length; i++) {
     if (Math.abs(R[i]! - R[i - 1]!) > Math.abs(R[at]! - R[at - 1]!)) at = i;
   }
-  return 1e6 * depths_m[at]!;
+  return um_per_m * depths_m[at]!;
 }

@@ -1,6 +1,7 @@
 // Resin cut off from oxygen supply: a sealed cell, or the far end of a thick layer. Exact results for the full rate law.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
 import { findRoot } from "../../numerics/root.js";
+import { um_per_cm } from "../scales.js";
 
 /** A resin without oxygen supply under steady light. */
 export interface SealedResin {
@@ -45,7 +46,10 @@ export function oxygenFreeDepth(input: {
   });
   const { inductionTime_s, time_s, napierianAbsorption_percm: alpha } = input;
   if (time_s <= inductionTime_s) return 0;
-  return checkNumber((1e4 * Math.log(time_s / inductionTime_s)) / alpha, { where, field: "the depth in um" });
+  return checkNumber((um_per_cm * Math.log(time_s / inductionTime_s)) / alpha, {
+    where,
+    field: "the depth in um",
+  });
 }
 
 /**

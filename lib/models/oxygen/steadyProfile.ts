@@ -1,6 +1,7 @@
 // Steady oxygen and radicals at every depth of a gap under steady light: the profile a long exposure settles to.
 import { checkNumber, checkNumbers, InputError, notNegative, positive } from "../../door.js";
 import { solveTridiagonal } from "../../numerics/tridiagonal.js";
+import { um_per_m } from "../scales.js";
 import { atWindow, columnOf } from "./column.js";
 import { deadZone, type DeadZoneInput } from "./deadZone.js";
 import { addUse, quasiSteadyRates, ratesAt, setLight } from "./quasiSteady.js";
@@ -81,13 +82,13 @@ export function steadyOxygenProfile(input: SteadyOxygenInput): SteadyOxygenProfi
   const system = transportSystem(column, 1);
   setConductances(system, column.gasResistance, new Float64Array(cells), 0);
   const wall = zone.outcome === "dead-zone" ? zone.wallOxygen_molm3 : saturation;
-  const C = column.depths_m.map((z) => wall * Math.max(1 - (1e6 * z) / edge_um, 0) ** 2);
+  const C = column.depths_m.map((z) => wall * Math.max(1 - (um_per_m * z) / edge_um, 0) ** 2);
   const iterations = settle();
   ratesAt(rates, C);
   const window = atWindow(column, C, { saturation, gasResistance: column.gasResistance, share: 1 });
   checkNumber(window.flux_molm2s, { where, field: "the flux", advice: "an input is beyond any real resin" });
   return {
-    depths_um: Array.from(column.depths_m, (depth) => 1e6 * depth),
+    depths_um: Array.from(column.depths_m, (depth) => um_per_m * depth),
     oxygen_molm3: Array.from(C, (value) => Math.max(value, 0)),
     radicals_molm3: Array.from(rates.radicals),
     ...window,

@@ -1,6 +1,7 @@
 // How long a dead zone lives when its supply stops: the gas is shut off at the window, or the film lies on glass and
 // has only its own oxygen to give.
 import { checkNumber, checkNumbers, notNegative, positive } from "../../door.js";
+import { m_per_um } from "../scales.js";
 
 /** Time to extinction over delta^2 / D. */
 const extinction = 0.197434;
@@ -99,7 +100,7 @@ export function sealedFilmLife(input: {
     saturation_molm3: positive,
     flux_molm2s: positive,
   });
-  const held_molm2 = input.filmPartition * 1e-6 * input.filmThickness_um * input.saturation_molm3;
+  const held_molm2 = input.filmPartition * m_per_um * input.filmThickness_um * input.saturation_molm3;
   return checkNumber((2 * held_molm2) / input.flux_molm2s, { where, field: "the time in s" });
 }
 

@@ -2,6 +2,7 @@
 // budget, diffusivity and film. Each figure moves as far as its own doubt allows.
 import { checkNumber, checkNumbers, InputError, notNegative, positive, unknownName } from "../../door.js";
 import { solveDefinite } from "../../numerics/definite.js";
+import { cm_per_m, m_per_um } from "../scales.js";
 import { burnt } from "./burnt.js";
 
 /** The figures that readings on a window correct, all above 0. Spreads and factors go by the same names. */
@@ -200,10 +201,10 @@ function equationOf(reading: WindowReading, input: WindowCorrectionInput): Equat
       sigma,
     };
   }
-  const alpha = 100 * input.napierianAbsorption_percm;
+  const alpha = cm_per_m * input.napierianAbsorption_percm;
   // The doubt of the reading is that at the reading itself, not at what a draw makes of it.
-  const asRead = depthIntegrals(alpha, 1e-6 * reading.thickness_um);
-  const drawn = depthIntegrals(alpha, error * 1e-6 * reading.thickness_um);
+  const asRead = depthIntegrals(alpha, m_per_um * reading.thickness_um);
+  const drawn = depthIntegrals(alpha, error * m_per_um * reading.thickness_um);
   const perGas = (s * Ri) / reading.gasOxygen_Pa;
   return {
     terms: [

@@ -1,6 +1,7 @@
 // Is the model good enough for these readings? The verdict in words, and what it rests on.
+import { extraScatter, type Scatter } from "../../numerics/extraScatter.js";
 import { runsTest, type RunsTest } from "../../numerics/runs.js";
-import { varianceRatioProbability } from "../../numerics/varianceRatio.js";
+import { percent } from "../percent.js";
 
 /** What the residuals say about the model. */
 export type AdequacyVerdict =
@@ -38,12 +39,6 @@ export interface Adequacy {
   readonly lackOfFit?: LackOfFit;
   /** The most telling of the models with more terms, where the readings are enough for one. */
   readonly gain?: TermGain;
-}
-
-/** A sum of squares with its degrees of freedom. */
-export interface Scatter {
-  readonly sum: number;
-  readonly degrees: number;
 }
 
 /** What the verdict is made from. */
@@ -124,26 +119,16 @@ function verdictOf(
 function gainOf({ scatter, moreTerms }: AdequacyEvidence): TermGain | undefined {
   const gains = moreTerms
     .filter(({ sum, degrees }) => degrees >= ENOUGH_DEGREES && sum > 0)
-    .map(({ terms, sum, degrees }) => {
-      const degreesAbove = scatter.degrees - degrees;
-      const ratio = Math.max(0, scatter.sum - sum) / degreesAbove / (sum / degrees);
-      const probability = varianceRatioProbability({ ratio, degreesAbove, degreesBelow: degrees });
-      return { terms, residualStandardDeviation: Math.sqrt(sum / degrees), probability };
+    .map(({ terms, ...left }) => {
+      const { probability, standardDeviation } = extraScatter(scatter, left);
+      return { terms, residualStandardDeviation: standardDeviation, probability };
     });
   return gains.sort((a, b) => a.probability - b.probability)[0];
 }
 
 function lackOfFitOf({ scatter, repeats }: AdequacyEvidence): LackOfFit | undefined {
   if (repeats === undefined) return undefined;
-  const degreesAbove = scatter.degrees - repeats.degrees;
-  if (repeats.degrees < 1 || degreesAbove < 1 || repeats.sum === 0) return undefined;
-  const variance = repeats.sum / repeats.degrees;
-  const ratio = Math.max(0, scatter.sum - repeats.sum) / degreesAbove / variance;
-  return {
-    ratio,
-    probability: varianceRatioProbability({ ratio, degreesAbove, degreesBelow: repeats.degrees }),
-    repeatability: Math.sqrt(variance),
-  };
+  if (repeats.degrees < 1 || repeats.degrees >= scatter.degrees || repeats.sum === 0) return undefined;
+  const { ratio, probability, standardDeviation } = extraScatter(scatter, repeats);
+  return { ratio, probability, repeatability: standardDeviation };
 }
-
-const percent = (share: number): string => `${+(100 * share).toPrecision(2)} %`;

@@ -3,6 +3,7 @@ import { checkNumber, checkNumbers, InputError, positive } from "../../door.js";
 import { linearLeastSquares } from "../../numerics/linear.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import { celsius } from "../ranges.js";
+import { kelvin } from "../scales.js";
 
 /** The two parameters of ln(eta / mPa s) = lnPrefactor + activation_K / T. */
 export interface AndradeParameters {
@@ -127,9 +128,6 @@ export function fitAndrade(readings: {
 }
 
 const fitWhere = "fitAndrade";
-
-/** Absolute temperature, K. @internal */
-export const kelvin = (temperature_C: number): number => temperature_C + 273.15;
 
 function checkFalls(temperatures_C: NumberList, viscosities_mPas: NumberList): void {
   checkTwoTemperatures(fitWhere, temperatures_C);

@@ -1,7 +1,7 @@
 // The columns of a blend fit: what stands beside each coefficient for a given blend and temperature.
 // Kept apart from the fit so that fitting and predicting cannot disagree.
 import type { NumberList } from "../../numerics/lists.js";
-import { kelvin } from "./andrade.js";
+import { kelvin } from "../scales.js";
 import type { BlendReading } from "./blendReadings.js";
 
 /** Which coefficients a fit has: liquids, the pairs measured together, terms a pair, and whether temperature varies. */

@@ -1,11 +1,12 @@
 // What a fitted table of readings predicts for a blend that was not measured, and how far to trust it.
-import { checkNumber, InputError, positive } from "../../door.js";
-import { studentQuantile } from "../../numerics/distributions.js";
+import { checkNumber, InputError } from "../../door.js";
+import { dot } from "../../numerics/dot.js";
 import type { NumberList } from "../../numerics/lists.js";
 import type { Interval, Warning } from "../../result.js";
 import { checkFractions } from "../fractions.js";
 import { celsius } from "../ranges.js";
 import { blendRow, unmeasuredPairs } from "./blendDesign.js";
+import { blendInterval } from "./blendInterval.js";
 import type { BlendFit } from "./fitBlend.js";
 
 /**
@@ -41,15 +42,14 @@ export function blendViscosity(input: {
   const a = blendRow(fit.shape, fractions, temperature_C);
   const lnEta = dot(a, fit.coefficients);
   const ofFit = a.reduce((sum, ai, i) => sum + ai * dot(fit.covariance[i]!, a), 0);
-  const t = studentQuantile({ probability: (1 + level) / 2, degreesOfFreedom: fit.degreesOfFreedom });
-  const spread = t * Math.sqrt(fit.readingStandardDeviation ** 2 + ofFit);
-  return {
-    value: stated(lnEta),
-    low: stated(lnEta - spread),
-    high: stated(lnEta + spread),
+  const interval = blendInterval({
+    where,
+    lnViscosity: lnEta,
+    standardError: Math.sqrt(fit.readingStandardDeviation ** 2 + ofFit),
+    degreesOfFreedom: fit.degreesOfFreedom,
     level,
-    warnings: extrapolations(fit, ofFit, temperature_C, fractions),
-  };
+  });
+  return { ...interval, warnings: extrapolations(fit, ofFit, temperature_C, fractions) };
 }
 
 const where = "blendViscosity";
@@ -101,15 +101,3 @@ function extrapolations(
   }
   return warnings;
 }
-
-function stated(lnViscosity: number): number {
-  return checkNumber(Math.exp(lnViscosity), {
-    where,
-    field: "a viscosity in mPas",
-    ...positive,
-    advice: "the readings do not fix it; measure more blends near it",
-  });
-}
-
-const dot = (a: readonly number[], b: readonly number[]): number =>
-  a.reduce((sum, x, i) => sum + x * b[i]!, 0);

@@ -1,12 +1,14 @@
 // From a table of blend readings to neat viscosities and interactions, with a verdict on the model and on each reading.
-import { checkNumber, InputError, positive } from "../../door.js";
-import { studentQuantile } from "../../numerics/distributions.js";
+import { InputError } from "../../door.js";
 import { deletedResidualLimit, deletedResiduals } from "../../numerics/deletedResiduals.js";
+import type { Scatter } from "../../numerics/extraScatter.js";
 import { linearLeastSquares, type LinearFit } from "../../numerics/linear.js";
 import { robustScores } from "../../numerics/runs.js";
 import type { Interval, Warning } from "../../result.js";
-import { judge, type Adequacy, type Scatter } from "./adequacy.js";
+import { zeroCelsius_K } from "../scales.js";
+import { judge, type Adequacy } from "./adequacy.js";
 import { blendRow, placeOfPair, shapeOf, type BlendShape } from "./blendDesign.js";
+import { blendInterval } from "./blendInterval.js";
 import { blendWarnings } from "./blendWarnings.js";
 import { checkTable, compositionKey, groupsOf, sampleKey, type BlendReading } from "./blendReadings.js";
 import type { MixingBasis } from "./grunbergNissan.js";
@@ -123,7 +125,7 @@ export function fitBlend(table: {
   const temperatures = readings.map(({ temperature_C }) => temperature_C);
   const common = {
     basis,
-    referenceTemperature_C: shape.referenceTemperature_K - 273.15,
+    referenceTemperature_C: shape.referenceTemperature_K - zeroCelsius_K,
     coefficients: fit.coefficients,
     covariance: fit.covariance,
     residuals: fit.residuals,
@@ -201,15 +203,10 @@ function solve(
 }
 
 function neatOf(shape: BlendShape, fit: LinearFit, level: number): Interval[] {
-  const t = studentT(level, fit.degreesOfFreedom);
+  const { degreesOfFreedom } = fit;
   return Array.from({ length: shape.liquids }, (_, i) => {
-    const [L, spread] = [fit.coefficients[i]!, t * fit.standardErrors[i]!];
-    return {
-      value: stated(L),
-      low: stated(L - spread),
-      high: stated(L + spread),
-      level,
-    };
+    const [lnViscosity, standardError] = [fit.coefficients[i]!, fit.standardErrors[i]!];
+    return blendInterval({ where, lnViscosity, standardError, degreesOfFreedom, level });
   });
 }
 
@@ -277,16 +274,4 @@ function repeatsOf(
 function withEndsExchanged(reading: BlendReading): BlendReading {
   const [x1, x2] = [reading.fractions[0]!, reading.fractions[1]!];
   return x1 === 0 || x2 === 0 ? { ...reading, fractions: [x2, x1] } : reading;
-}
-
-const studentT = (level: number, degreesOfFreedom: number): number =>
-  studentQuantile({ probability: (1 + level) / 2, degreesOfFreedom });
-
-function stated(lnViscosity: number): number {
-  return checkNumber(Math.exp(lnViscosity), {
-    where,
-    field: "a viscosity in mPas",
-    ...positive,
-    advice: "the readings do not fix it; measure more blends near it",
-  });
 }

@@ -1,9 +1,11 @@
 // The interaction of two liquids, with one to three terms, from viscosities along their line; the neat liquids are held.
 import { fraction, InputError, positive } from "../../door.js";
+import type { Scatter } from "../../numerics/extraScatter.js";
 import { linearLeastSquares, type LinearFit } from "../../numerics/linear.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import type { Warning } from "../../result.js";
-import { judge, type Adequacy, type Scatter } from "./adequacy.js";
+import { percent } from "../percent.js";
+import { judge, type Adequacy } from "./adequacy.js";
 import { checkBasis, type MixingBasis } from "./grunbergNissan.js";
 import { checkTermCount, type BinaryInteraction } from "./redlichKister.js";
 
@@ -181,8 +183,6 @@ function swapWarnings(
 /** Exchanged ends have to fit three times better, and the given ones badly, before they are suspected. */
 export const SWAP_GAIN = 3;
 export const SMALLEST_SWAP = 0.02;
-
-const percent = (share: number): string => `${+(100 * share).toPrecision(2)} %`;
 
 function inOrder(interior: readonly Interior[], residuals: readonly number[]): number[] {
   const rows = interior.map(({ x1 }, k) => ({ x1, r: residuals[k]! }));

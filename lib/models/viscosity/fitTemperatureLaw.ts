@@ -1,18 +1,14 @@
 // A temperature law from viscosities of one liquid measured at several temperatures, and what it then predicts.
 import { checkNumber, checkNumbers, InputError, positive, unknownName } from "../../door.js";
+import { dot } from "../../numerics/dot.js";
 import { studentQuantile } from "../../numerics/distributions.js";
 import { levenbergMarquardt } from "../../numerics/levenbergMarquardt.js";
 import { linearLeastSquares, type LinearFit } from "../../numerics/linear.js";
 import { checkList, checkSameLength, type NumberList } from "../../numerics/lists.js";
 import type { Interval, Warning } from "../../result.js";
 import { celsius } from "../ranges.js";
-import {
-  andradeViscosity,
-  checkTwoTemperatures,
-  findRise,
-  kelvin,
-  type AndradeParameters,
-} from "./andrade.js";
+import { kelvin } from "../scales.js";
+import { andradeViscosity, checkTwoTemperatures, findRise, type AndradeParameters } from "./andrade.js";
 import { vogelViscosity, type VogelParameters } from "./vogel.js";
 
 /** A temperature law with its parameters. */
@@ -286,6 +282,3 @@ function reach({ temperatures_C: [coldest, warmest] }: TemperatureLawFit, temper
     "the interval takes the law for true there";
   return [{ code: "extrapolated", message }];
 }
-
-const dot = (a: readonly number[], b: readonly number[]): number =>
-  a.reduce((sum, x, i) => sum + x * b[i]!, 0);

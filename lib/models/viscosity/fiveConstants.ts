@@ -2,7 +2,7 @@
 import { checkNumber, checkNumbers, InputError, positive } from "../../door.js";
 import { checkList } from "../../numerics/lists.js";
 import { celsius } from "../ranges.js";
-import { kelvin } from "./andrade.js";
+import { kelvin } from "../scales.js";
 
 /**
  * Viscosity in mPa s at a temperature, from five handbook constants.

@@ -2,7 +2,7 @@
 import { checkNumber, checkNumbers, InputError, notNegative } from "../../door.js";
 import type { Warning } from "../../result.js";
 import { celsius } from "../ranges.js";
-import { kelvin } from "./andrade.js";
+import { kelvin } from "../scales.js";
 import { checkBasis, type MixingBasis } from "./grunbergNissan.js";
 
 /** An interaction measured at one temperature, with its standard uncertainty. */

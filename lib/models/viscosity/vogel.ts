@@ -1,7 +1,7 @@
 // How the viscosity of a glass-forming liquid falls with temperature: the three-parameter law of Vogel, Fulcher and Tammann.
 import { checkNumber, checkNumbers, InputError, notNegative, positive } from "../../door.js";
 import { celsius } from "../ranges.js";
-import { kelvin } from "./andrade.js";
+import { kelvin, zeroCelsius_K } from "../scales.js";
 
 /** The three parameters of ln(eta / mPa s) = lnPrefactor + vogelConstant_K / (T - vogelTemperature_K). */
 export interface VogelParameters {
@@ -51,7 +51,7 @@ export function vogelViscosity(input: VogelParameters & { readonly temperature_C
   const T = kelvin(temperature_C);
   if (T <= T0) {
     throw new InputError(
-      `${where}: temperature_C is ${temperature_C}, at or below the Vogel temperature of ${+(T0 - 273.15).toFixed(2)} °C; ` +
+      `${where}: temperature_C is ${temperature_C}, at or below the Vogel temperature of ${+(T0 - zeroCelsius_K).toFixed(2)} °C; ` +
         "the law holds above it, and the liquid is a glass there",
     );
   }

@@ -1,5 +1,6 @@
 // Viscosity of water, known to a percent or better: the liquid every laboratory has for checking its viscometer.
 import { checkNumbers } from "../../door.js";
+import { kelvin } from "../scales.js";
 
 /**
  * Viscosity of liquid water at 0.1 MPa in mPa s.
@@ -20,7 +21,7 @@ import { checkNumbers } from "../../door.js";
  */
 export function waterViscosity({ temperature_C }: { readonly temperature_C: number }): number {
   checkNumbers("waterViscosity", { temperature_C }, { temperature_C: range });
-  const t = (temperature_C + 273.15) / 300;
+  const t = kelvin(temperature_C) / 300;
   return (280.68 * t ** -1.9 + 511.45 * t ** -7.7 + 61.131 * t ** -19.6 + 0.45903 * t ** -40) / 1000;
 }
 

@@ -5,6 +5,7 @@ import type { TableContent } from "../content.js";
 import { spanOf, type PlotAxis } from "./axis.js";
 import type { ContourFigure, GridAxis, GridValues, Region } from "./contour.js";
 import { markText } from "./marks.js";
+import { thinned } from "./thinned.js";
 import { axisText, counted, quantityText, sentence, spanText, titleOf, windowText } from "./words.js";
 
 /** A grid point by its place among the values of x and of y. */
@@ -29,7 +30,8 @@ export function describeContours(
 
 /** At most 12 by 12 of the numbers, first and last grid line included: one row for each y, one column for each x. */
 export function tableOfContours({ caption, x, y, z, feasible, marks = [] }: ContourFigure): TableContent {
-  const [columns, rows] = [thinned(x.values.length), thinned(y.values.length)];
+  const columns = thinned([...x.values.keys()], 12);
+  const rows = thinned([...y.values.keys()], 12);
   const besides = [
     `${titleOf(z)}: one row for each ${titleOf(y)}, one column for each ${titleOf(x)}.`,
     ...(columns.length === x.values.length && rows.length === y.values.length
@@ -80,10 +82,4 @@ function valueAt({ x, y, z }: ContourFigure, value: number): string {
   const j = z.values.findIndex((row) => row.includes(value));
   const place = [x.values[z.values[j]!.indexOf(value)]!, y.values[j]!] as const;
   return `${quantityText(value, z.unit)} at ${quantityText(place[0], x.unit)} and ${quantityText(place[1], y.unit)}`;
-}
-
-/** The places of at most twelve of `length` values, evenly spread, ends included. */
-function thinned(length: number): number[] {
-  const count = Math.min(length, 12);
-  return Array.from({ length: count }, (_, k) => Math.round((k * (length - 1)) / (count - 1)));
 }

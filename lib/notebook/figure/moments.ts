@@ -1,12 +1,13 @@
 // Curves that change with time, shown one moment at a time: a slider chooses the moment, print shows the one chosen.
 
-import { InputError, refuseUnknownKeys, checkNumber } from "../../door.js";
+import { checkNumber, checkWhole, InputError, refuseUnknownKeys } from "../../door.js";
 import { numberText } from "../digits.js";
 import type { FigureContent, TableContent } from "../content.js";
 import { checkAxis, plotAxis, type Axis } from "./axis.js";
 import { lineFigure, type Series } from "./line.js";
 import { describeLines } from "./lineWords.js";
 import type { Mark } from "./marks.js";
+import { thinned } from "./thinned.js";
 import { captionOf, checkCaption, quantityText, sentence } from "./words.js";
 
 /** The curves at one moment; `at` rises from moment to moment. */
@@ -114,10 +115,7 @@ function tableOfMoments({ caption, x, y, by, moments }: MomentsFigure): TableCon
       ...names.map((name) => number(names.length === 1 ? y.label : name, y.unit)),
     ],
     rows: kept.flatMap(({ at, series }) => {
-      const places = thinned(
-        series[0]!.x.map((_, i) => i),
-        13,
-      );
+      const places = thinned([...series[0]!.x.keys()], 13);
       return places.map((i) => [
         numberText(at, 3),
         series[0]!.x[i]!,
@@ -125,12 +123,6 @@ function tableOfMoments({ caption, x, y, by, moments }: MomentsFigure): TableCon
       ]);
     }),
   };
-}
-
-/** At most `most` of a list, evenly chosen, both ends among them. */
-export function thinned<T>(list: readonly T[], most: number): T[] {
-  if (list.length <= most) return [...list];
-  return Array.from({ length: most }, (_, k) => list[Math.round((k * (list.length - 1)) / (most - 1))]!);
 }
 
 function checkMoments(figure: MomentsFigure): void {
@@ -160,9 +152,7 @@ function checkMoments(figure: MomentsFigure): void {
       );
   });
   if (shown === undefined) return;
-  checkNumber(shown, { where, field: "shown", min: 0, max: moments.length - 1 });
-  if (!Number.isInteger(shown))
-    throw new InputError(`${where}: shown is ${shown}; it must be a whole number`);
+  checkWhole(shown, { where, field: "shown", min: 0, max: moments.length - 1 });
 }
 
 const figureKeys = ["caption", "conditions", "x", "y", "by", "moments", "shown", "marks"];

@@ -5,6 +5,7 @@ import { spawn } from "node:child_process";
 import path from "node:path";
 import { InputError } from "../../door.js";
 import { readWorkbench } from "../../recipe/files.js";
+import type { Call } from "../call.js";
 import { notebooksIn } from "../notebookFile.js";
 import { findJupyter, howToGetJupyter } from "./find.js";
 import { writeProject } from "./project.js";
@@ -15,14 +16,8 @@ import { writeProject } from "./project.js";
  * Of `words`, one may name the brief; those that begin with a dash are handed to Jupyter.
  * Returns the exit code: 0 Jupyter was ended, 1 there is none or it failed, 2 there was nothing to start with.
  */
-export async function openNotebooks(given: {
-  readonly words: readonly string[];
-  readonly folder: string;
-  readonly environment: NodeJS.ProcessEnv;
-  readonly print: (line: string) => void;
-  readonly printError: (line: string) => void;
-}): Promise<0 | 1 | 2> {
-  const { words, folder, environment, print, printError } = given;
+export async function openNotebooks(call: Call): Promise<0 | 1 | 2> {
+  const { words, folder, environment, print, printError } = call;
   let brief: string | undefined;
   try {
     brief = checkedBrief(folder, words);

@@ -13,6 +13,7 @@ import {
 import path from "node:path";
 import { parseArgs } from "node:util";
 import { InputError, show, unknownName } from "../../door.js";
+import type { Call } from "../call.js";
 import { beforeExit } from "../cleanup.js";
 import { onPaper, papers, type Paper } from "../pageStyle.js";
 import { findBrowser, printPage } from "./browser.js";
@@ -21,14 +22,8 @@ import { findBrowser, printPage } from "./browser.js";
  * Prints the pages of the workbench in `folder`, on A4 or on the paper that `words` names: `--paper Letter`.
  * Returns the exit code: 0 done, 1 there are no pages, no browser, or one was not printed, 2 the words are wrong.
  */
-export async function printPages(given: {
-  readonly words: readonly string[];
-  readonly folder: string;
-  readonly environment: NodeJS.ProcessEnv;
-  readonly print: (line: string) => void;
-  readonly printError: (line: string) => void;
-}): Promise<0 | 1 | 2> {
-  const { words, folder, environment, print, printError } = given;
+export async function printPages(call: Call): Promise<0 | 1 | 2> {
+  const { words, folder, environment, print, printError } = call;
   let paper: Paper;
   try {
     paper = paperOf(words);

@@ -2,6 +2,7 @@
 // to do when it goes wrong. All text of the sheet is escaped here.
 
 import { InputError, unknownName } from "../../door.js";
+import { scrolling } from "../content.js";
 import { escapeHtml } from "../html.js";
 import { pageHtml, type Origin } from "../page.js";
 import type { SheetContent, SheetMasterBatch, SheetPortion } from "./content.js";
@@ -158,12 +159,12 @@ function tableHtml(given: {
   kind: string;
 }): string {
   const { caption, columns, head, rows, kind } = given;
-  const name = escapeHtml(caption);
-  return `<div class="scroll" role="region" aria-label="${name}" tabindex="0"><table class="${kind}">
-<caption><span>${name}</span></caption>
+  const table = `<table class="${kind}">
+<caption><span>${escapeHtml(caption)}</span></caption>
 <colgroup>${columns.map((column) => `<col class="${column}">`).join("")}</colgroup>
 <thead>${head}</thead>
-<tbody>${rows.join("\n")}</tbody></table></div>`;
+<tbody>${rows.join("\n")}</tbody></table>`;
+  return scrolling(table, caption);
 }
 
 function list(texts: readonly string[]): string {

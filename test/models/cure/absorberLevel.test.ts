@@ -2,8 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { absorberForCureDepth, absorberForOpticalDepth, broadCureDepth } from "../../../lib/models/cure.js";
 import { absorptionCoefficient, lightEngine, opticalDepth } from "../../../lib/models/light.js";
-
-const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
+import { finite } from "../light/litResins.js";
 
 describe("absorberForOpticalDepth", () => {
   it("finds the level that gives the depth back", () => {

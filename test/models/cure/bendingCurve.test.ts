@@ -13,16 +13,11 @@ import {
   lightEngine,
   localOpticalDepth,
 } from "../../../lib/models/light.js";
+import { finite, litBy as resinLitBy, nodes, type Node } from "../light/litResins.js";
 import { filmUnder } from "../light/measuredFilms.js";
 
-const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
-const nodes = fc.array(fc.record({ S: finite(0.001, 5), alpha: finite(1, 2000) }), {
-  minLength: 2,
-  maxLength: 20,
-});
-const litBy = (list: readonly { S: number; alpha: number }[]) => ({
-  engine: lightEngine({ wavelengths_nm: list.map((_, k) => 380 + k), spectrum: list.map(({ S }) => S) }),
-  napierianAbsorptions_percm: list.map(({ alpha }) => alpha),
+const litBy = (list: readonly Node[]) => ({
+  ...resinLitBy(list),
   criticalExposure_mJcm2: 5,
 });
 

@@ -9,17 +9,8 @@ import {
   opticalDepth,
   transmittedFraction,
 } from "../../../lib/models/light.js";
+import { finite, litBy, nodes } from "./litResins.js";
 import { filmThickness_um, filmUnder } from "./measuredFilms.js";
-
-const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
-const nodes = fc.array(fc.record({ S: finite(0.001, 5), alpha: finite(1, 1000) }), {
-  minLength: 2,
-  maxLength: 20,
-});
-const litBy = (list: readonly { S: number; alpha: number }[]) => ({
-  engine: lightEngine({ wavelengths_nm: list.map((_, k) => 380 + k), spectrum: list.map(({ S }) => S) }),
-  napierianAbsorptions_percm: list.map(({ alpha }) => alpha),
-});
 
 describe("absorptionSpectrum", () => {
   it("is absorptionCoefficient at every node", () => {

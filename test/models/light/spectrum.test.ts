@@ -2,8 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { interpolateSpectrum, spectrumMean } from "../../../lib/models/light.js";
 import { readTable } from "../../reference/readTable.js";
-
-const finite = (min: number, max: number) => fc.double({ min, max, noNaN: true });
+import { finite } from "./litResins.js";
 
 describe("interpolateSpectrum", () => {
   const table = { nodes_nm: [365, 385, 405], values: [10, 4, 7], where: 'spectrum "demo"' };

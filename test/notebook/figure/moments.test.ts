@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { embed } from "../../../lib/notebook/content.js";
-import { momentsFigure, thinned, type MomentsFigure } from "../../../lib/notebook/figure/moments.js";
+import { momentsFigure, type MomentsFigure } from "../../../lib/notebook/figure/moments.js";
 
 const curve = (y: number[], name = "conversion") => ({ name, x: [0, 25, 50], y });
 const plain: MomentsFigure = {
@@ -68,12 +68,5 @@ describe("momentsFigure", () => {
     [{ x: { label: "" } }, 'momentsFigure "Conversion from the window up": x axis: label is ""'],
   ])("refuses %j", (change, message) => {
     expect(() => momentsFigure({ ...plain, ...change })).toThrow(message);
-  });
-});
-
-describe("thinned", () => {
-  it("keeps both ends", () => {
-    expect(thinned([1, 2, 3, 4, 5], 3)).toEqual([1, 3, 5]);
-    expect(thinned([1, 2], 3)).toEqual([1, 2]);
   });
 });
