@@ -1,7 +1,7 @@
 // Rate constants and the rate of a radical polymerisation, with the convention for termination said out loud.
 import { checkNumber, checkNumbers, InputError, notNegative, positive, unknownName } from "../../door.js";
 import { celsius } from "../ranges.js";
-import { kelvin } from "../scales.js";
+import { gasConstant_JmolK, kelvin } from "../scales.js";
 
 /**
  * Rate at which double bonds are used up, Rp in mol/(m3 s), at steady radicals and without oxygen.
@@ -85,11 +85,10 @@ const divisors = { "-2kt": 1, "-kt": 2 } as const satisfies Record<TerminationCo
  *
  * k = A exp(-Ea / (R T)). Holds over the range of temperature it was fitted on.
  * @throws InputError when an argument is out of range.
- * @source Arrhenius; R = 8.314462618... J/(mol K), exact since the SI Brochure, 9th ed. 2019.
+ * @source Arrhenius; R is the molar gas constant, SI Brochure, 9th ed. 2019.
  * @example
  * ```ts
  * import { rateConstant } from "resinwright";
-import { gasConstant_JmolK } from "../scales.js";
  * rateConstant({ prefactor_m3mols: 2.21e4, activationEnergy_Jmol: 17900, temperature_C: 20 }); // → 14.29
  * ```
  */
