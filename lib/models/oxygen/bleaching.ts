@@ -81,7 +81,7 @@ export function shineThrough(
   }
 }
 
-/** Bleaches for a time `h` in the light as it stands. */
+/** Bleaches for a time `h` in the light as it stands, as one implicit step. */
 export function bleach(
   { meanLight, rate_pers }: BleachedLight,
   left: Float64Array,
@@ -90,5 +90,5 @@ export function bleach(
   h: number,
 ): void {
   const perLight = rate_pers * relativeIrradiance * h;
-  for (let i = 0; i < meanLight.length; i++) left[start + i]! *= Math.exp(-perLight * meanLight[i]!);
+  for (let i = 0; i < meanLight.length; i++) left[start + i]! /= 1 + perLight * meanLight[i]!;
 }

@@ -129,7 +129,7 @@ export function quasiSteadyBalance(
   const plainDifference = differenceIn(column, options.oxygenScale);
   /** Lets the light follow the initiator left in `u`. */
   function follow(u: Float64Array): void {
-    if (light === undefined) return;
+    if (light === undefined || conditions.relativeIrradiance === 0) return;
     shineThrough(light, u, atInitiator, rates.relativeLight);
     setLight(rates, conditions.relativeIrradiance);
   }
@@ -153,7 +153,7 @@ export function quasiSteadyBalance(
     partStep(u, h) {
       if (share < 1) setConductances(system, conditions.gasResistance, u, cells);
       stepQuasiSteady(system, rates, u, h, conditions.saturation);
-      if (light === undefined) return;
+      if (light === undefined || conditions.relativeIrradiance === 0) return;
       bleach(light, u, atInitiator, conditions.relativeIrradiance, h);
       follow(u);
       ratesAt(rates, u);
