@@ -5,7 +5,12 @@ import {
   type FullLayerInput,
   type LayerReading,
 } from "../../../lib/models/oxygen.js";
-import { named, P0, transientCase } from "../../reference/oxygen/readTransient.js";
+import {
+  allowedAtQuarterMicrometre,
+  named,
+  P0,
+  transientCase,
+} from "../../reference/oxygen/readTransient.js";
 
 const noFilm = { film: "resists", filmEquivalentThickness_um: 0 } as const;
 const light = [{ duration_s: 5, relativeIrradiance: 1 }];
@@ -22,7 +27,7 @@ const Q = (reading: LayerReading): number => -Math.log1p(-reading.meanConversion
 
 describe("exposeLayerFully against a grid-converged solution", () => {
   // Reference: an independent program, converged in the grid to 3e-9 (see the note in the file). At 3 s the front passes 30 um, where
-  // radicals multiply within one cell.
+  // radicals multiply within one cell: there 1e-5 of the 8e-3 mol/m3 that are left behind it.
   it("on even cells of 0.25 um", () => {
     const { times_s, at } = transientCase("T2a_full_kappaInf");
     const { readings } = exposeLayerFully({
@@ -36,10 +41,10 @@ describe("exposeLayerFully against a grid-converged solution", () => {
     });
     for (const reading of readings) {
       for (const [field, { value }] of Object.entries(at(reading.time_s))) {
-        const floor = { C: 1e-2, X: 1e-2, R: 1e-3, m: 1e-2, z: 0 }[field[0]!]!;
-        const found = Math.abs(named(reading, field) - value) / Math.max(Math.abs(value), floor);
-        const steep = field === "R@30" ? 1e-2 : /^X@30|^X@100|^zX=0.05/.test(field) ? 3e-3 : 1.5e-3;
-        expect(found, `${field} at ${reading.time_s} s`).toBeLessThan(steep);
+        const passing = field === "R@30" && reading.time_s === 3;
+        expect(Math.abs(named(reading, field) - value), `${field} at ${reading.time_s} s`).toBeLessThan(
+          passing ? 1e-5 : allowedAtQuarterMicrometre(field, value),
+        );
       }
     }
   });

@@ -40,6 +40,17 @@ export function named(reading: LayerReading, name: string): number {
   return name === "flux" ? reading.flux_molm2s : NaN;
 }
 
+/**
+ * How far a value may lie off at cells of h = 0.25 um. Means (over no less than 1e-2), fronts and fluxes: 1e-3. At a point as well,
+ * but a front, which is thinner than a cell, stands anywhere within it: that moves what lies beside it by up to h^2 s Ri / 8 D = 4e-5
+ * of saturation; radicals, of which there are 8e-3 mol/m3 at most, by a thousandth of a thousandth.
+ */
+export function allowedAtQuarterMicrometre(field: string, value: number): number {
+  if (field.startsWith("mean")) return 1e-3 * Math.max(value, 1e-2);
+  const beside = field.includes("@") ? (field.startsWith("R") ? 1e-6 : 4e-5) : 0;
+  return 1e-3 * Math.abs(value) + beside;
+}
+
 function readJson<T>(name: string): T {
   return JSON.parse(readFileSync(new URL(name, import.meta.url), "utf8")) as T;
 }
