@@ -257,7 +257,7 @@ export function hazardTable(formulation: Formulation): TableContent {
       "Hazard statements known for the ingredients. A screening: the suppliers' safety data sheets decide",
     rows: formulation.components.map(({ ingredient }) => ({
       ingredient: ingredient.id,
-      "CAS number": ingredient.cas ?? "none: generic",
+      "CAS number": ingredient.cas ?? "none given",
       statements: hazardText(ingredient),
       note: ingredient.note ?? null,
     })),
