@@ -256,7 +256,7 @@ describe("hazardTable", () => {
   it("shows the statements found, and where nobody has looked says so", () => {
     expect(table.rows).toEqual([
       ["THIN", "7732-18-5", "H317, H411", "Wear gloves."],
-      ["THICK", "none: generic", "not checked", null],
+      ["THICK", "none given", "not checked", null],
     ]);
   });
 
