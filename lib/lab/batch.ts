@@ -8,5 +8,5 @@ export type { MasterBatch, MasterStage } from "./batch/masterBatch.js";
 export type { Content } from "./batch/doses.js";
 export { weighOut, type Portion, type Prices, type WeighOutSheet } from "./batch/weighOut.js";
 export { asMade, type AsMade, type MadePart, type PropertyChange, type Weighing } from "./batch/asMade.js";
-export { rescue, type Rescue, type RescueAddition } from "./batch/rescue.js";
+export { rescue, type Rescue, type RescueAddition, type SmallerRescue } from "./batch/rescue.js";
 export { readWeighedBatch, weighingsOn, type WeighedBatch } from "./batch/weighedBatch.js";

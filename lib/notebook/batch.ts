@@ -1,6 +1,7 @@
 // How a batch is shown: what to weigh, what was weighed, what that changed, and what puts it right.
 
 import type { AsMade, Balance, MasterBatch, PropertyChange, Rescue, WeighOutSheet } from "../lab/batch.js";
+import { hasToDissolve, solubilityOf } from "../lab/batch/dissolving.js";
 import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Brief } from "../recipe/brief.js";
 import type { TableContent } from "./content.js";
@@ -19,7 +20,7 @@ import { valueText } from "./verdicts.js";
  * const { formulation } = openBrief("data/briefs/flow-cell.json");
  * const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
  * const table = weighOutTable(weighOut({ formulation, batch_g: 500, balance }));
- * table.rows[0].slice(0, 5); // → [1, "IBOA", "141.000", "140.299 to 141.701", "141.000"]
+ * table.rows[0].slice(0, 5); // → [1, "IBOA", "147.750", "147.015 to 148.485", "147.750"]
  * ```
  */
 export function weighOutTable(sheet: WeighOutSheet): TableContent {
@@ -68,7 +69,7 @@ export function masterBatchTable({
 }: WeighOutSheet): TableContent | undefined {
   if (masterBatches.length === 0) return undefined;
   return tableOf({
-    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. Whether a solid dissolves at that share is not known here: try a little`,
+    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. ${masterBatches.map((one) => `${one.label}: ${dissolvingText(one)}`).join("; ")}`,
     rows: masterBatches.flatMap((master) => {
       const { label, carrier, stages, massFraction, dose_g, enoughFor } = master;
       return stages.map(({ of, mass_g, carrier_g }) => ({
@@ -101,7 +102,7 @@ export function masterBatchTable({
  * import { weighedTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const batch = openBatch({ ...work, draws: 200 })!;
- * weighedTable(batch).rows[4]; // → ["TEGDMA", "TEGDMA-0119", "67.662 to 68.338", "76.415", "8.415 too much"]
+ * weighedTable(batch).rows[2]; // → ["TEGDMA", "TEGDMA-0119", "67.662 to 68.338", "76.415", "8.415 too much"]
  * ```
  */
 export function weighedTable({ sheet, made }: { sheet: WeighOutSheet; made: AsMade }): TableContent {
@@ -316,6 +317,17 @@ export function batchDecision({ weighed, sheet, made, plan }: ReturnedBatch): {
 /** What light means for a master batch; nothing where it holds no initiator. */
 export function lightNotes({ solute }: MasterBatch): string[] {
   return solute.role === "photoinitiator" ? ["Under amber light, in a covered vessel"] : [];
+}
+
+/** Whether the ingredient of a master batch dissolves in it, in its strongest stage. */
+export function dissolvingText({ solute, stages }: MasterBatch): string {
+  const { mass_g, carrier_g } = stages[0]!;
+  const solubility = solubilityOf(solute);
+  if (!hasToDissolve(solute)) return "stir until no streak is left";
+  if (solubility === undefined)
+    return "whether it dissolves is not known here, try a little first; stir until clear";
+  const share_pct = (100 * mass_g) / (mass_g + carrier_g);
+  return `it holds ${numberText(share_pct, 2)} %, and the shelf says that ${solubility.text} dissolves; stir until clear`;
 }
 
 /** A mass as the balance shows it, without its unit: as many decimals as its last digit has. */

@@ -75,7 +75,7 @@ export function planDoses(input: PlanInput): {
 
 function ownDose(ingredient: Ingredient, mass_g: number, small: boolean, input: PlanInput): Dose {
   const drawnIn_g = small ? (roomBeside(mass_g, input) ?? 0) : 0;
-  const remark = `; below the ${rounded(input.minimumWeight_g)} g that this balance weighs honestly, and ${whyNoMaster(ingredient, mass_g, input)}: by itself, within limits drawn in by ${rounded(drawnIn_g, 2)} g for the doubt of the balance`;
+  const remark = `; below the ${rounded(input.minimumWeight_g)} g that this balance weighs honestly, and ${whyNoMaster(ingredient, mass_g, input)}: weigh it by itself, its limits are drawn in by ${rounded(drawnIn_g, 2)} g for the doubt of the balance`;
   return {
     ingredient,
     massFraction: mass_g / input.batch_g,
@@ -129,8 +129,10 @@ function labelOf({ id, lot }: Ingredient): string {
 }
 
 function tooLittle({ ingredient, massFraction }: Addition, mass_g: number, input: PlanInput): Warning {
-  const { minimumWeight_g, balance } = input;
-  const batch_g = readable(minimumWeight_g / massFraction, balance, "up");
+  const { minimumWeight_g, tolerance, balance } = input;
+  // From here on its limits leave room for the doubt of the balance, wherever it is rounded to.
+  const least_g = (2 * weighingUncertainty({ balance }) + balance.readability_g / 2) / tolerance;
+  const batch_g = readable(Math.min(minimumWeight_g, least_g) / massFraction, balance, "up");
   return {
     code: "below-minimum-weight",
     message: `${labelOf(ingredient)}: ${rounded(mass_g)} g is below the ${rounded(minimumWeight_g)} g that this balance weighs honestly, and ${whyNoMaster(ingredient, mass_g, input)}; make at least ${rounded(batch_g)} g or use a balance whose minimum weight is ${rounded(mass_g)} g`,
