@@ -5,7 +5,8 @@ import { fraction, positive } from "../door.js";
 import { dataHashOf } from "../lab/dataHash.js";
 import { weighOut, type MasterBatch, type Portion, type WeighOutSheet } from "../lab/batch.js";
 import { libraryVersion } from "../lab/record/version.js";
-import { lightNotes, massText } from "../notebook/batch.js";
+import { dissolvingText, lightNotes } from "../notebook/batch.js";
+import { massText } from "../notebook/batchMass.js";
 import type { TableContent } from "../notebook/content.js";
 import { numberText } from "../notebook/digits.js";
 import { tableOf } from "../notebook/table.js";
@@ -148,11 +149,7 @@ function portionTable(caption: string, portions: readonly Portion[], grams: Gram
 function masterTable(master: MasterBatch, grams: Grams): TableContent {
   const { label, massFraction, stages, dose_g, enoughFor } = master;
   return tableOf({
-    caption: `Make first: master batch of ${label}, ${numberText(100 * massFraction)} % by mass; ${grams(dose_g)} g go into a batch, enough for ${numberText(Math.floor(enoughFor))}. Whether so much dissolves is not known here: try a little first${lightNotes(
-      master,
-    )
-      .map((note) => `. ${note}`)
-      .join("")}`,
+    caption: `Make first: master batch of ${label}, ${numberText(100 * massFraction)} % by mass; ${grams(dose_g)} g go into a batch, enough for ${numberText(Math.floor(enoughFor))}. ${[dissolvingText(master), ...lightNotes(master)].join(". ")}`,
     rows: stages.map(({ of, mass_g, carrier_g }, i) => ({
       stage: i + 1,
       of,

@@ -1,8 +1,11 @@
 // How a batch is shown: what to weigh, what was weighed, what that changed, and what puts it right.
 
-import type { AsMade, Balance, MasterBatch, PropertyChange, Rescue, WeighOutSheet } from "../lab/batch.js";
+import type { AsMade, MasterBatch, PropertyChange, WeighOutSheet } from "../lab/batch.js";
+import { hasToDissolve, solubilityOf } from "../lab/batch/dissolving.js";
 import type { ReturnedBatch } from "../lab/batch/files.js";
 import type { Brief } from "../recipe/brief.js";
+import { massText } from "./batchMass.js";
+import { rescueText } from "./batchRescue.js";
 import type { TableContent } from "./content.js";
 import { numberText } from "./digits.js";
 import { targetText } from "./phrases.js";
@@ -19,7 +22,7 @@ import { valueText } from "./verdicts.js";
  * const { formulation } = openBrief("data/briefs/flow-cell.json");
  * const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
  * const table = weighOutTable(weighOut({ formulation, batch_g: 500, balance }));
- * table.rows[0].slice(0, 5); // → [1, "IBOA", "141.000", "140.299 to 141.701", "141.000"]
+ * table.rows[0].slice(0, 5); // → [1, "IBOA", "147.750", "147.015 to 148.485", "147.750"]
  * ```
  */
 export function weighOutTable(sheet: WeighOutSheet): TableContent {
@@ -68,7 +71,7 @@ export function masterBatchTable({
 }: WeighOutSheet): TableContent | undefined {
   if (masterBatches.length === 0) return undefined;
   return tableOf({
-    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. Whether a solid dissolves at that share is not known here: try a little`,
+    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. ${masterBatches.map((one) => `${one.label}: ${dissolvingText(one)}`).join("; ")}`,
     rows: masterBatches.flatMap((master) => {
       const { label, carrier, stages, massFraction, dose_g, enoughFor } = master;
       return stages.map(({ of, mass_g, carrier_g }) => ({
@@ -101,7 +104,7 @@ export function masterBatchTable({
  * import { weighedTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const batch = openBatch({ ...work, draws: 200 })!;
- * weighedTable(batch).rows[4]; // → ["TEGDMA", "TEGDMA-0119", "67.662 to 68.338", "76.415", "8.415 too much"]
+ * weighedTable(batch).rows[2]; // → ["TEGDMA", "TEGDMA-0119", "67.662 to 68.338", "76.415", "8.415 too much"]
  * ```
  */
 export function weighedTable({ sheet, made }: { sheet: WeighOutSheet; made: AsMade }): TableContent {
@@ -211,64 +214,6 @@ export function batchChangeTable({
 }
 
 /**
- * What to add to a mis-weighed batch, one portion a row; undefined where nothing is to be added.
- * @example
- * ```ts
- * import { openBatch, openBrief } from "resinwright/files";
- * import { rescueTable } from "resinwright/notebook";
- * const work = openBrief("data/briefs/flow-cell.json");
- * const batch = openBatch({ ...work, draws: 200 })!;
- * rescueTable(batch)?.rows[0]; // → ["IBOA", "141.032", "90.377"]
- * ```
- */
-export function rescueTable({
-  sheet,
-  plan,
-}: {
-  sheet: WeighOutSheet;
-  plan: Rescue;
-}): TableContent | undefined {
-  if (plan.outcome !== "add") return undefined;
-  const { balance } = sheet;
-  return tableOf({
-    caption: "What to add, in the order of the sheet",
-    rows: plan.additions.map(({ label, present_g, add_g }) => ({
-      portion: label,
-      present_g: massText(present_g, balance),
-      add_g: add_g === 0 ? "nothing" : massText(add_g, balance),
-    })),
-    columns: [
-      { key: "portion" },
-      { key: "present_g", name: "in the vessel", align: "right" },
-      { key: "add_g", name: "add", align: "right" },
-    ],
-  });
-}
-
-/**
- * A rescue in a sentence.
- * @example
- * ```ts
- * import { weighOut } from "resinwright";
- * import { openBrief } from "resinwright/files";
- * import { rescueText } from "resinwright/notebook";
- * const { formulation } = openBrief("data/briefs/flow-cell.json");
- * const balance = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
- * const sheet = weighOut({ formulation, batch_g: 500, balance });
- * rescueText({ sheet, plan: { outcome: "within", total_g: 500 } }); // → "Every share is within the accuracy that was asked for: nothing is to be added."
- * ```
- */
-export function rescueText({ sheet, plan }: { sheet: WeighOutSheet; plan: Rescue }): string {
-  if (plan.outcome === "within")
-    return "Every share is within the accuracy that was asked for: nothing is to be added.";
-  if (plan.outcome === "impossible") return `It cannot be put right: ${plan.reason}.`;
-  const { total_g, growth, setBy } = plan;
-  if (growth <= 1)
-    return `It is brought back to its recipe by adding what is missing, up to the planned ${massText(total_g, sheet.balance)} g.`;
-  return `To be brought back to its recipe the batch has to grow to ${massText(total_g, sheet.balance)} g, ${numberText(growth, 3)} times what was planned; ${setBy} asks for that much.`;
-}
-
-/**
  * What to do with a batch that came back, with the figures behind it: use it as it was made where every share is as it was asked
  * for and no target is worse met than planned; else put it right, or keep it apart where that cannot be done.
  * @example
@@ -318,12 +263,15 @@ export function lightNotes({ solute }: MasterBatch): string[] {
   return solute.role === "photoinitiator" ? ["Under amber light, in a covered vessel"] : [];
 }
 
-/** A mass as the balance shows it, without its unit: as many decimals as its last digit has. */
-export function massText(mass_g: number, { readability_g }: Balance): string {
-  const shown = (decimals: number) => Number(readability_g.toFixed(decimals));
-  let decimals = 0;
-  while (decimals < 9 && Math.abs(shown(decimals) - readability_g) > 1e-9 * readability_g) decimals++;
-  return mass_g.toFixed(decimals);
+/** Whether the ingredient of a master batch dissolves in it, in its strongest stage. */
+export function dissolvingText({ solute, stages }: MasterBatch): string {
+  const { mass_g, carrier_g } = stages[0]!;
+  const solubility = solubilityOf(solute);
+  if (!hasToDissolve(solute)) return "stir until no streak is left";
+  if (solubility === undefined)
+    return "whether it dissolves is not known here, try a little first; stir until clear";
+  const share_pct = (100 * mass_g) / (mass_g + carrier_g);
+  return `it holds ${numberText(share_pct, 2)} %, and the shelf says that ${solubility.text} dissolves; stir until clear`;
 }
 
 /** What a batch costs, and what that leaves out. */

@@ -70,11 +70,10 @@ export {
   batchDecision,
   madeTable,
   masterBatchTable,
-  rescueTable,
-  rescueText,
   weighedTable,
   weighOutTable,
 } from "./batch.js";
+export { rescueTable, rescueText } from "./batchRescue.js";
 export { sheetOf, weighOutPage, type SheetInput } from "./sheet.js";
 export type { SheetContent, SheetMasterBatch, SheetPortion } from "./sheet/content.js";
 export type { Paper } from "./sheet/style.js";

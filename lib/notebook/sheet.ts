@@ -9,7 +9,8 @@ import { isHonest } from "../lab/batch/balance.js";
 import type { Brief } from "../recipe/brief.js";
 import { densityOf } from "../recipe/formulation.js";
 import { flagText, riseText } from "./safety.js";
-import { costText, lightNotes, massText } from "./batch.js";
+import { costText, dissolvingText, lightNotes } from "./batch.js";
+import { massText } from "./batchMass.js";
 import { numberText } from "./digits.js";
 import type { Origin } from "./page.js";
 import type { SheetContent, SheetMasterBatch, SheetPortion } from "./sheet/content.js";
@@ -141,7 +142,7 @@ function sizeText({ formulation, batch_g }: WeighOutSheet): string {
   return `${size}, about ${numberText(batch_g / density_gcm3, 3)} mL at ${numberText(density_gcm3, 3)} g/cm³ (additive volumes)`;
 }
 
-function masterBatchOf(master: MasterBatch, { balance, portions }: WeighOutSheet): SheetMasterBatch {
+function masterBatchOf(master: MasterBatch, { balance, batch_g, portions }: WeighOutSheet): SheetMasterBatch {
   const { label, solute, carrier, stages, massFraction, relativeU, dose_g, enoughFor } = master;
   const line = portions.find((one) => one.label === `master batch of ${label}`)!.line;
   const last = stages.at(-1)!;
@@ -156,7 +157,8 @@ function masterBatchOf(master: MasterBatch, { balance, portions }: WeighOutSheet
       ...lightNotes(master).map((note) => `${note}.`),
       `The batch needs ${massText(massFraction * dose_g, balance)} g of ${solute.id}, too little to weigh by itself.`,
       `Weigh to the last digit: it is taken to hold ${numberText(100 * massFraction)} % ${solute.id}, to ${numberText(100 * relativeU, 2)} % of that (one standard uncertainty).`,
-      `Makes ${massText(made_g, balance)} g, enough for ${enoughFor} of this batch. Try a little first: whether it dissolves is not known here. Stir until clear.`,
+      `Makes ${massText(made_g, balance)} g, enough for ${enoughFor} of this batch.${made_g > batch_g ? " That is more than the batch itself: a balance with a smaller minimum weight needs less." : ""}`,
+      `${sentence(dissolvingText(master))}.`,
     ],
   };
 }
@@ -166,25 +168,33 @@ function stageText(stages: MasterBatch["stages"], k: number, what: string): stri
 }
 
 function portionOf(portion: Portion, { balance, minimumWeight_g, portions }: WeighOutSheet): SheetPortion {
-  const { line, label, contents, reason, amberLight, exact_g, target_g, low_g, high_g, loads, lot } = portion;
+  const { line, label, contents, reason, amberLight, loads, lot } = portion;
+  const { exact_g, target_g, low_g, high_g, drawnIn_g } = portion;
   const isMaster = contents.length > 1;
   const notes = [
     amberLight && !portions.some((one) => one.line < line && one.amberLight) && "Amber light from here on",
     isMaster && "Made before, as above",
-    !isMaster && !isHonest(exact_g, minimumWeight_g) && "Too little for this balance: see the warning",
+    !isMaster &&
+      drawnIn_g === 0 &&
+      !isHonest(exact_g, minimumWeight_g) &&
+      "Too little for this balance: see the warning",
     loads > 1 && `In ${loads} loads`,
   ];
   return {
     line,
     portion: label,
     identity: isMaster ? "" : (contents[0]!.ingredient.cas ?? ""),
-    reason: reason[0]!.toUpperCase() + reason.slice(1),
+    reason: sentence(reason),
     notes: notes.filter((note) => note !== false),
     target: massText(target_g, balance),
     limits: `${massText(low_g, balance)} to ${massText(high_g, balance)}`,
     total: massText(portion.runningTotal_g, balance),
     lot,
   };
+}
+
+function sentence(text: string): string {
+  return text[0]!.toUpperCase() + text.slice(1);
 }
 
 function casOf({ formulation }: WeighOutSheet, id: string): string {

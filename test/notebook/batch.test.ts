@@ -6,16 +6,16 @@ import {
   batchChangeTable,
   costText,
   madeTable,
-  massText,
+  dissolvingText,
   lightNotes,
   masterBatchTable,
-  rescueTable,
-  rescueText,
   weighedTable,
   weighOutTable,
 } from "../../lib/notebook/batch.js";
-import { balance, formulationOf, weighedBatch } from "../fixtures.js";
-import { readWorkbench } from "../../lib/recipe/files.js";
+import { massText } from "../../lib/notebook/batchMass.js";
+import { rescueTable, rescueText } from "../../lib/notebook/batchRescue.js";
+import type { Ingredient } from "../../lib/recipe/ingredient.js";
+import { balance, formulationOf, sure, weighedBatch } from "../fixtures.js";
 
 const formulation = formulationOf({ THICK: 55, THIN: 30, MID: 12, PI: 2, AB: 1 });
 const prices = { currency: "EUR", prices_perkg: { THIN: 10, THICK: 20, MID: 30, PI: 400 } };
@@ -94,19 +94,37 @@ describe("costText", () => {
 
 describe("lightNotes", () => {
   it("keeps the light off a master batch that holds the initiator, and says nothing of others", () => {
-    const { formulation } = readWorkbench("data/briefs/flow-cell.json");
-    const small = weighOut({
-      formulation,
-      batch_g: 100,
-      balance: { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 },
-    });
+    const small = sheetOf({ batch_g: 400 });
     const notes = small.masterBatches.map((master) => [master.solute.id, lightNotes(master).length]);
-    expect(notes).toContainEqual(["BAPO", 1]);
-    expect(notes).toContainEqual(["MEHQ", 0]);
+    expect(notes).toContainEqual(["PI", 1]);
+    expect(notes).toContainEqual(["AB", 0]);
     const cells = masterBatchTable(small)!.rows.map(([label]) => String(label));
     expect(cells.filter((cell) => cell.includes("amber light"))).toHaveLength(
-      small.masterBatches.filter(({ solute }) => solute.id === "BAPO").flatMap(({ stages }) => stages).length,
+      small.masterBatches.filter(({ solute }) => solute.id === "PI").flatMap(({ stages }) => stages).length,
     );
+  });
+});
+
+describe("dissolvingText", () => {
+  const of = (change: Partial<Ingredient>, parts = { THICK: 49.5, THIN: 50, AB: 0.5 }) => {
+    const components = formulationOf(parts).components.map((one) =>
+      one.ingredient.id === "AB" ? { ...one, ingredient: { ...one.ingredient, ...change } } : one,
+    );
+    return sheetOf({ formulation: { ...formulation, components } }).masterBatches.map(dissolvingText);
+  };
+
+  it("says what the shelf knows, of the strongest stage", () => {
+    expect(of({ solubility_pct: sure(5, 1) })).toEqual([
+      "it holds 4 %, and the shelf says that 5 ± 1 % dissolves; stir until clear",
+    ]);
+    expect(of({ solubility_pct: sure(8) }, { THICK: 49.99, THIN: 50, AB: 0.01 })).toEqual([
+      "it holds 8 %, and the shelf says that 8 % dissolves; stir until clear",
+    ]);
+  });
+
+  it("says where nothing is known, and asks it of no liquid", () => {
+    expect(of({})).toEqual(["whether it dissolves is not known here, try a little first; stir until clear"]);
+    expect(of({ state: "liquid" })).toEqual(["stir until no streak is left"]);
   });
 });
 
@@ -121,7 +139,7 @@ describe("masterBatchTable", () => {
     expect(rows).toHaveLength(2);
     expect(rows[0]!.slice(0, 3)).toEqual(["AB in THIN", "0.10", "8.20 of AB"]);
     expect(rows[1]![2]).toMatch(/^\d+\.\d\d of stage 1 of AB in THIN$/);
-    expect(caption).toContain("below the 8.20 g that the balance weighs honestly");
+    expect(caption).toContain("below the 8.20 g that the balance weighs honestly. AB in THIN: whether it");
   });
 });
 
@@ -240,6 +258,48 @@ describe("a rescue", () => {
     expect(rescueText({ sheet, plan: { outcome: "impossible", reason } })).toBe(
       "It cannot be put right: the vessel is too small.",
     );
+  });
+});
+
+describe("a rescue with additions below the minimum weight", () => {
+  const strict = sheetOf({ accuracy: 0.001 });
+  const weighings = strict.portions.map(({ line, target_g }) => ({
+    line,
+    mass_g: line === 5 ? 555 : target_g,
+  }));
+  const plan = rescue({ sheet: strict, weighings });
+
+  it("says how well they are known", () => {
+    // 0.1 and 0.2 g to u = 4.08248 sqrt(2) mg, of 10.1 and 20.2 g; 6 g of 306 g likewise.
+    const { caption, rows } = rescueTable(back({ 1: 305, 5: 560 }))!;
+    expect(caption).toBe(
+      "What to add, in the order of the sheet, under amber light, as an initiator is in the vessel. Less than 8.20 g of one portion is weighed where what is in and what is added are together known well enough, two standard uncertainties being: AB to 0.11 %, PI to 0.057 %, MID to 0.0095 %",
+    );
+    expect(rows.map((row) => row.at(-1))).toEqual(["nothing", "0.18", "0.36", "2.18", "nothing"]);
+  });
+
+  it("offers the smaller way where one of them sets the size", () => {
+    expect(rescueText({ sheet: strict, plan })).toMatch(
+      /^To be brought back to its recipe the batch has to grow to \d+\.\d\d g, 1\.82 times what was planned; AB asks for that much\. What sets this size is an addition too small for the balance\. Without such additions the batch is 10\d\d\.\d\d g and lacks .*AB 0\.9 % of itself.*: see whether the targets bear that, or add what lacks from a thinner master batch or on a finer balance\.$/,
+    );
+  });
+
+  it("says what is more than the balance carries, and in how many loads", () => {
+    const small = { ...balance, capacity_g: 300 };
+    const heavy = sheetOf({ balance: small });
+    const masses = heavy.portions.map(({ line, target_g }) => ({
+      line,
+      mass_g: line === 4 ? 240 : target_g,
+    }));
+    const doubled = rescue({ sheet: heavy, weighings: masses });
+    expect(rescueText({ sheet: heavy, plan: doubled })).toBe(
+      "To be brought back to its recipe the batch has to grow to 2000.00 g, 2 times what was planned; MID asks for that much. That is more than the 300 g the balance carries: weigh each addition in a vessel of its own.",
+    );
+    expect(rescueTable({ sheet: heavy, plan: doubled })!.rows.at(-1)).toEqual([
+      "THICK",
+      "550.00",
+      "550.00 in 2 loads",
+    ]);
   });
 });
 

@@ -7,7 +7,7 @@ import { sheetOf, weighOutPage } from "../../lib/notebook/sheet.js";
 import type { SheetContent } from "../../lib/notebook/sheet/content.js";
 import { sheetHtml } from "../../lib/notebook/sheet/page.js";
 import { openBrief } from "../../lib/recipe/files.js";
-import { formulationOf } from "../fixtures.js";
+import { formulationOf, sure } from "../fixtures.js";
 
 const { brief, formulation } = openBrief("data/briefs/flow-cell.json");
 const rules = readSafetyRules("data/rules");
@@ -33,19 +33,19 @@ const textOf = (html: string) =>
 describe("sheetOf", () => {
   it("holds each portion in its order, masses as the balance shows them", () => {
     expect(content.portions.map(({ line, portion, target }) => [line, portion, target])).toEqual([
-      [1, "IBOA", "141.000"],
+      [1, "IBOA", "147.750"],
       [2, "master batch of MEHQ in IBOA", "2.500"],
-      [3, "master batch of BBOT in IBOA", "7.500"],
-      [4, "BAPO", "6.000"],
-      [5, "TEGDMA", "68.000"],
+      [3, "TEGDMA", "68.000"],
+      [4, "BBOT", "0.750"],
+      [5, "BAPO", "6.000"],
       [6, "UDMA", "275.000"],
     ]);
     expect(content.portions[0]).toMatchObject({
       identity: "5888-33-5",
       reason: "The thinnest liquid first: solids dissolve fastest in it",
       notes: [],
-      limits: "140.299 to 141.701",
-      total: "141.000",
+      limits: "147.015 to 148.485",
+      total: "147.750",
       lot: "",
     });
     expect(content.portions.at(-1)!.total).toBe("500.000");
@@ -55,9 +55,9 @@ describe("sheetOf", () => {
     expect(content.portions.map(({ notes }) => notes)).toEqual([
       [],
       ["Made before, as above"],
-      ["Made before, as above"],
-      ["Amber light from here on"],
       [],
+      [],
+      ["Amber light from here on"],
       [],
     ]);
   });
@@ -72,9 +72,36 @@ describe("sheetOf", () => {
       notes: [
         "The batch needs 0.250 g of MEHQ, too little to weigh by itself.",
         "Weigh to the last digit: it is taken to hold 10 % MEHQ, to 0.051 % of that (one standard uncertainty).",
-        "Makes 16.000 g, enough for 6 of this batch. Try a little first: whether it dissolves is not known here. Stir until clear.",
+        "Makes 16.000 g, enough for 6 of this batch.",
+        "Whether it dissolves is not known here, try a little first; stir until clear.",
       ],
     });
+  });
+
+  it("says of a master batch what the shelf knows of its solubility, and that it is large", () => {
+    const components = formulationOf({ THICK: 49.9, THIN: 50, AB: 0.1 }).components.map((one) =>
+      one.ingredient.id === "AB"
+        ? { ...one, ingredient: { ...one.ingredient, solubility_pct: sure(0.8, 0.5) } }
+        : one,
+    );
+    const hard = { ...formulation, id: "test", components };
+    const { masterBatches } = sheetOf({
+      sheet: weighOut({ formulation: hard, batch_g: 300, balance }),
+      screening: screened(hard),
+      brief,
+    });
+    expect(masterBatches[0]!.notes.slice(-2)).toEqual([
+      "Makes 533.334 g, enough for 5 of this batch. That is more than the batch itself: a balance with a smaller minimum weight needs less.",
+      "It holds 0.3 %, and the shelf says that 0.8 ± 0.5 % dissolves; stir until clear.",
+    ]);
+  });
+
+  it("says of a portion below the minimum weight that is weighed by itself how far its limits are drawn in", () => {
+    const { reason, limits } = content.portions[3]!;
+    expect(limits).toBe("0.749 to 0.751");
+    expect(reason).toMatch(
+      /; below the 1\.6 g that this balance weighs honestly, and a master batch in which it is sure to dissolve would be 250 g, more than the diluents allow: weigh it by itself, its limits are drawn in by 0\.0018 g for the doubt of the balance$/,
+    );
   });
 
   it("numbers the stages of a master batch that needs several", () => {
@@ -103,7 +130,7 @@ describe("sheetOf", () => {
       "Too little for this balance: see the warning",
     );
     expect(small.warnings).toEqual([
-      "PI: 0.2 g is below the 1.6 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 80 g or use a balance whose minimum weight is 0.2 g.",
+      "PI: 0.2 g is below the 1.6 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 23.08 g or use a balance whose minimum weight is 0.2 g.",
     ]);
     expect(of(1500).portions[0]!.notes).toContain("In 3 loads");
   });
@@ -124,7 +151,7 @@ describe("sheetOf", () => {
     expect(facts.get("Balance")).toBe("reads 0.001 g, up to 600 g; honest from 1.600 g");
     expect(facts.get("Limits")).toBe("keep every share within 1 % of itself");
     // 275 g at 24 EUR/kg; nothing else has a price.
-    expect(facts.get("Cost")).toBe("EUR 6.60, without IBOA, MEHQ, BBOT, BAPO, TEGDMA (no price given)");
+    expect(facts.get("Cost")).toBe("EUR 6.60, without IBOA, MEHQ, TEGDMA, BBOT, BAPO (no price given)");
   });
 
   it("leaves the volume out where a density is not known", () => {

@@ -1,6 +1,7 @@
 // A master batch: an ingredient too little to weigh is weighed in plenty, thinned with the diluent, and dosed as that blend.
 
 import type { Ingredient } from "../../recipe/ingredient.js";
+import { solubilityOf } from "./dissolving.js";
 import { isHonest, readable, weighingUncertainty, type Balance } from "./balance.js";
 import { massFractionUncertainties } from "./uncertainty.js";
 
@@ -11,7 +12,7 @@ export interface MasterStage {
   readonly carrier_g: number;
 }
 
-/** How to make and dose a master batch. Whether the ingredient dissolves at such a share is not known here: try a little first. */
+/** How to make and dose a master batch. Where the shelf has no solubility of a solid, try a little first. */
 export interface MasterBatch {
   readonly label: string;
   readonly solute: Ingredient;
@@ -33,14 +34,25 @@ export interface MasterBatch {
  * not enough for two honest weighings, the dose and the rest.
  *
  * The dose holds one part in ten of the ingredient, which leaves room to dissolve it, or one in two where the diluent does not
- * reach further, and is no less than `minimum_g`. No stage thins more than twentyfold: more stages make less to keep.
+ * reach further, and is no less than `minimum_g`. No stage holds more of a solid than its solubility on the shelf less one
+ * standard uncertainty. No stage thins more than twentyfold, more stages make less to keep, unless the solubility asks for it.
  */
 export function planMasterBatch(given: MasterBatchInput): MasterBatch | undefined {
   const { mass_g, available_g, minimum_g } = given;
   return [10 * mass_g, 2 * mass_g]
-    .map((wanted_g) => Math.max(minimum_g, wanted_g))
+    .map((wanted_g) => Math.max(minimum_g, wanted_g, leastDose(given.solute, mass_g)))
+    .filter((wanted_g) => wanted_g <= available_g + mass_g)
     .map((wanted_g) => planned(given, wanted_g))
     .find(({ dose_g }) => isHonest(available_g - (dose_g - mass_g), minimum_g));
+}
+
+/** The least dose in which that much of an ingredient is sure to dissolve. */
+export function leastDose(solute: Ingredient, mass_g: number): number {
+  return mass_g / mostOf(solute);
+}
+
+function mostOf(solute: Ingredient): number {
+  return solubilityOf(solute)?.sure ?? 1;
 }
 
 interface MasterBatchInput {
@@ -57,14 +69,13 @@ function planned(
   { solute, carrier, mass_g, minimum_g, balance }: MasterBatchInput,
   wanted_g: number,
 ): MasterBatch {
-  const count = Math.max(1, Math.ceil(Math.log(wanted_g / mass_g) / Math.log(20)));
-  const share = (mass_g / wanted_g) ** (1 / count);
+  const shares = thinnings(mass_g / wanted_g, mostOf(solute));
   const label = `${solute.id} in ${carrier.id}`;
-  const stages = stageMasses({ count, share, dose_g: wanted_g, minimum_g, balance }).map(
+  const stages = stageMasses({ shares, dose_g: wanted_g, minimum_g, balance }).map(
     (stageMass_g, k): MasterStage => ({
       of: k === 0 ? solute.id : `stage ${k} of ${label}`,
       mass_g: stageMass_g,
-      carrier_g: readable(stageMass_g * (1 / share - 1), balance, "up"),
+      carrier_g: readable(stageMass_g * (1 / shares[k]! - 1), balance, "up"),
     }),
   );
   const massFraction = stages.reduce((product, stage) => product * (stage.mass_g / totalOf(stage)), 1);
@@ -74,22 +85,30 @@ function planned(
   return { label, solute, carrier, stages, massFraction, relativeU, dose_g, enoughFor };
 }
 
+/** The share that each stage holds of the stage before, first stage first, whose share is at most `most`; together `whole`. */
+function thinnings(whole: number, most: number): number[] {
+  const count = Math.max(1, Math.ceil(Math.log(1 / whole) / Math.log(20)));
+  const even = whole ** (1 / count);
+  if (even <= most) return Array<number>(count).fill(even);
+  // A second stage that thins less than twofold is not worth its weighings.
+  if (whole > most / 2) return [whole];
+  return [most, ...thinnings(whole / most, 1)];
+}
+
 /** What to weigh of the ingredient or of the stage before, first stage first: enough for the balance and for the next stage. */
 function stageMasses(input: {
-  count: number;
-  share: number;
+  shares: readonly number[];
   dose_g: number;
   minimum_g: number;
   balance: Balance;
 }): number[] {
-  const { count, share, dose_g, minimum_g, balance } = input;
-  const masses: number[] = [];
-  for (let needed_g = dose_g; masses.length < count; needed_g = masses[0]!) {
+  const { shares, dose_g, minimum_g, balance } = input;
+  return shares.reduceRight<number[]>((masses, share) => {
+    const needed_g = masses[0] ?? dose_g;
     // Both the ingredient and the diluent of a stage must be honest weighings.
     const smallest_g = Math.max(minimum_g, (minimum_g * share) / (1 - share), needed_g * share);
-    masses.unshift(readable(smallest_g, balance, "up"));
-  }
-  return masses;
+    return [readable(smallest_g, balance, "up"), ...masses];
+  }, []);
 }
 
 function relativeUOf({ mass_g, carrier_g }: MasterStage, balance: Balance): number {

@@ -1,8 +1,9 @@
-// In which order a resin goes together, and why: what dissolves goes into thin liquid, what starts the reaction waits for
-// amber light, what is thick comes warm, what settles comes last.
+// In which order a resin goes together, and why: what dissolves goes into thin liquid, and into enough of it; what starts the
+// reaction waits for amber light, what is thick comes warm, what settles comes last.
 
 import { isLiquid, type Component, type Formulation } from "../../recipe/formulation.js";
 import type { Role } from "../../recipe/ingredient.js";
+import { hasToDissolve, percentText, solubilityOf, surelyDissolves } from "./dissolving.js";
 
 /** One step of putting a resin together. */
 export interface Addition extends Component {
@@ -15,27 +16,74 @@ export interface Addition extends Component {
  * The ingredients of a formulation in the order to add them, each with its reason.
  *
  * The thinnest liquid first; inhibitor, absorber and initiator into it; the other diluents, thinnest first; oligomers, warmed;
- * pigment and filler last. What has no share is left out. Whether a solid dissolves is not known here: see that the liquid
- * is clear before going on.
+ * pigment and filler last. A solid whose share of what is in the vessel would be above its solubility on the shelf, less one
+ * standard uncertainty, waits for the other diluents; where these are not enough, its reason says when it may clear. What has no
+ * share is left out. Where the shelf has no solubility, see that the liquid is clear before going on.
  * @example
  * ```ts
  * import { orderOfAddition } from "resinwright";
  * import { openBrief } from "resinwright/files";
  * const { formulation } = openBrief("data/briefs/flow-cell.json");
- * orderOfAddition(formulation).map(({ ingredient }) => ingredient.id); // → ["IBOA", "MEHQ", "BBOT", "BAPO", "TEGDMA", "UDMA"]
+ * orderOfAddition(formulation).map(({ ingredient }) => ingredient.id); // → ["IBOA", "MEHQ", "TEGDMA", "BBOT", "BAPO", "UDMA"]
  * ```
  */
 export function orderOfAddition({ components }: Formulation): Addition[] {
-  const present = components.filter(({ massFraction }) => massFraction > 0);
+  return inOrder(components);
+}
+
+/** What goes in at a step: an ingredient by itself, or a master batch of it, which is a solution already. */
+export interface Entry extends Component {
+  readonly dissolved?: boolean;
+}
+
+/** The entries in the order to add them. */
+export function inOrder<T extends Entry>(entries: readonly T[]): (T & Addition)[] {
+  const ordered = sorted(entries.filter(({ massFraction }) => massFraction > 0));
+  let amberLight = false;
+  return ordered.map((one, i) => {
+    amberLight ||= one.ingredient.role === "photoinitiator";
+    const reason = i === 0 && isLiquid(one) ? baseReason : reasons[one.ingredient.role];
+    return { ...one, reason: reason + clearText(ordered, i), amberLight };
+  });
+}
+
+function sorted<T extends Entry>(present: readonly T[]): T[] {
   const [base] = present.filter(isLiquid).sort(thinnestFirst);
-  const rest = present
+  const waiting = present
     .filter((one) => one !== base)
     .sort((a, b) => stepOf(a) - stepOf(b) || thinnestFirst(a, b));
-  let amberLight = false;
-  return [...(base === undefined ? [] : [base]), ...rest].map((one) => {
-    amberLight ||= one.ingredient.role === "photoinitiator";
-    return { ...one, reason: one === base ? baseReason : reasonOf(one), amberLight };
-  });
+  const ordered = base === undefined ? [] : [base];
+  while (waiting.length > 0) {
+    const enough = clearsAt([...ordered, waiting[0]!], ordered.length);
+    const diluent = waiting.findIndex(({ ingredient }) => ingredient.role === "diluent");
+    ordered.push(...waiting.splice(enough ? 0 : Math.max(0, diluent), 1));
+  }
+  return ordered;
+}
+
+/** The share of an ingredient, all its lots together, in what is in the vessel after the last of `entries`. */
+function shareOf({ ingredient }: Entry, entries: readonly Entry[]): number {
+  const sum = (some: readonly Entry[]) => some.reduce((total, { massFraction }) => total + massFraction, 0);
+  return sum(entries.filter((one) => one.ingredient.id === ingredient.id)) / sum(entries);
+}
+
+/** Whether step `i` is sure to be clear in what is in the vessel after the last of `entries`. */
+function clearsAt(entries: readonly Entry[], i: number): boolean {
+  const { dissolved, ingredient } = entries[i]!;
+  return dissolved === true || surelyDissolves(ingredient, shareOf(entries[i]!, entries));
+}
+
+function clearText(ordered: readonly Entry[], i: number): string {
+  const one = ordered[i]!;
+  if (!hasToDissolve(one.ingredient)) return "";
+  const clear = "stir until clear, no grain against the light";
+  const after = (k: number) => ordered.slice(0, k + 1);
+  if (clearsAt(after(i), i)) return `; ${clear}`;
+  const here = `; it is ${percentText(shareOf(one, after(i)))} of what is in the vessel, and the shelf says that ${solubilityOf(one.ingredient)!.text} dissolves`;
+  const k = ordered.findIndex((_, j) => j > i && clearsAt(after(j), i));
+  if (k === -1) return `${here}: it may never clear`;
+  const then = `${ordered[k]!.ingredient.id} is in (${percentText(shareOf(one, after(k)))})`;
+  return `${here}: what does not clear here must clear once ${then}; then ${clear}`;
 }
 
 const baseReason = "the thinnest liquid first: solids dissolve fastest in it";
@@ -69,8 +117,3 @@ const reasons: Readonly<Record<Role, string>> = {
   pigment: "last, little by little under shear; it settles, so stir again before every pour",
   filler: "last, little by little under shear; it settles, so stir again before every pour",
 };
-
-function reasonOf({ ingredient }: Component): string {
-  const dissolves = ingredient.state === "solid" && !["pigment", "filler"].includes(ingredient.role);
-  return `${reasons[ingredient.role]}${dissolves ? "; stir until clear, no grain against the light" : ""}`;
-}

@@ -2,24 +2,17 @@
 
 import { checkNumber, InputError, positive } from "../../door.js";
 import type { Formulation } from "../../recipe/formulation.js";
-import type { Ingredient } from "../../recipe/ingredient.js";
 import type { Warning } from "../../result.js";
-import { isHonest, minimumWeight, readable, weighingUncertainty, type Balance } from "./balance.js";
-import { planMasterBatch, type MasterBatch } from "./masterBatch.js";
-import { orderOfAddition, type Addition } from "./order.js";
+import { minimumWeight, readable, weighingUncertainty, type Balance } from "./balance.js";
+import { percentText, solubilityOf, surelyDissolves } from "./dissolving.js";
+import { planDoses, rounded, type Content } from "./doses.js";
+import type { MasterBatch } from "./masterBatch.js";
+import { inOrder, orderOfAddition, type Addition } from "./order.js";
 
 /** What a kilogram of each ingredient costs, by its id. */
 export interface Prices {
   readonly currency: string;
   readonly prices_perkg: Readonly<Record<string, number>>;
-}
-
-/** An ingredient's share of a portion; a master batch has its doubt from how it was weighed. */
-export interface Content {
-  readonly ingredient: Ingredient;
-  readonly massFraction: number;
-  /** Standard uncertainty of the share. */
-  readonly u: number;
 }
 
 /** One line of the sheet. */
@@ -36,6 +29,11 @@ export interface Portion {
   readonly target_g: number;
   readonly low_g: number;
   readonly high_g: number;
+  /**
+   * How far both limits are drawn in, twice the standard uncertainty of the mass, where it is below the minimum weight and goes in
+   * by itself all the same; 0 elsewhere.
+   */
+  readonly drawnIn_g: number;
   /** In the vessel after this line, by the targets. */
   readonly runningTotal_g: number;
   /** How many times the balance is loaded. */
@@ -77,8 +75,10 @@ export interface WeighOutSheet {
  *
  * Each mass may be off by a / (2 + a) of itself, a being `accuracy`: however the errors fall together, no mass fraction is then
  * off by more than a of itself, as (1 + t) / (1 - t) = 1 + a. An ingredient below the minimum weight of the balance goes in as a
- * master batch in the diluent there is most of; where no diluent suffices, a warning says how large a batch or how fine a
- * balance it takes. A portion beyond the balance's capacity is weighed in several loads.
+ * master batch in the diluent there is most of, no stronger than its solubility on the shelf less one standard uncertainty. Where
+ * no diluent suffices for that, it goes in by itself if its limits leave room for twice the standard uncertainty of the mass and
+ * are drawn in by it; otherwise a warning says how large a batch or how fine a balance it takes. A portion beyond the balance's
+ * capacity is weighed in several loads. A solid near its solubility in the whole is warned of.
  * @param input - `formulation`; `batch_g`, above 0; `balance`; `accuracy`, above 0 to 0.5, 0.01 unless given; `weighingAccuracy` as
  * for {@link minimumWeight}; `prices`.
  * @throws InputError when a number is out of range or the formulation is empty.
@@ -93,6 +93,7 @@ export interface WeighOutSheet {
  * sheet.minimumWeight_g; // → 1.6
  * sheet.portions.map(({ label, target_g }) => `${target_g} g ${label}`)[1]; // → "2.5 g master batch of MEHQ in IBOA"
  * sheet.portions[5].target_g; // → 275
+ * sheet.portions[3].drawnIn_g; // → 0.00179629
  * ```
  */
 export function weighOut({
@@ -119,22 +120,25 @@ export function weighOut({
     throw new InputError(`${where}: nothing is in it; give at least one ingredient a share`);
   checkPrices(where, prices);
   const tolerance = accuracy / (2 + accuracy);
-  const { doses, masterBatches, warnings } = planDoses({ steps, batch_g, minimumWeight_g, balance });
+  const plan = planDoses({ steps, batch_g, minimumWeight_g, tolerance, balance });
   let runningTotal_g = 0;
-  const portions = doses.map((dose, index): Portion => {
-    const target_g = readable(dose.exact_g, balance);
+  const portions = inOrder(plan.doses).map((dose, index): Portion => {
+    const { label, contents, reason, remark, amberLight, exact_g, drawnIn_g, lot } = dose;
+    const target_g = readable(exact_g, balance);
+    const room_g = tolerance * exact_g - drawnIn_g;
     runningTotal_g = readable(runningTotal_g + target_g, balance);
     const loads = Math.ceil(target_g / balance.capacity_g) || 1;
     return {
-      ...dose,
-      line: index + 1,
+      ...{ line: index + 1, label, contents, reason: reason + remark, amberLight, exact_g },
       target_g,
-      low_g: Math.min(target_g, readable(dose.exact_g * (1 - tolerance), balance, "up")),
-      high_g: Math.max(target_g, readable(dose.exact_g * (1 + tolerance), balance, "down")),
+      low_g: Math.min(target_g, readable(exact_g - room_g, balance, "up")),
+      high_g: Math.max(target_g, readable(exact_g + room_g, balance, "down")),
+      drawnIn_g,
       runningTotal_g,
       loads,
       u_g: weighingUncertainty({ balance, loads }),
-      cost: costOf(target_g, dose.contents, prices),
+      cost: costOf(target_g, contents, prices),
+      lot,
       actual_g: null,
     };
   });
@@ -146,83 +150,28 @@ export function weighOut({
     tolerance,
     minimumWeight_g,
     portions,
-    masterBatches,
+    masterBatches: plan.masterBatches,
     cost: totalCost(portions, prices),
-    warnings: [...warnings, ...portions.flatMap((one) => tooCoarse(one, tolerance))],
-  };
-}
-
-type Dose = Pick<Portion, "label" | "contents" | "reason" | "amberLight" | "exact_g" | "lot">;
-
-/** What goes in by itself and what as a master batch, whose diluent is taken off the diluent's own portion. */
-function planDoses(input: {
-  steps: readonly Addition[];
-  batch_g: number;
-  minimumWeight_g: number;
-  balance: Balance;
-}): { doses: Dose[]; masterBatches: MasterBatch[]; warnings: Warning[] } {
-  const { steps, batch_g, minimumWeight_g: minimum_g, balance } = input;
-  const left_g = new Map(steps.map((step) => [step, step.massFraction * batch_g]));
-  const masters = new Map<Addition, MasterBatch>();
-  const warnings: Warning[] = [];
-  for (const step of steps) {
-    const mass_g = left_g.get(step)!;
-    if (isHonest(mass_g, minimum_g)) continue;
-    const carriers = steps
-      .filter((one) => one !== step && one.ingredient.role === "diluent")
-      .sort((a, b) => left_g.get(b)! - left_g.get(a)!);
-    for (const carrier of carriers) {
-      const rest = { carrier: carrier.ingredient, available_g: left_g.get(carrier)!, minimum_g, balance };
-      const master = planMasterBatch({ solute: step.ingredient, mass_g, ...rest });
-      if (master === undefined) continue;
-      masters.set(step, master);
-      left_g.set(carrier, left_g.get(carrier)! - (master.dose_g - mass_g));
-      break;
-    }
-    if (!masters.has(step)) warnings.push(tooLittle(step, mass_g, input));
-  }
-  const doses = steps.map((step): Dose => {
-    const { ingredient, reason, amberLight } = step;
-    const master = masters.get(step);
-    const lot = master === undefined ? (ingredient.lot?.id ?? "") : "";
-    return { ...doseOf(ingredient, left_g.get(step)!, master), reason, amberLight, lot };
-  });
-  return { doses, masterBatches: [...masters.values()], warnings };
-}
-
-function doseOf(
-  ingredient: Ingredient,
-  mass_g: number,
-  master: MasterBatch | undefined,
-): Pick<Dose, "label" | "contents" | "exact_g"> {
-  if (master === undefined)
-    return { label: labelOf(ingredient), contents: [{ ingredient, massFraction: 1, u: 0 }], exact_g: mass_g };
-  const { massFraction, carrier, dose_g, label } = master;
-  const u = massFraction * master.relativeU;
-  return {
-    label: `master batch of ${label}`,
-    contents: [
-      { ingredient, massFraction, u },
-      { ingredient: carrier, massFraction: 1 - massFraction, u },
+    warnings: [
+      ...plan.warnings,
+      ...nearSolubility(steps),
+      ...portions.flatMap((one) => tooCoarse(one, tolerance)),
     ],
-    exact_g: dose_g,
   };
 }
 
-function labelOf({ id, lot }: Ingredient): string {
-  return lot === undefined ? id : `${id} (lot ${lot.id})`;
-}
-
-function tooLittle(
-  { ingredient, massFraction }: Addition,
-  mass_g: number,
-  { minimumWeight_g, balance }: { minimumWeight_g: number; balance: Balance },
-): Warning {
-  const batch_g = readable(minimumWeight_g / massFraction, balance, "up");
-  return {
-    code: "below-minimum-weight",
-    message: `${labelOf(ingredient)}: ${rounded(mass_g)} g is below the ${rounded(minimumWeight_g)} g that this balance weighs honestly, and no diluent is left for a master batch; make at least ${rounded(batch_g)} g or use a balance whose minimum weight is ${rounded(mass_g)} g`,
-  };
+/** What may not stay dissolved in the whole, lots of one ingredient together. */
+function nearSolubility(steps: readonly Addition[]): Warning[] {
+  return [...new Set(steps.map(({ ingredient }) => ingredient.id))].flatMap((id): Warning[] => {
+    const same = steps.filter(({ ingredient }) => ingredient.id === id);
+    const share = same.reduce((sum, { massFraction }) => sum + massFraction, 0);
+    const { ingredient } = same[0]!;
+    if (surelyDissolves(ingredient, share)) return [];
+    const { stated, text } = solubilityOf(ingredient)!;
+    const judged = share > stated ? "does not dissolve by that figure" : "may not dissolve";
+    const message = `${id}: ${percentText(share)} of the whole, and the shelf says that ${text} dissolves: it ${judged}, or falls out in the cold; try a little, keep it cold for a week and look for crystals, or take less`;
+    return [{ code: "near-solubility", message }];
+  });
 }
 
 function tooCoarse({ label, exact_g, low_g, high_g, target_g }: Portion, tolerance: number): Warning[] {
@@ -254,8 +203,4 @@ function totalCost(portions: readonly Portion[], prices: Prices | undefined): We
     currency: prices.currency,
     unpriced: [...new Set(ids)].filter((id) => prices.prices_perkg[id] === undefined),
   };
-}
-
-function rounded(value: number): string {
-  return String(Number(value.toPrecision(4)));
 }

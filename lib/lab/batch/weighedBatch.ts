@@ -65,7 +65,7 @@ export function readWeighedBatch(document: JsonDocument): WeighedBatch {
  * import { weighingsOn } from "resinwright";
  * import { openBatch, openBrief } from "resinwright/files";
  * const batch = openBatch({ ...openBrief("data/briefs/flow-cell.json"), draws: 200 })!;
- * weighingsOn(batch)[0]; // → { line: 1, mass_g: 141.032, lot: "IBOA-0311" }
+ * weighingsOn(batch)[0]; // → { line: 1, mass_g: 147.771, lot: "IBOA-0311" }
  * ```
  */
 export function weighingsOn({ sheet, weighed }: { sheet: WeighOutSheet; weighed: WeighedBatch }): Weighing[] {
@@ -81,7 +81,7 @@ export function weighingsOn({ sheet, weighed }: { sheet: WeighOutSheet; weighed:
     if (line !== undefined) return { line, mass_g, ...(lot === undefined ? {} : { lot }) };
     const labels = portions.map(({ label }) => label);
     throw new InputError(
-      `${unknownName(where, "portion", portion, labels)} (a changed formulation or balance makes another sheet)`,
+      `${unknownName(where, "portion", portion, labels)} (a changed formulation, balance or solubility makes another sheet)`,
     );
   });
 }

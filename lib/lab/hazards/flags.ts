@@ -29,7 +29,8 @@ export interface HazardFlag extends Dated {
  * The limits that a mixture reaches, in the order of the rules.
  *
  * `single`: the largest of weight × content of one substance; `sum`: that of all together. A substance that carries several codes
- * of a rule counts by the one that weighs most; ingredients with one CAS number are one substance. Contents of any size count, also
+ * of a rule counts by the one that weighs most; ingredients with one CAS number are one substance. Statements that are only for
+ * mixtures not classified (EUH208, EUH210) are left out where the mixture is. Contents of any size count, also
  * those below the 1 % from which regulations look at irritants. Ingredients whose hazards nobody has checked count nothing here.
  * @param input - `formulation` and `limits`.
  * @example
@@ -52,8 +53,12 @@ export function flagMixture({
     .map((rule) => ({ rule, ...contentOf(rule, formulation) }))
     .filter(({ rule, content_pct }) => content_pct >= rule.limit_pct);
   const ids = reached.map(({ rule }) => rule.id);
+  const classified = reached.some(
+    ({ rule }) => rule.statement.startsWith("H") && rule.condition === undefined,
+  );
   return reached
     .filter(({ rule }) => !rule.unless?.some((id) => ids.includes(id)))
+    .filter(({ rule }) => !(classified && rule.whenUnclassified))
     .map(({ rule, content_pct, contributors }): HazardFlag => {
       const { id, statement, title, limit_pct, condition, note, source, date, status } = rule;
       const outcome = condition === undefined ? "reached" : "depends";

@@ -29,6 +29,8 @@ export interface MixtureRule extends Dated {
   readonly limit_pct: number;
   /** Rules that make this one idle when their limit is reached. */
   readonly unless?: readonly string[];
+  /** Idle as soon as the mixture reaches a limit of a hazard statement (`H...`) that hangs on no condition. */
+  readonly whenUnclassified?: true;
   /** What besides the content has to be so, and is not known here. */
   readonly condition?: string;
   readonly note?: string;
@@ -170,6 +172,7 @@ const mixtureSchema: z.ZodType<{ rules: MixtureRule[] }> = strict({
       }),
       limit_pct: z.number().positive().max(100),
       unless: z.array(idSchema).optional(),
+      whenUnclassified: z.literal(true).optional(),
       condition: z.string().min(3).optional(),
       note: z.string().min(3).optional(),
       ...dated,

@@ -2,10 +2,24 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { orderOfAddition, weighOut } from "../../../lib/lab/batch.js";
 import { withLot } from "../../../lib/recipe/lot.js";
-import { formulationOf, shelf } from "../../fixtures.js";
+import type { Formulation } from "../../../lib/recipe/formulation.js";
+import { formulationOf, shelf, sure } from "../../fixtures.js";
 
 const balance = { readability_g: 0.01, repeatability_g: 0, capacity_g: 2000 };
 const plain = formulationOf({ THICK: 55, THIN: 30, MID: 12, PI: 2, AB: 1 });
+/** The same parts with another solubility of the absorber and the initiator, in percent. */
+const soluble = (
+  parts: Record<string, number>,
+  solubilities: Record<string, { value: number; u: number }>,
+): Formulation => {
+  const formulation = formulationOf(parts);
+  const components = formulation.components.map((one) => {
+    const known = solubilities[one.ingredient.id];
+    if (known === undefined) return one;
+    return { ...one, ingredient: { ...one.ingredient, solubility_pct: sure(known.value, known.u) } };
+  });
+  return { ...formulation, components };
+};
 const sheetOf = (change: Partial<Parameters<typeof weighOut>[0]> = {}) =>
   weighOut({ formulation: plain, batch_g: 1000, balance, ...change });
 
@@ -56,6 +70,109 @@ describe("orderOfAddition", () => {
     expect(
       orderOfAddition(formulationOf({ THICK: 98, PI: 2, AB: 0 })).map(({ ingredient }) => ingredient.id),
     ).toEqual(["THICK", "PI"]);
+  });
+});
+
+describe("a solid whose solubility is on the shelf", () => {
+  const parts = { THICK: 55, THIN: 30, MID: 12, PI: 2, AB: 1 };
+  const stepsOf = (solubility: { value: number; u: number }) =>
+    orderOfAddition(soluble(parts, { AB: solubility })).map(({ ingredient }) => ingredient.id);
+  const reasonOf = (solubility: { value: number; u: number }) =>
+    orderOfAddition(soluble(parts, { AB: solubility })).find(({ ingredient }) => ingredient.id === "AB")!
+      .reason;
+
+  it("waits for liquid until its share is below that less one standard uncertainty, and no longer", () => {
+    // 1 in 31 is 3.2 %, with MID 1 in 43, 2.3 %; in the whole 1 %.
+    expect(stepsOf({ value: 4, u: 0.7 })).toEqual(["THIN", "AB", "PI", "MID", "THICK"]);
+    expect(stepsOf({ value: 4, u: 0.8 })).toEqual(["THIN", "MID", "AB", "PI", "THICK"]);
+    expect(reasonOf({ value: 4, u: 0.8 })).toBe(
+      "into the thin liquid, and before the initiator; stir until clear, no grain against the light",
+    );
+  });
+
+  it("says when it may clear only with the thick liquids, or never", () => {
+    expect(stepsOf({ value: 2, u: 0 })).toEqual(["THIN", "MID", "AB", "PI", "THICK"]);
+    expect(reasonOf({ value: 2, u: 0 })).toBe(
+      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel, and the shelf says that 2 % dissolves: what does not clear here must clear once THICK is in (1 %); then stir until clear, no grain against the light",
+    );
+    expect(reasonOf({ value: 1.2, u: 0.4 })).toBe(
+      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel, and the shelf says that 1.2 ± 0.4 % dissolves: it may never clear",
+    );
+  });
+
+  it("counts all its lots, and is not asked of what is dispersed", () => {
+    const { components, ...rest } = soluble(
+      { THICK: 40, THIN: 50, SAND: 9, AB: 1 },
+      { SAND: { value: 1, u: 0 } },
+    );
+    expect(orderOfAddition({ components, ...rest }).at(-1)!.reason).not.toContain("dissolves");
+    const known = soluble({ THIN: 97, MID: 1, AB: 2 }, { AB: { value: 1.5, u: 0 } });
+    const [thin, mid, absorber] = known.components;
+    const halves = [1, 2].map(() => ({ ...absorber!, massFraction: 0.01 }));
+    const { warnings } = weighOut({
+      formulation: { ...known, components: [thin!, mid!, ...halves] },
+      batch_g: 10000,
+      balance,
+    });
+    expect(warnings).toEqual([
+      {
+        code: "near-solubility",
+        message:
+          "AB: 2 % of the whole, and the shelf says that 1.5 % dissolves: it does not dissolve by that figure, or falls out in the cold; try a little, keep it cold for a week and look for crystals, or take less",
+      },
+    ]);
+  });
+
+  it("is warned of where only the doubt of the figure is against it", () => {
+    const { warnings } = sheetOf({ formulation: soluble(parts, { AB: { value: 1.2, u: 0.4 } }) });
+    expect(warnings.map(({ message }) => message)).toEqual([
+      "AB: 1 % of the whole, and the shelf says that 1.2 ± 0.4 % dissolves: it may not dissolve, or falls out in the cold; try a little, keep it cold for a week and look for crystals, or take less",
+    ]);
+    expect(sheetOf({ formulation: soluble(parts, { AB: { value: 1.2, u: 0.2 } }) }).warnings).toEqual([]);
+  });
+
+  it("makes its master batch no stronger than that", () => {
+    const thin = { THICK: 49.9, THIN: 50, AB: 0.1 };
+    const of = (value: number, u: number, batch_g: number) =>
+      sheetOf({ formulation: soluble(thin, { AB: { value, u } }), batch_g }).masterBatches[0];
+    // 1 g at most 4 % is a dose of 25 g; 8.2 g, the least that is weighed, go into 205 g.
+    expect(of(5, 1, 1000)!.stages).toEqual([{ of: "AB", mass_g: 8.2, carrier_g: 196.8 }]);
+    expect(of(5, 1, 1000)!.dose_g).toBeCloseTo(25, 9);
+    // One in ten dissolves: the solubility changes nothing.
+    expect(of(20, 5, 1000)!.massFraction).toBeCloseTo(0.1, 9);
+    // 0.01 g in the least dose, 8.2 g, takes two stages: the first is as strong as dissolves.
+    const staged = sheetOf({
+      formulation: soluble({ THICK: 49.999, THIN: 50, AB: 0.001 }, { AB: { value: 1, u: 0 } }),
+    }).masterBatches[0]!;
+    expect(staged.stages).toHaveLength(2);
+    expect(staged.stages[0]!.mass_g / (staged.stages[0]!.mass_g + staged.stages[0]!.carrier_g)).toBeCloseTo(
+      0.01,
+      9,
+    );
+  });
+
+  it("goes in by itself, within narrower limits, where the diluents do not reach for that", () => {
+    const fine = { readability_g: 0.001, repeatability_g: 0.0008, capacity_g: 600 };
+    const formulation = soluble({ THICK: 69.85, THIN: 30, AB: 0.15 }, { AB: { value: 0.8, u: 0.5 } });
+    const { portions, masterBatches, warnings } = sheetOf({ formulation, batch_g: 500, balance: fine });
+    expect([masterBatches, warnings]).toEqual([[], []]);
+    const portion = portions.find(({ label }) => label === "AB")!;
+    // 2 sqrt(0.8² + 2/12) mg = 1.796 mg off 0.4975 % of 0.75 g, 3.731 mg, leaves 1.935 mg.
+    expect(portion.drawnIn_g).toBeCloseTo(1.79629e-3, 8);
+    expect(portion).toMatchObject({ target_g: 0.75, low_g: 0.749, high_g: 0.751 });
+    const tenth = sheetOf({ formulation, batch_g: 50, balance: fine });
+    expect(tenth.warnings).toEqual([
+      {
+        code: "below-minimum-weight",
+        message:
+          "AB: 0.075 g is below the 1.6 g that this balance weighs honestly, and a master batch in which it is sure to dissolve would be 25 g, more than the diluents allow; make at least 307.7 g or use a balance whose minimum weight is 0.075 g",
+      },
+    ]);
+    expect(tenth.portions.find(({ label }) => label === "AB")!.drawnIn_g).toBe(0);
+    const never = soluble({ THICK: 69.85, THIN: 30, AB: 0.15 }, { AB: { value: 0.5, u: 0.5 } });
+    expect(sheetOf({ formulation: never, batch_g: 50, balance: fine }).warnings[0]!.message).toContain(
+      "and no master batch of it is sure to dissolve; make",
+    );
   });
 });
 
@@ -240,7 +357,13 @@ describe("a portion too little to weigh", () => {
           }
           const flagged = sheet.warnings.filter(({ code }) => code === "below-minimum-weight");
           const small = sheet.portions.filter(({ exact_g }) => exact_g < least);
-          expect(flagged).toHaveLength(small.length);
+          const drawnIn = small.filter(({ drawnIn_g }) => drawnIn_g > 0);
+          expect(flagged).toHaveLength(small.length - drawnIn.length);
+          // Whatever shows within drawn-in limits, the mass itself is within the tolerance by twice its doubt.
+          for (const { exact_g, low_g, high_g, u_g } of drawnIn) {
+            expect(low_g - 2 * u_g).toBeGreaterThanOrEqual(exact_g * (1 - sheet.tolerance) * (1 - 1e-9));
+            expect(high_g + 2 * u_g).toBeLessThanOrEqual(exact_g * (1 + sheet.tolerance) * (1 + 1e-9));
+          }
           for (const { ingredient, massFraction } of plain.components) {
             const mass_g = sheet.portions
               .flatMap(({ contents, exact_g }) => contents.map((one) => ({ ...one, exact_g })))
@@ -259,7 +382,7 @@ describe("a portion too little to weigh", () => {
     expect(warnings).toContainEqual({
       code: "below-minimum-weight",
       message:
-        "AB: 0.2 g is below the 8.2 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 820 g or use a balance whose minimum weight is 0.2 g",
+        "AB: 0.2 g is below the 8.2 g that this balance weighs honestly, and no diluent is left for a master batch; make at least 264.6 g or use a balance whose minimum weight is 0.2 g",
     });
   });
 });

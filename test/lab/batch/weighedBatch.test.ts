@@ -84,7 +84,7 @@ describe("weighingsOn", () => {
   it.each([
     [
       { weighings: [{ portion: "THIM", mass_g: 1 }] },
-      'batch "T-1": unknown portion "THIM"; did you mean "THIN"? (a changed formulation or balance makes another sheet)',
+      'batch "T-1": unknown portion "THIM"; did you mean "THIN"? (a changed formulation, balance or solubility makes another sheet)',
     ],
     [
       { batch_g: 900 },

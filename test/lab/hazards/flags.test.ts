@@ -33,10 +33,13 @@ function mixture(parts: Record<string, number>, change: Partial<Ingredient>[] = 
 const flagged = (parts: Record<string, number>, rules: readonly MixtureRule[] = limits) =>
   flagMixture({ formulation: mixture(parts), limits: rules }).map(({ rule }) => rule);
 const alone = (id: string) =>
-  limits.filter((rule) => rule.id === id).map((rule) => ({ ...rule, unless: [] }));
+  limits
+    .filter((rule) => rule.id === id)
+    .map((rule) => ({ ...rule, unless: [], whenUnclassified: undefined }));
 
 // Limits of Regulation (EC) 1272/2008, Annex I, from memory: tables 3.1.2, 3.2.3, 3.3.3, 3.4.5, 3.4.6, 3.5.2, 3.6.2, 3.7.2, 3.8.3,
 // 3.9.4, 4.1.1, 4.1.2, sections 3.8.3.4.5 and 3.10.3.3; the last three rules are Annex II, 2.10, read in the text.
+// Which of them are idle where the mixture is classified: Annex II, 2.8 and 2.10, read in public copies.
 const cases: [rule: string, on: Record<string, number>, below: Record<string, number>][] = [
   ["skin-sensitiser", { H317: 1 }, { H317: 0.99 }],
   ["skin-sensitiser-1A", { H317: 0.1 }, { H317: 0.099 }],
@@ -112,12 +115,22 @@ describe("the shipped limits", () => {
 
 describe("flagMixture", () => {
   it("gives the mixture the graver statement only", () => {
-    expect(flagged({ H317: 2 })).toEqual(["skin-sensitiser", "elicitation", "sheet-sensitiser"]);
-    expect(flagged({ H318: 4 })).toEqual(["eye-damage", "sheet-other"]);
-    expect(flagged({ H410: 30 })).toEqual(["aquatic-chronic-1", "sheet-other"]);
-    expect(flagged({ H410: 3 })).toEqual(["aquatic-chronic-2", "sheet-other"]);
-    expect(flagged({ H314: 6 })).toEqual(["skin-corrosion", "eye-damage", "sheet-other"]);
-    expect(flagged({ H300: 2 })).toEqual(["acute-oral-2", "sheet-other"]);
+    expect(flagged({ H317: 2 })).toEqual(["skin-sensitiser"]);
+    expect(flagged({ H318: 4 })).toEqual(["eye-damage"]);
+    expect(flagged({ H410: 30 })).toEqual(["aquatic-chronic-1"]);
+    expect(flagged({ H410: 3 })).toEqual(["aquatic-chronic-2"]);
+    expect(flagged({ H314: 6 })).toEqual(["skin-corrosion", "eye-damage"]);
+    expect(flagged({ H300: 2 })).toEqual(["acute-oral-2"]);
+  });
+
+  it("leaves to a mixture that is not classified what is only for such a one", () => {
+    // May be sensitising: H317 if the ingredient is sub-category 1A, EUH208 if it is not.
+    const unsure = ["skin-sensitiser-1A", "elicitation", "sheet-sensitiser"];
+    expect(flagged({ H317: 0.5 })).toEqual(unsure);
+    expect(flagged({ H315: 5 })).toEqual(["sheet-other"]);
+    // Classified for something else: the sensitiser is still to be named, the data sheet comes anyway.
+    expect(flagged({ H317: 0.5, H319: 12 })).toEqual(["skin-sensitiser-1A", "elicitation", "eye-irritation"]);
+    expect(flagged({ H317: 0.05, H334: 2 })).toEqual(["respiratory-sensitiser"]);
   });
 
   it("says how much there is of what, against which limit, and what it hangs on", () => {

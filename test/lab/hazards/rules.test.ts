@@ -47,6 +47,11 @@ describe("readMixtureRules", () => {
       [{ ...rule, unless: ["s"] }],
       'x.json: rule "r" has unless "s", which is no rule of this file',
     ],
+    [
+      "a whenUnclassified that is no yes",
+      [{ ...rule, whenUnclassified: false }],
+      "rules[0].whenUnclassified is false; it must be",
+    ],
   ])("refuses %s", (_, rules, message) => {
     expect(() => readMixtureRules(document({ rules }))).toThrow(message);
   });
@@ -87,7 +92,7 @@ describe("the shipped rules", () => {
   const ingredients = [...shelf.ingredients.values()];
 
   it("are as many as were entered", () => {
-    expect([limits.length, regulatory.length, handling.length]).toEqual([41, 13, 16]);
+    expect([limits.length, regulatory.length, handling.length]).toEqual([41, 13, 17]);
   });
 
   it("judge every statement of the shipped ingredients but flammability, which is measured", () => {

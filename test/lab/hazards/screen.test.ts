@@ -61,7 +61,7 @@ describe("screenHazards", () => {
     expect(idsOf(clear.protection)).toEqual([
       ...["self-heating", "gloves", "eyes", "ventilate", "dust", "reproduction", "waste"],
     ]);
-    expect(idsOf(clear.law)).toEqual(["who-decides"]);
+    expect(idsOf(clear.law)).toEqual(["sensitisers-named", "who-decides"]);
     expect(idsOf(screened({ HDDA: 50, SiO2: 50 }).storage)).toContain("stir");
     expect(idsOf(screened({ BA: 100 }).storage)).toContain("flammable");
     expect(idsOf(screened({ HDDA: 99, BP: 1 }).protection)).toContain("cancer");
