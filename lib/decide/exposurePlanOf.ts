@@ -60,10 +60,11 @@ export interface ExposurePlanEstimate {
   };
   /** Cured into the void behind a roof of very many layers, and the part of it that the layers after the first add. */
   readonly roof: { readonly printThrough_um: Interval; readonly drift_um: Interval };
-  /** Height that a drawn channel must exceed to stay open: the print-through; and what was found in practice. */
+  /** Height that a drawn channel must exceed to stay open: the print-through; and what a study found, at this optical depth. */
   readonly channel: {
     readonly smallest_um: Interval;
-    readonly foundToClog: { readonly low_um: number; readonly high_um: number };
+    /** The two ends of the heights below which channels clogged, each with the doubt of the optical depth. */
+    readonly foundToClog: { readonly low_um: Interval; readonly high_um: Interval };
   };
   /** Exposure and conversion through the last layers at the stated figures, from the window on. */
   readonly stack: readonly StackPoint[];
@@ -136,9 +137,10 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
     roof: { printThrough_um, drift_um: interval(({ roof }) => roof.drift_um) },
     channel: {
       smallest_um: printThrough_um,
-      foundToClog: channelHeightRule({
-        opticalDepth_um: opticalDepth(lightModel(input)(({ value }) => value)),
-      }),
+      foundToClog: {
+        low_um: interval(({ clogs }) => clogs.low_um),
+        high_um: interval(({ clogs }) => clogs.high_um),
+      },
     },
     stack: stackProfile({
       ...statedRun.layer,
@@ -150,9 +152,16 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
       ...plan.warnings.filter(({ code }) => code !== MAY_NOT_HOLD),
       ...bondWarning(gelled),
     ],
-    sources: sourcesOf(inputs),
+    sources: [...sourcesOf(inputs), clogSource],
   };
 }
+
+const clogSource: UsedSource = {
+  figure: "height below which channels clog",
+  source:
+    "3.5 to 5.5 optical depths, found with a diacrylate, a bisacylphosphine oxide and a dye: H. Gong, M. Beauchamp, S. Perry, A. T. Woolley, G. P. Nordin, RSC Adv. 5 (2015) 106621, doi 10.1039/C5RA23855B (abstract)",
+  status: "published",
+};
 
 /** Deeper layers have what light reaches them. */
 const STACK_SHOWN = 6;
@@ -162,6 +171,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
   const { brief, layers, baseLayers, baseFactor, transitionLayers } = input;
   const { layerThickness_um, cureDepthPerLayer } = brief;
   const curve = curveModel(input);
+  const light = lightModel(input);
   const gel = constantOf(input.shelf.constants, "gelConversion");
   return (read: Read) => {
     const drawn = curve(read);
@@ -169,6 +179,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
     const penetrationDepth_um = drawn.penetrationDepthAt(layerCureDepth(input));
     const workingCurve = { penetrationDepth_um, criticalExposure_mJcm2 };
     const gelConversion = read(gel);
+    const clogs = channelHeightRule({ opticalDepth_um: opticalDepth(light(read)) });
     const plan = exposurePlan({
       ...workingCurve,
       layerThickness_um,
@@ -195,6 +206,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
         cureDepths_um: exposures.map((exposure) => Math.max(cureDepthOn(drawn, exposure), 0)),
         bond: interfaceConversion(layer),
         roof: printThrough({ ...layer, ...workingCurve }),
+        clogs,
       };
     };
     return { plan, runWith };

@@ -65,7 +65,8 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
 }
 
 /**
- * Initiators or absorbers as answers to one question, in the order given: level, share of the draws in which it works, and why.
+ * Initiators or absorbers as answers to one question, in the order given: level, share of the draws in which it works, hazard
+ * statements, those of long-term harm first, and why.
  * @example
  * ```ts
  * import { absorberCandidates } from "resinwright";
@@ -73,7 +74,7 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
  * import { candidateTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const candidates = absorberCandidates({ ...work, wanted: { penetrationDepth_um: 70 }, draws: 50 });
- * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "level", "works", "what to know"]
+ * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "level", "works", "hazards", "what to know"]
  * ```
  */
 export function candidateTable(
@@ -88,6 +89,7 @@ export function candidateTable(
         candidate: answer.ingredient,
         level_pct: found ? percent(answer.massFraction) : null,
         works: found ? `in ${sharePercent(answer.reachedShare)} % of draws` : answer.outcome,
+        hazards: hazardsText(answer),
         know: [answer.reason, ...answer.warnings.filter(ofCandidate).map(({ message }) => message)].join(" "),
       };
     }),
@@ -95,6 +97,7 @@ export function candidateTable(
       { key: "candidate" },
       { key: "level_pct", name: "level", unit: "mass %" },
       { key: "works", align: "left" },
+      { key: "hazards", align: "left" },
       { key: "know", name: "what to know", align: "left" },
     ],
   });
@@ -102,7 +105,12 @@ export function candidateTable(
 
 /** Warnings that are the candidate's own; those of the working curve stand with the decision. */
 const ofCandidate = ({ code }: { readonly code: string }): boolean =>
-  ["solubility-unknown", "hazards-unchecked"].includes(code);
+  ["long-term-harm", "solubility-unknown", "hazards-unchecked"].includes(code);
+
+function hazardsText({ hazards }: LevelAnswer): string {
+  if (hazards === undefined) return "not checked";
+  return hazards.length === 0 ? "none found" : hazards.join(", ");
+}
 
 /**
  * One formulation under every engine on the shelf.
