@@ -56,7 +56,7 @@ export function intervalText(interval: { value: number; low: number; high: numbe
 }
 
 /**
- * Writes a value to be set on a machine with the digits that its interval leaves it, two at least.
+ * Writes a value to be set on a machine with the two or three digits that its interval leaves it.
  * @example
  * ```ts
  * import { settingText } from "resinwright/notebook";
@@ -66,9 +66,9 @@ export function intervalText(interval: { value: number; low: number; high: numbe
  * ```
  */
 export function settingText({ value, low, high }: { value: number; low: number; high: number }): string {
-  if (low === high) return numberText(value);
+  if (low === high) return numberText(value, 3);
   const digits = exponentOf(value, 15) - exponentOf(high / 2 - low / 2, 2) + 2;
-  return numberText(value, Math.min(Math.max(digits, 2), 4));
+  return numberText(value, Math.min(Math.max(digits, 2), 3));
 }
 
 /** A cell as people read it. Whole numbers are counts or years, and stay whole. */

@@ -3,7 +3,7 @@
 import type { LightTaken } from "../assess/lightTaken.js";
 import type { EngineComparison } from "../decide/compareEngines.js";
 import type { InitiatorAnswer } from "../decide/initiatorFor.js";
-import type { LevelAnswer } from "../decide/level.js";
+import type { LevelAnswer, LevelFound } from "../decide/level.js";
 import type { Interval } from "../result.js";
 import type { FigureContent, TableContent } from "./content.js";
 import { lineFigure } from "./figure/line.js";
@@ -88,7 +88,7 @@ export function candidateTable(
       return {
         candidate: answer.ingredient,
         level_pct: found ? percent(answer.massFraction) : null,
-        works: found ? `in ${sharePercent(answer.reachedShare)} % of draws` : answer.outcome,
+        works: found ? worksText(answer) : answer.outcome,
         hazards: hazardsText(answer),
         know: [answer.reason, ...answer.warnings.filter(ofCandidate).map(({ message }) => message)].join(" "),
       };
@@ -103,9 +103,14 @@ export function candidateTable(
   });
 }
 
-/** Warnings that are the candidate's own; those of the working curve stand with the decision. */
+/** Warnings that are the candidate's own and not in a column; those of the working curve stand with the decision. */
 const ofCandidate = ({ code }: { readonly code: string }): boolean =>
-  ["long-term-harm", "solubility-unknown", "hazards-unchecked"].includes(code);
+  ["long-term-harm", "solubility-unknown"].includes(code);
+
+function worksText({ reachedShare, warnings }: LevelFound): string {
+  const unknown = warnings.some(({ code }) => code === "solubility-unknown");
+  return `in ${sharePercent(reachedShare)} % of draws${unknown ? ", if it dissolves" : ""}`;
+}
 
 function hazardsText({ hazards }: LevelAnswer): string {
   if (hazards === undefined) return "not checked";

@@ -202,8 +202,7 @@ export function readingTable(readings: BlendReadings): TableContent {
       mass_pct: 100 * readings.massFractions[i]!,
       viscosity_mPas,
       fitted_mPas: fitted_mPas[i],
-      // A neat liquid lies on the rule but for the last digits of a double.
-      deviation_pct: numberText(Number((100 * (viscosity_mPas / fitted_mPas[i]! - 1)).toFixed(6)), 2),
+      deviation_pct: numberText(Number((100 * (viscosity_mPas / fitted_mPas[i]! - 1)).toFixed(1)), 3),
       note: outliers.includes(i) ? "stands out: measure it again" : null,
     })),
     columns: [

@@ -56,8 +56,8 @@ describe("settingText", () => {
     ["two digits of a value far below its high end", 0.4512, 0.05, 150, "0.45"],
     ["as many as the doubt leaves", 3.4621, 3.22, 3.71, "3.46"],
     ["tens where the doubt is hundreds", 222.4, 60, 1060, "220"],
-    ["four at most", 3.46213, 3.46212, 3.46214, "3.462"],
-    ["four without doubt", 3.46213, 3.46213, 3.46213, "3.462"],
+    ["three at most", 21.44, 20.58, 22.35, "21.4"],
+    ["three without doubt", 3.46213, 3.46213, 3.46213, "3.46"],
   ])("%s", (_, value, low, high, text) => {
     expect(settingText({ value, low, high })).toBe(text);
   });

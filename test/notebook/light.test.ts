@@ -54,6 +54,7 @@ describe("candidateTable", () => {
     reachedShare: 0.996,
     warnings: [
       { code: "long-term-harm", message: "Take another." },
+      { code: "hazards-unchecked", message: "Nobody has looked." },
       { code: "solubility-unknown", message: "Stir it in." },
       { code: "working-curve-estimated", message: "Estimated." },
     ],
@@ -65,9 +66,9 @@ describe("candidateTable", () => {
     reason: "The brief avoids XX.",
   };
 
-  it("tells none found from not looked", () => {
-    const [row] = candidateTable("Absorbers", [{ ...reached, hazards: [] }]).rows;
-    expect(row![3]).toBe("none found");
+  it("tells none found from not looked, and makes no condition where it is known what dissolves", () => {
+    const [row] = candidateTable("Absorbers", [{ ...reached, hazards: [], warnings: [] }]).rows;
+    expect(row!.slice(2, 4)).toEqual(["in 99 % of draws", "none found"]);
   });
 
   it("gives level, share of draws and reason, with the candidate's own warnings only", () => {
@@ -76,7 +77,7 @@ describe("candidateTable", () => {
       [
         "AB",
         "0.20 (0.10 to 0.40)",
-        "in 99 % of draws",
+        "in 99 % of draws, if it dissolves",
         "H351, H317",
         "0.2 % AB does it. Take another. Stir it in.",
       ],
