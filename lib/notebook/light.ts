@@ -65,8 +65,8 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
 }
 
 /**
- * Initiators or absorbers as answers to one question, in the order given: level, share of the draws in which it works, hazard
- * statements, those of long-term harm first, and why.
+ * Initiators or absorbers as answers to one question, in the order given: hazard statements, long-term harm first, level, share
+ * of the draws in which it works, and why.
  * @example
  * ```ts
  * import { absorberCandidates } from "resinwright";
@@ -74,7 +74,7 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
  * import { candidateTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const candidates = absorberCandidates({ ...work, wanted: { penetrationDepth_um: 70 }, draws: 50 });
- * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "level", "works", "hazards", "what to know"]
+ * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "hazards", "level", "works", "what to know"]
  * ```
  */
 export function candidateTable(
@@ -87,17 +87,17 @@ export function candidateTable(
       const found = "massFraction" in answer;
       return {
         candidate: answer.ingredient,
+        hazards: hazardsText(answer),
         level_pct: found ? percent(answer.massFraction) : null,
         works: found ? worksText(answer) : answer.outcome,
-        hazards: hazardsText(answer),
         know: [answer.reason, ...answer.warnings.filter(ofCandidate).map(({ message }) => message)].join(" "),
       };
     }),
     columns: [
       { key: "candidate" },
+      { key: "hazards", align: "left" },
       { key: "level_pct", name: "level", unit: "mass %" },
       { key: "works", align: "left" },
-      { key: "hazards", align: "left" },
       { key: "know", name: "what to know", align: "left" },
     ],
   });
