@@ -17,7 +17,7 @@ export interface SpotQuestion extends Omit<CureDepthQuestion, keyof WorkingCurve
   readonly longestTime_s: number;
 }
 
-/** A spot to cure. */
+/** A spot to cure on the slide, with the film that is expected of it. */
 export interface PlannedSpot {
   readonly exposure_mJcm2: number;
   readonly time_s: number;
