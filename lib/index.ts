@@ -128,7 +128,7 @@ export {
   type InitiatorAnswer,
   type InitiatorSearch,
 } from "./decide/initiatorFor.js";
-export type { LevelAnswer, LevelFound, LevelRefused } from "./decide/level.js";
+export type { Candidate, LevelAnswer, LevelFound, LevelRefused } from "./decide/level.js";
 export { compareEngines, type EngineComparison } from "./decide/compareEngines.js";
 export {
   exposurePlanOf,
@@ -136,6 +136,7 @@ export {
   type PlannedExposure,
   type PlannedLayers,
 } from "./decide/exposurePlanOf.js";
+export { spotPlanOf, type PlannedSpot, type SpotPlan, type SpotQuestion } from "./decide/spotPlanOf.js";
 export { fitCureDepths, workingCurveFrom } from "./decide/workingCurveFrom.js";
 
 export * from "./lab/batch.js";

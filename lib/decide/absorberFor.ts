@@ -21,6 +21,7 @@ import { findRoot } from "../numerics/root.js";
 import {
   answersFor,
   candidateWarnings,
+  identityOf,
   MOST_TRIED,
   percentText,
   refusal,
@@ -77,7 +78,7 @@ export function absorberFor(
   };
   const { stated, outcomes, inputs } = propagate(model, draws);
   const common = {
-    ingredient: id,
+    ...identityOf(ingredient),
     warnings: candidateWarnings(input, ingredient),
     sources: sourcesOf(inputs),
   };
@@ -105,7 +106,8 @@ export function absorberFor(
 }
 
 /**
- * Every absorber on the shelf as an answer to the same question, those that can do it first, least needed first.
+ * Every absorber on the shelf as an answer to the same question: those that can do it first, of these the ones listed for
+ * long-term harm (cancer, genetic defects, fertility) last, least needed first.
  * @param input - As {@link absorberFor}, without `ingredient`.
  * @throws InputError as {@link absorberFor}.
  * @source As {@link absorberFor}.
@@ -176,5 +178,5 @@ function whyNot(level: Exclude<Level, { kind: "found" }>, id: string, { field, t
   const got = `${shortText(level.reached)} ${unitLabel(field)}`;
   return level.kind === "none needed"
     ? `Without ${id} it is ${got} already, and absorber only takes it further: to bring the ${text}, change the initiator.`
-    : `Even ${percentText(MOST_TRIED)} ${id} brings it only to ${got}, not the ${text}: take a stronger absorber.`;
+    : `Even ${percentText(MOST_TRIED)} ${id}, the most that is tried, brings it only to ${got}, not the ${text}: take a stronger absorber.`;
 }

@@ -1,6 +1,6 @@
 // What was measured corrects what was guessed: readings on the shelf become interactions, neat viscosities and working curves.
 
-import { fitBlend, fitGrunbergNissan, type BlendFit } from "../models/viscosity.js";
+import { fitBlend, fitGrunbergNissan, grunbergNissan, type BlendFit } from "../models/viscosity.js";
 import type { Case } from "../assess/case.js";
 import type { Interaction } from "../recipe/interaction.js";
 import type { Ingredient } from "../recipe/ingredient.js";
@@ -12,7 +12,8 @@ import { workingCurveFrom } from "./workingCurveFrom.js";
 
 /**
  * The interaction of two liquids from readings of their blends, by least squares in ln viscosity on a mass basis, neat
- * viscosities held at their readings.
+ * viscosities held at their readings. Its uncertainty is that of the scatter, or that of the stated uncertainty of a reading
+ * where this is larger: few readings can lie close to a line by chance.
  * @throws InputError as {@link fitGrunbergNissan}.
  * @source Model: {@link fitGrunbergNissan}.
  * @example
@@ -33,11 +34,12 @@ export function interactionFrom({ id, pair, temperature_C, ...readings }: BlendR
     pureViscosities_mPas: [neatViscosity(readings, 1), neatViscosity(readings, 0)],
     basis: "mass",
   });
+  const u = Math.max(fit.u, readings.relativeU / Math.hypot(...massFractions.map((w) => w * (1 - w))));
   return {
     pair,
     basis: fit.basis,
     temperature_C,
-    G: { value: fit.G, u: fit.u, source: `fit to ${fit.points} blends of ${id}: ${source}`, status },
+    G: { value: fit.G, u, source: `fit to ${fit.points} blends of ${id}: ${source}`, status },
   };
 }
 
@@ -111,6 +113,21 @@ export function calibrate<C extends Case>(work: C): C {
 }
 
 type Readings = Pick<BlendReadings, "massFractions" | "viscosities_mPas">;
+
+/**
+ * The mixing rule through the neat viscosities as read, for mass fractions of the first liquid; with `interactionFrom`'s G it is
+ * the rule that `calibrate` puts in place of the guess. @internal
+ */
+export function blendRule(readings: Readings, G: number): (massFraction: number) => number {
+  const viscosities_mPas = [neatViscosity(readings, 1), neatViscosity(readings, 0)];
+  return (massFraction) =>
+    grunbergNissan({
+      fractions: [massFraction, 1 - massFraction],
+      viscosities_mPas,
+      basis: "mass",
+      interactions: [{ first: 0, second: 1, G, basis: "mass" }],
+    });
+}
 
 /** The neat liquid at one end, mPa s: the geometric mean of its readings, since viscosities scatter as a factor. @internal */
 export function neatViscosity({ massFractions, viscosities_mPas }: Readings, end: 0 | 1): number {

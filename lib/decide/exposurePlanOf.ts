@@ -65,10 +65,11 @@ export interface ExposurePlanEstimate {
   };
   /** Cured into the void behind a roof of very many layers, and the part of it that the layers after the first add. */
   readonly roof: { readonly printThrough_um: Interval; readonly drift_um: Interval };
-  /** Height that a drawn channel must exceed to stay open: the print-through; and what was found in practice. */
+  /** Height that a drawn channel must exceed to stay open: the print-through; and what a study found, at this optical depth. */
   readonly channel: {
     readonly smallest_um: Interval;
-    readonly foundToClog: { readonly low_um: number; readonly high_um: number };
+    /** The two ends of the heights below which channels clogged, each with the doubt of the optical depth. */
+    readonly foundToClog: { readonly low_um: Interval; readonly high_um: Interval };
   };
   /** Exposure and conversion through the last layers at the stated figures, from the face of the part on. */
   readonly stack: readonly StackPoint[];
@@ -147,9 +148,10 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
     roof: { printThrough_um, drift_um: interval(({ roof }) => roof.drift_um) },
     channel: {
       smallest_um: printThrough_um,
-      foundToClog: channelHeightRule({
-        opticalDepth_um: opticalDepth(lightModel(input)(({ value }) => value)),
-      }),
+      foundToClog: {
+        low_um: interval(({ clogs }) => clogs.low_um),
+        high_um: interval(({ clogs }) => clogs.high_um),
+      },
     },
     stack: stackProfile({
       ...statedRun.onPart,
@@ -161,9 +163,16 @@ export function exposurePlanOf(input: Case & PlannedLayers & DrawOptions): Expos
       ...plan.warnings.filter(({ code }) => code !== MAY_NOT_HOLD),
       ...bondWarning(gelled),
     ],
-    sources: sourcesOf(inputs),
+    sources: [...sourcesOf(inputs), clogSource],
   };
 }
+
+const clogSource: UsedSource = {
+  figure: "height below which channels clog",
+  source:
+    "3.5 to 5.5 optical depths, found with a diacrylate, a bisacylphosphine oxide and a dye: H. Gong, M. Beauchamp, S. Perry, A. T. Woolley, G. P. Nordin, RSC Adv. 5 (2015) 106621, doi 10.1039/C5RA23855B (abstract)",
+  status: "published",
+};
 
 /** Deeper layers have what light reaches them. */
 const STACK_SHOWN = 6;
@@ -173,6 +182,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
   const { brief, layers, baseLayers, baseFactor, transitionLayers } = input;
   const { layerThickness_um, cureDepthPerLayer } = brief;
   const curve = curveModel(input);
+  const light = lightModel(input);
   const gel = constantOf(input.shelf.constants, "gelConversion");
   const zone = deadZoneModel(input);
   const inductionShare = inductionShareModel(input);
@@ -187,6 +197,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
     const most_um = 20 * penetrationDepth_um;
     const liquid_um = deadZone.outcome === "dead-zone" ? Math.min(deadZone.thickness_um, most_um) : most_um;
     const inductionExposure_mJcm2 = inductionShare(read) * criticalExposure_mJcm2;
+    const clogs = channelHeightRule({ opticalDepth_um: opticalDepth(light(read)) });
     const plan = exposurePlan({
       ...workingCurve,
       layerThickness_um,
@@ -216,6 +227,7 @@ function planModel(input: Case & PlannedLayers, level: number) {
         cureDepths_um: exposures.map((exposure) => Math.max(cureDepthOn(drawn, exposure), 0)),
         bond: interfaceConversion(onPart),
         roof: printThrough({ layerExposure_mJcm2, layerThickness_um, ...workingCurve }),
+        clogs,
       };
     };
     return { plan, runWith };

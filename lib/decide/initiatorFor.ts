@@ -20,6 +20,7 @@ import type { Interval } from "../result.js";
 import {
   answersFor,
   candidateWarnings,
+  identityOf,
   MOST_TRIED,
   percentText,
   refusal,
@@ -101,17 +102,28 @@ export function initiatorFor(given: Case & InitiatorSearch): InitiatorAnswer {
 
   const layer = layerCureDepth(input);
   const common = {
-    ingredient: id,
+    ...identityOf(ingredient),
     warnings: candidateWarnings(input, ingredient),
     sources: sourcesOf(inputs),
   };
   const at = `${shortText(exposure_mJcm2)} mJ/cm²`;
   const layerText = `the layer asks for ${shortText(layer)} µm`;
-  if (stated.depth <= 0)
-    return { ...common, outcome: "impossible", reason: `No level of ${id} cures at ${at}: expose longer.` };
+  if (stated.depth <= 0) {
+    const most =
+      best > taken
+        ? `About ${percentText(taken)} ${id} dissolves, which does not cure at ${at}`
+        : `No level of ${id} up to ${percentText(MOST_TRIED)} cures at ${at}`;
+    return { ...common, outcome: "impossible", reason: `${most}: expose longer.` };
+  }
   const depthText = `${shortText(stated.depth)} µm deep at ${at}`;
   if (stated.depth < layer * (1 - ROUNDING)) {
-    const reason = `${percentText(taken)} ${id} cures ${depthText}, and no level that dissolves cures deeper; ${layerText}.`;
+    const why =
+      best > taken
+        ? "and no more dissolves"
+        : best === MOST_TRIED
+          ? "and more is not tried"
+          : "and no level cures deeper";
+    const reason = `${percentText(taken)} ${id} cures ${depthText}, ${why}; ${layerText}.`;
     return { ...common, outcome: "impossible", reason };
   }
   const interval = (value: number, values: readonly number[]) =>
@@ -123,7 +135,7 @@ export function initiatorFor(given: Case & InitiatorSearch): InitiatorAnswer {
     outcome: best <= taken ? "reached" : "above solubility",
     reason:
       best <= taken
-        ? `${percentText(best)} ${id} cures deepest, ${depthText}${best === MOST_TRIED ? ", and more would cure deeper still" : ""}; ${layerText}.`
+        ? `${percentText(best)} ${id}${best === MOST_TRIED ? ", the most that is tried," : ""} cures deepest, ${depthText}; ${layerText}.`
         : `${percentText(best)} ${id} would cure deepest; about ${percentText(taken)} dissolves and cures ${depthText}; ${layerText}.`,
     massFraction: interval(
       best,
@@ -138,7 +150,8 @@ export function initiatorFor(given: Case & InitiatorSearch): InitiatorAnswer {
 }
 
 /**
- * Every initiator on the shelf as an answer to the same question, those that can do it first, least needed first.
+ * Every initiator on the shelf as an answer to the same question: those that can do it first, of these the ones listed for
+ * long-term harm (cancer, genetic defects, fertility) last, least needed first.
  * @param input - As {@link initiatorFor}, without `ingredient`.
  * @throws InputError as {@link initiatorFor}.
  * @source As {@link initiatorFor}.

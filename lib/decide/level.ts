@@ -10,27 +10,31 @@ import { shortText } from "../assess/shortText.js";
 import type { Ingredient } from "../recipe/ingredient.js";
 import { ingredientOn, type Shelf } from "../recipe/shelf.js";
 import type { Interval, UsedSource, Warning } from "../result.js";
+import { longTermHarm, weighedHazards } from "./longTermHarm.js";
 
-/** A level that does what is wanted, or would if it dissolved. */
-export interface LevelFound {
+/** What is told of every candidate. */
+export interface Candidate {
   readonly ingredient: string;
-  readonly outcome: "reached" | "above solubility";
-  readonly reason: string;
-  /** Of the whole resin; an end at 0 or at 0.1, the most that is tried, means that some draws go beyond it. */
-  readonly massFraction: Interval;
-  /** Share of the draws, 0 to 1, in which such a level exists and dissolves. */
-  readonly reachedShare: number;
+  /** Codes of its hazard statements, long-term harm first, then sensitisers; absent means that nobody has looked. */
+  readonly hazards?: readonly string[];
   readonly warnings: readonly Warning[];
   readonly sources: readonly UsedSource[];
 }
 
+/** A level that does what is wanted, or would if it dissolved. */
+export interface LevelFound extends Candidate {
+  readonly outcome: "reached" | "above solubility";
+  readonly reason: string;
+  /** Of the whole resin; an end at 0 or at 0.1, the most that is tried, means that some draws go beyond it. */
+  readonly massFraction: Interval;
+  /** Share of the draws, 0 to 1, in which such a level exists and dissolves, where it is known how much does. */
+  readonly reachedShare: number;
+}
+
 /** Why there is no level to give: the brief avoids it, no level does it, or its data do not allow an answer. */
-export interface LevelRefused {
-  readonly ingredient: string;
+export interface LevelRefused extends Candidate {
   readonly outcome: "avoided" | "impossible" | "unknown";
   readonly reason: string;
-  readonly warnings: readonly Warning[];
-  readonly sources: readonly UsedSource[];
 }
 
 /** A level of one initiator or absorber, or why there is none. */
@@ -82,10 +86,10 @@ export function withOnly(input: Case, ingredient: Ingredient, massFraction: numb
 export function refusal(input: Case, ingredient: Ingredient): LevelRefused | undefined {
   const { id } = ingredient;
   const refused = (outcome: LevelRefused["outcome"], reason: string): LevelRefused => ({
-    ingredient: id,
+    ...identityOf(ingredient),
     outcome,
     reason,
-    warnings: [],
+    warnings: outcome === "unknown" ? hazardWarnings(input, ingredient) : [],
     sources: [],
   });
   const [avoid] = avoidReasons(input.brief, ingredient);
@@ -108,23 +112,46 @@ export function solubilityModel(ingredient: Ingredient): ((read: Read) => number
   return solubility && ((read) => read(solubility) / 100);
 }
 
+/** Which substance an answer is about, and its hazards. @internal */
+export function identityOf(ingredient: Ingredient): Pick<Candidate, "ingredient" | "hazards"> {
+  const hazards = weighedHazards(ingredient);
+  return { ingredient: ingredient.id, ...(hazards && { hazards }) };
+}
+
 /** What to know about a candidate before weighing it. @internal */
-export function candidateWarnings({ brief }: Case, ingredient: Ingredient): Warning[] {
-  const { id } = ingredient;
-  const warnings: Warning[] = [];
-  if (ingredient.solubility_pct === undefined) {
-    warnings.push({
+export function candidateWarnings(input: Case, ingredient: Ingredient): Warning[] {
+  const hazards = hazardWarnings(input, ingredient);
+  if (ingredient.solubility_pct !== undefined) return hazards;
+  const signs = ingredient.state === "liquid" ? "haze or a second layer" : "crystals";
+  return [
+    ...hazards,
+    {
       code: "solubility-unknown",
-      message: `How much ${id} dissolves is not on the shelf. Stir the level in, filter, leave it cold for a week and look for crystals; then add solubility_pct.`,
-    });
+      message: `How much ${ingredient.id} dissolves is not on the shelf. Stir the level in, filter, leave it cold for a week and look for ${signs}; then add solubility_pct.`,
+    },
+  ];
+}
+
+function hazardWarnings({ brief }: Case, ingredient: Ingredient): Warning[] {
+  const { id } = ingredient;
+  const hazards = weighedHazards(ingredient);
+  if (hazards === undefined) {
+    const avoids = brief.avoid.some(({ hazard }) => hazard !== undefined);
+    return [
+      {
+        code: "hazards-unchecked",
+        message: `No hazard statement of ${id} is on the shelf because nobody has looked${avoids ? ", so whether the brief avoids it is not known" : ""}. Read its safety data sheet first.`,
+      },
+    ];
   }
-  if (ingredient.hazards === undefined && brief.avoid.some(({ hazard }) => hazard !== undefined)) {
-    warnings.push({
-      code: "hazards-unchecked",
-      message: `No hazard statement of ${id} is on the shelf because nobody has looked, so whether the brief avoids it is not known. Read its safety data sheet first.`,
-    });
-  }
-  return warnings;
+  const harms = hazards.flatMap((code) => longTermHarm(code) ?? []);
+  if (harms.length === 0) return [];
+  return [
+    {
+      code: "long-term-harm",
+      message: `${id}: ${harms.join(", ")}. The brief does not avoid it: take a candidate without such a statement if one will do.`,
+    },
+  ];
 }
 
 /** Percent of the mass, as a sentence says it. @internal */
@@ -140,16 +167,24 @@ const outcomeOrder: readonly LevelAnswer["outcome"][] = [
   "avoided",
 ];
 
-/** The answers for every ingredient of a role on the shelf: what can be done first, least needed first. @internal */
+/**
+ * The answers for every ingredient of a role on the shelf: what can be done first, of these what is listed for long-term harm last,
+ * least needed first. @internal
+ */
 export function answersFor<A extends LevelAnswer>(
   shelf: Shelf,
   role: SoughtRole,
   answer: (id: string) => A,
 ): A[] {
+  const harm = ({ hazards = [] }: LevelAnswer): number =>
+    Number(hazards.some((code) => longTermHarm(code) !== undefined));
   const amount = (one: LevelAnswer): number => ("massFraction" in one ? one.massFraction.value : 0);
   return idsOf(shelf, role)
     .map(answer)
     .sort(
-      (a, b) => outcomeOrder.indexOf(a.outcome) - outcomeOrder.indexOf(b.outcome) || amount(a) - amount(b),
+      (a, b) =>
+        outcomeOrder.indexOf(a.outcome) - outcomeOrder.indexOf(b.outcome) ||
+        harm(a) - harm(b) ||
+        amount(a) - amount(b),
     );
 }

@@ -55,6 +55,22 @@ export function intervalText(interval: { value: number; low: number; high: numbe
   return withPower(`${v} (${l} to ${h})`, power);
 }
 
+/**
+ * Writes a value to be set on a machine with the two or three digits that its interval leaves it.
+ * @example
+ * ```ts
+ * import { settingText } from "resinwright/notebook";
+ * settingText({ value: 27.83, low: 7.4, high: 133 }); // → "28"
+ * settingText({ value: 3.4621, low: 3.22, high: 3.71 }); // → "3.46"
+ * settingText({ value: 0.4512, low: 0.05, high: 150 }); // → "0.45"
+ * ```
+ */
+export function settingText({ value, low, high }: { value: number; low: number; high: number }): string {
+  if (low === high) return numberText(value, 3);
+  const digits = exponentOf(value, 15) - exponentOf(high / 2 - low / 2, 2) + 2;
+  return numberText(value, Math.min(Math.max(digits, 2), 3));
+}
+
 /** A cell as people read it. Whole numbers are counts or years, and stay whole. */
 export function cellText(cell: string | number | null): string {
   if (cell === null) return "–";

@@ -1,14 +1,16 @@
 // How cure depths and an exposure plan are shown: spots against their line, the seconds to set, what a layer gets from them.
 
+import type { Verdict } from "../assess/property.js";
 import type { ExposurePlanEstimate } from "../decide/exposurePlanOf.js";
+import type { SpotPlan } from "../decide/spotPlanOf.js";
 import { fitCureDepths } from "../decide/workingCurveFrom.js";
-import { cureDepth, type CureDepthPlan } from "../models/cure.js";
+import { cureDepth } from "../models/cure.js";
 import type { CureDepthSeries } from "../recipe/cureDepths.js";
 import type { Interval } from "../result.js";
 import type { FigureContent, TableContent } from "./content.js";
-import { intervalText, numberText } from "./digits.js";
+import { intervalText, numberText, settingText } from "./digits.js";
 import { lineFigure, type Series } from "./figure/line.js";
-import { sharePercent } from "./phrases.js";
+import { sharePercent, withinText } from "./phrases.js";
 import { tableOf } from "./table.js";
 
 /**
@@ -66,40 +68,48 @@ export function cureDepthFigure(series: CureDepthSeries): FigureContent {
 }
 
 /**
- * Which spots to expose before a working curve is known, and how thick they are expected to be.
- * @param input - The plan; the irradiance that its times are for.
+ * Which spots to expose before a working curve is known, in that order, and how thick they are expected to be; no rows, and the
+ * reason, where none can be planned.
  * @example
  * ```ts
- * import { planCureDepths } from "resinwright";
+ * import { spotPlanOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
  * import { spotTable } from "resinwright/notebook";
- * const guess = { penetrationDepth_um: 100, criticalExposure_mJcm2: 5 };
- * const plan = planCureDepths({ ...guess, thinnestFilm_um: 40, thickestFilm_um: 300, scatter_um: 8, relativeU: 0.1 });
- * spotTable({ plan, irradiance_mWcm2: 8 }).rows.length >= 5; // → true
+ * const films = { thinnestFilm_um: 40, thickestFilm_um: 300, scatter_um: 6, relativeU: 0.1, longestTime_s: 300 };
+ * const plan = spotPlanOf({ ...openBrief("data/briefs/flow-cell.json"), ...films, draws: 100 });
+ * spotTable(plan).rows.at(-1)?.[4]; // → "repeat"
  * ```
  */
-export function spotTable({
-  plan,
-  irradiance_mWcm2,
-}: {
-  readonly plan: CureDepthPlan;
-  readonly irradiance_mWcm2: number;
-}): TableContent {
-  const [depthU, exposureU] = [plan.penetrationDepth.relativeU, plan.criticalExposure.relativeU];
+export function spotTable(plan: SpotPlan): TableContent {
   return tableOf({
-    caption: `Spots to expose on a glass slide: if the guess holds, penetration depth comes out to ${numberText(100 * depthU, 2)} % and critical exposure to ${numberText(100 * exposureU, 2)} % (standard uncertainty)`,
-    rows: plan.exposures_mJcm2.map((exposure_mJcm2, i) => ({
-      spot: i + 1,
-      time_s: exposure_mJcm2 / irradiance_mWcm2,
-      exposure_mJcm2,
-      expected_um: plan.cureDepths_um[i],
-    })),
+    caption: `Spots to expose on a glass slide. ${promiseText(plan)}`,
+    rows: (plan.outcome === "planned" ? plan.spots : []).map(
+      ({ exposure_mJcm2, time_s, cureDepth_um, repeat }, i) => ({
+        spot: i + 1,
+        time_s,
+        exposure_mJcm2,
+        expected_um: cureDepth_um,
+        note: repeat ? "repeat" : null,
+      }),
+    ),
     columns: [
       { key: "spot", align: "left" },
-      { key: "time_s", digits: 3 },
-      { key: "exposure_mJcm2", digits: 3 },
-      { key: "expected_um", name: "expected thickness", digits: 3 },
+      { key: "time_s", digits: 2 },
+      { key: "exposure_mJcm2", digits: 2 },
+      { key: "expected_um", name: "expected thickness", digits: 2 },
+      { key: "note", align: "left" },
     ],
   });
+}
+
+function promiseText(plan: SpotPlan): string {
+  if (plan.outcome === "impossible") return plan.reason;
+  const [depthU, exposureU] = [plan.penetrationDepth.relativeU, plan.criticalExposure.relativeU].map((u) =>
+    numberText(100 * u, 2),
+  );
+  const { value, low, high } = plan.bleachedShare;
+  const gone = intervalText({ value: 100 * value, low: 100 * low, high: 100 * high });
+  return `If the guess holds and the curve is straight, penetration depth comes out to ${depthU} % and critical exposure to ${exposureU} % (standard uncertainty, repeats counted). The longest spot uses up ${gone} % of the initiator at the window`;
 }
 
 /**
@@ -116,11 +126,11 @@ export function spotTable({
  */
 export function exposureTable(caption: string, { rows, totalTime_s }: ExposurePlanEstimate): TableContent {
   return tableOf({
-    caption: `${caption}. Light on for ${numberText(totalTime_s / 60, 3)} min in all`,
+    caption: `${caption}. Light on for ${numberText(totalTime_s / 60, 2)} min in all`,
     rows: rows.map(({ part, fromLayer, toLayer, time_s, exposure_mJcm2, cureDepth_um }) => ({
       layers: fromLayer === toLayer ? String(fromLayer) : `${fromLayer} to ${toLayer}`,
       part,
-      time_s: Number(time_s.value.toPrecision(3)),
+      set: settingText(time_s),
       right: intervalText(time_s),
       exposure_mJcm2,
       cureDepth_um,
@@ -128,9 +138,9 @@ export function exposureTable(caption: string, { rows, totalTime_s }: ExposurePl
     columns: [
       { key: "layers" },
       { key: "part" },
-      { key: "time_s", name: "set", unit: "s", digits: 3 },
+      { key: "set", unit: "s", align: "right" },
       { key: "right", name: "right time lies in", unit: "s", align: "right" },
-      { key: "exposure_mJcm2", digits: 3 },
+      { key: "exposure_mJcm2", digits: 2 },
       { key: "cureDepth_um" },
     ],
   });
@@ -183,7 +193,7 @@ export function layerFactsTable({
     [
       "channel that light alone leaves open",
       `above ${um(channel.smallest_um)}`,
-      `in practice channels below ${numberText(low_um, 2)} to ${numberText(high_um, 2)} µm were found to clog at this optical depth`,
+      `Gong and others (2015) found channels to clog below 3.5 to 5.5 optical depths: here ${um(low_um)} to ${um(high_um)}`,
     ],
   ];
   return tableOf({
@@ -225,4 +235,60 @@ export function stackFigure({ stack }: ExposurePlanEstimate, conditions: string)
       };
     }),
   });
+}
+
+/** What a decision on the exposure says: the plan with its part, the verdict on the time of a layer, what the curve rests on. */
+export interface ExposureDecision {
+  readonly plan: ExposurePlanEstimate;
+  readonly irradiance_mWcm2: number;
+  /** On the time of a layer, where the brief has a target for it. */
+  readonly verdict: Pick<Verdict, "target" | "share"> | undefined;
+  /** The series behind the working curve; undefined where it is a guess. */
+  readonly series: CureDepthSeries | undefined;
+}
+
+/**
+ * The exposure that is decided on, in sentences: what to set, what to do where that misses the brief's target, how high to draw
+ * channels, and what it rests on.
+ * @example
+ * ```ts
+ * import { calibrate, exposurePlanOf, verdictOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { exposureText } from "resinwright/notebook";
+ * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
+ * const plan = exposurePlanOf({ ...work, layers: 400, baseLayers: 4, baseFactor: 8, transitionLayers: 3, draws: 100 });
+ * const verdict = verdictOf({ ...work, property: "layerTime_s", target: { max: 2 }, draws: 100 });
+ * exposureText({ plan, irradiance_mWcm2: 8, verdict, series: undefined }).includes("longer than the brief's 2 s"); // → true
+ * ```
+ */
+export function exposureText({ plan, irradiance_mWcm2, verdict, series }: ExposureDecision): string {
+  const { rows, channel } = plan;
+  const normal = rows.at(-1)!.time_s;
+  const base = rows[0]!.part === "base" ? ` and ${settingText(rows[0]!.time_s)} s for the base layers` : "";
+  const { high_um } = channel.foundToClog;
+  return [
+    `Set ${settingText(normal)} s a layer (right time ${intervalText(normal)} s)${base}, at ${numberText(irradiance_mWcm2)} mW/cm²`,
+    targetSentence(normal, verdict),
+    `Light fills ${intervalText(channel.smallest_um)} µm behind a roof`,
+    `Channels lower than 5.5 optical depths, here ${intervalText(high_um)} µm, may clog (Gong and others, RSC Adv. 5 (2015) 106621, another resin): draw them higher than ${numberText(high_um.high, 2)} µm, or print a row of heights first`,
+    restsText(series),
+  ].join(". ");
+}
+
+function targetSentence({ value }: Interval, verdict: ExposureDecision["verdict"]): string {
+  if (verdict === undefined) return "The brief sets no target for the time of a layer";
+  const { min = 0, max = Infinity } = verdict.target;
+  const within = `the time of a layer is ${withinText(verdict.target, verdict.share)}`;
+  if (value > max)
+    return `That is longer than the brief's ${numberText(max)} s; ${within}: take more light or more initiator, or thinner layers, before printing`;
+  if (value < min)
+    return `That is shorter than the brief's ${numberText(min)} s; ${within}: take less light, or more absorber`;
+  return `T${within.slice(1)}`;
+}
+
+function restsText(series: CureDepthSeries | undefined): string {
+  if (series === undefined)
+    return "It rests on a guess: measure the series above under this light before printing.";
+  const spots = series.spots.filter(({ reading }) => reading !== "floated").length;
+  return `It rests on ${spots} spots of ${series.id}.`;
 }

@@ -33,7 +33,7 @@ export {
   type FrameGroups,
   type TableInput,
 } from "./table.js";
-export { intervalText, numberText } from "./digits.js";
+export { intervalText, numberText, settingText } from "./digits.js";
 
 export {
   gasText,
@@ -62,7 +62,16 @@ export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } fro
 export { layerMoments, layerTable, settlingFigure } from "./layers.js";
 export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
 export { candidateTable, engineTable, spectraFigure, takenTable } from "./light.js";
-export { cureDepthFigure, exposureTable, layerFactsTable, spotTable, stackFigure } from "./exposure.js";
+export {
+  cureDepthFigure,
+  exposureTable,
+  exposureText,
+  layerFactsTable,
+  spotTable,
+  stackFigure,
+  type ExposureDecision,
+} from "./exposure.js";
+export { warmthText, type WarmthQuestion } from "./viscosity.js";
 export { handlingTable, screeningTable } from "./safety.js";
 export { recordFrame } from "./recordFrame.js";
 export {

@@ -3,7 +3,7 @@
 import type { LightTaken } from "../assess/lightTaken.js";
 import type { EngineComparison } from "../decide/compareEngines.js";
 import type { InitiatorAnswer } from "../decide/initiatorFor.js";
-import type { LevelAnswer } from "../decide/level.js";
+import type { LevelAnswer, LevelFound } from "../decide/level.js";
 import type { Interval } from "../result.js";
 import type { FigureContent, TableContent } from "./content.js";
 import { lineFigure } from "./figure/line.js";
@@ -65,7 +65,8 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
 }
 
 /**
- * Initiators or absorbers as answers to one question, in the order given: level, share of the draws in which it works, and why.
+ * Initiators or absorbers as answers to one question, in the order given: hazard statements, long-term harm first, level, share
+ * of the draws in which it works, and why.
  * @example
  * ```ts
  * import { absorberCandidates } from "resinwright";
@@ -73,7 +74,7 @@ export function takenTable({ depth_um, takers, transmitted }: LightTaken): Table
  * import { candidateTable } from "resinwright/notebook";
  * const work = openBrief("data/briefs/flow-cell.json");
  * const candidates = absorberCandidates({ ...work, wanted: { penetrationDepth_um: 70 }, draws: 50 });
- * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "level", "works", "what to know"]
+ * candidateTable("Absorbers for 70 µm", candidates).columns.map(({ name }) => name); // → ["candidate", "hazards", "level", "works", "what to know"]
  * ```
  */
 export function candidateTable(
@@ -86,13 +87,15 @@ export function candidateTable(
       const found = "massFraction" in answer;
       return {
         candidate: answer.ingredient,
+        hazards: hazardsText(answer),
         level_pct: found ? percent(answer.massFraction) : null,
-        works: found ? `in ${sharePercent(answer.reachedShare)} % of draws` : answer.outcome,
+        works: found ? worksText(answer) : answer.outcome,
         know: [answer.reason, ...answer.warnings.filter(ofCandidate).map(({ message }) => message)].join(" "),
       };
     }),
     columns: [
       { key: "candidate" },
+      { key: "hazards", align: "left" },
       { key: "level_pct", name: "level", unit: "mass %" },
       { key: "works", align: "left" },
       { key: "know", name: "what to know", align: "left" },
@@ -100,9 +103,19 @@ export function candidateTable(
   });
 }
 
-/** Warnings that are the candidate's own; those of the working curve stand with the decision. */
+/** Warnings that are the candidate's own and not in a column; those of the working curve stand with the decision. */
 const ofCandidate = ({ code }: { readonly code: string }): boolean =>
-  ["solubility-unknown", "hazards-unchecked"].includes(code);
+  ["long-term-harm", "solubility-unknown"].includes(code);
+
+function worksText({ reachedShare, warnings }: LevelFound): string {
+  const unknown = warnings.some(({ code }) => code === "solubility-unknown");
+  return `in ${sharePercent(reachedShare)} % of draws${unknown ? ", if it dissolves" : ""}`;
+}
+
+function hazardsText({ hazards }: LevelAnswer): string {
+  if (hazards === undefined) return "not checked";
+  return hazards.length === 0 ? "none found" : hazards.join(", ");
+}
 
 /**
  * One formulation under every engine on the shelf.

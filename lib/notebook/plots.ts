@@ -5,10 +5,9 @@ import type { Case } from "../assess/case.js";
 import type { DeadZoneEstimate } from "../assess/oxygen.js";
 import type { NeverCures, Property } from "../assess/property.js";
 import { viscosityOf } from "../assess/viscosity.js";
-import { interactionFrom, neatViscosity } from "../decide/calibrate.js";
+import { blendRule, interactionFrom } from "../decide/calibrate.js";
 import { evenSteps } from "../decide/sweep.js";
 import { stefanForce, suctionLimit } from "../models/separation.js";
-import { grunbergNissan } from "../models/viscosity.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import type { FigureContent } from "./content.js";
 import { numberText } from "./digits.js";
@@ -102,17 +101,9 @@ export function doubtFigure(property: Property | NeverCures, conditions: string)
  */
 export function blendFigure(readings: BlendReadings): FigureContent {
   const [first, second] = readings.pair;
-  const { G, basis } = interactionFrom(readings);
+  const { G } = interactionFrom(readings);
   const x = evenSteps({ from: 0, to: 1, count: 41 });
-  const rule = (value: number) =>
-    x.map((share) =>
-      grunbergNissan({
-        fractions: [share, 1 - share],
-        viscosities_mPas: [neatViscosity(readings, 1), neatViscosity(readings, 0)],
-        basis,
-        interactions: [{ first: 0, second: 1, G: value, basis }],
-      }),
-    );
+  const rule = (value: number) => x.map(blendRule(readings, value));
   return lineFigure({
     caption: `Blends of ${first} with ${second}: read and fitted`,
     conditions: `${numberText(readings.temperature_C)} °C, ${readings.source}`,

@@ -9,7 +9,7 @@ import { propertyNames } from "../recipe/propertyNames.js";
 import { unitEndingOf, unitLabel } from "../recipe/units.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import type { SourcedValue, UsedSource } from "../result.js";
-import { fitReadings } from "../decide/calibrate.js";
+import { blendRule, fitReadings, interactionFrom } from "../decide/calibrate.js";
 import type { TableContent } from "./content.js";
 import { numberText } from "./digits.js";
 import { gasText, targetText } from "./phrases.js";
@@ -182,7 +182,8 @@ export function propertyTable(caption: string, properties: readonly (Property | 
 }
 
 /**
- * Readings of two liquids' blends against their fit, one a row; a reading that stands out is named.
+ * Readings of two liquids' blends against the rule that is used, neat liquids as read, one a row; a reading that stands out is
+ * named. Whether one interaction is enough is judged with the neat liquids as readings like the others.
  * @example
  * ```ts
  * import { readShelf } from "resinwright/files";
@@ -192,14 +193,16 @@ export function propertyTable(caption: string, properties: readonly (Property | 
  * ```
  */
 export function readingTable(readings: BlendReadings): TableContent {
-  const { residuals, outliers, adequacy } = fitReadings(readings);
+  const { outliers, adequacy } = fitReadings(readings);
+  const { G } = interactionFrom(readings);
+  const fitted_mPas = readings.massFractions.map(blendRule(readings, G.value));
   return tableOf({
-    caption: `Readings of ${readings.pair.join(" with ")} at ${numberText(readings.temperature_C)} °C against one interaction: ${adequacy.verdict}; ${adequacy.reason}`,
-    rows: readings.massFractions.map((massFraction, i) => ({
-      mass_pct: 100 * massFraction,
-      viscosity_mPas: readings.viscosities_mPas[i],
-      fitted_mPas: readings.viscosities_mPas[i]! / Math.exp(residuals[i]!),
-      deviation_pct: numberText(100 * Math.expm1(residuals[i]!), 2),
+    caption: `Readings of ${readings.pair.join(" with ")} at ${numberText(readings.temperature_C)} °C against the rule with G = ${numberText(G.value, 3)} and the neat liquids as read. One interaction for all of them: ${adequacy.verdict}; ${adequacy.reason}`,
+    rows: readings.viscosities_mPas.map((viscosity_mPas, i) => ({
+      mass_pct: 100 * readings.massFractions[i]!,
+      viscosity_mPas,
+      fitted_mPas: fitted_mPas[i],
+      deviation_pct: numberText(Number((100 * (viscosity_mPas / fitted_mPas[i]! - 1)).toFixed(1)), 3),
       note: outliers.includes(i) ? "stands out: measure it again" : null,
     })),
     columns: [

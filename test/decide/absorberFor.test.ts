@@ -8,7 +8,7 @@ import type { Ingredient } from "../../lib/recipe/ingredient.js";
 import type { Shelf } from "../../lib/recipe/shelf.js";
 import { brief, formulationOf, shelf, sure } from "../fixtures.js";
 
-const AB = shelf.ingredients.get("AB")!;
+const [AB, PI] = ["AB", "PI"].map((id) => shelf.ingredients.get(id)!) as [Ingredient, Ingredient];
 const work: Case = { formulation: formulationOf({ THIN: 98.9, PI: 1, AB: 0.1 }), brief, shelf };
 const search = (wanted: WantedOfAbsorber, change: Partial<Case> = {}) =>
   absorberFor({ ...work, ...change, wanted, draws: 60 });
@@ -69,18 +69,34 @@ describe("absorberFor", () => {
     );
     expect(answer.reachedShare).toBeLessThan(0.05);
     expect(answer.sources.map(({ figure }) => figure)).toContain("solubility of AB");
-    expect(answer.warnings.map(({ code }) => code)).toEqual(["working-curve-estimated"]);
+    expect(answer.warnings.map(({ code }) => code)).toEqual(["hazards-unchecked", "working-curve-estimated"]);
   });
 
-  it("says that solubility is unknown, and that nobody has looked at the hazards the brief avoids", () => {
-    const avoid = [{ hazard: "H360", reason: "fertility" }];
-    const { warnings } = search({ penetrationDepth_um: 60 }, { brief: { ...brief, avoid } });
+  it("says that solubility is unknown, and that nobody has looked at the hazards", () => {
+    const { warnings, hazards } = search({ penetrationDepth_um: 60 });
+    expect(hazards).toBeUndefined();
     expect(warnings.map(({ code }) => code)).toEqual([
-      "solubility-unknown",
       "hazards-unchecked",
+      "solubility-unknown",
       "working-curve-estimated",
     ]);
-    expect(warnings[0]!.message).toContain("How much AB dissolves is not on the shelf");
+    expect(warnings[0]!.message).toBe(
+      "No hazard statement of AB is on the shelf because nobody has looked. Read its safety data sheet first.",
+    );
+    expect(warnings[1]!.message).toBe(
+      "How much AB dissolves is not on the shelf. Stir the level in, filter, leave it cold for a week and look for crystals; then add solubility_pct.",
+    );
+    const avoid = [{ hazard: "H360", reason: "fertility" }];
+    const [unchecked] = search({ penetrationDepth_um: 60 }, { brief: { ...brief, avoid } }).warnings;
+    expect(unchecked!.message).toContain("so whether the brief avoids it is not known. Read");
+  });
+
+  it("does not look for crystals of a liquid", () => {
+    const { formulation } = withOnly(work, { ...AB, state: "liquid" }, 0.001);
+    const { warnings } = search({ penetrationDepth_um: 60 }, { formulation });
+    expect(warnings.find(({ code }) => code === "solubility-unknown")!.message).toContain(
+      "look for haze or a second layer",
+    );
   });
 
   it("says why no level does it", () => {
@@ -92,7 +108,7 @@ describe("absorberFor", () => {
     const never = search({ penetrationDepth_um: 0.5 });
     expect(never.outcome).toBe("impossible");
     expect(never.reason).toMatch(
-      /^Even 10 % AB brings it only to 1\.\d+ µm, not the penetration depth to 0\.5 µm/,
+      /^Even 10 % AB, the most that is tried, brings it only to 1\.\d+ µm, not the penetration depth to 0\.5 µm/,
     );
   });
 
@@ -134,7 +150,7 @@ describe("absorberFor", () => {
 });
 
 describe("absorberCandidates", () => {
-  it("lists every absorber, those that can do it first and least needed first", () => {
+  it("lists every absorber, those that can do it first, long-term harm after the others, least needed first", () => {
     const on: Shelf = {
       ...stocked(
         { id: "STRONG", spectrum: "strong" },
@@ -142,6 +158,7 @@ describe("absorberCandidates", () => {
         { id: "SHORT", spectrum: "short" },
         { id: "TIGHT", solubility_pct: sure(0.01) },
         { id: "BANNED" },
+        { id: "GRAVE", spectrum: "strong", hazards: PI.hazards },
       ),
       spectra: new Map([
         ...shelf.spectra,
@@ -160,11 +177,16 @@ describe("absorberCandidates", () => {
     expect(answers.map(({ ingredient, outcome }) => `${ingredient} ${outcome}`)).toEqual([
       "STRONG reached",
       "AB reached",
+      "GRAVE reached",
       "TIGHT above solubility",
       "DIM unknown",
       "SHORT unknown",
       "BANNED avoided",
     ]);
-    expect(answers[4]!.reason).toContain('spectrum "short"');
+    expect(answers[5]!.reason).toContain('spectrum "short"');
+    expect(answers.map(({ hazards }) => hazards)).toEqual(
+      answers.map(({ ingredient }) => (ingredient === "GRAVE" ? ["H360FD"] : undefined)),
+    );
+    expect(answers[4]!.warnings.map(({ code }) => code)).toEqual(["hazards-unchecked"]);
   });
 });

@@ -15,10 +15,22 @@ describe("interactionFrom", () => {
   it("finds the interaction that made the readings, on a mass basis, and says where it is from", () => {
     const { G, basis, pair, temperature_C } = interactionFrom(readings);
     expect(G.value).toBeCloseTo(-1.5, 12);
-    expect(G.u).toBeLessThan(1e-12);
+    // No scatter, so the doubt is that of readings good to 2 %: 0.02 over the root of the sum of (w (1 - w))^2.
+    expect(G.u).toBeCloseTo(0.02 / Math.sqrt(0.1875 ** 2 + 0.25 ** 2 + 0.1875 ** 2), 12);
     expect([basis, pair, temperature_C]).toEqual(["mass", ["THICK", "THIN"], 25]);
     expect(G.source).toBe("fit to 3 blends of r1: constructed for a test");
     expect(G.status).toBe("invented for the demo");
+  });
+});
+
+describe("interactionFrom, doubt", () => {
+  it("is that of the scatter where this is larger than what is stated of a reading", () => {
+    const scattered = readings.viscosities_mPas.map((one, i) => one * (i === 2 ? 1.3 : 1));
+    const [stated, unstated] = [0.02, 0].map((relativeU) =>
+      interactionFrom({ ...readings, relativeU, viscosities_mPas: scattered }),
+    );
+    expect(stated!.G.u).toBe(unstated!.G.u);
+    expect(stated!.G.u).toBeGreaterThan(0.1);
   });
 });
 

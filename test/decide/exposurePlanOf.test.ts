@@ -50,8 +50,19 @@ describe("exposurePlanOf", () => {
     expect(roof.printThrough_um.value).toBeCloseTo(printThrough_um, 8);
     expect(roof.drift_um.value).toBeCloseTo(drift_um, 8);
     expect(channel.smallest_um).toEqual(roof.printThrough_um);
-    const { value } = opticalDepthOf({ ...work, draws: 40 });
-    expect(channel.foundToClog.low_um).toBeCloseTo(3.5 * value, 8);
+    const depth = opticalDepthOf({ ...work, draws: 200 });
+    const { low_um, high_um } = channel.foundToClog;
+    for (const end of ["value", "low", "high"] as const) {
+      expect(low_um[end]).toBeCloseTo(3.5 * depth[end], 8);
+      expect(high_um[end]).toBeCloseTo(5.5 * depth[end], 8);
+    }
+  });
+
+  it("names the study behind the height below which channels clog", () => {
+    expect(plan().sources.find(({ figure }) => figure === "height below which channels clog")).toMatchObject({
+      source: expect.stringContaining("10.1039/C5RA23855B") as string,
+      status: "published",
+    });
   });
 
   it("takes the liquid on the window off what a layer reaches, and off the light that makes the bond", () => {

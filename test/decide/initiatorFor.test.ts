@@ -72,18 +72,31 @@ describe("initiatorFor", () => {
       /^\d\.\d+ % PI would cure deepest; about 0\.3 % dissolves and cures \d+ µm deep at 200 mJ\/cm²; the layer asks for 75 µm\.$/,
     );
     expect(bound.reachedShare).toBeLessThan(0.2);
-    expect(bound.warnings.map(({ code }) => code)).toEqual(["working-curve-estimated"]);
+    expect(bound.warnings.map(({ code }) => code)).toEqual(["long-term-harm", "working-curve-estimated"]);
+    expect(bound.warnings[0]!.message).toBe(
+      "PI: may damage fertility or the unborn child. The brief does not avoid it: take a candidate without such a statement if one will do.",
+    );
   });
 
   it("says when no level cures, or none cures the layer", () => {
     expect(initiatorFor({ ...work, exposure_mJcm2: 0.01, draws: 40 })).toMatchObject({
       outcome: "impossible",
-      reason: "No level of PI cures at 0.01 mJ/cm²: expose longer.",
+      reason: "No level of PI up to 10 % cures at 0.01 mJ/cm²: expose longer.",
     });
     const thick = { ...work, brief: { ...brief, layerThickness_um: 400 } };
     const { outcome, reason } = initiatorFor({ ...thick, exposure_mJcm2: 50, draws: 40 });
     expect(outcome).toBe("impossible");
-    expect(reason).toMatch(/and no level that dissolves cures deeper; the layer asks for 600 µm\.$/);
+    expect(reason).toMatch(/, and no level cures deeper; the layer asks for 600 µm\.$/);
+    const dissolving = (solubility_pct: number) => {
+      const only = withOnly(thick, { ...PI, solubility_pct: sure(solubility_pct) }, 0.001);
+      return initiatorFor({ ...only, exposure_mJcm2: 50, draws: 40 }).reason;
+    };
+    expect(dissolving(1)).toMatch(
+      /^1 % PI cures \d+ µm deep at 50 mJ\/cm², and no more dissolves; the layer asks for 600 µm\.$/,
+    );
+    expect(dissolving(0.1)).toBe(
+      "About 0.1 % PI dissolves, which does not cure at 50 mJ/cm²: expose longer.",
+    );
   });
 
   it("refuses an exposure that is none", () => {

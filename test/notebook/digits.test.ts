@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import fc from "fast-check";
-import { intervalText, numberText } from "../../lib/notebook/digits.js";
+import { intervalText, numberText, settingText } from "../../lib/notebook/digits.js";
 
 /** Reads a text such as "−1.2 × 10⁻⁹" back into a number. */
 function readBack(text: string): number {
@@ -47,6 +47,25 @@ describe("numberText", () => {
   it("refuses what is not a finite number", () => {
     expect(() => numberText(NaN)).toThrow("numberText: value is NaN; it must be a finite number");
     expect(() => numberText(1, 0)).toThrow("numberText: digits is 0; it must be a number from 1 to 15");
+  });
+});
+
+describe("settingText", () => {
+  it.each([
+    ["two digits where the doubt leaves fewer", 27.83, 7.4, 133, "28"],
+    ["two digits of a value far below its high end", 0.4512, 0.05, 150, "0.45"],
+    ["as many as the doubt leaves", 3.4621, 3.22, 3.71, "3.46"],
+    ["tens where the doubt is hundreds", 222.4, 60, 1060, "220"],
+    ["three at most", 21.44, 20.58, 22.35, "21.4"],
+    ["three without doubt", 3.46213, 3.46213, 3.46213, "3.46"],
+  ])("%s", (_, value, low, high, text) => {
+    expect(settingText({ value, low, high })).toBe(text);
+  });
+
+  it("refuses what is not a finite number", () => {
+    expect(() => settingText({ value: NaN, low: 1, high: 2 })).toThrow(
+      "numberText: value is NaN; it must be a finite number",
+    );
   });
 });
 

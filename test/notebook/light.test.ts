@@ -47,11 +47,14 @@ describe("candidateTable", () => {
   const reached: LevelAnswer = {
     ...common,
     ingredient: "AB",
+    hazards: ["H351", "H317"],
     outcome: "reached",
     reason: "0.2 % AB does it.",
     massFraction: { value: 0.002, low: 0.001, high: 0.004, level: 0.95 },
     reachedShare: 0.996,
     warnings: [
+      { code: "long-term-harm", message: "Take another." },
+      { code: "hazards-unchecked", message: "Nobody has looked." },
       { code: "solubility-unknown", message: "Stir it in." },
       { code: "working-curve-estimated", message: "Estimated." },
     ],
@@ -63,11 +66,22 @@ describe("candidateTable", () => {
     reason: "The brief avoids XX.",
   };
 
+  it("tells none found from not looked, and makes no condition where it is known what dissolves", () => {
+    const [row] = candidateTable("Absorbers", [{ ...reached, hazards: [], warnings: [] }]).rows;
+    expect([row![1], row![3]]).toEqual(["none found", "in 99 % of draws"]);
+  });
+
   it("gives level, share of draws and reason, with the candidate's own warnings only", () => {
     const { rows } = candidateTable("Absorbers", [reached, avoided]);
     expect(rows).toEqual([
-      ["AB", "0.20 (0.10 to 0.40)", "in 99 % of draws", "0.2 % AB does it. Stir it in."],
-      ["XX", null, "avoided", "The brief avoids XX."],
+      [
+        "AB",
+        "H351, H317",
+        "0.20 (0.10 to 0.40)",
+        "in 99 % of draws, if it dissolves",
+        "0.2 % AB does it. Take another. Stir it in.",
+      ],
+      ["XX", "not checked", null, "avoided", "The brief avoids XX."],
     ]);
   });
 });

@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
 import { assess } from "../../lib/assess/assess.js";
 import { propertyTitles } from "../../lib/assess/property.js";
+import { interactionFrom } from "../../lib/decide/calibrate.js";
+import { numberText } from "../../lib/notebook/digits.js";
 import type { TableContent } from "../../lib/notebook/content.js";
 import {
   assessmentTable,
@@ -329,6 +331,17 @@ describe("readingTable", () => {
     ),
   };
 
+  it("shows the rule of the figure beside it: the same G, and neat liquids that are off by nothing", () => {
+    const { rows, caption } = readingTable(readings);
+    const { G } = interactionFrom(readings);
+    expect(caption).toContain(`G = ${numberText(G.value, 3)} `);
+    expect([rows[0]![3], rows[8]![3]].map(Number)).toEqual([0, 0]);
+    // At equal masses the rule is the geometric mean of the neat readings times e^(G / 4).
+    const [thin, thick] = [readings.viscosities_mPas[0]!, readings.viscosities_mPas[8]!];
+    const middle = Math.sqrt(thin * thick) * Math.exp(G.value / 4);
+    expect(Math.abs(Number(rows[4]![2]) / middle - 1)).toBeLessThan(0.005);
+  });
+
   it("has a row a reading, read over fitted as a deviation, and names the one that stands out", () => {
     const { rows, columns, caption } = readingTable(readings);
     expect(columns.map(({ name, unit }) => `${name} ${unit}`).slice(0, 4)).toEqual([
@@ -339,6 +352,8 @@ describe("readingTable", () => {
     ]);
     expect(rows.map(([mass]) => mass)).toEqual(massFractions.map((w) => 100 * w));
     expect(rows.map(([, , , , note]) => note !== null)).toEqual(massFractions.map((w) => w === 0.5));
-    expect(caption).toContain("Readings of THICK with THIN at 25 °C against one interaction: ");
+    expect(caption).toMatch(
+      /^Readings of THICK with THIN at 25 °C against the rule with G = −1\.\d+ and the neat liquids as read\. One interaction for all of them: /,
+    );
   });
 });
