@@ -97,8 +97,8 @@ export function learntTable(learnt: LearntOxygen | undefined): TableContent {
     rows: [...readings, ...figures],
     columns: [
       { key: "about", name: "reading or figure" },
-      { key: "before", name: "before", align: "right" },
-      { key: "after", name: "after", align: "right" },
+      { key: "before", name: "before", align: "left" },
+      { key: "after", name: "after", align: "left" },
     ],
   });
 }
@@ -164,7 +164,7 @@ export function changeTable({ effects, notModelled }: ChangeComparison): TableCo
     })),
     columns: [
       { key: "change" },
-      { key: "deadZone_um", name: "dead zone then", align: "right" },
+      { key: "deadZone_um", name: "steady zone then", align: "right" },
       { key: "zoneFactor", name: "on the dead zone", align: "right" },
       { key: "inductionFactor", name: "on the induction time", align: "right" },
       ...(withGel ? [{ key: "gelFactor", name: "on the time to first gel", align: "right" as const }] : []),
@@ -202,7 +202,8 @@ export function changeFigure({ effects }: ChangeComparison, conditions: string):
   return intervalFigure({
     caption: "Factor on the dead zone, change by change; changes after which there is none are left out",
     conditions,
-    axis: { label: "dead zone then over dead zone now", logarithmic: true },
+    axis: { label: "factor on the dead zone", logarithmic: true },
     rows,
+    reference: { label: "no change", at: 1 },
   });
 }

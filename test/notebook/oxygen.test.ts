@@ -89,7 +89,7 @@ describe("changeTable and changeFigure", () => {
     const table = changeTable(effects);
     expect(table.columns.map(({ name }) => name)).toEqual([
       "change",
-      "dead zone then",
+      "steady zone then",
       "on the dead zone",
       "on the induction time",
       "on the time to first gel",
@@ -100,6 +100,7 @@ describe("changeTable and changeFigure", () => {
     const figure = changeFigure(effects, "A test")!;
     expect(figure.table.rows.map(([change]) => change)).not.toContain("nitrogen under the film");
     expect(figure.table.rows).toHaveLength(3);
+    expect(figure.alternativeText).toContain("Line at 1: no change.");
   });
 
   it("say that a resin never cures, and draw nothing of it", () => {
