@@ -168,6 +168,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
   h1 { font-size: 1.625rem; }
   h2 { font-size: 1.25rem; margin-top: 2.25rem; }
   table { font-size: 0.875rem; }
+  .formula math { font-size: 0.95em; }
   th, td { padding-right: 0.875rem; }
   .card, .panel { padding: 0.75rem; }
   .card dl { display: block; }

@@ -1,5 +1,5 @@
 // Where contour lines carry their values: every level that is drawn has a label, clear of the others and of the edges, and so has
-// each of its branches that has room for one.
+// each of its branches that has room for one. Where lines crowd so that two labels would lie on each other, one is left out.
 
 import type { GridAxis, GridValues } from "./contour.js";
 
@@ -33,7 +33,10 @@ export function levelLabels({
   for (const level of levels) {
     const branches = branchesOf(crossingsOf(level, x.values, y.values, z.values));
     branches.forEach((branch, k) => {
-      const placed = branch.map((label) => ({ label, place: placeOf(label, x, y) }));
+      const placed = branch
+        .map((label) => ({ label, place: placeOf(label, x, y) }))
+        .filter(({ place }) => labels.every((other) => standApart(place, placeOf(other, x, y))));
+      if (placed.length === 0) return;
       const best = placed.reduce((a, b) => (room(b.place, places) > room(a.place, places) ? b : a));
       if (k > 0 && room(best.place, places) < leastRoom) return;
       labels.push({ level, x: best.label.x, y: best.label.y, steep: best.label.steep });
@@ -41,6 +44,11 @@ export function levelLabels({
     });
   }
   return labels;
+}
+
+/** Whether two labels leave each other legible on a narrow page, where one is about this wide and high. */
+function standApart([x, y]: Place, [otherX, otherY]: Place): boolean {
+  return Math.abs(x - otherX) > 0.15 || Math.abs(y - otherY) > 0.08;
 }
 
 /** What a further label of a level needs, as a share of the figure: on a narrow page a label is about this wide. */
