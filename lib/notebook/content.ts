@@ -117,13 +117,22 @@ function columnTitle({ name, unit }: TableColumn): string {
   return escapeHtml(name) + (unit === undefined ? "" : ` <span class="unit">(${escapeHtml(unit)})</span>`);
 }
 
-function cellHtml({ columns, rowHeader }: TableContent, cell: string | number | null, i: number): string {
+function cellHtml(table: TableContent, cell: string | number | null, i: number): string {
   const text = escapeHtml(cellText(cell));
+  const { name, unit, align } = table.columns[i]!;
   // A registry number or a short name without spaces is not broken at its hyphens.
-  const whole = typeof cell === "string" && /^\S{1,20}$/.test(cell) ? " whole" : "";
-  const look = columns[i]!.align + whole;
-  if (i === 0 && rowHeader) return `<th scope="row" class="${look}">${text}</th>`;
-  return `<td class="${look}">${text}</td>`;
+  const whole = typeof cell === "string" && /^\S{1,20}$/.test(cell);
+  const look = [align, whole && "whole", isSentence(cell) && "sentence"].filter(Boolean).join(" ");
+  if (i === 0 && table.rowHeader) return `<th scope="row" class="${look}">${text}</th>`;
+  // Where a narrow page sets cell below cell, each but the first says what it is.
+  const said = i > 0 && name !== "" && table.rows.some((row) => row.some(isSentence));
+  const label = said ? ` data-label="${escapeHtml(unit === undefined ? name : `${name} (${unit})`)}"` : "";
+  return `<td class="${look}"${label}>${text}</td>`;
+}
+
+/** Words that must be allowed to run over lines, wherever they stand. */
+function isSentence(cell: string | number | null): boolean {
+  return typeof cell === "string" && cell.length > 40;
 }
 
 function refuseNotFinite(value: unknown, where: string): void {
@@ -221,9 +230,33 @@ export function sliderHtml({ label, shown, steps }: Moments, id: string): string
 <output for="${id}-moment">${chosen}</output></div>`;
 }
 
-/** Many columns stand wider on a screen; a crowd of them is set smaller in print, where a long table may break between pages. */
-function tableClass({ columns, rows }: TableContent): string {
-  const classes = [columns.length > 5 && "many", columns.length > 8 && "crowded", rows.length > 6 && "long"];
+/**
+ * A table that needs more room than prose stands wider on a screen; a crowd of columns is set smaller in print, where a long table may
+ * break between pages; sentences stand cell below cell where the page is narrow.
+ */
+function tableClass(table: TableContent): string {
+  const { columns, rows } = table;
+  const classes = [
+    (columns.length > 5 || leastCharacters(table) > proseCharacters) && "many",
+    columns.length > 8 && "crowded",
+    rows.length > 6 && "long",
+    rows.some((row) => row.some(isSentence)) && "sentences",
+  ];
   const named = classes.filter((name) => name !== false);
   return named.length === 0 ? "" : ` class="${named.join(" ")}"`;
+}
+
+/** How many characters of a table fit beside each other in a column of prose. */
+const proseCharacters = 80;
+
+/** The width below which a table cannot go, in characters: the longest of what each column keeps on one line, and the gaps between. */
+function leastCharacters({ columns, rows }: TableContent): number {
+  const longestWord = (text: string) => Math.max(...text.split(" ").map(({ length }) => length));
+  const least = columns.map(({ name, unit = "", align }, i) => {
+    const cells = rows.map((row) =>
+      align === "right" && !isSentence(row[i]!) ? cellText(row[i]!).length : longestWord(cellText(row[i]!)),
+    );
+    return Math.max(longestWord(name), unit.length, ...cells);
+  });
+  return least.reduce((sum, one) => sum + one + 2.5, 0);
 }

@@ -208,7 +208,7 @@ export function layerFactsTable({
 }
 
 /**
- * Conversion through the newest layers of a stack, from the face of the part on.
+ * Conversion through the newest layers of a stack, from the face of the part on, and the conversion of the gel point where it is given.
  * @example
  * ```ts
  * import { calibrate, exposurePlanOf } from "resinwright";
@@ -216,16 +216,22 @@ export function layerFactsTable({
  * import { stackFigure } from "resinwright/notebook";
  * const work = calibrate(openBrief("data/briefs/flow-cell.json"));
  * const plan = exposurePlanOf({ ...work, layers: 400, baseLayers: 4, baseFactor: 8, transitionLayers: 3, draws: 100 });
- * stackFigure(plan, "Flow-cell resin").caption; // → "Conversion through the newest layers. Flow-cell resin."
+ * const gelConversion = work.shelf.constants.gelConversion.value;
+ * stackFigure(plan, "Flow-cell resin", gelConversion).caption; // → "Conversion through the newest layers. Flow-cell resin."
  * ```
  */
-export function stackFigure({ stack }: ExposurePlanEstimate, conditions: string): FigureContent {
+export function stackFigure(
+  { stack }: ExposurePlanEstimate,
+  conditions: string,
+  gelConversion?: number,
+): FigureContent {
   const layers = [...new Set(stack.map(({ layer }) => layer))];
   return lineFigure({
     caption: "Conversion through the newest layers",
     conditions,
     x: { label: "distance from the face of the part", unit: "µm" },
     y: { label: "conversion", range: [0, 1] },
+    bands: gelConversion === undefined ? [] : [{ label: "gelled", axis: "y", from: gelConversion }],
     series: layers.map((layer) => {
       const points = stack.filter((point) => point.layer === layer);
       return {

@@ -13,7 +13,10 @@ export function addFormulas(markdown: MarkdownIt): void {
   markdown.renderer.rules["formula_shown"] = (tokens, i, _, env) => {
     const { content, block } = tokens[i]!;
     const tag = block ? "div" : "span";
-    return `<${tag} class="formula scroll">${formulaHtml(content, true, env)}</${tag}>`;
+    // Formulas of one line that stand a wide space apart may go on lines of their own where the page is narrow.
+    const parts = content.includes("\\begin") ? [content] : content.split("\\qquad");
+    const set = parts.map((part) => formulaHtml(part.trim(), true, env)).join("\n");
+    return `<${tag} class="formula scroll" role="group" aria-label="Formula">${set}</${tag}>`;
   };
 }
 

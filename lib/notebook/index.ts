@@ -58,7 +58,14 @@ export {
   type FigureRow,
 } from "./views.js";
 export { valueText, verdictText } from "./verdicts.js";
-export { blendFigure, doubtFigure, hardestToCall, liftFigure, targetFigure } from "./plots.js";
+export {
+  beforeAfterFigure,
+  blendFigure,
+  doubtFigure,
+  hardestToCall,
+  liftFigure,
+  targetFigure,
+} from "./plots.js";
 export { layerMoments, layerTable, settlingFigure } from "./layers.js";
 export { changeFigure, changeTable, deadZoneMap, learntTable, resistanceText } from "./oxygen.js";
 export { candidateTable, engineTable, spectraFigure, takenTable } from "./light.js";

@@ -97,8 +97,8 @@ export function learntTable(learnt: LearntOxygen | undefined): TableContent {
     rows: [...readings, ...figures],
     columns: [
       { key: "about", name: "reading or figure" },
-      { key: "before", name: "before", align: "right" },
-      { key: "after", name: "after", align: "right" },
+      { key: "before", name: "before", align: "left" },
+      { key: "after", name: "after", align: "left" },
     ],
   });
 }
@@ -164,7 +164,7 @@ export function changeTable({ effects, notModelled }: ChangeComparison): TableCo
     })),
     columns: [
       { key: "change" },
-      { key: "deadZone_um", name: "dead zone then", align: "right" },
+      { key: "deadZone_um", name: "steady zone then", align: "right" },
       { key: "zoneFactor", name: "on the dead zone", align: "right" },
       { key: "inductionFactor", name: "on the induction time", align: "right" },
       ...(withGel ? [{ key: "gelFactor", name: "on the time to first gel", align: "right" as const }] : []),
@@ -179,8 +179,11 @@ function factorText({ value, low, high }: Interval): string {
   return l === h ? `× ${v}` : `× ${v} (${l} to ${h})`;
 }
 
+/** So many named rows fit on a printed page. */
+const onePage = 12;
+
 /**
- * The factors on the dead zone as a figure, without the changes after which there is no zone; undefined where none is left.
+ * The factors on the dead zone as a figure, the twelve strongest, without the changes after which there is no zone; undefined where none is left.
  * @example
  * ```ts
  * import { compareChanges, usualChanges } from "resinwright";
@@ -196,13 +199,14 @@ export function changeFigure({ effects }: ChangeComparison, conditions: string):
   const rows = effects.flatMap(({ change, deadZone_um }) =>
     deadZone_um === undefined || deadZone_um.factor.low <= 0
       ? []
-      : [{ label: change, ...deadZone_um.factor }],
+      : [{ label: change.replace(/: .*/, ""), ...deadZone_um.factor }],
   );
   if (rows.length === 0) return undefined;
   return intervalFigure({
-    caption: "Factor on the dead zone, change by change; changes after which there is none are left out",
+    caption: `Factor on the dead zone, change by change, the strongest first; changes after which there is none are left out${rows.length > onePage ? ", and the weaker ones: the table holds them" : ""}`,
     conditions,
-    axis: { label: "dead zone then over dead zone now", logarithmic: true },
-    rows,
+    axis: { label: "factor on the dead zone", logarithmic: true },
+    rows: rows.slice(0, onePage),
+    reference: { label: "no change", at: 1 },
   });
 }

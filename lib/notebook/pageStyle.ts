@@ -63,7 +63,7 @@ img { max-width: 100%; height: auto; }
 .contents a:hover { text-decoration: underline; }
 
 .scroll { overflow-x: auto; max-width: 100%; }
-.formula { display: block; overflow-y: hidden; margin: 1.25rem 0; padding-block: 0.25rem; text-align: center; }
+.formula { display: flex; flex-wrap: wrap; justify-content: safe center; gap: 0.5rem 2rem; overflow-y: hidden; margin: 1.25rem 0; padding-block: 0.25rem; }
 math { font-size: 1.08em; }
 
 code, pre { font-family: ui-monospace, monospace; font-size: 0.875em; }
@@ -98,6 +98,7 @@ th:last-child, td:last-child { padding-right: 0; }
 thead th { vertical-align: bottom; font-weight: 600; }
 th.right, td.right { text-align: right; }
 td.right, .whole { white-space: nowrap; }
+td.sentence { white-space: normal; }
 .unit { font-weight: 400; color: var(--muted); white-space: nowrap; }
 
 figure { margin: 2rem 0; }
@@ -167,6 +168,7 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
   h1 { font-size: 1.625rem; }
   h2 { font-size: 1.25rem; margin-top: 2.25rem; }
   table { font-size: 0.875rem; }
+  .formula math { font-size: 0.95em; }
   th, td { padding-right: 0.875rem; }
   .card, .panel { padding: 0.75rem; }
   .card dl { display: block; }
@@ -175,6 +177,16 @@ button + [role="status"] { margin-left: 0.75rem; font-size: 0.8125rem; color: va
   .control label, .at-start { grid-column: 1 / -1; }
   .amount { min-width: 9rem; }
   .amount input { width: 5rem; }
+}
+@media screen and (max-width: 30rem) {
+  .sentences, .sentences caption, .sentences tbody, .sentences tr, .sentences tbody th, .sentences td { display: block; }
+  .scroll > .sentences { min-width: 0; }
+  .sentences thead { position: absolute; width: 1px; height: 1px; overflow: hidden; clip-path: inset(50%); white-space: nowrap; border: 0; }
+  .sentences tbody { border-top: 2px solid var(--ink); }
+  .sentences tr { padding-block: 0.5rem; }
+  .sentences tbody :is(th, td) { padding: 0.125rem 0; text-align: left; white-space: normal; overflow-wrap: anywhere; }
+  .sentences tbody :is(th, td):first-child { font-weight: 600; }
+  .sentences td[data-label]::before { content: attr(data-label) ": "; color: var(--muted); }
 }
 @media (prefers-reduced-motion: no-preference) { html { scroll-behavior: smooth; } }
 

@@ -84,16 +84,24 @@ export function withinText(target: Target | undefined, share: number): string {
 }
 
 /**
- * A share in whole percent, rounded towards one half, so that "95 %" is not said of what falls short of it.
+ * A share in the nearest whole percent, but never rounded onto a limit that it does not reach: "95 %" is not said of what falls short
+ * of it, nor "0 %" of what happens now and then. Halves go towards one half.
  * @example
  * ```ts
  * import { sharePercent } from "resinwright/notebook";
+ * sharePercent(0.879); // → 88
  * sharePercent(0.9496); // → 94
  * sharePercent(0.001); // → 1
  * ```
  */
 export function sharePercent(share: number): number {
-  return share >= 0.5 ? Math.floor(100 * share + 1e-9) : Math.ceil(100 * share - 1e-9);
+  const percent = Number((100 * share).toPrecision(12));
+  if (share < 0.5) {
+    const nearest = Math.floor(percent + 0.5);
+    return [0, 5].some((limit) => percent > limit && nearest === limit) ? nearest + 1 : nearest;
+  }
+  const nearest = Math.ceil(percent - 0.5);
+  return [95, 100].some((limit) => percent < limit && nearest === limit) ? nearest - 1 : nearest;
 }
 
 /**

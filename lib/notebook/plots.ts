@@ -1,18 +1,20 @@
 // The figures notebooks share: an assessment against its targets, where doubt sits, a fitted blend, the pull of a lift.
 
+import { isDeepStrictEqual } from "node:util";
 import type { Assessment } from "../assess/assess.js";
 import type { Case } from "../assess/case.js";
 import type { DeadZoneEstimate } from "../assess/oxygen.js";
 import type { NeverCures, Property } from "../assess/property.js";
 import { viscosityOf } from "../assess/viscosity.js";
 import { blendRule, interactionFrom } from "../decide/calibrate.js";
-import { evenSteps } from "../decide/sweep.js";
+import { evenSteps, type Curve } from "../decide/sweep.js";
 import { stefanForce, suctionLimit } from "../models/separation.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import type { FigureContent } from "./content.js";
 import { numberText } from "./digits.js";
+import { spanOf } from "./figure/axis.js";
 import { intervalFigure, type IntervalRow } from "./figure/interval.js";
-import { lineFigure } from "./figure/line.js";
+import { lineFigure, type LineFigure, type Series } from "./figure/line.js";
 import { shareFigure } from "./figure/share.js";
 
 /**
@@ -118,6 +120,46 @@ export function blendFigure(readings: BlendReadings): FigureContent {
 }
 
 /**
+ * A property along a variable before and after readings, each with its interval; where the readings change nothing, or there are none,
+ * one curve, and the caption says so.
+ * @param figure - A line figure without its series; `before` and `after`, curves of one sweep; `level` of their intervals.
+ * @throws InputError as {@link lineFigure}.
+ * @example
+ * ```ts
+ * import { calibrate, sweep, viscosityOf } from "resinwright";
+ * import { openBrief } from "resinwright/files";
+ * import { beforeAfterFigure } from "resinwright/notebook";
+ * const opened = openBrief("data/briefs/flow-cell.json");
+ * const along = (work: typeof opened) =>
+ *   sweep({ over: [20, 30], at: (temperature_C) => ({ ...work, brief: { ...work.brief, temperature_C } }), of: viscosityOf });
+ * const figure = beforeAfterFigure({
+ *   caption: "Viscosity against temperature", conditions: opened.formulation.title,
+ *   x: { label: "temperature", unit: "°C" }, y: { label: "viscosity", unit: "mPa s" },
+ *   before: along(opened), after: along(calibrate(opened)), level: 0.95,
+ * });
+ * figure.table.columns.length; // → 7
+ * ```
+ */
+export function beforeAfterFigure({
+  before,
+  after,
+  level,
+  ...figure
+}: Omit<LineFigure, "series"> & {
+  readonly before: Curve;
+  readonly after: Curve;
+  readonly level: number;
+}): FigureContent {
+  const series = (name: string, { x, y, low, high }: Curve): Series => ({ name, x, y, low, high, level });
+  const measured = !isDeepStrictEqual(before, after);
+  return lineFigure({
+    ...figure,
+    caption: `${figure.caption}, ${measured ? "before and after the readings" : "from the shelf: no reading changes it"}`,
+    series: [series("from the shelf", before), ...(measured ? [series("with the readings", after)] : [])],
+  });
+}
+
+/**
  * The pull of the brief's largest cross-section against the gap it is lifted from, and the most the window can hold.
  * @example
  * ```ts
@@ -132,19 +174,28 @@ export function blendFigure(readings: BlendReadings): FigureContent {
 export function liftFigure(work: Case, zone: DeadZoneEstimate): FigureContent {
   const { crossSection_mm2, liftSpeed_mms, temperature_C } = work.brief;
   const { value, low, high, level } = viscosityOf(work);
-  const x = evenSteps({ from: 5, to: 1000, count: 30, logarithmic: true });
-  const pull = (viscosity_mPas: number) =>
-    x.map((gap_um) => stefanForce({ viscosity_mPas, crossSection_mm2, gap_um, liftSpeed_mms }));
+  const zone_um = zone.outcome === "value" && zone.value > 0 ? zone.value : undefined;
+  const x = evenSteps({ from: Math.min(5, (zone_um ?? 5) / 2), to: 1000, count: 30, logarithmic: true });
+  const pullFrom = (gap_um: number, viscosity_mPas: number) =>
+    stefanForce({ viscosity_mPas, crossSection_mm2, gap_um, liftSpeed_mms });
+  const pull = (viscosity_mPas: number) => x.map((gap_um) => pullFrom(gap_um, viscosity_mPas));
   const limit_N = suctionLimit({ crossSection_mm2, pressure_Pa: 101325 });
+  // The curve must be seen where it is read: at the dead zone.
+  const atZone = zone_um === undefined ? [] : [pullFrom(zone_um, low) / 3, 3 * pullFrom(zone_um, high)];
   return lineFigure({
     caption: "Pull on the largest cross-section against the gap it starts from",
     conditions: `Rigid disc of ${numberText(crossSection_mm2)} mm² lifted at ${numberText(liftSpeed_mms)} mm/s, ${work.formulation.title} at ${numberText(temperature_C)} °C`,
     x: { label: "gap", unit: "µm", logarithmic: true },
-    y: { label: "pull", unit: "N", logarithmic: true, range: [limit_N / 1000, 30 * limit_N] },
+    y: {
+      label: "pull",
+      unit: "N",
+      logarithmic: true,
+      range: spanOf([limit_N / 1000, 30 * limit_N, ...atZone]),
+    },
     bands: [
       { label: `more than one atmosphere holds (${numberText(limit_N, 3)} N)`, axis: "y", from: limit_N },
     ],
     series: [{ name: "rigid disc", x, y: pull(value), low: pull(low), high: pull(high), level }],
-    marks: zone.outcome === "value" && zone.value > 0 ? [{ label: "dead zone", x: zone.value }] : [],
+    marks: zone_um === undefined ? [] : [{ label: "dead zone", x: zone_um }],
   });
 }

@@ -6,6 +6,7 @@ import type { Brief } from "../recipe/brief.js";
 import { composition, type Formulation } from "../recipe/formulation.js";
 import type { Ingredient, IngredientFigures } from "../recipe/ingredient.js";
 import { propertyNames } from "../recipe/propertyNames.js";
+import type { AtTemperature } from "../recipe/sourced.js";
 import { unitEndingOf, unitLabel } from "../recipe/units.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import type { SourcedValue, UsedSource } from "../result.js";
@@ -120,7 +121,7 @@ export function figureRows(formulation: Formulation): FigureRow[] {
         {
           ingredient: ingredient.id + lot,
           figure: nameOf(field),
-          value: sourcedText(field, figure),
+          value: sourcedText(field, figure) + temperatureText(figure),
           status: figure.status,
           source: figure.source,
         },
@@ -314,6 +315,11 @@ function sourcedText(field: string, { value, u }: SourcedValue): string {
   const unit = unitLabel(field);
   const digits = u > 0 ? Math.max(2, Math.ceil(Math.log10(Math.abs(value) / u)) + 2) : 4;
   return `${numberText(value, Math.min(digits, 7))} ± ${numberText(u, 2)}${unit === "" ? "" : ` ${unit}`}`;
+}
+
+/** What holds at one temperature says at which. */
+function temperatureText(figure: SourcedValue | AtTemperature): string {
+  return "temperature_C" in figure ? ` at ${numberText(figure.temperature_C)} °C` : "";
 }
 
 function nameOf(field: keyof IngredientFigures): string {

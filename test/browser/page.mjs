@@ -1,7 +1,7 @@
 // Opens the pages of rendered folders in a browser, wide and narrow, light and dark, prints them, copies from them and moves
 // what can be moved; weigh-out sheets are also read as printed. The first folder is seen in every view, others in the two that differ most.
 // node test/browser/page.mjs [folder..., default rendered] [--shots <folder for pictures>]
-/* global document, innerWidth */
+/* global document, dispatchEvent, Event, innerWidth */
 
 import { mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from "node:fs";
 import { createRequire } from "node:module";
@@ -24,6 +24,9 @@ const views = [
   { width: 360, colorScheme: "light" },
   { width: 360, colorScheme: "dark" },
 ];
+
+// A4 less its margins, in CSS pixels, and less four lines of caption.
+const printed_px = 986 - 80;
 
 const browser = await launchBrowser();
 if (shots !== undefined) mkdirSync(shots, { recursive: true });
@@ -86,6 +89,11 @@ async function checkView(place, { width, colorScheme }) {
   );
   check(`${name}: figures fit`, tooWide === 0, `${tooWide} do not`);
 
+  const cut = await page.evaluate(cutBoxes, width);
+  check(`${name}: no table or formula is cut off`, cut.length === 0, cut.join(", "));
+  const crossed = await page.evaluate(troubledTexts);
+  check(`${name}: words of figures stand clear`, crossed.length === 0, crossed.join("\n  "));
+
   await page.evaluate(() => document.querySelectorAll("details").forEach((details) => (details.open = true)));
   await page.waitForTimeout(100);
   await page.evaluate(axe);
@@ -125,6 +133,15 @@ async function checkView(place, { width, colorScheme }) {
     await page.keyboard.press("End");
   }
 
+  const tall = await page.evaluate((page_px) => {
+    dispatchEvent(new Event("beforeprint"));
+    const plots = [...document.querySelectorAll("figure.drawn .plot")];
+    const found = plots.map((plot) => plot.offsetHeight).filter((height) => height > page_px);
+    dispatchEvent(new Event("afterprint"));
+    return found;
+  }, printed_px);
+  check(`${name}: every figure prints on one page`, tall.length === 0, `${tall.join(", ")} px`);
+
   const pdf = await page.pdf({ preferCSSPageSize: true, printBackground: true });
   check(
     `${name}: prints`,
@@ -137,6 +154,58 @@ async function checkView(place, { width, colorScheme }) {
     writeFileSync(path.join(shots, `${path.basename(file, ".html")}-${colorScheme}.pdf`), pdf);
   }
   await context.close();
+}
+
+/**
+ * In the page: boxes whose content is wider than they are. On a narrow page numbers may run on under the finger; sentences and formulas
+ * may not, and on a wide one nothing may.
+ */
+function cutBoxes(width) {
+  const kinds = width >= 1280 ? "main .scroll" : "main .formula, main .scroll:has(> .sentences)";
+  return [...document.querySelectorAll(kinds)]
+    .filter((box) => box.closest("details") === null && box.scrollWidth > box.clientWidth)
+    .map((box) => `${box.ariaLabel ?? box.className} by ${box.scrollWidth - box.clientWidth} px`);
+}
+
+/** In the page: words of figures that leave the drawing, lie on other words, are struck by an upright line, or stand askew. */
+function troubledTexts() {
+  const overlap = (a, b) => [
+    Math.min(a.right, b.right) - Math.max(a.left, b.left),
+    Math.min(a.bottom, b.bottom) - Math.max(a.top, b.top),
+  ];
+  return [...document.querySelectorAll("figure.drawn")].flatMap((figure) => {
+    const frame = figure.querySelector(".plot").getBoundingClientRect();
+    const texts = [...figure.querySelectorAll(".main-svg text")].filter(
+      ({ textContent }) => textContent !== "",
+    );
+    const placed = texts.map((text) => ({ words: text.textContent, box: text.getBoundingClientRect() }));
+    const strokes = [...figure.querySelectorAll(".shapelayer path")]
+      .map((path) => path.getBoundingClientRect())
+      .filter((box) => box.width < 4);
+    const askew = texts.filter((text) =>
+      /rotate\((?!0[,)]|-90|90)/.test(text.getAttribute("transform") ?? ""),
+    );
+    return [
+      ...askew.map((text) => `${text.textContent} stands askew`),
+      ...placed
+        .filter(({ box }) => box.left < frame.left - 2 || box.right > frame.right + 2)
+        .map(({ words }) => `${words} leaves the drawing`),
+      ...placed
+        .filter(({ box }) =>
+          strokes.some(
+            (stroke) =>
+              box.left + 1 < stroke.left && stroke.right < box.right - 1 && overlap(box, stroke)[1] > 2,
+          ),
+        )
+        .map(({ words }) => `${words} is struck by a line`),
+      ...placed.flatMap((one, i) =>
+        placed
+          .slice(i + 1)
+          .filter(({ box }) => overlap(one.box, box).every((length) => length > 3))
+          .map(({ words }) => `${one.words} lies on ${words}`),
+      ),
+    ].map((trouble) => `${figure.id}: ${trouble}`);
+  });
 }
 
 async function checkWithoutScript(place) {

@@ -139,6 +139,26 @@ describe("tableHtml", () => {
     expect(tableHtml({ ...table, columns: columns.slice(4), rows: [] })).toMatch(/^<table>/);
   });
 
+  it("gives more room to a table whose columns cannot be made narrow enough for prose", () => {
+    const intervals = Array.from({ length: 4 }, () => "0.859 (0.783 to 0.943)");
+    const columns = ["change", "a", "b", "c", "d"].map((name, i) => ({
+      name,
+      align: i === 0 ? ("left" as const) : ("right" as const),
+    }));
+    const wide = { ...table, columns, rows: [["nitrogen under the film", ...intervals]] };
+    expect(tableHtml(wide)).toMatch(/^<table class="many">/);
+    expect(tableHtml({ ...wide, rows: [["nitrogen", 1, 2, 3, 4]] })).toMatch(/^<table>/);
+  });
+
+  it("lets sentences run over lines, and names each cell of their table but the first for a narrow page", () => {
+    const sentence = "Nobody has measured it here: stir a little into the resin first.";
+    const html = tableHtml({ ...table, rows: [["IBOA", sentence]] });
+    expect(html).toMatch(/^<table class="sentences">/);
+    expect(html).toContain(`<td class="right sentence" data-label="viscosity (mPa·s)">${sentence}</td>`);
+    expect(html).toContain(`<th scope="row" class="left whole">IBOA</th>`);
+    expect(tableHtml(table)).not.toContain("data-label");
+  });
+
   it("marks a long table, which print may break between pages", () => {
     const rows = Array.from({ length: 7 }, () => table.rows[0]!);
     expect(tableHtml({ ...table, rows })).toMatch(/^<table class="long">/);

@@ -119,6 +119,13 @@ describe("stackFigure", () => {
     expect(newest.length).toBeGreaterThan(5);
     expect([...newest].sort((a, b) => b - a)).toEqual(newest);
     expect(table.rows.map(([name]) => name)).toContain("1 before it");
+    expect(table.caption).not.toContain("Window");
+  });
+
+  it("shows where the gel point is, if it is told", () => {
+    const { table, alternativeText } = stackFigure(plan, "Flow-cell resin", 0.25);
+    expect(table.caption).toContain("Window: gelled (conversion at least 0.25).");
+    expect(alternativeText).toContain("gelled (conversion at least 0.25)");
   });
 });
 

@@ -96,10 +96,15 @@ describe("markdownHtml, formulas", () => {
       /^<p>with <span class="katex"><math [^>]*>.*<\/math><\/span> of<\/p>/s,
     );
     const shown = render("$$\n\\eta =\n\\frac{a}{b}\n$$\nafter");
-    expect(shown).toMatch(/^<div class="formula scroll"><span class="katex"><math [^>]*display="block"/);
+    expect(shown).toMatch(
+      /^<div class="formula scroll" role="group" aria-label="Formula"><span class="katex"><math [^>]*display="block"/,
+    );
     expect(shown).toContain("<mfrac>");
     expect(shown).toContain("<p>after</p>");
-    expect(render("so $$a$$ it")).toMatch(/^<p>so <span class="formula scroll">.*<\/span> it<\/p>/s);
+    expect(render("so $$a$$ it")).toMatch(/^<p>so <span class="formula scroll" [^>]*>.*<\/span> it<\/p>/s);
+    // Two formulas a wide space apart may stand below each other.
+    expect(render("$$a = b, \\qquad c = d$$").match(/<math /g)).toHaveLength(2);
+    expect(render("$$\\begin{matrix} a \\qquad b \\end{matrix}$$").match(/<math /g)).toHaveLength(1);
     expect(render("- item\n  $$\n  a\n  $$")).toMatch(/<li>item\n?<div class="formula/);
   });
 

@@ -89,7 +89,7 @@ describe("changeTable and changeFigure", () => {
     const table = changeTable(effects);
     expect(table.columns.map(({ name }) => name)).toEqual([
       "change",
-      "dead zone then",
+      "steady zone then",
       "on the dead zone",
       "on the induction time",
       "on the time to first gel",
@@ -100,6 +100,26 @@ describe("changeTable and changeFigure", () => {
     const figure = changeFigure(effects, "A test")!;
     expect(figure.table.rows.map(([change]) => change)).not.toContain("nitrogen under the film");
     expect(figure.table.rows).toHaveLength(3);
+    expect(figure.alternativeText).toContain("Line at 1: no change.");
+  });
+
+  it("draw no more changes than one page holds, the strongest, and say so", () => {
+    const factor = (value: number) => ({ value, low: value, high: value, level: 0.95 });
+    const many = Array.from({ length: 14 }, (_, i) => ({
+      change: `change ${i}: as told`,
+      deadZone_um: { then: factor(1), factor: factor(20 - i) },
+      inductionTime_s: undefined,
+      gelTime_s: undefined,
+      neverCuresShare: 0,
+    }));
+    const drawn = changeFigure({ effects: many, notModelled: [] }, "A test")!;
+    expect(drawn.table.rows.map(([label]) => label)).toEqual(
+      Array.from({ length: 12 }, (_, i) => `change ${i}`),
+    );
+    expect(drawn.caption).toContain("and the weaker ones: the table holds them");
+    expect(changeFigure({ effects: many.slice(2), notModelled: [] }, "A test")!.caption).not.toContain(
+      "weaker",
+    );
   });
 
   it("say that a resin never cures, and draw nothing of it", () => {

@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import {
   gasText,
   lightText,
+  sharePercent,
   targetBand,
   targetRegion,
   targetText,
@@ -54,6 +55,29 @@ describe("withinText", () => {
   it("says target and share, or that there is no target", () => {
     expect(withinText({ min: 5, max: 50 }, 0.934)).toBe("within its target (5 to 50) in 93 % of the draws");
     expect(withinText(undefined, 1)).toBe("with no target set for it");
+  });
+});
+
+describe("sharePercent", () => {
+  it.each([
+    [0.879, 88],
+    [0.302, 30],
+    [0.5, 50],
+    [1, 100],
+    [0, 0],
+    // A verdict hangs on these limits: what does not reach one is not rounded onto it.
+    [0.9496, 94],
+    [0.95, 95],
+    [0.9996, 99],
+    [0.0504, 6],
+    [0.05, 5],
+    [0.0004, 1],
+    // Halves go towards one half, whatever a double makes of them.
+    [0.875, 87],
+    [0.125, 13],
+    [0.285, 29],
+  ])("%s is said as %s %%", (share, percent) => {
+    expect(sharePercent(share)).toBe(percent);
   });
 });
 

@@ -5,6 +5,7 @@ import { viscosityOf } from "../../lib/assess/viscosity.js";
 import { stefanForce } from "../../lib/models/separation.js";
 import { embed, type FigureContent } from "../../lib/notebook/content.js";
 import {
+  beforeAfterFigure,
   blendFigure,
   doubtFigure,
   hardestToCall,
@@ -182,6 +183,37 @@ describe("blendFigure", () => {
   });
 });
 
+describe("beforeAfterFigure", () => {
+  const before = { x: [0, 1], y: [10, 20], low: [5, 10], high: [20, 40], never: [] };
+  const figure = (after: typeof before) =>
+    beforeAfterFigure({
+      caption: "Viscosity",
+      conditions: "A test",
+      x: { label: "share" },
+      y: { label: "viscosity", unit: "mPa s" },
+      before,
+      after,
+      level: 0.95,
+    });
+
+  it("shows both curves where readings changed something", () => {
+    const { caption, table } = figure({ ...before, low: [8, 16] });
+    expect(caption).toBe("Viscosity, before and after the readings. A test.");
+    expect(table.columns.map(({ name }) => name)).toContain("viscosity: with the readings");
+  });
+
+  it("shows one where nothing was measured, and says so", () => {
+    const { caption, table } = figure(structuredClone(before));
+    expect(caption).toBe("Viscosity, from the shelf: no reading changes it. A test.");
+    expect(table.columns.map(({ name }) => name)).toEqual([
+      "share",
+      "viscosity: from the shelf",
+      "viscosity: from the shelf, low",
+      "viscosity: from the shelf, high",
+    ]);
+  });
+});
+
 describe("liftFigure", () => {
   const work = caseUnder();
   const zone = deadZoneOf({ ...work, draws: 100 });
@@ -207,6 +239,22 @@ describe("liftFigure", () => {
     const mark = shapes(figure).find(({ label }) => label?.text === "dead zone")!;
     expect([mark.x0, mark.x1]).toEqual([thickness, thickness]);
     expect(figure.alternativeText).toMatch(/Mark dead zone at gap [\d.]+ µm\./);
+  });
+
+  it("shows the curve where the dead zone is, however thin, and its label away from the mark", () => {
+    const thin = { ...zone, outcome: "value", value: 0.5 } as Parameters<typeof liftFigure>[1];
+    const drawn = liftFigure(work, thin);
+    const { yaxis } = drawn.layout as { yaxis: { range: [number, number] } };
+    const pull_N = stefanForce({
+      viscosity_mPas: viscosityOf(work).high,
+      crossSection_mm2: 100,
+      liftSpeed_mms: 1,
+      gap_um: 0.5,
+    });
+    expect(10 ** yaxis.range[1]).toBeGreaterThan(pull_N);
+    expect((drawn.table.rows as number[][])[0]![0]).toBeLessThan(0.5);
+    const strip = shapes(drawn).find(({ label }) => label?.text.startsWith("more than"))!;
+    expect(strip.label).toMatchObject({ textposition: "top right" });
   });
 
   it("marks the most a window can hold", () => {

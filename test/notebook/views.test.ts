@@ -138,8 +138,8 @@ describe("figureRows", () => {
     expect(rows).toEqual(
       [
         ["molar mass", "200 ± 0 g/mol"],
-        ["density", "1 ± 0 g/cm³"],
-        ["viscosity", "10 ± 1 mPa s"],
+        ["density", "1 ± 0 g/cm³ at 25 °C"],
+        ["viscosity", "10 ± 1 mPa s at 25 °C"],
         ["viscosity activation", "3000 ± 300 K"],
       ].map(([figure, value]) => ({ ingredient: "THIN", figure, value, status, source })),
     );
@@ -160,7 +160,7 @@ describe("figureRows", () => {
       {
         ingredient: "THICK (lot T-7)",
         figure: "viscosity",
-        value: "12000 ± 100 mPa s",
+        value: "12000 ± 100 mPa s at 25 °C",
         status: "measured here",
         source: "round number chosen for a test",
       },

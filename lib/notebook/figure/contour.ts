@@ -5,9 +5,9 @@ import { numberText } from "../digits.js";
 import type { FigureContent } from "../content.js";
 import { checkAxis, checkAxisNumbers, checkLimits, plotAxis, spanOf } from "./axis.js";
 import type { Axis, Limits, PlotAxis } from "./axis.js";
-import { describeContours, knownValues, regionOf, tableOfContours } from "./contourWords.js";
+import { describeContours, knownValues, regionOf, tableOfContours, type GridPoint } from "./contourWords.js";
 import { levelLabels, placeOf } from "./contourLabels.js";
-import { checkMarks, markShapes, markTraces, type Mark } from "./marks.js";
+import { checkMarks, isPoint, markShapes, markTraces, type Mark } from "./marks.js";
 import { layoutOf, neutralColor, plotlyAxis, seriesColors, tinted, type PlotlyPart } from "./style.js";
 import { roundValues } from "./ticks.js";
 import { captionOf, checkCaption, counted, hoverBox, hoverLine, titleOf } from "./words.js";
@@ -139,7 +139,10 @@ function regionTraces({ x, y, z }: ContourFigure, { label, from, to }: Region): 
   return [
     {
       type: "contour",
-      name: wrapped(`${label}: ${z.label} ${windowText({ from, to }, z.unit)}`, 34),
+      name: wrapped(
+        `${label}: ${z.label} ${windowText({ from, to }, z.unit?.replaceAll(" ", "\u00a0"))}`,
+        34,
+      ),
       x: x.values,
       y: y.values,
       z: z.values,
@@ -166,14 +169,23 @@ function regionLabel({ label }: Region, { x, y }: Point, axes: { x: PlotAxis; y:
   return { x: scaled(axes.x, x), y: scaled(axes.y, y), text, showarrow: false };
 }
 
-/** The grid point of the region nearest to its middle, or undefined where no grid point lies in it. */
+/** The grid point of the region nearest to its middle whose label keeps clear of the marks, or undefined where no grid point lies in it. */
 function middleOfRegion(figure: ContourFigure): Point | undefined {
-  const { x, y, feasible } = figure;
+  const { x, y, feasible, marks = [] } = figure;
   const points = feasible === undefined ? [] : regionOf(figure, feasible);
   if (points.length === 0) return undefined;
-  const [i, j] = middleOf(points);
-  return { x: x.values[i]!, y: y.values[j]! };
+  const at = ([i, j]: GridPoint): Point => ({ x: x.values[i]!, y: y.values[j]! });
+  const taken = marks.filter(isPoint).map((mark) => placeOf(mark, x, y));
+  const clear = points.filter((point) => {
+    const [right, up] = placeOf(at(point), x, y);
+    const apart = taken.every(([r, u]) => Math.abs(right - r) > labelWidth || Math.abs(up - u) > labelHeight);
+    return apart && right > labelWidth / 2 && right < 1 - labelWidth / 2;
+  });
+  return at(nearestToMiddle(clear.length > 0 ? clear : points, points));
 }
+
+/** What a label and a mark take of a narrow figure, as shares of its width and height. */
+const [labelWidth, labelHeight] = [0.3, 0.14];
 
 /** The value of each level beside its line, kept off the label of the region and off the marks. */
 function labelTrace(
@@ -198,11 +210,11 @@ function labelTrace(
   };
 }
 
-function middleOf(points: readonly (readonly [number, number])[]): readonly [number, number] {
-  const mean = (k: 0 | 1): number => points.reduce((sum, point) => sum + point[k], 0) / points.length;
+function nearestToMiddle(candidates: readonly GridPoint[], region: readonly GridPoint[]): GridPoint {
+  const mean = (k: 0 | 1): number => region.reduce((sum, point) => sum + point[k], 0) / region.length;
   const [i, j] = [mean(0), mean(1)];
-  const distance = (point: readonly [number, number]): number => (point[0] - i) ** 2 + (point[1] - j) ** 2;
-  return points.reduce((best, point) => (distance(point) < distance(best) ? point : best));
+  const distance = (point: GridPoint): number => (point[0] - i) ** 2 + (point[1] - j) ** 2;
+  return candidates.reduce((best, point) => (distance(point) < distance(best) ? point : best));
 }
 
 /** About six round levels within the values; a property that is the same everywhere has that one level. */

@@ -8,7 +8,7 @@ import { axisRule, checkAxis, checkLimits, limitsOf, plotAxis } from "./axis.js"
 import type { Axis, Limits, PlotAxis } from "./axis.js";
 import { layoutOf, lookOf, neutralColor, plotlyAxis, tinted, type PlotlyPart } from "./style.js";
 import { axisText, captionOf, checkCaption, hoverFormat, hoverLine, levelText } from "./words.js";
-import { plainText, sentence, windowText, wrapped } from "./words.js";
+import { plainText, quantityText, sentence, windowText, wrapped } from "./words.js";
 
 /** One value with its interval; `target` is the window it should lie in, one limit of which may be left out. */
 export interface IntervalRow extends Interval {
@@ -25,6 +25,8 @@ export interface IntervalFigure {
   readonly axis: Axis;
   /** From top to bottom; all on the one axis, and all with intervals of the same level. */
   readonly rows: readonly IntervalRow[];
+  /** A value that every row is seen against, as an upright line: such as the factor 1, where nothing changes. */
+  readonly reference?: { readonly label: string; readonly at: number };
 }
 
 /**
@@ -51,10 +53,11 @@ export interface IntervalFigure {
  */
 export function intervalFigure(figure: IntervalFigure): FigureContent {
   checkIntervalFigure(figure);
-  const { rows } = figure;
+  const { rows, reference } = figure;
   const axis = plotAxis(figure.axis, [
     ...rows.flatMap(({ value, low, high }) => [value, low, high]),
     ...limitsOf(rows.map(targetOf)),
+    ...(reference === undefined ? [] : [reference.at]),
   ]);
   return {
     kind: "figure",
@@ -62,20 +65,26 @@ export function intervalFigure(figure: IntervalFigure): FigureContent {
     alternativeText: figure.alternativeText ?? describe(figure, axis),
     data: [whiskers(rows), ...valueTraces(rows, axis)],
     layout: layoutOf({
-      x: plotlyAxis(axis),
+      x: valueAxis(axis),
       y: rowAxis(rows.map(({ label }) => label)),
       height: heightOf(rows) + 20 * 4,
-      shapes: targetShapes(rows, axis),
+      shapes: [...targetShapes(rows, axis), ...(reference === undefined ? [] : [referenceShape(reference)])],
       showlegend: true,
     }),
     table: tableBehind(figure),
   };
 }
 
-/** The height of a figure of named rows: room for the label with the most lines, and for the other axis. */
+/** The height of a figure of named rows: room between the middles of two rows for half of each label, and for the other axis. */
 export function heightOf(rows: readonly { label: string }[]): number {
   const lines = rows.map(({ label }) => rowLabel(label).split("<br>").length);
-  return 80 + rows.length * (20 + 18 * Math.max(...lines));
+  const between = lines.map((count, i) => (count + (lines[i + 1] ?? count)) / 2);
+  return 80 + rows.length * (12 + 18 * Math.max(...between));
+}
+
+/** The axis of the values of named rows: the names leave it half of a narrow page. */
+export function valueAxis(axis: PlotAxis): PlotlyPart {
+  return plotlyAxis(axis, { ticks: 4, titleWidth: 22 });
 }
 
 /** The upright axis of named rows, the first on top. */
@@ -156,6 +165,12 @@ function targetShapes(rows: readonly IntervalRow[], { range }: PlotAxis): Plotly
   });
 }
 
+function referenceShape({ label, at }: { label: string; at: number }): PlotlyPart {
+  const line = { color: neutralColor, width: 2, dash: "dot" };
+  const across = { xref: "x", x0: at, x1: at, yref: "paper", y0: 0, y1: 1 };
+  return { type: "line", layer: "below", ...across, line, showlegend: true, name: plainText(label) };
+}
+
 function tableBehind({ caption, axis, rows }: IntervalFigure): TableContent {
   const number = (name: string) => ({ name, unit: axis.unit, align: "right" }) as const;
   const withTarget = rows.some((row) => row.target !== undefined);
@@ -186,9 +201,10 @@ function tableBehind({ caption, axis, rows }: IntervalFigure): TableContent {
   };
 }
 
-function describe({ rows, axis: { unit } }: IntervalFigure, axis: PlotAxis): string {
+function describe({ rows, axis: { unit }, reference }: IntervalFigure, axis: PlotAxis): string {
   return [
     `Values with their ${levelText(rows[0]!.level)} over ${axisText(axis)}.`,
+    ...(reference === undefined ? [] : [`Line at ${quantityText(reference.at, unit)}: ${reference.label}.`]),
     ...rows.map((row) => {
       const place =
         row.target === undefined ? "" : `; target ${windowText(targetOf(row), unit)}: ${placeText(row)}`;
@@ -219,9 +235,14 @@ function targetOf({ target }: IntervalRow): Limits {
 
 function checkIntervalFigure(figure: IntervalFigure): void {
   const where = checkCaption("intervalFigure", figure);
-  const { axis, rows } = figure;
-  refuseUnknownKeys(where, figure, ["caption", "conditions", "alternativeText", "axis", "rows"]);
+  const { axis, rows, reference } = figure;
+  refuseUnknownKeys(where, figure, ["caption", "conditions", "alternativeText", "axis", "rows", "reference"]);
   checkAxis(`${where}: axis`, axis);
+  if (reference !== undefined) {
+    const place = `${where}: reference "${reference.label}"`;
+    refuseUnknownKeys(place, reference, ["label", "at"]);
+    checkNumber(reference.at, { where: place, field: "at", ...axisRule(axis) });
+  }
   if (rows.length === 0) throw new InputError(`${where}: rows is empty; give at least one row`);
   for (const row of rows) checkRow(`${where}: row "${row.label}"`, row, figure);
 }

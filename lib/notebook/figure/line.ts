@@ -4,7 +4,16 @@ import { checkNumber, InputError, refuseUnknownKeys, show, unknownName } from ".
 import type { FigureContent } from "../content.js";
 import { checkAxis, checkAxisNumbers, limitsOf, plotAxis, type Axis, type PlotAxis } from "./axis.js";
 import { describeLines, tableOfLines } from "./lineWords.js";
-import { bandShapes, checkBands, checkMarks, markShapes, markTraces, type Band, type Mark } from "./marks.js";
+import {
+  bandShapes,
+  checkBands,
+  checkMarks,
+  freeSide,
+  markShapes,
+  markTraces,
+  type Band,
+  type Mark,
+} from "./marks.js";
 import { dashes, layoutOf, lookOf, plotlyAxis, tinted, type PlotlyPart } from "./style.js";
 import {
   captionOf,
@@ -87,7 +96,10 @@ export function lineFigure(figure: LineFigure): FigureContent {
     layout: layoutOf({
       x: plotlyAxis(x),
       y: plotlyAxis(y),
-      shapes: [...bands.flatMap((band) => bandShapes(band, axes[band.axis])), ...markShapes(marks, x)],
+      shapes: [
+        ...bands.flatMap((band) => bandShapes(band, axes[band.axis], freeSide(marks, x))),
+        ...markShapes(marks, x),
+      ],
       showlegend: true,
     }),
     table: tableOfLines(figure),

@@ -18,8 +18,12 @@ export interface Mark {
   readonly y?: number;
 }
 
-/** The shapes of a window: the tint, a dashed line at each limit, and the label inside. */
-export function bandShapes({ label, axis, from, to }: Band, plot: PlotAxis): PlotlyPart[] {
+/** The shapes of a window: the tint, a dashed line at each limit, and the label inside, on the `side` that is given for one across. */
+export function bandShapes(
+  { label, axis, from, to }: Band,
+  plot: PlotAxis,
+  side: "left" | "right" = "left",
+): PlotlyPart[] {
   const [start, end] = [from ?? plot.range[0], to ?? plot.range[1]];
   const limit = (value: number): PlotlyPart => ({
     type: "line",
@@ -34,9 +38,9 @@ export function bandShapes({ label, axis, from, to }: Band, plot: PlotAxis): Plo
     line: { width: 0 },
     fillcolor: tinted(neutralColor),
     label: {
-      text: wrapped(label, axis === "x" ? 14 : 34),
+      text: wrapped(label, axis === "x" ? 14 : 24),
       // An upright strip may be narrower than its label, which then needs room on the side away from the edge.
-      textposition: axis === "x" && placeAlong(plot, start) > 0.6 ? "top right" : "top left",
+      textposition: axis === "x" && placeAlong(plot, start) > 0.6 ? "top right" : `top ${side}`,
       textangle: 0,
       padding: 4,
     },
@@ -60,9 +64,15 @@ export function markTraces(marks: readonly Mark[], axes: { x: PlotAxis; y: PlotA
   }));
 }
 
+/** The side of a window across a figure that its label takes: away from the first upright line. */
+export function freeSide(marks: readonly Mark[], x: PlotAxis): "left" | "right" {
+  const upright = marks.find((mark) => !isPoint(mark));
+  return upright !== undefined && placeAlong(x, upright.x) < 0.5 ? "right" : "left";
+}
+
 /** The upright lines of the marks that have no `y`. */
 export function markShapes(marks: readonly Mark[], x: PlotAxis): PlotlyPart[] {
-  const upright = marks.filter((mark) => mark.y === undefined);
+  const upright = marks.filter((mark) => !isPoint(mark));
   return upright.map((mark) => ({
     type: "line",
     ...across("x", mark.x, mark.x),
@@ -108,7 +118,8 @@ export function checkMarks(where: string, marks: readonly Mark[], axes: { x: Axi
   }
 }
 
-function isPoint(mark: Mark): mark is Mark & { y: number } {
+/** Whether a mark is a point, not an upright line. */
+export function isPoint(mark: Mark): mark is Mark & { y: number } {
   return mark.y !== undefined;
 }
 

@@ -4,8 +4,8 @@ import { checkNumber, InputError, refuseUnknownKeys } from "../../door.js";
 import { numberText } from "../digits.js";
 import type { FigureContent } from "../content.js";
 import { plotAxis } from "./axis.js";
-import { heightOf, rowAxis } from "./interval.js";
-import { layoutOf, plotlyAxis, seriesColors } from "./style.js";
+import { heightOf, rowAxis, valueAxis } from "./interval.js";
+import { layoutOf, seriesColors } from "./style.js";
 import { captionOf, checkCaption, counted, plainText, sentence } from "./words.js";
 
 /** One input and its share, 0 to 1. */
@@ -65,7 +65,7 @@ export function shareFigure(figure: ShareFigure): FigureContent {
       },
     ],
     layout: layoutOf({
-      x: plotlyAxis(axis),
+      x: valueAxis(axis),
       y: rowAxis(rows.map(({ label }) => label)),
       height: heightOf(rows),
       showlegend: false,

@@ -80,12 +80,15 @@ export function layoutOf({
   };
 }
 
-/** The plotly axis of a checked axis: its title, its range, and few enough ticks for a narrow page. */
-export function plotlyAxis({ title, logarithmic, range }: PlotAxis): PlotlyPart {
+/** The plotly axis of a checked axis: its title, its range, and few enough ticks and letters a line for a narrow page. */
+export function plotlyAxis(
+  { title, logarithmic, range }: PlotAxis,
+  { ticks: most = 7, titleWidth = 34 } = {},
+): PlotlyPart {
   const [low, high] = range;
-  const ticks = logarithmic ? logarithmicTicks(low, high) : roundValues({ low, high, count: 6 });
+  const ticks = logarithmic ? logarithmicTicks(low, high, most) : roundValues({ low, high, count: most - 1 });
   return {
-    title: { text: wrapped(title, 40), standoff: 10, font: { size: 14 } },
+    title: { text: wrapped(title, titleWidth), standoff: 10, font: { size: 14 } },
     type: logarithmic ? "log" : "linear",
     range: logarithmic ? range.map(Math.log10) : range,
     tickmode: "array",

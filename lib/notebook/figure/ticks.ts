@@ -11,16 +11,16 @@ export function roundValues({ low, high, count }: { low: number; high: number; c
   return Array.from({ length: last - first + 1 }, (_, k) => withoutNoise((first + k) * step));
 }
 
-/** Ticks of a logarithmic axis, at most seven: 1, 2, 5 of each decade if they fit, else fewer; round steps within a decade. */
-export function logarithmicTicks(low: number, high: number): number[] {
+/** Ticks of a logarithmic axis, at most `most`: 1, 2, 5 of each decade if they fit, else fewer; round steps within a decade. */
+export function logarithmicTicks(low: number, high: number, most = 7): number[] {
   const inRange = (value: number): boolean => value >= low * (1 - 1e-9) && value <= high * (1 + 1e-9);
   const decades = powersOfTen(low, high);
   const candidates = [[1, 2, 5], [1, 3], [1]].map((factors) =>
     decades.flatMap((decade) => factors.map((factor) => withoutNoise(factor * decade))).filter(inRange),
   );
-  const ticks = candidates.find((values) => values.length <= 7);
-  if (ticks === undefined) return everyFew(candidates.at(-1)!, 7);
-  return ticks.length < 3 ? roundValues({ low, high, count: 6 }) : ticks;
+  const ticks = candidates.find((values) => values.length <= most);
+  if (ticks === undefined) return everyFew(candidates.at(-1)!, most);
+  return ticks.length < 3 ? roundValues({ low, high, count: most - 1 }) : ticks;
 }
 
 function powersOfTen(low: number, high: number): number[] {

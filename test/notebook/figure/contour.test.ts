@@ -70,7 +70,7 @@ describe("contourFigure", () => {
   it("tints, outlines and labels the feasible region", () => {
     const { traces, layout } = partsOf({ ...plain, feasible });
     expect(traces[0]).toMatchObject({
-      name: "pours well: viscosity 200 to 800<br>mPa s",
+      name: "pours well: viscosity 200 to 800<br>mPa\u00a0s",
       // The constraint names what lies outside: plotly tints where a constraint does not hold.
       contours: { type: "constraint", operation: "][", value: [200, 800] },
       line: { width: 4 },
@@ -85,6 +85,37 @@ describe("contourFigure", () => {
   ])("draws a region open on one side: %o", (limits, operation, value) => {
     const { traces } = partsOf({ ...plain, feasible: { label: "r", ...limits } });
     expect(traces[0]!["contours"]).toMatchObject({ operation, value });
+  });
+
+  it("keeps the label of the region off the marks, inside the region", () => {
+    const of = (marks: ContourFigure["marks"]) => {
+      const { layout } = partsOf({
+        ...plain,
+        ...plane(21),
+        feasible: { label: "r", from: 10, to: 30 },
+        marks,
+      });
+      const [label] = layout.annotations as { x: number; y: number }[];
+      return label!;
+    };
+    const free = of([]);
+    expect([free.x, free.y]).toEqual([10, 10]);
+    const { x, y } = of([{ label: "present", x: free.x, y: free.y }]);
+    expect(x + y).toBeGreaterThanOrEqual(10);
+    expect(x + y).toBeLessThanOrEqual(30);
+    // A label and a mark are up to 0.3 of a narrow figure wide and 0.14 high; the axes are 20 long.
+    expect(Math.abs(x - free.x) > 6 || Math.abs(y - free.y) > 2.8).toBe(true);
+  });
+
+  it("labels each branch of a level that has room", () => {
+    // z = |x + y - 20| is 10 along two lines, 0.35 of the figure from each other; at 1 they lie too close for two labels.
+    const ridge = plane(21);
+    const values = ridge.z.values.map((row) => row.map((sum) => Math.abs(sum! - 20)));
+    const labels = levelLabels({ ...ridge, z: { label: "away", values }, levels: [10, 1], taken: [] });
+    expect(labels.filter(({ level }) => level === 10)).toHaveLength(2);
+    const sides = labels.map(({ level, x, y }) => `${level}: ${x + y}`);
+    expect(sides.slice(0, 2).toSorted()).toEqual(["10: 10", "10: 30"]);
+    expect(labels.filter(({ level }) => level === 1).length).toBeGreaterThan(0);
   });
 
   it("places the label of the region inside it, in powers of ten on a logarithmic axis", () => {

@@ -70,6 +70,27 @@ describe("intervalFigure", () => {
     expect(tall.height - low.height).toBe(36);
   });
 
+  it("draws what all are seen against as an upright line, named in the legend, within the axis", () => {
+    const seen = intervalFigure({ ...plain, rows: [free], reference: { label: "the old resin", at: 700 } });
+    const { shapes, xaxis } = seen.layout as { shapes: Part[]; xaxis: { range: [number, number] } };
+    expect(shapes).toEqual([
+      expect.objectContaining({ type: "line", x0: 700, x1: 700, showlegend: true, name: "the old resin" }),
+    ]);
+    expect(xaxis.range[1]).toBeGreaterThan(700);
+    expect(seen.alternativeText).toContain("Line at 700 mPa s: the old resin.");
+  });
+
+  it("takes room for half of each of two labels between them, not for the longest twice", () => {
+    const heightOf = (...labels: string[]) =>
+      (
+        intervalFigure({ ...plain, rows: labels.map((label) => ({ ...free, label })) })
+          .layout as typeof layout
+      ).height;
+    const long = "a name that needs three lines at this width";
+    expect(heightOf("x", long, "y") - heightOf("x", "z", "y")).toBe(3 * 18);
+    expect(heightOf(long, long, "y") - heightOf("x", "z", "y")).toBe(3 * 36);
+  });
+
   it("hovers with value, unit and interval", () => {
     expect(traces[1]!["hovertemplate"]).toBe(
       "<b>%{text}</b><br>viscosity: %{x:.4~r} mPa s<br>95 &#37; interval: " +
@@ -128,6 +149,16 @@ describe("intervalFigure", () => {
       "zero on a logarithmic axis",
       { axis: { ...plain.axis, logarithmic: true }, rows: [{ ...free, low: 0 }] },
       `${where}: row "e": low is 0; it must be a finite number above 0`,
+    ],
+    [
+      "a reference that has no place",
+      { reference: { label: "old", at: NaN } },
+      `${where}: reference "old": at is NaN; it must be a finite number`,
+    ],
+    [
+      "an unknown key of a reference",
+      { reference: { label: "old", at: 1, colour: "red" } as unknown as { label: string; at: number } },
+      `${where}: reference "old": unknown`,
     ],
     [
       "a target without extent",
