@@ -235,7 +235,7 @@ describe("batch", () => {
     expect(first).toMatchObject({
       line: 1,
       label: "IBOA",
-      target_g: 141,
+      target_g: 147.75,
       contents: [{ ingredient: "IBOA" }],
     });
     expect(printed["masterBatches"]).toMatchObject([
