@@ -238,10 +238,7 @@ describe("batch", () => {
       target_g: 147.75,
       contents: [{ ingredient: "IBOA" }],
     });
-    expect(printed["masterBatches"]).toMatchObject([
-      { solute: "MEHQ", carrier: "IBOA" },
-      { solute: "BBOT", carrier: "IBOA" },
-    ]);
+    expect(printed["masterBatches"]).toMatchObject([{ solute: "MEHQ", carrier: "IBOA" }]);
   });
 
   it("reads further shelves, a later one first", async () => {

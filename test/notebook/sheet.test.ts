@@ -100,7 +100,7 @@ describe("sheetOf", () => {
     const { reason, limits } = content.portions[3]!;
     expect(limits).toBe("0.749 to 0.751");
     expect(reason).toMatch(
-      /; too little for this balance, and a master batch in which it is sure to dissolve would be 250 g, more than the diluents allow: weigh it by itself, within limits drawn in by 0\.0018 g for the doubt of the balance$/,
+      /; below the minimum weight of this balance, and a master batch in which it is sure to dissolve would be 250 g, more than the diluents allow: weigh it by itself, within limits drawn in by 0\.0018 g for the doubt of the balance$/,
     );
   });
 
