@@ -71,7 +71,7 @@ export function masterBatchTable({
 }: WeighOutSheet): TableContent | undefined {
   if (masterBatches.length === 0) return undefined;
   return tableOf({
-    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. ${masterBatches.map((one) => `${one.label}: ${dissolvingText(one)}`).join("; ")}`,
+    caption: `Master batches to make first: these portions are below the ${massText(minimumWeight_g, balance)} g that the balance weighs honestly. ${masterBatches.map((one) => `${one.label}: ${dissolvingText(one)}`).join(". ")}`,
     rows: masterBatches.flatMap((master) => {
       const { label, carrier, stages, massFraction, dose_g, enoughFor } = master;
       return stages.map(({ of, mass_g, carrier_g }) => ({

@@ -31,14 +31,14 @@ export function rescueTable({
   const amber = additions.some(({ present_g }, i) => present_g > 0 && holdsInitiator(portions[i]!));
   const small = additions
     .filter(({ add_g }) => add_g > 0 && !isHonest(add_g, minimumWeight_g))
-    .map((one) => `${one.label} to ${numberText((200 * one.u_g) / (one.present_g + one.add_g), 2)} %`);
+    .map((one) => `${one.label} ${numberText((200 * one.u_g) / (one.present_g + one.add_g), 2)} %`);
   return tableOf({
     caption: [
-      `What to add, in the order of the sheet${amber ? ", under amber light, as an initiator is in the vessel" : ""}`,
+      `What to add, in the order of the sheet${amber ? ", under amber light, as an initiator is in the vessel" : ""}. The balance carries ${numberText(balance.capacity_g, 9)} g, vessel included: where the batch and its vessel are more, each in a vessel of its own`,
       ...(small.length === 0
         ? []
         : [
-            `Less than ${massText(minimumWeight_g, balance)} g of one portion is weighed where what is in and what is added are together known well enough, two standard uncertainties being: ${small.join(", ")}`,
+            `Less than ${massText(minimumWeight_g, balance)} g of one portion is weighed where what is in and what is added are together known well enough; two standard uncertainties are, of the whole portion: ${small.join(", ")}`,
           ]),
     ].join(". "),
     rows: additions.map(({ label, present_g, add_g }) => ({

@@ -273,7 +273,7 @@ describe("a rescue with additions below the minimum weight", () => {
     // 0.1 and 0.2 g to u = 4.08248 sqrt(2) mg, of 10.1 and 20.2 g; 6 g of 306 g likewise.
     const { caption, rows } = rescueTable(back({ 1: 305, 5: 560 }))!;
     expect(caption).toBe(
-      "What to add, in the order of the sheet, under amber light, as an initiator is in the vessel. Less than 8.20 g of one portion is weighed where what is in and what is added are together known well enough, two standard uncertainties being: AB to 0.11 %, PI to 0.057 %, MID to 0.0095 %",
+      "What to add, in the order of the sheet, under amber light, as an initiator is in the vessel. The balance carries 2000 g, vessel included: where the batch and its vessel are more, each in a vessel of its own. Less than 8.20 g of one portion is weighed where what is in and what is added are together known well enough; two standard uncertainties are, of the whole portion: AB 0.11 %, PI 0.057 %, MID 0.0095 %",
     );
     expect(rows.map((row) => row.at(-1))).toEqual(["nothing", "0.18", "0.36", "2.18", "nothing"]);
   });

@@ -100,7 +100,7 @@ describe("sheetOf", () => {
     const { reason, limits } = content.portions[3]!;
     expect(limits).toBe("0.749 to 0.751");
     expect(reason).toMatch(
-      /; below the 1\.6 g that this balance weighs honestly, and a master batch in which it is sure to dissolve would be 250 g, more than the diluents allow: weigh it by itself, its limits are drawn in by 0\.0018 g for the doubt of the balance$/,
+      /; below the minimum weight of this balance, and a master batch in which it is sure to dissolve would be 250 g, more than the diluents allow: weigh it by itself, within limits drawn in by 0\.0018 g for the doubt of the balance$/,
     );
   });
 

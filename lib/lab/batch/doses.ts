@@ -75,7 +75,7 @@ export function planDoses(input: PlanInput): {
 
 function ownDose(ingredient: Ingredient, mass_g: number, small: boolean, input: PlanInput): Dose {
   const drawnIn_g = small ? (roomBeside(mass_g, input) ?? 0) : 0;
-  const remark = `; below the ${rounded(input.minimumWeight_g)} g that this balance weighs honestly, and ${whyNoMaster(ingredient, mass_g, input)}: weigh it by itself, its limits are drawn in by ${rounded(drawnIn_g, 2)} g for the doubt of the balance`;
+  const remark = `; below the minimum weight of this balance, and ${whyNoMaster(ingredient, mass_g, input)}: weigh it by itself, within limits drawn in by ${rounded(drawnIn_g, 2)} g for the doubt of the balance`;
   return {
     ingredient,
     massFraction: mass_g / input.batch_g,

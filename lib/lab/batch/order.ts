@@ -79,11 +79,11 @@ function clearText(ordered: readonly Entry[], i: number): string {
   const clear = "stir until clear, no grain against the light";
   const after = (k: number) => ordered.slice(0, k + 1);
   if (clearsAt(after(i), i)) return `; ${clear}`;
-  const here = `; it is ${percentText(shareOf(one, after(i)))} of what is in the vessel, and the shelf says that ${solubilityOf(one.ingredient)!.text} dissolves`;
+  const here = `; it is ${percentText(shareOf(one, after(i)))} of what is in the vessel here, and the shelf says that ${solubilityOf(one.ingredient)!.text} dissolves`;
   const k = ordered.findIndex((_, j) => j > i && clearsAt(after(j), i));
   if (k === -1) return `${here}: it may never clear`;
   const then = `${ordered[k]!.ingredient.id} is in (${percentText(shareOf(one, after(k)))})`;
-  return `${here}: what does not clear here must clear once ${then}; then ${clear}`;
+  return `${here}: clear, with no grain against the light, at the latest once ${then}`;
 }
 
 const baseReason = "the thinnest liquid first: solids dissolve fastest in it";

@@ -93,10 +93,10 @@ describe("a solid whose solubility is on the shelf", () => {
   it("says when it may clear only with the thick liquids, or never", () => {
     expect(stepsOf({ value: 2, u: 0 })).toEqual(["THIN", "MID", "AB", "PI", "THICK"]);
     expect(reasonOf({ value: 2, u: 0 })).toBe(
-      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel, and the shelf says that 2 % dissolves: what does not clear here must clear once THICK is in (1 %); then stir until clear, no grain against the light",
+      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel here, and the shelf says that 2 % dissolves: clear, with no grain against the light, at the latest once THICK is in (1 %)",
     );
     expect(reasonOf({ value: 1.2, u: 0.4 })).toBe(
-      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel, and the shelf says that 1.2 ± 0.4 % dissolves: it may never clear",
+      "into the thin liquid, and before the initiator; it is 2.3 % of what is in the vessel here, and the shelf says that 1.2 ± 0.4 % dissolves: it may never clear",
     );
   });
 
