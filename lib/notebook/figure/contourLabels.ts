@@ -35,6 +35,7 @@ export function levelLabels({
     branches.forEach((branch, k) => {
       const placed = branch
         .map((label) => ({ label, place: placeOf(label, x, y) }))
+        .filter(({ place }) => k === 0 || offEdges(place))
         .filter(({ place }) => labels.every((other) => standApart(place, placeOf(other, x, y))));
       if (placed.length === 0) return;
       const best = placed.reduce((a, b) => (room(b.place, places) > room(a.place, places) ? b : a));
@@ -49,6 +50,11 @@ export function levelLabels({
 /** Whether two labels leave each other legible on a narrow page, where one is about this wide and high. */
 function standApart([x, y]: Place, [otherX, otherY]: Place): boolean {
   return Math.abs(x - otherX) > 0.15 || Math.abs(y - otherY) > 0.08;
+}
+
+/** Whether a label is whole within a narrow figure. */
+function offEdges([x, y]: Place): boolean {
+  return x > 0.08 && x < 0.85 && y > 0.05 && y < 0.95;
 }
 
 /** What a further label of a level needs, as a share of the figure: on a narrow page a label is about this wide. */
