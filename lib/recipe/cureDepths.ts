@@ -79,7 +79,7 @@ const FEWEST_EXPOSURES = 3;
 export function readCureDepths(document: JsonDocument): CureDepthSeries {
   const series = readDocument(seriesSchema, document);
   const { where } = document;
-  checkMeasuredParts(where, series.parts);
+  checkMeasuredParts(document, series.parts);
   const { spectrum, wavelength_nm } = series.light;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";

@@ -46,13 +46,19 @@ export function readDocument<T>(schema: z.ZodType<T>, document: JsonDocument): T
   if (result.success) return result.data;
   const complaints = result.error.issues.map((issue) => {
     const unknownKey = issue.code === "unrecognized_keys" ? issue.keys.slice(0, 1) : [];
-    const line = lineOf(document.tree, [...issue.path, ...unknownKey]);
-    const field = issue.path
-      .map((step) => (typeof step === "number" ? `[${step}]` : `.${String(step)}`))
-      .join("");
-    return `${document.where}, line ${line}: ${field.replace(/^\./, "") || "the file"} ${issue.message}`;
+    return `${placeOf(document, issue.path, unknownKey)} ${issue.message}`;
   });
   throw new InputError(complaints.join("\n"));
+}
+
+/** A field of a document by file, line and name; `within` leads on to the line, not to the name. */
+export function placeOf(
+  { where, tree }: JsonDocument,
+  path: readonly PropertyKey[],
+  within: readonly PropertyKey[] = [],
+): string {
+  const field = path.map((step) => (typeof step === "number" ? `[${step}]` : `.${String(step)}`)).join("");
+  return `${where}, line ${lineOf(tree, [...path, ...within])}: ${field.replace(/^\./, "") || "the file"}`;
 }
 
 /** An object that refuses unknown keys with the nearest known one. */

@@ -4,6 +4,7 @@
 import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourceStatus } from "../result.js";
+import { gasPressures_Pa } from "./brief.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import { checkMeasuredParts, measuredPartsSchema, type MeasuredParts } from "./measuredParts.js";
 import { idSchema, sourceText, statusSchema } from "./sourced.js";
@@ -70,7 +71,7 @@ export interface WindowReadings {
 export function readWindowReadings(document: JsonDocument): WindowReadings {
   const readings = readDocument(windowReadingsSchema, document);
   const { where } = document;
-  checkMeasuredParts(where, readings.parts);
+  checkMeasuredParts(document, readings.parts);
   const { spectrum, wavelength_nm, inductionTimes, uncuredLayers } = readings;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";
@@ -101,7 +102,7 @@ const windowReadingsSchema: z.ZodType<WindowReadings> = strict({
   temperature_C: quantity("temperature_C", { min: 0, max: 120 }),
   film: idSchema,
   filmThickness_um: read("filmThickness_um"),
-  gasPressure_Pa: quantity("gasPressure_Pa", { above: 0 }).default(101325),
+  gasPressure_Pa: quantity("gasPressure_Pa", gasPressures_Pa).default(101325),
   inductionTimes: z
     .array(
       strict({
