@@ -148,7 +148,7 @@ describe("correctOxygen", () => {
     const [warning] = zoneOf(told).warnings;
     expect(warning!.code).toBe("reading-contradicts");
     expect(warning!.message).toMatch(
-      /µm of uncured layer at 8 mW\/cm² over 20.95 % oxygen is more than the figures allow, by \d+(\.\d)? standard deviations\. Look for a slip/,
+      /µm of uncured layer at 8 mW\/cm² over 20.95 % oxygen \(\S+\) is more than the figures allow, by \d+(\.\d)? standard deviations\. Check its unit, its u and the light/,
     );
     expect(inductionTimeOf({ ...told, draws }).warnings).toEqual([warning]);
     expect(zoneOf(knowing(readings([], [[expected.zone, 0.5]]))).warnings).toEqual([]);

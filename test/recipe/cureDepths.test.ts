@@ -70,6 +70,14 @@ describe("readCureDepths", () => {
       'spots[5].reading is "float"; it must be one of "measured", "at-least", "at-most", "floated"; did you mean "floated"?',
     ],
     [{ spots: [{ ...spots[0], depth_um: 3 }] }, 'spots[0] has an unknown field "depth_um"'],
+    [
+      { spots: spots.map((spot) => ({ ...spot, cureDepth_um: spot.cureDepth_um / 1000 })) },
+      "spots[0].cureDepth_um is 0.022; it must be at least 1",
+    ],
+    [
+      { depthU_um: 200 },
+      "s.json, line 24: depthU_um is 200, and the deepest measured cureDepth_um is 186; a depth has to be known better than that: check the units of both (µm)",
+    ],
     [{ depthU_um: 0 }, "depthU_um is 0; it must be above 0"],
     [
       { spots: [{ exposure_mJcm2: -1, cureDepth_um: 3 }] },
