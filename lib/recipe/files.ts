@@ -292,13 +292,13 @@ function readJson(file: string): JsonDocument {
 }
 
 /** @throws InputError when the file cannot be read or is not in UTF-8. @internal */
-export function readText(file: string): string {
+export function readText(file: string, where = shown(file)): string {
   let bytes: Buffer;
   try {
     bytes = readFileSync(file);
   } catch (error) {
     const { code } = error as NodeJS.ErrnoException;
-    throw new InputError(`${shown(file)}: cannot be read (${code ?? "unknown reason"}); check the path`, {
+    throw new InputError(`${where}: cannot be read (${code ?? "unknown reason"}); check the path`, {
       cause: error,
     });
   }
@@ -308,7 +308,7 @@ export function readText(file: string): string {
     const [first, second] = bytes;
     const isUtf16 = (first === 0xff && second === 0xfe) || (first === 0xfe && second === 0xff);
     throw new InputError(
-      `${shown(file)}: is not text in UTF-8${isUtf16 ? " but in UTF-16" : ""}; save it as UTF-8 (an editor offers it when saving)`,
+      `${where}: is not text in UTF-8${isUtf16 ? " but in UTF-16" : ""}; save it as UTF-8 (an editor offers it when saving)`,
       { cause: error },
     );
   }
