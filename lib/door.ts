@@ -69,7 +69,8 @@ export function refuseUnknownKeys(where: string, given: object, known: readonly 
 /** The message for a name that is not among `known`: says the nearest one, or lists them. */
 export function unknownName(where: string, kind: string, given: string, known: readonly string[]): string {
   const near = nearestName(given, known);
-  const hint = near === undefined ? `known: ${known.join(", ")}` : `did you mean "${near}"?`;
+  const all = known.length === 0 ? "none is known here" : `known: ${known.join(", ")}`;
+  const hint = near === undefined ? all : `did you mean "${near}"?`;
   return `${where}: unknown ${kind} "${given}"; ${hint}`;
 }
 

@@ -4,7 +4,7 @@ import type { Brief, PropertyName, Target } from "../recipe/brief.js";
 import type { Formulation } from "../recipe/formulation.js";
 import { propertyNames } from "../recipe/propertyNames.js";
 import type { UsedSource, Warning } from "../result.js";
-import { avoidReasons } from "./avoided.js";
+import { avoidReasons, checkAvoided, uncheckedWarnings } from "./avoided.js";
 import type { Case } from "./case.js";
 import { drawCure } from "./cure.js";
 import { drawPenetrationDepth } from "./depth.js";
@@ -12,6 +12,7 @@ import { distinctSources, startDraws, type DrawOptions, type Draws } from "./dou
 import { drawOpticalDepth } from "./light.js";
 import { drawDeadZone, drawInductionTime, type DeadZoneEstimate } from "./oxygen.js";
 import { judge, type Drawn, type Property, type Verdict } from "./property.js";
+import { solubilityWarnings } from "./solubility.js";
 import { drawViscosity } from "./viscosity.js";
 
 /** All that the models say of a formulation under a brief. */
@@ -37,7 +38,8 @@ export interface Assessment {
  * Assesses a formulation under a brief: every property as an interval, a verdict for each target, what is to be avoided, all
  * warnings and sources. The same seed gives the same answer.
  * @param input - The case; `draws` (20 to 1e6, 2000 unless given), `seed`, `level` (0.5 to 0.999, 0.95 unless given).
- * @throws InputError naming formulation, ingredient and figure of whatever is missing.
+ * @throws InputError naming formulation, ingredient and figure of whatever is missing; when the brief avoids an ingredient that is
+ * not on the shelf.
  * @example
  * ```ts
  * import { assess, calibrate } from "resinwright";
@@ -57,6 +59,8 @@ export function assess(input: Case & DrawOptions): Assessment {
 
 /** As {@link assess}, with a pause after each property, in which a page can answer its reader. @internal */
 export function* assessing(input: Case & DrawOptions): Generator<PropertyName, Assessment> {
+  const { brief, formulation } = input;
+  checkAvoided(brief, input.shelf);
   const draws = startDraws(input);
   const drawn: Drawn<Property | DeadZoneEstimate>[] = [];
   for (const name of propertyNames) {
@@ -64,19 +68,23 @@ export function* assessing(input: Case & DrawOptions): Generator<PropertyName, A
     yield name;
   }
   const verdicts = drawn.flatMap((one) => {
-    const target = input.brief.targets[one.property.property];
+    const target = brief.targets[one.property.property];
     return target === undefined ? [] : [judge(one, target, draws.level)];
   });
   const all = drawn.map(({ property }) => property);
   return {
-    brief: input.brief.id,
-    formulation: input.formulation.id,
+    brief: brief.id,
+    formulation: formulation.id,
     properties: Object.fromEntries(
       all.map((one) => [one.property, one]),
     ) as unknown as Assessment["properties"],
     verdicts,
     avoided: avoidedIn(input),
-    warnings: distinctWarnings(all.flatMap(({ warnings }) => warnings)),
+    warnings: distinctWarnings([
+      ...uncheckedWarnings(brief, formulation),
+      ...solubilityWarnings(formulation),
+      ...all.flatMap(({ warnings }) => warnings),
+    ]),
     sources: distinctSources(all.flatMap(({ sources }) => sources)),
     draws: draws.count,
     seed: draws.seed,

@@ -44,8 +44,8 @@ export interface LightInResin {
 }
 
 /**
- * Optical depth at the window, µm: the depth at which the light is down to 1/e, by Beer–Lambert, with the absorption
- * averaged over the engine's spectrum.
+ * Optical depth at the window, µm: 1 over the absorption there, by Beer–Lambert, averaged over the engine's spectrum. Light of one
+ * wavelength is down to 1/e at this depth; of a broad engine more is left, since what is absorbed least goes deepest.
  *
  * The slope of a working curve is another quantity, {@link penetrationDepthOf}, and can differ.
  * @throws InputError when an initiator or absorber has no spectrum, molar mass or density, or a spectrum does not cover the light.

@@ -14,6 +14,7 @@ import { interactionsOn } from "../recipe/shelf.js";
 import type { Warning } from "../result.js";
 import { interactionAt } from "./interaction.js";
 import { componentsIn, constantOf, figureOf, figureReader, uncertain, type Case } from "./case.js";
+import { viscosityContradictions } from "./contradiction.js";
 import { startDraws, type DrawOptions, type Read, type Uncertain } from "./doubt.js";
 import { drawProperty, type Drawn, type Property } from "./property.js";
 
@@ -221,7 +222,7 @@ function viscosityWarnings({ formulation, brief, shelf }: Case): Warning[] {
       message: `No measured interaction for ${unmeasured.join(", ")}: G = 0 with the published spread${basisDoubt}. Five viscosities across the ratio settle it.`,
     });
   }
-  warnings.push(...pairs.flatMap((pair) => pair.warnings));
+  warnings.push(...pairs.flatMap((pair) => pair.warnings), ...readingWarnings(liquids, shelf));
   const far = liquids.filter(({ ingredient }) => {
     const at = ingredient.viscosity_mPas?.temperature_C;
     return at !== undefined && Math.abs(at - brief.temperature_C) > TEMPERATURE_REACH_K;
@@ -247,6 +248,23 @@ function viscosityWarnings({ formulation, brief, shelf }: Case): Warning[] {
     });
   }
   return warnings;
+}
+
+/** What contradicts what is known of the liquids: readings of their blends, and a lot's own figure. */
+function readingWarnings(liquids: readonly Component[], shelf: Case["shelf"]): Warning[] {
+  const ids = liquids.map(({ ingredient }) => ingredient.id);
+  const blends = shelf.interactions.filter(({ pair }) => pair.some((id) => ids.includes(id)));
+  return [
+    ...blends.flatMap(({ warnings = [] }) => warnings),
+    ...liquids.flatMap(({ ingredient: { id, lot, viscosity_mPas } }) => {
+      const expected = shelf.ingredients.get(id);
+      // Once blends of it were read, the shelf's figure is theirs, and they have been held against the lot already.
+      const isRead = shelf.readings.some(({ pair }) => pair.includes(id));
+      if (!lot?.measured.includes("viscosity_mPas") || expected === undefined || isRead) return [];
+      const check = `the unit of viscosity_mPas in the file of lot ${lot.id}`;
+      return viscosityContradictions({ reading: `lot ${lot.id}`, read: viscosity_mPas!, expected, check });
+    }),
+  ];
 }
 
 function required(where: string, id: string, field: string, input: Uncertain | undefined): Uncertain {

@@ -11,7 +11,7 @@ import { libraryVersion } from "../lab/record/version.js";
 import { tableOf } from "../notebook/table.js";
 import { assessmentTable, sourceTable, warningTable } from "../notebook/views.js";
 import { printTemperatures_C } from "../recipe/brief.js";
-import { readFormulation, readWorkbench, type Workbench } from "../recipe/files.js";
+import { readWorkbench, type Workbench } from "../recipe/files.js";
 import type { Given, Run } from "./act.js";
 import { caution } from "./caution.js";
 import { jsonText } from "./jsonText.js";
@@ -59,11 +59,12 @@ function readingsBehind(work: Case): string[] {
 }
 
 function caseOf({ operand, text }: Given, folder: string): Workbench {
-  const work = readWorkbench(resolve(folder, operand!));
   const { formulation: file, temperature } = text;
-  const formulation =
-    file === undefined ? work.formulation : readFormulation(resolve(folder, file), work.shelf);
-  if (temperature === undefined) return { ...work, formulation };
+  const work = readWorkbench(
+    resolve(folder, operand!),
+    file === undefined ? undefined : resolve(folder, file),
+  );
+  if (temperature === undefined) return work;
   const temperature_C = quantityOf({
     act: "assess",
     option: "temperature",
@@ -71,7 +72,7 @@ function caseOf({ operand, text }: Given, folder: string): Workbench {
     given: temperature,
     ...printTemperatures_C,
   });
-  return { ...work, formulation, brief: { ...work.brief, temperature_C } };
+  return { ...work, brief: { ...work.brief, temperature_C } };
 }
 
 function drawsOf({ text: { draws } }: Given): number | undefined {

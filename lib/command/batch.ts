@@ -1,7 +1,7 @@
 // `resinwright batch`: the weigh-out sheet of a formulation.
 
 import { resolve } from "node:path";
-import { fraction, positive } from "../door.js";
+import { fraction, InputError, positive } from "../door.js";
 import { dataHashOf } from "../lab/dataHash.js";
 import { weighOut, type MasterBatch, type Portion, type WeighOutSheet } from "../lab/batch.js";
 import { libraryVersion } from "../lab/record/version.js";
@@ -12,6 +12,8 @@ import { numberText } from "../notebook/digits.js";
 import { tableOf } from "../notebook/table.js";
 import { warningTable } from "../notebook/views.js";
 import { readFormulation, readShelf } from "../recipe/files.js";
+import type { Formulation } from "../recipe/formulation.js";
+import type { Shelf } from "../recipe/shelf.js";
 import type { Given, Run } from "./act.js";
 import { caution } from "./caution.js";
 import { jsonText } from "./jsonText.js";
@@ -39,8 +41,22 @@ function inputOf({ operand, text, texts }: Given, folder: string): Parameters<ty
   const accuracy =
     text["accuracy"] === undefined ? {} : { accuracy: percentOf("accuracy", text["accuracy"]) };
   const shelf = readShelf((texts["shelf"] ?? ["data"]).map((one) => resolve(folder, one)));
-  const formulation = readFormulation(resolve(folder, operand!), shelf);
+  const formulation = formulationOn(shelf, resolve(folder, operand!), texts["shelf"] !== undefined);
   return { formulation, batch_g, balance, ...accuracy };
+}
+
+/** The formulation; where its ingredients or lots are not found on the shipped shelf, says how to name another. */
+function formulationOn(shelf: Shelf, file: string, shelfIsNamed: boolean): Formulation {
+  try {
+    return readFormulation(file, shelf);
+  } catch (error) {
+    const isUnknown = error instanceof InputError && /: unknown (ingredient|lot) "/.test(error.message);
+    if (!isUnknown || shelfIsNamed) throw error;
+    throw new InputError(
+      `${error.message}\nThe shelf is data alone; name the folder of your own as well: --shelf data --shelf lab`,
+      { cause: error },
+    );
+  }
 }
 
 function percentOf(option: string, given: string): number {

@@ -1,10 +1,9 @@
 // `resinwright record add`: appends a record that a file or stdin holds as JSON.
 
-import { readFile } from "node:fs/promises";
 import { resolve } from "node:path";
-import { InputError } from "../door.js";
 import { appendRecord, type NewRecord } from "../lab/record.js";
 import { parseJson } from "../recipe/document.js";
+import { readText } from "../recipe/files.js";
 import type { ExitCode, Given, Run, Surroundings } from "./act.js";
 import { jsonText } from "./jsonText.js";
 import { recordsFolder } from "./records.js";
@@ -18,12 +17,6 @@ export const run: Run = async (given, around): Promise<ExitCode> => {
   return 0;
 };
 
-async function textOf({ operand }: Given, { folder, readStdin }: Surroundings): Promise<string> {
-  if (operand === undefined) return readStdin();
-  try {
-    return await readFile(resolve(folder, operand), "utf8");
-  } catch (error) {
-    const { code = "unknown reason" } = error as NodeJS.ErrnoException;
-    throw new InputError(`${operand}: cannot be read (${code}); check the path`, { cause: error });
-  }
+function textOf({ operand }: Given, { folder, readStdin }: Surroundings): Promise<string> | string {
+  return operand === undefined ? readStdin() : readText(resolve(folder, operand), operand);
 }

@@ -2,11 +2,17 @@
 
 import { fitBlend, fitGrunbergNissan, grunbergNissan, type BlendFit } from "../models/viscosity.js";
 import type { Case } from "../assess/case.js";
+import { figureContradictions, viscosityContradictions } from "../assess/contradiction.js";
+import { workingCurveOf } from "../assess/cure.js";
+import { measuredFor } from "../assess/measuredCurve.js";
+import { InputError } from "../door.js";
+import type { MeasuredWorkingCurve } from "../recipe/cureDepths.js";
 import type { Interaction } from "../recipe/interaction.js";
 import type { Ingredient } from "../recipe/ingredient.js";
 import type { BlendReadings } from "../recipe/readings.js";
 import { withInteraction } from "../recipe/shelf.js";
 import type { AtTemperature } from "../recipe/sourced.js";
+import type { Warning } from "../result.js";
 import { correctOxygen } from "./calibrateOxygen.js";
 import { workingCurveFrom } from "./workingCurveFrom.js";
 
@@ -91,8 +97,12 @@ export function calibrate<C extends Case>(work: C): C {
   let { shelf } = work;
   const measured = new Map<string, AtTemperature>();
   for (const readings of shelf.readings) {
-    shelf = withInteraction(shelf, interactionFrom(readings));
-    readings.pair.forEach((id, index) => measured.set(id, neatFigure(readings, index === 0 ? 1 : 0)));
+    const warnings = readings.pair.flatMap((id, index) => {
+      const neat = neatFigure(readings, index === 0 ? 1 : 0);
+      measured.set(id, neat);
+      return neatContradictions(work, readings, { id, neat });
+    });
+    shelf = withInteraction(shelf, { ...interactionFrom(readings), warnings });
   }
   const correct = (ingredient: Ingredient): Ingredient => {
     const viscosity_mPas = measured.get(ingredient.id);
@@ -104,12 +114,79 @@ export function calibrate<C extends Case>(work: C): C {
     ingredient: correct(one.ingredient),
   }));
   const ingredients = new Map([...shelf.ingredients].map(([id, ingredient]) => [id, correct(ingredient)]));
+  const formulation = { ...work.formulation, components };
   const workingCurves = shelf.cureDepths.map(workingCurveFrom);
+  const corrected = { ...work, formulation, shelf: { ...shelf, ingredients, workingCurves } };
   return correctOxygen({
-    ...work,
-    shelf: { ...shelf, ingredients, workingCurves },
-    formulation: { ...work.formulation, components },
+    ...corrected,
+    shelf: { ...corrected.shelf, workingCurves: comparedWithEstimate(corrected) },
   });
+}
+
+/** A neat liquid of blend readings against the same liquid in the bottle, of its lot where one was measured. */
+function neatContradictions(
+  { formulation: { components } }: Case,
+  { id: file }: BlendReadings,
+  { id, neat }: { id: string; neat: AtTemperature },
+): Warning[] {
+  const inUse = components.map(({ ingredient }) => ingredient).filter((ingredient) => ingredient.id === id);
+  const expected = inUse.find(({ lot }) => lot?.measured.includes("viscosity_mPas")) ?? inUse[0];
+  if (expected === undefined) return [];
+  return viscosityContradictions({
+    reading: `neat ${id} in ${file}`,
+    read: neat,
+    expected,
+    check: "the unit of viscosities_mPas, and that massFractions are of the first of the pair,",
+  });
+}
+
+/** Draws enough to tell orders of magnitude. */
+const FEW_DRAWS = 100;
+
+/** The working curves, the one that stands behind the case with a warning where it is far from what its ingredients let expect. */
+function comparedWithEstimate(work: Case): readonly MeasuredWorkingCurve[] {
+  const { workingCurves } = work.shelf;
+  const used = measuredFor(work);
+  if (used === undefined) return workingCurves;
+  const { curve, formulation } = used;
+  const light = { ...work.brief.light, irradiance_mWcm2: curve.series.light.irradiance_mWcm2 };
+  const unmeasured = {
+    formulation,
+    brief: { ...work.brief, light },
+    shelf: { ...work.shelf, workingCurves: [] },
+  };
+  const expected = estimateOf(unmeasured);
+  if (expected === undefined) return workingCurves;
+  const { id } = curve.series;
+  const warnings = [
+    ...figureContradictions({
+      reading: `penetration depth measured by ${id}`,
+      value: curve.penetrationDepth_um.value,
+      unit: "µm",
+      expected: expected.penetrationDepth_um,
+      check: "the unit of cureDepth_um",
+    }),
+    ...figureContradictions({
+      reading: `critical exposure measured by ${id}`,
+      value: curve.criticalExposure_mJcm2.value,
+      unit: "mJ/cm²",
+      expected: expected.criticalExposure_mJcm2,
+      check: "the unit of exposure_mJcm2 and the irradiance",
+    }),
+  ];
+  return workingCurves.map((one) =>
+    one === curve ? { ...one, warnings: [...one.warnings, ...warnings] } : one,
+  );
+}
+
+/** The working curve as the ingredients let expect it; undefined where they lack a figure for it. */
+function estimateOf(work: Case) {
+  try {
+    return workingCurveOf({ ...work, draws: FEW_DRAWS });
+  } catch (error) {
+    if (error instanceof InputError) return undefined;
+    throw error;
+  }
 }
 
 type Readings = Pick<BlendReadings, "massFractions" | "viscosities_mPas">;

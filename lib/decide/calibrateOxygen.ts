@@ -73,7 +73,9 @@ export function correctOxygen<C extends Case>(work: C): C {
     readings,
     takenOn,
     relativeU,
-    warnings: surprises.flatMap((surprise, i) => contradiction(describe(readings)[i]!, surprise)),
+    warnings: surprises.flatMap((surprise, i) =>
+      contradiction(readings.id, describe(readings)[i]!, surprise),
+    ),
   };
   return { ...work, oxygenCorrection };
 }
@@ -163,6 +165,7 @@ function describe({ inductionTimes, uncuredLayers }: WindowReadings): Omit<Learn
 
 /** One reading in 370 lies beyond three standard deviations by chance. */
 function contradiction(
+  id: string,
   { reading, value, unit }: Omit<LearntReading, "surprise">,
   surprise: number,
 ): Warning[] {
@@ -171,7 +174,7 @@ function contradiction(
   return [
     {
       code: "reading-contradicts",
-      message: `${value} ${unit} of ${reading} is ${side} than the figures allow, by ${Math.abs(surprise).toPrecision(2)} standard deviations. Look for a slip in it, in its u or in the light before you trust what follows from it.`,
+      message: `${value} ${unit} of ${reading} (${id}) is ${side} than the figures allow, by ${Math.abs(surprise).toPrecision(2)} standard deviations. Check its unit, its u and the light before you trust what follows from it.`,
     },
   ];
 }

@@ -69,6 +69,13 @@ export function workingCurveFrom(series: CureDepthSeries): MeasuredWorkingCurve 
   const enlarged = Math.sqrt(n / (n - 2)) * gauge;
   const [[varD, cov], [, varE]] = fit.covariance;
   const Ec = fit.criticalExposure_mJcm2.value;
+  // The u of a log-normal quantity whose logarithm has the fit's standard deviation.
+  const uOfEc = Ec * Math.sqrt(Math.expm1(enlarged ** 2 * varE));
+  if (!Number.isFinite(uOfEc)) {
+    throw new InputError(
+      `${id}: with depthU_um ${depthU_um} its depths leave the critical exposure open without bound; check the unit of depthU_um and cureDepth_um, or measure deeper spots`,
+    );
+  }
   const ground = { source: `working curve through ${fit.points} spots of ${id}: ${source}`, status };
   return {
     series,
@@ -77,8 +84,7 @@ export function workingCurveFrom(series: CureDepthSeries): MeasuredWorkingCurve 
       u: enlarged * Math.sqrt(varD),
       ...ground,
     },
-    // The u of a log-normal quantity whose logarithm has the fit's standard deviation.
-    criticalExposure_mJcm2: { value: Ec, u: Ec * Math.sqrt(Math.expm1(enlarged ** 2 * varE)), ...ground },
+    criticalExposure_mJcm2: { value: Ec, u: uOfEc, ...ground },
     correlation: varD > 0 && varE > 0 ? cov / Math.sqrt(varD * varE) : 0,
     warnings: fit.warnings.map(({ code, message }) => ({ code, message: `${id}: ${message}` })),
   };

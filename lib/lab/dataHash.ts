@@ -57,6 +57,7 @@ function dataUsedBy(work: Case | { readonly formulation: Formulation }): object 
     constants: shelf.constants,
     interactions: shelf.interactions.filter(({ pair }) => pair.every((one) => inIt.has(one))),
     readings: readingsOf(shelf, inIt),
+    ofLots: components.flatMap(({ ingredient: { id, lot } }) => typicalViscosity(shelf, id, lot)),
     cureDepths: shelf.cureDepths.filter((series) => ofThisResin(series, inIt)),
     workingCurves: shelf.workingCurves.filter(({ series }) => ofThisResin(series, inIt)),
     windowReadings: shelf.windowReadings.filter((readings) => ofThisResin(readings, inIt)),
@@ -75,6 +76,18 @@ function ofThisResin({ parts }: { readonly parts: MeasuredParts }, inIt: Readonl
 /** Readings of a liquid correct its own viscosity too, whatever it was blended with. */
 function readingsOf({ readings }: Shelf, inIt: ReadonlySet<string>): Shelf["readings"] {
   return readings.filter(({ pair }) => pair.some((one) => inIt.has(one)));
+}
+
+/** What a lot's measured viscosity is held against. */
+function typicalViscosity(
+  { ingredients }: Shelf,
+  id: string,
+  lot: Formulation["components"][number]["ingredient"]["lot"],
+): object[] {
+  const typical = ingredients.get(id);
+  if (typical === undefined || !lot?.measured.includes("viscosity_mPas")) return [];
+  const { viscosity_mPas, viscosityActivation_K } = typical;
+  return [{ id, viscosity_mPas, viscosityActivation_K }];
 }
 
 function canonicalJson(value: unknown, where: string): string {

@@ -27,6 +27,7 @@ export function numberText(value: number, digits = 4): string {
 /**
  * Writes an interval as "value (low to high)", all three rounded to two significant digits of its half width.
  *
+ * Where that would leave a value of 0 though it is none (100 in 3 to 63 000), each of the three has two digits of its own.
  * An interval of no width is written as its value with "(no spread)": no doubt was carried into it.
  * @param interval - `value`, `low` and `high` in one unit, `low` at most `high`; other fields are left alone.
  * @throws InputError when a number is not finite or `low` is above `high`.
@@ -52,6 +53,11 @@ export function intervalText(interval: { value: number; low: number; high: numbe
   const power = largest >= 6 || largest < -3 ? largest : 0;
   const decimals = power - (exponentOf(halfWidth, 2) - 1);
   const [v, l, h] = [value, low, high].map((x) => fixedText(x, power, decimals));
+  const oneSided = low >= 0 || high <= 0;
+  if (oneSided && value !== 0 && Number(v!.replace("−", "-")) === 0) {
+    const [own, ...ends] = [value, low, high].map((x) => numberText(x, 2));
+    return `${own} (${ends.join(" to ")})`;
+  }
   return withPower(`${v} (${l} to ${h})`, power);
 }
 

@@ -3,7 +3,10 @@
 
 import { existsSync, mkdirSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
+import { assess } from "../assess/assess.js";
+import { calibrate } from "../decide/calibrate.js";
 import { InputError } from "../door.js";
+import { openBatch } from "../lab/batch/files.js";
 import type { Brief } from "../recipe/brief.js";
 import { readWorkbench } from "../recipe/files.js";
 import type { Call, Telling } from "./call.js";
@@ -11,6 +14,9 @@ import { notebooksIn, type CodeCell, type MarkdownCell, type Notebook, type Outp
 import { originOf } from "./origin.js";
 import { renderIndex, renderNotebook, renderSheet } from "./render.js";
 import { runNotebooks, type NotebookRun, type Progress } from "./run.js";
+
+/** Enough for every interval: here only what is refused counts. */
+const FEWEST_DRAWS = 40;
 
 const defaultBrief = path.join("data", "briefs", "flow-cell.json");
 
@@ -45,8 +51,12 @@ export async function renderAll(
   const file = path.resolve(folder, given.brief);
   let task: { brief: Brief; files: string[] };
   try {
-    // Read with its formulation and its shelf, so that a mistake in any of their files is told before a notebook runs.
-    const { brief } = readWorkbench(file);
+    // Read with its formulation and its shelf, so that a mistake in any of their files is told before a notebook runs: the batch and what follows from the readings, too, since a notebook that fails leaves what others have recorded.
+    const work = readWorkbench(file);
+    const { brief } = work;
+    const calibrated = calibrate(work);
+    assess({ ...calibrated, draws: FEWEST_DRAWS });
+    openBatch({ ...calibrated, draws: FEWEST_DRAWS });
     task = {
       brief,
       files: given.notebooks === undefined ? notebooksIn(folder) : named(given.notebooks, folder),

@@ -218,10 +218,10 @@ function describe(file: string, sources: readonly string[], trouble: Trouble): R
   };
 }
 
-// Lines of a stack that lie inside the kernel say nothing about the cell.
+// Lines of a stack that lie inside the kernel say nothing about the cell; of a refused input its message says all.
 function withoutKernelFrames(text: string): string {
-  const lines = text.split("\n");
-  return lines
-    .filter((line) => !/^\s+at .*([\\/]node_modules[\\/]tslab[\\/]|\(node:vm:)/.test(line))
-    .join("\n");
+  const refused = /^InputError: [^]*/m.exec(text)?.[0];
+  const lines = (refused ?? text).split("\n");
+  const frame = refused === undefined ? /^\s+at .*([\\/]node_modules[\\/]tslab[\\/]|\(node:vm:)/ : /^\s+at /;
+  return lines.filter((line) => !frame.test(line)).join("\n");
 }

@@ -5,7 +5,7 @@ import { InputError } from "../door.js";
 import type { SourcedValue } from "../result.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import { propertyNames } from "./propertyNames.js";
-import { idSchema, sourced } from "./sourced.js";
+import { hazardCodeSchema, idSchema, sourced } from "./sourced.js";
 
 /** The properties a target can be set on; each is assessed for a formulation under a brief. */
 export type PropertyName =
@@ -21,6 +21,9 @@ export type PropertyName =
 /** Within these a brief may ask for a resin temperature. */
 export const printTemperatures_C = { min: 0, max: 120 } as const;
 
+/** From a rough vacuum to a pressure vessel: a pressure in bar or atm falls below it. */
+export const gasPressures_Pa = { min: 1e3, max: 1e7 } as const;
+
 /** From `min` to `max`, either of which may be absent, in the unit the property's name ends in. */
 export interface Target {
   readonly min?: number;
@@ -30,7 +33,7 @@ export interface Target {
 /** Something the resin must not hold: an ingredient by name, or whatever carries a hazard statement. */
 export interface Avoid {
   readonly ingredient?: string;
-  /** A hazard statement code; `H360` also finds `H360FD`. */
+  /** The code of a hazard statement of GHS or CLP; `H360` also finds `H360FD`. */
   readonly hazard?: string;
   readonly reason: string;
 }
@@ -134,7 +137,7 @@ const briefSchema = strict({
     film: idSchema,
     filmThickness_um: sourced("filmThickness_um", { above: 0, max: 20000 }),
     gasOxygenFraction: z.number().min(0).max(1),
-    gasPressure_Pa: quantity("gasPressure_Pa", { above: 0, max: 1e6 }),
+    gasPressure_Pa: quantity("gasPressure_Pa", gasPressures_Pa),
   }),
   crossSection_mm2: quantity("crossSection_mm2", { above: 0 }),
   liftSpeed_mms: quantity("liftSpeed_mms", { above: 0 }),
@@ -146,7 +149,7 @@ const briefSchema = strict({
   avoid: z.array(
     strict({
       ingredient: idSchema.optional(),
-      hazard: z.string().optional(),
+      hazard: hazardCodeSchema.optional(),
       reason: z.string().min(3),
     }).refine(({ ingredient, hazard }) => (ingredient === undefined) !== (hazard === undefined), {
       error: "must name either an ingredient or a hazard",

@@ -4,7 +4,7 @@
 import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourcedValue, SourceStatus, Warning } from "../result.js";
-import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
+import { placeOf, quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import { checkMeasuredParts, measuredPartsSchema, type MeasuredParts } from "./measuredParts.js";
 import { idSchema, sourced, sourceText, statusSchema } from "./sourced.js";
 
@@ -56,6 +56,8 @@ export interface MeasuredWorkingCurve {
 /** A bend passes for a line on fewer. */
 const FEWEST_MEASURED = 5;
 const FEWEST_EXPOSURES = 3;
+/** Nobody lifts a thinner film; depths in millimetre fall below it. */
+const THINNEST_UM = 1;
 
 /**
  * Reads a file of cure depths.
@@ -79,7 +81,7 @@ const FEWEST_EXPOSURES = 3;
 export function readCureDepths(document: JsonDocument): CureDepthSeries {
   const series = readDocument(seriesSchema, document);
   const { where } = document;
-  checkMeasuredParts(where, series.parts);
+  checkMeasuredParts(document, series.parts);
   const { spectrum, wavelength_nm } = series.light;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";
@@ -92,6 +94,12 @@ export function readCureDepths(document: JsonDocument): CureDepthSeries {
       );
   });
   const measured = series.spots.filter(({ reading }) => reading === "measured");
+  const deepest = Math.max(...measured.map(({ cureDepth_um }) => cureDepth_um!));
+  if (measured.length > 0 && series.depthU_um >= deepest) {
+    throw new InputError(
+      `${placeOf(document, ["depthU_um"])} is ${series.depthU_um}, and the deepest measured cureDepth_um is ${deepest}; a depth has to be known better than that: check the units of both (µm)`,
+    );
+  }
   const exposures = new Set(measured.map(({ exposure_mJcm2 }) => exposure_mJcm2)).size;
   if (measured.length < FEWEST_MEASURED || exposures < FEWEST_EXPOSURES) {
     throw new InputError(
@@ -116,7 +124,7 @@ const seriesSchema = strict({
     .array(
       strict({
         exposure_mJcm2: quantity("exposure_mJcm2", { above: 0 }),
-        cureDepth_um: quantity("cureDepth_um", { above: 0, max: 20000 }).optional(),
+        cureDepth_um: quantity("cureDepth_um", { min: THINNEST_UM, max: 20000 }).optional(),
         reading: z.enum(["measured", "at-least", "at-most", "floated"]).default("measured"),
         note: z.string().min(3).optional(),
       }),

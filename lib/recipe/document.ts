@@ -29,12 +29,24 @@ export function parseJson(text: string, where: string): JsonDocument {
   } catch (error) {
     const { line, column, message } = error as { line?: number; column?: number; message: string };
     const place = line === undefined ? "" : `, line ${line}, column ${column}`;
-    throw new InputError(
-      `${where}${place}: this is not valid JSON: ${message.replace(/\s*\(\d+:\d+\)$/, "")}`,
-    );
+    const fault = slipAt(text, line, column) ?? message.replace(/\s*\(\d+:\d+\)$/, "");
+    throw new InputError(`${where}${place}: this is not valid JSON: ${fault}`);
   }
   refuseRepeatedKeys(tree.body, where);
   return { where, value: evaluate(tree), tree };
+}
+
+/** What people and their programs write in place of JSON, where the parser stumbled over it. */
+function slipAt(text: string, line = 1, column = 1): string | undefined {
+  const source = text.replace(/^\uFEFF/, "").split(/\r\n|\n|\r/)[line - 1] ?? "";
+  const [, whole] = /:\s*([-+]?\d+),$/.exec(source.slice(0, column - 1)) ?? [];
+  const [digits] = /^\d+/.exec(source.slice(column - 1)) ?? [];
+  if (whole !== undefined && digits !== undefined)
+    return `${whole},${digits} has a decimal comma; write ${whole}.${digits}`;
+  const character = source[column - 1];
+  return character !== undefined && "“”„‘’".includes(character)
+    ? `${character} is a curly quotation mark; write the straight one, "`
+    : undefined;
 }
 
 /**
@@ -46,13 +58,19 @@ export function readDocument<T>(schema: z.ZodType<T>, document: JsonDocument): T
   if (result.success) return result.data;
   const complaints = result.error.issues.map((issue) => {
     const unknownKey = issue.code === "unrecognized_keys" ? issue.keys.slice(0, 1) : [];
-    const line = lineOf(document.tree, [...issue.path, ...unknownKey]);
-    const field = issue.path
-      .map((step) => (typeof step === "number" ? `[${step}]` : `.${String(step)}`))
-      .join("");
-    return `${document.where}, line ${line}: ${field.replace(/^\./, "") || "the file"} ${issue.message}`;
+    return `${placeOf(document, issue.path, unknownKey)} ${issue.message}`;
   });
   throw new InputError(complaints.join("\n"));
+}
+
+/** A field of a document by file, line and name; `within` leads on to the line, not to the name. */
+export function placeOf(
+  { where, tree }: JsonDocument,
+  path: readonly PropertyKey[],
+  within: readonly PropertyKey[] = [],
+): string {
+  const field = path.map((step) => (typeof step === "number" ? `[${step}]` : `.${String(step)}`)).join("");
+  return `${where}, line ${lineOf(tree, [...path, ...within])}: ${field.replace(/^\./, "") || "the file"}`;
 }
 
 /** An object that refuses unknown keys with the nearest known one. */

@@ -6,11 +6,21 @@ import { InputError, unknownName } from "../door.js";
 import { readBrief, type Brief } from "./brief.js";
 import { readConstants, type ResinConstants } from "./constants.js";
 import { readCureDepths } from "./cureDepths.js";
-import { parseJson, type JsonDocument } from "./document.js";
+import { parseJson, placeOf, type JsonDocument } from "./document.js";
 import { readFilm } from "./film.js";
-import { formulate, type Formulation } from "./formulation.js";
+import { formulateAt, type Formulation } from "./formulation.js";
 import { readIngredient, readLot } from "./ingredient.js";
 import { readInteraction, type Interaction } from "./interaction.js";
+import { checkLightCovered } from "./lightCovered.js";
+import {
+  checkNames,
+  namesInBrief,
+  namesInCureDepths,
+  namesInIngredient,
+  namesInLot,
+  namesInPair,
+  namesInWindowReadings,
+} from "./namesOnShelf.js";
 import { readRecipe } from "./recipe.js";
 import type { Shelf } from "./shelf.js";
 import { readBlendReadings } from "./readings.js";
@@ -43,18 +53,23 @@ export function openBrief(file: string): Workbench {
   return readWorkbench(process.env["RESINWRIGHT_BRIEF"] ?? file);
 }
 
-/** As {@link openBrief}, whatever the environment says. @internal */
-export function readWorkbench(path: string): Workbench {
-  const brief = readBrief(readJson(path));
-  const beside = (name: string) => join(dirname(path), name);
+/** As {@link openBrief}, whatever the environment says; with `formulationFile` in place of the formulation that the brief names. @internal */
+export function readWorkbench(path: string, formulationFile?: string): Workbench {
+  const document = readJson(path);
+  const brief = readBrief(document);
+  const beside = (name: string) => resolve(dirname(path), name);
   const shelf = readShelf(brief.shelf.map(beside));
-  return { brief, shelf, formulation: readFormulation(beside(brief.formulation), shelf), file: path };
+  checkNames(document, namesInBrief(brief), shelf);
+  const formulation = readFormulation(formulationFile ?? beside(brief.formulation), shelf);
+  checkLightCovered(document, { brief, formulation, shelf });
+  return { brief, shelf, formulation, file: path };
 }
 
 /**
  * Reads a shelf from folders laid out as `ingredients/`, `lots/`, `spectra/`, `films/`, `interactions/`, `measurements/` (one JSON file each)
  * and `constants/resin.json`; what a later folder holds comes before the same in an earlier one.
- * @throws InputError when a folder is missing, two files of one folder share an id, or no folder holds the constants.
+ * @throws InputError when a folder is missing, two files of one folder share an id, or no folder holds the constants; when a file
+ * names an ingredient, film or spectrum that is not on the shelf; when a file in `measurements/` is not JSON.
  * @example
  * ```ts
  * import { readShelf } from "resinwright/files";
@@ -70,23 +85,38 @@ export function readShelf(folders: readonly string[]): Shelf {
       `${folders.map(shown).join(", ")}: no constants/resin.json; name a shelf folder that holds one`,
     );
   }
-  const merged = <K extends "ingredients" | "lots" | "spectra" | "films">(key: K) =>
-    new Map(parts.flatMap((part) => [...part[key]] as [string, never][])) as Shelf[K];
-  const interactions = new Map<string, Interaction>();
-  for (const one of parts.flatMap((part) => part.interactions))
-    interactions.set([...one.pair].sort().join(" ") + String(one.temperature_C), one);
-  return {
-    ingredients: merged("ingredients"),
-    lots: merged("lots"),
-    spectra: merged("spectra"),
-    films: merged("films"),
-    interactions: [...interactions.values()],
-    readings: parts.flatMap((part) => part.readings),
-    windowReadings: parts.flatMap((part) => part.windowReadings),
-    cureDepths: parts.flatMap((part) => part.cureDepths),
+  const files = {
+    ingredients: latest(parts.map((part) => part.ingredients)),
+    lots: latest(parts.map((part) => part.lots)),
+    spectra: latest(parts.map((part) => part.spectra)),
+    films: latest(parts.map((part) => part.films)),
+    interactions: latest(parts.map((part) => part.interactions)),
+    readings: latest(parts.map((part) => part.readings)),
+    cureDepths: latest(parts.map((part) => part.cureDepths)),
+    windowReadings: latest(parts.map((part) => part.windowReadings)),
+  };
+  const shelf = {
+    ingredients: contents(files.ingredients),
+    lots: contents(files.lots),
+    spectra: contents(files.spectra),
+    films: contents(files.films),
+    interactions: [...contents(files.interactions).values()],
+    readings: [...contents(files.readings).values()],
+    windowReadings: [...contents(files.windowReadings).values()],
+    cureDepths: [...contents(files.cureDepths).values()],
     workingCurves: [],
     constants,
   };
+  const check = <T>(read: Files<T>, namesIn: (content: T) => Parameters<typeof checkNames>[1]) => {
+    for (const { document, content } of read.values()) checkNames(document, namesIn(content), shelf);
+  };
+  check(files.ingredients, namesInIngredient);
+  check(files.lots, namesInLot);
+  check(files.interactions, namesInPair);
+  check(files.readings, namesInPair);
+  check(files.cureDepths, namesInCureDepths);
+  check(files.windowReadings, namesInWindowReadings);
+  return shelf;
 }
 
 /**
@@ -133,80 +163,154 @@ function readNested(file: string, shelf: Shelf, outer: readonly string[]): Formu
     const ring = [...outer.slice(outer.indexOf(file)), file].map(shown).join(" → ");
     throw new InputError(`${ring}: these blends contain each other; a blend must end in ingredients`);
   }
-  const recipe = readRecipe(readJson(file));
+  const document = readJson(file);
+  const recipe = readRecipe(document);
   const names = recipe.parts.flatMap(({ blend }) => (blend === undefined ? [] : [blend]));
   const blends = new Map(
     names.map((name) => [name, readNested(resolve(dirname(file), name), shelf, [...outer, file])]),
   );
-  return formulate({ recipe, shelf, blends });
+  return formulateAt((path) => placeOf(document, path), { recipe, shelf, blends });
 }
+
+/** What files hold, each with its document, by the id that tells them apart. */
+type Files<T> = ReadonlyMap<string, { readonly document: JsonDocument; readonly content: T }>;
 
 function readShelfFolder(folder: string) {
   if (!existsSync(folder))
     throw new InputError(`${shown(folder)}: this shelf folder does not exist; correct "shelf" in the brief`);
   const constantsFile = join(folder, "constants", "resin.json");
+  const measurements = measurementsIn(folder);
+  const of = (kind: MeasurementKind) => measurements.filter((one) => kindOf(one) === kind);
   return {
-    ingredients: byId(folder, "ingredients", readIngredient),
-    lots: byId(folder, "lots", readLot),
-    spectra: byId(folder, "spectra", readSpectrum),
-    films: byId(folder, "films", readFilm),
-    interactions: documentsIn(folder, "interactions").map(readInteraction),
-    readings: measurementsIn(folder, "blend viscosities").map(readBlendReadings),
-    cureDepths: measurementsIn(folder, "cure depths").map(readCureDepths),
-    windowReadings: measurementsIn(folder, "window").map(readWindowReadings),
+    ingredients: byId(documentsIn(folder, "ingredients"), readIngredient),
+    lots: byId(documentsIn(folder, "lots"), readLot),
+    spectra: byId(documentsIn(folder, "spectra"), readSpectrum),
+    films: byId(documentsIn(folder, "films"), readFilm),
+    interactions: keyed(documentsIn(folder, "interactions"), readInteraction, pairAndTemperature),
+    readings: byId(of("blend viscosities"), readBlendReadings),
+    cureDepths: byId(of("cure depths"), readCureDepths),
+    windowReadings: byId(of("window"), readWindowReadings),
     constants: existsSync(constantsFile)
       ? readConstants(readJson(constantsFile))
       : (undefined as ResinConstants | undefined),
   };
 }
 
-function byId<T extends { id: string }>(
-  folder: string,
-  kind: string,
-  read: (document: JsonDocument) => T,
-): Map<string, T> {
-  const found = new Map<string, T>();
-  for (const document of documentsIn(folder, kind)) {
-    const one = read(document);
-    if (found.has(one.id)) {
-      throw new InputError(
-        `${document.where}: id "${one.id}" is used by another file of this folder; rename one of them`,
-      );
-    }
-    found.set(one.id, one);
+/** What several folders hold: a later one's comes in place of an earlier one's of the same id, and stands behind it. */
+function latest<T>(parts: readonly Files<T>[]): Files<T> {
+  const files = new Map<string, { document: JsonDocument; content: T }>();
+  for (const [id, one] of parts.flatMap((part) => [...part])) {
+    files.delete(id);
+    files.set(id, one);
   }
-  return found;
+  return files;
 }
+
+function contents<T>(files: Files<T>): Map<string, T> {
+  return new Map([...files].map(([id, { content }]) => [id, content]));
+}
+
+function keyed<T>(
+  documents: readonly JsonDocument[],
+  read: (document: JsonDocument) => T,
+  keyOf: (content: T) => string,
+): Files<T> {
+  return new Map(
+    documents.map((document) => {
+      const content = read(document);
+      return [keyOf(content), { document, content }];
+    }),
+  );
+}
+
+function byId<T extends { id: string }>(
+  documents: readonly JsonDocument[],
+  read: (document: JsonDocument) => T,
+): Files<T> {
+  const files = keyed(documents, read, ({ id }) => id);
+  if (files.size < documents.length) refuseTwins(documents);
+  return files;
+}
+
+/** @throws InputError when two documents of one folder share an id, naming both files. */
+function refuseTwins(documents: readonly JsonDocument[]): void {
+  const places = new Map<unknown, string>();
+  for (const { where, value } of documents) {
+    const { id } = (value ?? {}) as { id?: unknown };
+    const other = places.get(id);
+    if (other !== undefined && typeof id === "string")
+      throw new InputError(
+        `${where}: id "${id}" is that of ${other} too; give one of them another id, or take it out`,
+      );
+    places.set(id, where);
+  }
+}
+
+const pairAndTemperature = ({ pair, temperature_C }: Interaction): string =>
+  [...pair].sort().join(" ") + String(temperature_C);
 
 const measurementKinds = ["blend viscosities", "cure depths", "window"] as const;
+type MeasurementKind = (typeof measurementKinds)[number];
 
-/** Measurements of one kind; a file that does not say its kind holds viscosities of blends. */
-function measurementsIn(folder: string, kind: (typeof measurementKinds)[number]): JsonDocument[] {
-  return documentsIn(folder, "measurements").filter(({ value, where }) => {
-    const { kind: given = "blend viscosities" } = (value ?? {}) as { kind?: unknown };
-    if ((measurementKinds as readonly unknown[]).includes(given)) return given === kind;
-    throw new InputError(unknownName(where, "kind of measurement", String(given), measurementKinds));
-  });
+/** The measurements of a folder; two of one id are refused, whatever their kinds. */
+function measurementsIn(folder: string): JsonDocument[] {
+  const documents = documentsIn(folder, "measurements");
+  refuseTwins(documents);
+  return documents;
 }
 
-/** The JSON documents of one folder of a shelf, by file name; none where it does not exist. @internal */
+/** A file that does not say its kind holds viscosities of blends. */
+function kindOf({ value, where }: JsonDocument): MeasurementKind {
+  const { kind = "blend viscosities" } = (value ?? {}) as { kind?: unknown };
+  const known = measurementKinds.find((one) => one === kind);
+  if (known === undefined)
+    throw new InputError(unknownName(where, "kind of measurement", String(kind), measurementKinds));
+  return known;
+}
+
+/**
+ * The JSON documents of one folder of a shelf, by file name; none where it does not exist. Among measurements every other file
+ * is refused: nobody would notice that its readings are not used.
+ * @internal
+ */
 export function documentsIn(folder: string, kind: string): JsonDocument[] {
   const place = join(folder, kind);
   if (!existsSync(place)) return [];
-  const names = readdirSync(place).filter((name) => name.endsWith(".json"));
-  return names.sort().map((name) => readJson(join(place, name)));
+  const entries = readdirSync(place, { withFileTypes: true }).filter((entry) => !entry.isDirectory());
+  const names = entries.map(({ name }) => name).sort();
+  const other = names.find((name) => !name.endsWith(".json") && !name.startsWith("."));
+  if (other !== undefined && kind.startsWith("measurements")) {
+    throw new InputError(
+      `${shown(join(place, other))}: only .json files are read here, and its readings would be left out; bring them into a .json file (data/README.md shows the shape), or keep this one in a folder of its own, such as ${shown(join(place, "raw"))}`,
+    );
+  }
+  return names.filter((name) => name.endsWith(".json")).map((name) => readJson(join(place, name)));
 }
 
 function readJson(file: string): JsonDocument {
   return parseJson(readText(file), shown(file));
 }
 
-function readText(file: string): string {
+/** @throws InputError when the file cannot be read or is not in UTF-8. @internal */
+export function readText(file: string, where = shown(file)): string {
+  let bytes: Buffer;
   try {
-    return readFileSync(file, "utf8");
+    bytes = readFileSync(file);
   } catch (error) {
     const { code } = error as NodeJS.ErrnoException;
-    throw new InputError(`${shown(file)}: cannot be read (${code ?? "unknown reason"}); check the path`);
+    throw new InputError(`${where}: cannot be read (${code ?? "unknown reason"}); check the path`, {
+      cause: error,
+    });
+  }
+  try {
+    return new TextDecoder("utf-8", { fatal: true }).decode(bytes);
+  } catch (error) {
+    const [first, second] = bytes;
+    const isUtf16 = (first === 0xff && second === 0xfe) || (first === 0xfe && second === 0xff);
+    throw new InputError(
+      `${where}: is not text in UTF-8${isUtf16 ? " but in UTF-16" : ""}; save it as UTF-8 (an editor offers it when saving)`,
+      { cause: error },
+    );
   }
 }
 

@@ -55,7 +55,7 @@ export type FigureReader = (
  * Brings a recipe's parts to mass fractions; blends are taken apart into their ingredients.
  * @param input - `recipe`, the `shelf` its ingredients stand on, `blends` by the names its parts use.
  * @throws InputError when parts do not add up to 100 ± 0.05 and the recipe does not say `normalise`, when an ingredient or
- * blend is unknown, when a part names both or neither.
+ * blend is unknown, when a part names both or neither, when two parts are the same ingredient (of the same lot) or blend.
  * @example
  * ```ts
  * import { formulate } from "resinwright";
@@ -66,38 +66,61 @@ export type FigureReader = (
  * blend.components[0].massFraction; // → 0.75
  * ```
  */
-export function formulate({
-  recipe,
-  shelf,
-  blends = new Map(),
-}: {
-  recipe: Recipe;
-  shelf: Shelf;
-  blends?: ReadonlyMap<string, Formulation>;
-}): Formulation {
-  const where = `formulation "${recipe.id}"`;
-  const total = recipe.parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
+export function formulate(input: FormulateInput): Formulation {
+  return formulateAt(() => `formulation "${input.recipe.id}"`, input);
+}
+
+interface FormulateInput {
+  readonly recipe: Recipe;
+  readonly shelf: Shelf;
+  readonly blends?: ReadonlyMap<string, Formulation>;
+}
+
+/** As {@link formulate}; `placeOf` names the place of a path in the recipe, for messages. @internal */
+export function formulateAt(
+  placeOf: (path: readonly PropertyKey[]) => string,
+  { recipe, shelf, blends = new Map() }: FormulateInput,
+): Formulation {
+  const { parts } = recipe;
+  const total = parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
   if (!recipe.normalise && !(Math.abs(total - 100) <= 0.05)) {
     const shown = Number(total.toPrecision(8));
     throw new InputError(
-      `${where}: mass_pct adds up to ${shown}; parts must add up to 100 ± 0.05, or say "normalise": true`,
+      `${placeOf(["parts"])}: mass_pct adds up to ${shown}; parts must add up to 100 ± 0.05, or say "normalise": true`,
     );
   }
-  if (!(total > 0))
-    throw new InputError(`${where}: mass_pct adds up to ${total}; at least one part must be above 0`);
-  const components = recipe.parts.flatMap((part): Component[] => {
+  if (!(total > 0)) {
+    throw new InputError(
+      `${placeOf(["parts"])}: mass_pct adds up to ${total}; at least one part must be above 0`,
+    );
+  }
+  const components = parts.flatMap((part, i): Component[] => {
+    const place = (field: keyof Part) => placeOf(["parts", i, field]);
     const share = part.mass_pct / total;
     if ((part.ingredient === undefined) === (part.blend === undefined)) {
       throw new InputError(
-        `${where}: each part names either an ingredient or a blend, not both and not neither`,
+        `${placeOf(["parts", i])}: each part names either an ingredient or a blend, not both and not neither`,
+      );
+    }
+    const twin = parts.slice(0, i).findIndex((one) => contentOf(one) === contentOf(part));
+    if (twin >= 0) {
+      throw new InputError(
+        `${placeOf(["parts", i])}: ${contentOf(part)} stands in parts[${twin}] and in parts[${i}]; add the two mass_pct up and keep one of them`,
       );
     }
     if (part.ingredient !== undefined) {
-      return [{ ingredient: ingredientOn(shelf, where, part.ingredient, part.lot), massFraction: share }];
+      const ingredient = ingredientOn(shelf, place("ingredient"), part.ingredient);
+      const { lot } = part;
+      return [
+        {
+          ingredient: lot === undefined ? ingredient : ingredientOn(shelf, place("lot"), ingredient.id, lot),
+          massFraction: share,
+        },
+      ];
     }
     const blend = blends.get(part.blend!);
     if (blend === undefined)
-      throw new InputError(unknownName(where, "blend", part.blend!, [...blends.keys()]));
+      throw new InputError(unknownName(place("blend"), "blend", part.blend!, [...blends.keys()]));
     return blend.components.map((one) => ({ ...one, massFraction: share * one.massFraction }));
   });
   return { id: recipe.id, title: recipe.title, components: merge(components) };
@@ -409,6 +432,12 @@ function reweigh(formulation: Formulation, masses: ReadonlyMap<string, number>, 
     return { ...one, massFraction: wanted * share };
   });
   return { ...formulation, components };
+}
+
+/** What a part is, in words. */
+function contentOf({ ingredient, lot, blend }: Part): string {
+  if (ingredient === undefined) return `the blend "${blend}"`;
+  return lot === undefined ? ingredient : `${ingredient} of lot ${lot}`;
 }
 
 function merge(components: readonly Component[]): Component[] {

@@ -6,6 +6,7 @@ import type { SourcedValue, SourceStatus } from "../result.js";
 import { readDocument, strict, type JsonDocument } from "./document.js";
 import { hasCasCheckDigit } from "./identity.js";
 import {
+  hazardCodeSchema,
   idSchema,
   sourced,
   sourcedAtTemperature,
@@ -152,9 +153,7 @@ const ingredientSchema: z.ZodType<Ingredient> = strict({
   hazards: z
     .array(
       strict({
-        code: z
-          .string()
-          .regex(/^(EUH|H)\d{3}[A-Za-z]{0,2}$/, { error: "must be a hazard statement code such as H317" }),
+        code: hazardCodeSchema,
         source: sourceText,
         status: statusSchema,
       }),

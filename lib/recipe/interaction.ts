@@ -1,7 +1,7 @@
 // How two liquids of a blend pull its viscosity off the log-ideal line: a Grunberg–Nissan G with the basis it was fitted on.
 
 import { z } from "zod";
-import type { SourcedValue } from "../result.js";
+import type { SourcedValue, Warning } from "../result.js";
 import { readDocument, strict, type JsonDocument } from "./document.js";
 import { idSchema, sourced } from "./sourced.js";
 
@@ -11,6 +11,8 @@ export interface Interaction {
   readonly basis: "mole" | "mass" | "volume";
   readonly G: SourcedValue;
   readonly temperature_C?: number;
+  /** What to know of the readings it was fitted to. */
+  readonly warnings?: readonly Warning[];
 }
 
 /**

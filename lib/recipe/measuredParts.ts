@@ -2,7 +2,7 @@
 
 import { z } from "zod";
 import { InputError } from "../door.js";
-import { quantity, strict } from "./document.js";
+import { placeOf, quantity, strict, type JsonDocument } from "./document.js";
 import { idSchema } from "./sourced.js";
 
 /** What was in the bottle, in mass percent. */
@@ -13,11 +13,18 @@ export const measuredPartsSchema = z
   .array(strict({ ingredient: idSchema, mass_pct: quantity("mass_pct", { above: 0, max: 100 }) }))
   .min(2);
 
-/** @throws InputError when the parts do not add up to 100 ± 0.05. @internal */
-export function checkMeasuredParts(where: string, parts: MeasuredParts): void {
+/** @throws InputError when the parts do not add up to 100 ± 0.05, or one ingredient stands in two of them. @internal */
+export function checkMeasuredParts(document: JsonDocument, parts: MeasuredParts): void {
+  parts.forEach(({ ingredient }, i) => {
+    const twin = parts.findIndex((one) => one.ingredient === ingredient);
+    if (twin === i) return;
+    throw new InputError(
+      `${placeOf(document, ["parts", i])}: ${ingredient} stands in parts[${twin}] and in parts[${i}]; add the two mass_pct up and keep one of them`,
+    );
+  });
   const total = parts.reduce((sum, { mass_pct }) => sum + mass_pct, 0);
   if (Math.abs(total - 100) <= 0.05) return;
   throw new InputError(
-    `${where}: mass_pct of parts adds up to ${Number(total.toPrecision(8))}; it must add up to 100 ± 0.05`,
+    `${placeOf(document, ["parts"])}: mass_pct adds up to ${Number(total.toPrecision(8))}; it must add up to 100 ± 0.05`,
   );
 }

@@ -84,6 +84,14 @@ function parseUnit(given: string, wanted: FieldUnit): Unit {
   if (/^[-+]?[\d.]+(e[-+]?\d+)?$/i.test(text)) {
     throw new InputError(`is ${show(given)} without a unit; write for instance "${text} ${wanted.label}"`);
   }
+  const [comma, digits] = /^[-+]?\d+,(\d+)/.exec(text) ?? [];
+  if (comma !== undefined) {
+    const point = `"${given.trim().replace(",", ".")}"`;
+    const or = digits!.length === 3 ? ` or "${given.trim().replace(",", "")}", whichever is meant` : "";
+    throw new InputError(
+      `is ${show(given)}, with a comma in the number; write ${point}${or}: the decimal mark is a point, and thousands have none`,
+    );
+  }
   try {
     return units().unit(text);
   } catch {

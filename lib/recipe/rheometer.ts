@@ -4,6 +4,7 @@
 import Papa from "papaparse";
 import { checkNumber, InputError, nearestName, notNegative, positive } from "../door.js";
 import { readQuantity } from "./quantity.js";
+import { separatorOf } from "./table.js";
 import { unitLabel } from "./units.js";
 
 /** One usable row: a blend, its conditions and its viscosity. */
@@ -71,7 +72,7 @@ export function readRheometerTable({ text, where }: { text: string; where: strin
       `${where}: the table is empty; its first line names the columns, as in "${example}"`,
     );
   }
-  const separator = [..."\t;"].find((mark) => first.line.includes(mark)) ?? ",";
+  const separator = separatorOf(first.line);
   const columns = readHeader(`${where}, row ${first.row}`, split(first.line, separator));
   const rows = rest.map(({ line, row }) => ({ row, ...split(line, separator) }));
   const format = { separator, decimalMark: decimalMarkOf(where, rows, separator) };

@@ -3,6 +3,7 @@
 import { z } from "zod";
 import { sourceStatuses, type SourcedValue } from "../result.js";
 import { quantity, strict } from "./document.js";
+import { hazardCodeProblem } from "./hazardCodes.js";
 
 /** A sourced value that holds at one temperature. */
 export interface AtTemperature extends SourcedValue {
@@ -35,6 +36,12 @@ export const sourceText = z.string().min(3);
 export const idSchema = z
   .string()
   .regex(/^[A-Za-z0-9][A-Za-z0-9.-]*$/, { error: "must be a name of letters, digits, dots and hyphens" });
+
+/** The code of a hazard statement, such as `H317`. */
+export const hazardCodeSchema = z.string().superRefine((given, context) => {
+  const problem = hazardCodeProblem(given);
+  if (problem !== undefined) context.addIssue({ code: "custom", message: problem });
+});
 
 function sourcedShape(field: string, range: Range) {
   const difference = field.endsWith("_C") ? field.replace(/_C$/, "_K") : field;

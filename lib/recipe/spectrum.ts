@@ -50,6 +50,11 @@ export function readSpectrum(document: JsonDocument): Spectrum {
       `${document.where}: wavelengths_nm[${fall}] is ${nodes[fall]}, after ${nodes[fall - 1]}; wavelengths must increase`,
     );
   }
+  if (spectrum.quantity === "relativePower" && values.every((value) => value === 0)) {
+    throw new InputError(
+      `${document.where}: values are 0 at every wavelength; a light engine must send light at some of them`,
+    );
+  }
   return spectrum;
 }
 

@@ -1,7 +1,7 @@
 // A spectrum as a spectrophotometer or a colleague exports it: two columns, the header saying which quantity to which base.
 
 import { InputError } from "../door.js";
-import { readNumberTable } from "./table.js";
+import { readNumberTable, separatorOf } from "./table.js";
 
 /** A spectrum read from a file: absorbance and molar absorption are decadic, whatever the file held. */
 export interface MeasuredSpectrum {
@@ -26,7 +26,7 @@ export type SpectrumColumn =
  * Reads a spectrum from a CSV text with the columns `wavelength_nm` and one that states quantity and base.
  *
  * - `text`: with a header line; lines that begin with `#` are comments. Rising or falling wavelengths, none twice.
- * - `where`: names the file in errors.
+ * - `where`: names the file in errors. Columns are separated by tabs, semicolons or commas, as for {@link readNumberTable}.
  *
  * Columns: `decadicAbsorbance`, `napierianAbsorbance`, `transmittedFraction` (0 to 1), `decadicMolarAbsorption_Lmolcm`,
  * `napierianMolarAbsorption_Lmolcm`, `relativePower`. Napierian values are divided by ln 10, T becomes -log10 T.
@@ -103,7 +103,7 @@ const columns: Readonly<Record<SpectrumColumn, ColumnMeaning>> = {
 function columnOf(text: string, where: string): SpectrumColumn {
   const lines = text.replace(/^\uFEFF/, "").split(/\r?\n/);
   const header = lines.find((line) => line.trim() !== "" && !line.startsWith("#")) ?? "";
-  const names = header.split(",").map((name) => name.trim());
+  const names = header.split(separatorOf(header)).map((name) => name.trim());
   const found = names.filter((name) => name in columns);
   if (found.length === 1) return found[0] as SpectrumColumn;
   throw new InputError(

@@ -4,9 +4,10 @@
 import { z } from "zod";
 import { InputError } from "../door.js";
 import type { SourceStatus } from "../result.js";
+import { gasPressures_Pa } from "./brief.js";
 import { quantity, readDocument, strict, type JsonDocument } from "./document.js";
 import { checkMeasuredParts, measuredPartsSchema, type MeasuredParts } from "./measuredParts.js";
-import { idSchema, sourceText, statusSchema } from "./sourced.js";
+import { idSchema, sourced, sourceText, statusSchema } from "./sourced.js";
 
 /** A reading with its standard uncertainty, both in the unit of the field that holds it. */
 export interface ReadValue {
@@ -70,7 +71,7 @@ export interface WindowReadings {
 export function readWindowReadings(document: JsonDocument): WindowReadings {
   const readings = readDocument(windowReadingsSchema, document);
   const { where } = document;
-  checkMeasuredParts(where, readings.parts);
+  checkMeasuredParts(document, readings.parts);
   const { spectrum, wavelength_nm, inductionTimes, uncuredLayers } = readings;
   if ((spectrum === undefined) === (wavelength_nm === undefined)) {
     const given = spectrum === undefined ? "neither" : "both";
@@ -91,17 +92,28 @@ const read = (field: string) =>
   strict({ value: quantity(field, { above: 0 }), u: quantity(field, { above: 0 }) });
 const irradiance_mWcm2 = quantity("irradiance_mWcm2", { above: 0, max: 10000 });
 
+const wavelengths_nm = { min: 250, max: 700 } as const;
+/** A number, or the figure with its source as the brief states it: which engine it was counts, not how well it is known. */
+const wavelength_nm = z
+  .unknown()
+  .transform((given) =>
+    isFigure(given) ? given : { value: given, u: 0, source: "as stated", status: "measured here" },
+  )
+  .pipe(sourced("wavelength_nm", wavelengths_nm))
+  .transform(({ value }) => value);
+const isFigure = (given: unknown) => typeof given === "object" && given !== null;
+
 const windowReadingsSchema: z.ZodType<WindowReadings> = strict({
   kind: z.literal("window"),
   id: idSchema,
   formulation: idSchema,
   parts: measuredPartsSchema,
   spectrum: idSchema.optional(),
-  wavelength_nm: quantity("wavelength_nm", { min: 250, max: 700 }).optional(),
+  wavelength_nm: wavelength_nm.optional(),
   temperature_C: quantity("temperature_C", { min: 0, max: 120 }),
   film: idSchema,
   filmThickness_um: read("filmThickness_um"),
-  gasPressure_Pa: quantity("gasPressure_Pa", { above: 0 }).default(101325),
+  gasPressure_Pa: quantity("gasPressure_Pa", gasPressures_Pa).default(101325),
   inductionTimes: z
     .array(
       strict({

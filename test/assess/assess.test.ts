@@ -103,6 +103,48 @@ describe("assess", () => {
     expect(run({ light: dark, targets: { deadZone_um: { max: 1e9 } } }).verdicts[0]!.outcome).toBe("fails");
   });
 
+  it("warns where the brief avoids a statement and an ingredient was never checked", () => {
+    const codes = (avoid: Brief["avoid"], what = formulation) =>
+      run({ avoid }, what).warnings.filter(({ code }) => code === "hazards-unchecked");
+    const avoid = [{ hazard: "H350", reason: "a house rule" }];
+    expect(codes(avoid).map(({ message }) => message)).toEqual([
+      "The brief avoids H350, and nobody has checked which hazard statements AB carry: they may carry it. Take the statements from the safety data sheets into the ingredients' files.",
+    ]);
+    expect(codes([])).toEqual([]);
+    expect(codes(avoid, formulationOf({ THIN: 60, THICK: 39, PI: 1 }))).toEqual([]);
+  });
+
+  it("refuses to avoid an ingredient that is not on the shelf", () => {
+    expect(() => run({ avoid: [{ ingredient: "thn", reason: "a slip" }] })).toThrow(
+      'brief "test": avoid[0].ingredient: unknown ingredient "thn"; did you mean "THIN"?',
+    );
+  });
+
+  it("warns of a solid that may not or does not dissolve, lots and parts together", () => {
+    const ingredients = new Map(shelf.ingredients);
+    ingredients.set("PI", { ...shelf.ingredients.get("PI")!, solubility_pct: sure(1, 0.5) });
+    const codes = (PI: number) =>
+      assess({
+        formulation: formulationOf({ THIN: 100 - PI, PI }, { ...shelf, ingredients }),
+        ...{ brief, shelf, draws: 40 },
+      }).warnings.filter(({ code }) => code.endsWith("dissolve"));
+    expect(codes(1)).toEqual([]);
+    expect(codes(1.9)).toEqual([
+      {
+        code: "may-not-dissolve",
+        message:
+          "1.9 % of PI may be more than a liquid resin dissolves (1 ± 0.5 %). Stir a sample, leave it cold for a night and look for crystals before you make a batch.",
+      },
+    ]);
+    expect(codes(2.1)).toEqual([
+      {
+        code: "does-not-dissolve",
+        message:
+          "2.1 % of PI is more than a liquid resin dissolves (1 ± 0.5 %). What stays solid settles, and takes no part in what is computed here: take less, or measure how much dissolves and put it on the shelf.",
+      },
+    ]);
+  });
+
   it("finds what is to be avoided by name and by hazard, with the reason", () => {
     const avoid = [
       { ingredient: "THIN", reason: "smells" },

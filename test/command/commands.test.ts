@@ -262,7 +262,10 @@ describe("batch", () => {
     writeFileSync(join(folder, "bench/lots/i-9.json"), JSON.stringify(lot));
     writeFileSync(join(folder, "bench/lotted.json"), JSON.stringify(recipe));
     const words = ["batch", "bench/lotted.json", "--size", "500 g", ...balance];
-    expect((await run(words)).err).toMatch(/unknown lot "I-9"/);
+    expect((await run(words)).err).toMatch(
+      /^bench\/lotted\.json, line 1: parts\[0\]\.lot: unknown lot "I-9"; none is known here\nThe shelf is data alone; name the folder of your own as well: --shelf data --shelf lab\n$/,
+    );
+    expect((await run([...words, "--shelf", "data"])).err).not.toContain("--shelf");
     expect((await run([...words, "--shelf", "data", "--shelf", "bench"])).out).toContain("IBOA (lot I-9)");
   });
 });

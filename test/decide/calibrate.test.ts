@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { viscosityOf } from "../../lib/assess/viscosity.js";
 import { calibrate, interactionFrom } from "../../lib/decide/calibrate.js";
 import { parseJson } from "../../lib/recipe/document.js";
-import { readBlendReadings } from "../../lib/recipe/readings.js";
+import { readBlendReadings, type BlendReadings } from "../../lib/recipe/readings.js";
 import { brief, exactReadings as readings, formulationOf, shelf } from "../fixtures.js";
 
 const work = {
@@ -62,6 +62,62 @@ describe("calibrate", () => {
     expect(newThin!.ingredient.viscosity_mPas!.value).toBeCloseTo(20, 12);
     expect(newThick!.ingredient.viscosity_mPas!.value).toBe(10000);
     expect(work.formulation).toEqual(before);
+  });
+});
+
+describe("readings against what the shelf lets expect", () => {
+  const warned = (change: Partial<BlendReadings>, what = work.formulation) =>
+    viscosityOf({
+      ...calibrate({
+        ...work,
+        formulation: what,
+        shelf: { ...shelf, readings: [{ ...readings, ...change }] },
+      }),
+      draws: 40,
+    }).warnings.flatMap(({ code, message }) => (code === "reading-contradicts" ? [message] : []));
+  const inPascal = { viscosities_mPas: readings.viscosities_mPas.map((one) => one / 1000) };
+
+  it("says which neat liquids were read in another unit, with both values", () => {
+    expect(warned({})).toEqual([]);
+    expect(warned(inPascal)).toEqual([
+      "5 mPa s of neat THICK in r1 at 25 °C stands against 10000 mPa s of the shelf's THICK. Check the unit of viscosities_mPas, and that massFractions are of the first of the pair, before you trust what follows from it.",
+      "0.02 mPa s of neat THIN in r1 at 25 °C stands against 10 mPa s of the shelf's THIN. Check the unit of viscosities_mPas, and that massFractions are of the first of the pair, before you trust what follows from it.",
+    ]);
+  });
+
+  it("says so of liquids that were changed over, and where only one of them is in the bottle", () => {
+    const reversed = { massFractions: readings.massFractions.map((one) => 1 - one) };
+    expect(warned(reversed)).toHaveLength(2);
+    expect(warned(reversed, formulationOf({ THIN: 60, MID: 40 }))).toHaveLength(1);
+  });
+
+  // By Andrade's law with an activation of 3000 K, 10 mPa s at 25 °C is 2.3 mPa s at 80 °C.
+  it("brings the shelf's figure to the temperature of the reading", () => {
+    const hot = (thin: number) => {
+      const viscosities_mPas = readings.massFractions.map((w) => 2000 ** w * thin ** (1 - w));
+      return warned({ temperature_C: 80, viscosities_mPas });
+    };
+    expect(hot(2.1)).toEqual([]);
+    expect(hot(0.021)[0]).toMatch(/^0\.021 mPa s of neat THIN in r1 at 80 °C stands against 2\.\d+ mPa s/);
+  });
+
+  it("holds them against the lot that is in the bottle, and a lot against its ingredient", () => {
+    const lot = { id: "T-7", measured: ["viscosity_mPas"] };
+    const withLotAt = (value: number) => {
+      const [thin, thick] = work.formulation.components;
+      const viscosity_mPas = { ...thick!.ingredient.viscosity_mPas!, value, u: value / 100 };
+      const ingredient = { ...thick!.ingredient, viscosity_mPas, lot };
+      return { ...work.formulation, components: [thin!, { ...thick!, ingredient }] };
+    };
+    expect(warned({}, withLotAt(1500))).toEqual([
+      expect.stringMatching(
+        /^5000 mPa s of neat THICK in r1 at 25 °C stands against 1500 mPa s of lot T-7\./,
+      ),
+    ]);
+    const alone = viscosityOf({ formulation: withLotAt(10), brief, shelf, draws: 40 }).warnings;
+    expect(alone.map(({ message }) => message)).toContain(
+      "10 mPa s of lot T-7 at 25 °C stands against 10000 mPa s of the shelf's THICK. Check the unit of viscosity_mPas in the file of lot T-7 before you trust what follows from it.",
+    );
   });
 });
 

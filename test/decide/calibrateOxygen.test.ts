@@ -148,7 +148,7 @@ describe("correctOxygen", () => {
     const [warning] = zoneOf(told).warnings;
     expect(warning!.code).toBe("reading-contradicts");
     expect(warning!.message).toMatch(
-      /µm of uncured layer at 8 mW\/cm² over 20.95 % oxygen is more than the figures allow, by \d+(\.\d)? standard deviations\. Look for a slip/,
+      /µm of uncured layer at 8 mW\/cm² over 20.95 % oxygen \(\S+\) is more than the figures allow, by \d+(\.\d)? standard deviations\. Check its unit, its u and the light/,
     );
     expect(inductionTimeOf({ ...told, draws }).warnings).toEqual([warning]);
     expect(zoneOf(knowing(readings([], [[expected.zone, 0.5]]))).warnings).toEqual([]);
@@ -207,7 +207,21 @@ describe("readWindowReadings", () => {
     expect(read({})).toEqual(readings([[1, 0.1]], [[10, 1]]));
   });
 
+  it("takes a wavelength as a number, as text, or as the brief states it", () => {
+    const stated = { value: "405 nm", u: 4, source: "nominal", status: "common practice" };
+    for (const wavelength_nm of [405, "405 nm", stated])
+      expect(read({ spectrum: undefined, wavelength_nm }).wavelength_nm).toBe(405);
+    expect(() => read({ spectrum: undefined, wavelength_nm: { ...stated, uu: 1 } })).toThrow(
+      'wavelength_nm has an unknown field "uu"',
+    );
+    expect(() => read({ spectrum: undefined, wavelength_nm: 4050 })).toThrow(
+      "is 4050; it must be at most 700",
+    );
+    expect(() => read({ spectrum: undefined })).toThrow("neither of spectrum and wavelength_nm");
+  });
+
   it.each([
+    [{ gasPressure_Pa: 1.013 }, "gasPressure_Pa is 1.013; it must be at least 1000"],
     [
       { inductionTimes: [], uncuredLayers: [] },
       "w.json: neither inductionTimes nor uncuredLayers holds a reading; give at least one",

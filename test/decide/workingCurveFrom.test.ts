@@ -40,6 +40,42 @@ const codes = (work: Case) =>
   workingCurveOf({ ...work, draws: 50 }).layerTime_s.warnings.map(({ code }) => code);
 const width = ({ low, high }: { low: number; high: number }) => high / low;
 
+describe("cure depths against what their ingredients let expect", () => {
+  const warned = (change: Partial<CureDepthSeries>) =>
+    workingCurveOf({ ...calibrate(withSeries(change)), draws: 50 }).layerTime_s.warnings.flatMap(
+      ({ code, message }) => (code === "reading-contradicts" ? [message] : []),
+    );
+
+  it("says that exposures in joule, or depths far too small, stand far off, with both values", () => {
+    expect(warned({})).toEqual([]);
+    const inJoule = series.spots.map((one) => ({ ...one, exposure_mJcm2: one.exposure_mJcm2 / 1000 }));
+    expect(warned({ spots: inJoule })).toEqual([
+      expect.stringMatching(
+        /^0\.0049\d* mJ\/cm² of critical exposure measured by s1 stands against [\d.]+ \([\d.]+ to [\d.]+\) mJ\/cm², which its ingredients let expect\. Check the unit of exposure_mJcm2 and the irradiance before you trust/,
+      ),
+    ]);
+    // A hundredth: depths in millimetre are refused where they are read.
+    const shallow = series.spots.map((one) => ({ ...one, cureDepth_um: one.cureDepth_um! / 100 }));
+    expect(warned({ spots: shallow, depthU_um: 0.01 })).toEqual([
+      expect.stringMatching(
+        /^[\d.]+ µm of penetration depth measured by s1 stands against .* µm, which its ingredients let expect\. Check the unit of cureDepth_um/,
+      ),
+    ]);
+  });
+
+  it("says nothing of a curve that is not used", () => {
+    const inJoule = series.spots.map((one) => ({ ...one, exposure_mJcm2: one.exposure_mJcm2 / 1000 }));
+    expect(warned({ spots: inJoule, light: { ...series.light, spectrum: "other" } })).toEqual([]);
+  });
+
+  it("refuses depths whose doubt leaves the critical exposure open", () => {
+    const spots = series.spots.map((one) => ({ ...one, cureDepth_um: one.cureDepth_um! / 1000 }));
+    expect(() => workingCurveFrom({ ...series, spots, depthU_um: 4 })).toThrow(
+      "s1: with depthU_um 4 its depths leave the critical exposure open without bound; check the unit of depthU_um and cureDepth_um, or measure deeper spots",
+    );
+  });
+});
+
 describe("workingCurveFrom", () => {
   it.each([3, 4])("refuses %d depths: a doubt needs more", (count) => {
     expect(() => workingCurveFrom({ ...series, spots: series.spots.slice(0, count) })).toThrow(

@@ -149,6 +149,18 @@ describe("start", () => {
     expect(errors).not.toContain("\n");
   });
 
+  it("refuses a batch and readings that the last notebook would stumble over, before the first has recorded anything", async () => {
+    const folder = workbench(twoNotebooks);
+    const file = path.join(folder, "data/measurements/batches/flow-cell-a-1.json");
+    writeFileSync(file, readFileSync(file, "utf8").replace('"TEGDMA"', '"TEGDMAX"'));
+    const { code, printed, errors } = await run(folder);
+    expect([code, printed]).toEqual([2, ""]);
+    expect(errors).toMatch(
+      /flow-cell-a-1\.json: batch "flow-cell-a-1": unknown portion "TEGDMAX"; did you mean "TEGDMA"\?/,
+    );
+    expect(errors).not.toContain("\n");
+  });
+
   it("refuses a folder without notebooks", async () => {
     const message = "notebooks: no .ipynb file in this folder; start in the folder of the workbench";
     expect(await run(workbench({}))).toEqual({ code: 2, printed: "", errors: message });

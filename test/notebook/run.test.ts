@@ -97,6 +97,17 @@ describe("runNotebook, what must not pass", () => {
     );
   });
 
+  it("a refused input, by its message and without the places of its stack", async () => {
+    const failure = await failureOf([
+      `import { readQuantity } from "resinwright";`,
+      `readQuantity({ where: "brief.json", field: "temperature_C", given: "18,4 °C" })`,
+    ]);
+    expect(failure.kernelText).toContain(
+      'brief.json: temperature_C is "18,4 °C", with a comma in the number',
+    );
+    expect(failure.kernelText).not.toMatch(/^\s+at |lib\/dist|file:/m);
+  });
+
   it("an awaited promise that rejects", async () => {
     const failure = await failureOf([`await Promise.reject(new Error("refused"))`]);
     expect(failure).toMatchObject({ cell: 1, what: "the cell ended with an error" });

@@ -48,6 +48,18 @@ describe("readBrief", () => {
       undefined,
       "b.json: light has neither of spectrum and wavelength_nm; give one of them",
     ],
+    [["window", "gasPressure_Pa"], 1.013, "window.gasPressure_Pa is 1.013; it must be at least 1000"],
+    [
+      ["window", "gasPressure_Pa"],
+      "1.013 GPa",
+      'window.gasPressure_Pa is "1.013 GPa"; it must be at most 10000000',
+    ],
+    [
+      ["avoid"],
+      [{ hazard: "h317", reason: "sensitises" }],
+      'avoid[0].hazard is "h317"; it must be the code of a hazard statement of GHS or CLP; did you mean "H317"?',
+    ],
+    [["avoid"], [{ hazard: "H999", reason: "no such" }], 'avoid[0].hazard is "H999"; it must be the code'],
     [["light", "irradiance_mWcm2"], 8, "light.irradiance_mWcm2 is 8; it must be an object"],
     [["window", "gasOxygenFraction"], 21, "window.gasOxygenFraction is 21; it must be at most 1"],
     [

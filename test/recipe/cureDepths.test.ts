@@ -43,7 +43,7 @@ describe("readCureDepths", () => {
   it.each<[object, string]>([
     [
       { parts: [{ ingredient: "THIN", mass_pct: 90 }, series.parts[1]] },
-      "s.json: mass_pct of parts adds up to 91; it must add up to 100 ± 0.05",
+      "s.json, line 5: parts: mass_pct adds up to 91; it must add up to 100 ± 0.05",
     ],
     [
       { light: { irradiance_mWcm2: sure(8) } },
@@ -70,6 +70,14 @@ describe("readCureDepths", () => {
       'spots[5].reading is "float"; it must be one of "measured", "at-least", "at-most", "floated"; did you mean "floated"?',
     ],
     [{ spots: [{ ...spots[0], depth_um: 3 }] }, 'spots[0] has an unknown field "depth_um"'],
+    [
+      { spots: spots.map((spot) => ({ ...spot, cureDepth_um: spot.cureDepth_um / 1000 })) },
+      "spots[0].cureDepth_um is 0.022; it must be at least 1",
+    ],
+    [
+      { depthU_um: 200 },
+      "s.json, line 24: depthU_um is 200, and the deepest measured cureDepth_um is 186; a depth has to be known better than that: check the units of both (µm)",
+    ],
     [{ depthU_um: 0 }, "depthU_um is 0; it must be above 0"],
     [
       { spots: [{ exposure_mJcm2: -1, cureDepth_um: 3 }] },
@@ -81,14 +89,26 @@ describe("readCureDepths", () => {
 });
 
 describe("the shelf", () => {
+  const onShelf = {
+    ...series,
+    parts: [
+      { ingredient: "HDDA", mass_pct: 99 },
+      { ingredient: "BAPO", mass_pct: 1 },
+    ],
+    light: { ...series.light, spectrum: "led-412" },
+  };
+
   it("tells measurements apart by their kind, and refuses a kind it does not know", () => {
     const folder = mkdtempSync(join(tmpdir(), "shelf-"));
     mkdirSync(join(folder, "measurements"));
-    writeFileSync(join(folder, "measurements", "s1.json"), JSON.stringify(series));
+    writeFileSync(join(folder, "measurements", "s1.json"), JSON.stringify(onShelf));
     const { cureDepths, readings } = readShelf(["data", folder]);
     expect(cureDepths.map(({ id }) => id)).toEqual(["flow-cell-a-412", "s1"]);
     expect(readings.map(({ id }) => id)).toEqual(["udma-iboa-25C"]);
-    writeFileSync(join(folder, "measurements", "s1.json"), JSON.stringify({ ...series, kind: "cure depth" }));
+    writeFileSync(
+      join(folder, "measurements", "s1.json"),
+      JSON.stringify({ ...onShelf, kind: "cure depth" }),
+    );
     expect(() => readShelf(["data", folder])).toThrow(
       'unknown kind of measurement "cure depth"; did you mean "cure depths"?',
     );

@@ -17,6 +17,17 @@ describe("parseJson", () => {
     );
   });
 
+  it("knows a decimal comma and curly quotation marks", () => {
+    expect(() => read('{\n "name": "x",\n "list": 18,4 }')).toThrow(
+      "a.json, line 3, column 13: this is not valid JSON: 18,4 has a decimal comma; write 18.4",
+    );
+    expect(() => read("{ “name”: 1 }")).toThrow(
+      'a.json, line 1, column 3: this is not valid JSON: “ is a curly quotation mark; write the straight one, "',
+    );
+    // A list of two numbers, and nothing that follows it, is a comma in its place.
+    expect(() => read('{ "list": [18,4], "name": }')).toThrow(/not valid JSON: Unexpected/);
+  });
+
   it("refuses a key given twice, which JSON readers drop silently", () => {
     expect(() => read('{\n "name": "x",\n "name": "y"\n}')).toThrow(
       'a.json, line 3: "name" is given twice; keep one of them',

@@ -65,6 +65,25 @@ describe("formulate", () => {
     expect(ingredient.lot).toEqual({ id: "T-7", measured: ["viscosity_mPas"] });
   });
 
+  it("refuses an ingredient, a lot or a blend that stands in two parts, and takes two lots of one", () => {
+    const half = (part: object) => ({ ...part, mass_pct: 50 });
+    expect(() => make([half({ ingredient: "THIN" }), half({ ingredient: "THIN" })])).toThrow(
+      'formulation "amber-3": THIN stands in parts[0] and in parts[1]; add the two mass_pct up and keep one of them',
+    );
+    const lot = { ingredient: "THICK", lot: "T-7" };
+    expect(() => make([half(lot), half(lot)])).toThrow("THICK of lot T-7 stands in parts[0] and in parts[1]");
+    const blends = new Map([["a.json", formulationOf({ THIN: 100 })]]);
+    const parts = [half({ blend: "a.json" }), half({ blend: "a.json" })];
+    const recipe = { id: "amber-3", title: "twice a blend", normalise: false, parts };
+    expect(() => formulate({ recipe, shelf, blends })).toThrow(
+      'the blend "a.json" stands in parts[0] and in parts[1]',
+    );
+    expect(() => make([half({ blend: "a.json" }), half(lot)])).toThrow(
+      'unknown blend "a.json"; none is known here',
+    );
+    expect(make([half(lot), half({ ingredient: "THICK" })]).components).toHaveLength(2);
+  });
+
   it("names what it cannot find", () => {
     expect(() => make([{ ingredient: "THINN", mass_pct: 100 }])).toThrow(
       'formulation "amber-3": unknown ingredient "THINN"; did you mean "THIN"?',

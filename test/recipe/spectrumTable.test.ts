@@ -34,6 +34,13 @@ describe("readSpectrumTable", () => {
     expect(values[2]).toBeCloseTo(1, 12);
   });
 
+  it("takes semicolons and decimal commas", () => {
+    expect(read("wavelength_nm;decadicAbsorbance\n400,5;0,7\n410,5;0,4\n")).toMatchObject({
+      wavelengths_nm: [400.5, 410.5],
+      values: [0.7, 0.4],
+    });
+  });
+
   it("keeps absorbances a little below 0: a baseline is not perfect", () => {
     expect(read("wavelength_nm,decadicAbsorbance\n400,-0.002\n410,0\n").values).toEqual([-0.002, 0]);
   });

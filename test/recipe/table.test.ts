@@ -11,13 +11,24 @@ describe("readNumberTable", () => {
     });
   });
 
+  it("takes tabs and semicolons between columns, and then decimal commas", () => {
+    const numbers = { x: [0.5, 1], viscosity_mPas: [10, 20.5] };
+    expect(read("x;viscosity_mPas\n0,5;10\n1;20,5\n")).toEqual(numbers);
+    expect(read("x\tviscosity_mPas\n0.5\t10\n1\t20.5\n")).toEqual(numbers);
+  });
+
   it.each([
+    [
+      "x;viscosity_mPas\n0,5;10\n1;20.5\n",
+      "r.csv, row 3: a decimal point, and decimal commas elsewhere; use one kind in the whole file, and no thousands separators",
+    ],
+    ["x;viscosity_mPas\n1;2,3,4\n", 'row 2, column viscosity_mPas: "2.3,4" is not a number'],
     ["", "r.csv: the table is empty; its first line names the columns"],
     ["x\n1", "r.csv, row 1: column viscosity_mPas is missing; the columns are x, viscosity_mPas"],
     ["x,viscosity\n1,2", 'r.csv, row 1: unknown column "viscosity"; did you mean "viscosity_mPas"?'],
     [
       "# c\nx,viscosity_mPas\n1,2\n0,5,10",
-      "r.csv, row 4: 3 entries under 2 columns; a decimal comma needs a point",
+      "r.csv, row 4: 3 entries under 2 columns; numbers with a decimal comma need semicolons between the columns",
     ],
     [
       "x,viscosity_mPas\n1,abc",

@@ -37,6 +37,15 @@ describe("readQuantity", () => {
 
   it.each([
     ["450", 'brief.json: viscosity_mPas is "450" without a unit; write for instance "450 mPa s"'],
+    [
+      "18,4 cP",
+      'brief.json: viscosity_mPas is "18,4 cP", with a comma in the number; write "18.4 cP": the decimal mark is a point, and thousands have none',
+    ],
+    ["18,4", 'viscosity_mPas is "18,4", with a comma in the number; write "18.4"'],
+    [
+      "1,000 cP",
+      'viscosity_mPas is "1,000 cP", with a comma in the number; write "1.000 cP" or "1000 cP", whichever is meant',
+    ],
     ["450 um", 'brief.json: viscosity_mPas is "450 um"; it must be a quantity that converts to mPa s'],
     [
       "450 cPp",

@@ -1,8 +1,9 @@
 // Batches that came back from the bench, from the folders of a shelf.
 
-import { dirname, join } from "node:path";
-import { InputError } from "../../door.js";
+import { dirname, join, resolve } from "node:path";
+import { InputError, unknownName } from "../../door.js";
 import type { DrawOptions } from "../../assess/doubt.js";
+import { placeOf } from "../../recipe/document.js";
 import { documentsIn, type Workbench } from "../../recipe/files.js";
 import { asMade, type AsMade } from "./asMade.js";
 import { rescue, type Rescue } from "./rescue.js";
@@ -21,7 +22,8 @@ export interface ReturnedBatch {
  * The newest weighed batch of a brief's formulation, assessed: from `measurements/batches/` of its shelf folders the last by file
  * name in the last folder that holds one; undefined where none does.
  * @param work - A brief with its formulation, shelf and file; draw options.
- * @throws InputError with file, line and field of whatever cannot be used; when two files share an id; as {@link weighingsOn},
+ * @throws InputError with file, line and field of whatever cannot be used; when two files share an id; when a batch is of a
+ * formulation that is neither this one nor in `formulations/` of a shelf folder; as {@link weighingsOn},
  * {@link asMade} and {@link rescue}.
  * @example
  * ```ts
@@ -39,32 +41,55 @@ export function openBatch({
   file,
   ...options
 }: Workbench & DrawOptions): ReturnedBatch | undefined {
-  const weighed = newestOf(
-    brief.shelf.map((folder) => join(dirname(file), folder)),
-    formulation.id,
-  );
-  if (weighed === undefined) return undefined;
+  const folders = brief.shelf.map((folder) => resolve(dirname(file), folder));
+  const newest = newestOf(folders, formulation.id);
+  if (newest === undefined) return undefined;
+  const { weighed, where } = newest;
   const { batch_g, balance, accuracy, weighingAccuracy } = weighed;
-  const sheet = weighOut({ formulation, batch_g, balance, accuracy, weighingAccuracy });
-  const weighings = weighingsOn({ sheet, weighed });
-  return {
-    weighed,
-    sheet,
-    made: asMade({ sheet, weighings, work: { brief, shelf }, ...options }),
-    plan: rescue({ sheet, weighings }),
-  };
+  try {
+    const sheet = weighOut({ formulation, batch_g, balance, accuracy, weighingAccuracy });
+    const weighings = weighingsOn({ sheet, weighed });
+    return {
+      weighed,
+      sheet,
+      made: asMade({ sheet, weighings, work: { brief, shelf }, ...options }),
+      plan: rescue({ sheet, weighings }),
+    };
+  } catch (error) {
+    throw error instanceof InputError
+      ? new InputError(`${where}: ${error.message}`, { cause: error })
+      : error;
+  }
 }
 
-function newestOf(folders: readonly string[], formulation: string): WeighedBatch | undefined {
-  const found = new Map<string, WeighedBatch>();
-  for (const document of folders.flatMap((folder) => documentsIn(folder, join("measurements", "batches")))) {
-    const one = readWeighedBatch(document);
-    if (found.has(one.id)) {
+function newestOf(folders: readonly string[], formulation: string) {
+  const found = new Map<string, { weighed: WeighedBatch; where: string }>();
+  const documents = folders.flatMap((folder) => documentsIn(folder, join("measurements", "batches")));
+  const known = new Set([formulation, ...folders.flatMap(formulationsIn)]);
+  for (const document of documents) {
+    const weighed = readWeighedBatch(document);
+    const { where } = document;
+    const twin = found.get(weighed.id);
+    if (twin !== undefined) {
       throw new InputError(
-        `${document.where}: batch "${one.id}" stands in another file too; a bottle has one name, rename one of them`,
+        `${where}: batch "${weighed.id}" stands in ${twin.where} too; a bottle has one name, rename one of them`,
       );
     }
-    found.set(one.id, one);
+    if (!known.has(weighed.formulation)) {
+      const place = placeOf(document, ["formulation"]);
+      throw new InputError(
+        `${unknownName(place, "formulation", weighed.formulation, [...known])} (the formulation's file belongs into formulations/ of a shelf folder)`,
+      );
+    }
+    found.set(weighed.id, { weighed, where });
   }
-  return [...found.values()].findLast((one) => one.formulation === formulation);
+  return [...found.values()].findLast((one) => one.weighed.formulation === formulation);
+}
+
+/** Ids of the formulations that lie beside the measurements of a shelf folder. */
+function formulationsIn(folder: string): string[] {
+  return documentsIn(folder, "formulations").flatMap(({ value }) => {
+    const { id } = (value ?? {}) as { id?: unknown };
+    return typeof id === "string" ? [id] : [];
+  });
 }

@@ -26,6 +26,8 @@ export interface WeighedBatch {
     /** As the bottle says. */
     readonly lot?: string;
     readonly mass_g: number;
+    /** The balance did show a mass that is far from the one on the sheet. */
+    readonly asShown?: true;
   }[];
   readonly source: string;
   readonly status: SourceStatus;
@@ -59,7 +61,8 @@ export function readWeighedBatch(document: JsonDocument): WeighedBatch {
 /**
  * The weighings of a batch as the lines of its sheet, as {@link asMade} and {@link rescue} take them.
  * @param input - `sheet`, the one it was weighed by, and `weighed`.
- * @throws InputError when the sheet is of another formulation or size, or has no portion of that name, with the nearest one.
+ * @throws InputError when the sheet is of another formulation or size, or has no portion of that name, with the nearest one; when
+ * a mass is more than ten times what the sheet says, or less than a tenth of it, and is not said to be `asShown`.
  * @example
  * ```ts
  * import { weighingsOn } from "resinwright";
@@ -76,14 +79,27 @@ export function weighingsOn({ sheet, weighed }: { sheet: WeighOutSheet; weighed:
       `${where}: weighed as ${weighed.batch_g} g of "${weighed.formulation}", and the sheet is ${batch_g} g of "${formulation.id}"; make the sheet it was weighed by`,
     );
   }
-  return weighed.weighings.map(({ portion, lot, mass_g }) => {
-    const line = portions.find(({ label }) => label === portion)?.line;
-    if (line !== undefined) return { line, mass_g, ...(lot === undefined ? {} : { lot }) };
+  return weighed.weighings.map(({ portion, lot, mass_g, asShown }, i) => {
+    const planned = portions.find(({ label }) => label === portion);
+    if (planned !== undefined) {
+      if (!asShown) refuseSlip(`${where}: weighings[${i}].mass_g of ${portion}`, mass_g, planned.target_g);
+      return { line: planned.line, mass_g, ...(lot === undefined ? {} : { lot }) };
+    }
     const labels = portions.map(({ label }) => label);
     throw new InputError(
       `${unknownName(where, "portion", portion, labels)} (a changed formulation, balance or solubility makes another sheet)`,
     );
   });
+}
+
+/** Beyond this factor a mass is likelier mistyped than mis-weighed; a portion left out is 0. */
+const SLIP = 10;
+
+function refuseSlip(place: string, mass_g: number, target_g: number): void {
+  if (mass_g === 0 || (mass_g <= SLIP * target_g && mass_g >= target_g / SLIP)) return;
+  throw new InputError(
+    `${place} is ${mass_g}, and the sheet says ${target_g} g; check the unit (g), or say "asShown": true beside it if the balance did show that`,
+  );
 }
 
 const weighedSchema: z.ZodType<WeighedBatch> = strict({
@@ -103,6 +119,7 @@ const weighedSchema: z.ZodType<WeighedBatch> = strict({
         portion: z.string().min(1),
         lot: z.string().min(1).optional(),
         mass_g: quantity("mass_g", { min: 0 }),
+        asShown: z.literal(true).optional(),
       }),
     )
     .min(1),

@@ -1,7 +1,16 @@
 // What a record can be, and what each kind has to hold before it is written.
 // A record that stands is never held to these rules again: it is as it was written.
 
-import { checkNumber, fraction, InputError, notNegative, refuseUnknownKeys, show } from "../../door.js";
+import {
+  checkNumber,
+  fraction,
+  InputError,
+  notNegative,
+  positive,
+  refuseUnknownKeys,
+  show,
+  type NumberRule,
+} from "../../door.js";
 
 /** Numbers or short text, units in the names: `{ viscosity_mPas: 318, spindle: "4 cm plate" }`. */
 export type Figures = Readonly<Record<string, number | string>>;
@@ -119,6 +128,12 @@ export function checkRecord(record: NewRecord): void {
     );
   }
   checkFields("", record, rules);
+  if (record.kind === "measurement") {
+    record.repeats.forEach((value, i) => checkPhysical(record.quantity, `repeats[${i}]`, value));
+    for (const [name, value] of Object.entries(record.conditions)) {
+      if (typeof value === "number") checkPhysical(name, `conditions.${name}`, value);
+    }
+  }
   if (record.kind !== "recipe") return;
   const total = record.parts.reduce((sum, { massFraction }) => sum + massFraction, 0);
   if (Math.abs(total - 1) > 1e-6) {
@@ -129,6 +144,38 @@ export function checkRecord(record: NewRecord): void {
 }
 
 const where = "record";
+
+/** What nature allows of a quantity, by how its name ends: `neatViscosity_mPas` is a viscosity. */
+const physicalRanges: readonly (readonly [
+  ending: string,
+  range: Pick<NumberRule, "min" | "above" | "max">,
+])[] = [
+  ["temperature_C", { min: -273.15 }],
+  ["viscosity_mPas", positive],
+  ["density_gcm3", { ...positive, max: 25 }],
+  ["molarMass_gmol", positive],
+  ["irradiance_mWcm2", notNegative],
+  ["exposure_mJcm2", notNegative],
+  ["depth_um", notNegative],
+  ["deadZone_um", notNegative],
+  ["thickness_um", notNegative],
+  ["time_s", notNegative],
+  ["wavelength_nm", positive],
+  ["pressure_Pa", notNegative],
+  ["shearRate_pers", notNegative],
+];
+
+function checkPhysical(quantity: string, field: string, value: number): void {
+  const name = quantity.toLowerCase();
+  const range = physicalRanges.find(([ending]) => name.endsWith(ending.toLowerCase()))?.[1];
+  if (range === undefined) return;
+  checkNumber(value, {
+    where,
+    field: `${field} (${quantity})`,
+    ...range,
+    advice: "a record is never changed, so check sign and unit before it is written",
+  });
+}
 
 type Rule = (field: string, value: unknown) => void;
 type Rules = Readonly<Record<string, Rule>>;

@@ -30,7 +30,26 @@ describe("openBatch", () => {
   it("is undefined where the shelf has no batch of the formulation", () => {
     expect(open()).toBeUndefined();
     put("other.json", { id: "B-1", formulation: "other" });
+    mkdirSync(join(shelf, "formulations"));
+    writeFileSync(join(shelf, "formulations", "o.json"), JSON.stringify({ id: "other" }));
     expect(open()).toBeUndefined();
+  });
+
+  it("refuses a batch of a formulation that is nowhere, with the nearest", () => {
+    put("a.json", { id: "B-1", formulation: "flow-cel-a" });
+    expect(() => open()).toThrow(
+      /a\.json, line 1: formulation: unknown formulation "flow-cel-a"; did you mean "flow-cell-a"\? \(the formulation's file belongs into formulations\/ of a shelf folder\)$/,
+    );
+  });
+
+  it("refuses a table among the batches, which it would not read", () => {
+    writeFileSync(join(shelf, "measurements", "batches", "sheet.csv"), "portion,mass");
+    expect(() => open()).toThrow(/batches\/sheet\.csv: only \.json files are read here/);
+  });
+
+  it("names the file of a portion that the sheet does not have", () => {
+    put("a.json", { id: "B-1", weighings: [{ portion: "IBOAX", mass_g: 141 }] });
+    expect(() => open()).toThrow(/a\.json: batch "B-1": unknown portion "IBOAX"; did you mean "IBOA"\?/);
   });
 
   it("takes the last by file name, of the last folder that has one", () => {
@@ -66,7 +85,7 @@ describe("openBatch", () => {
   it("refuses two bottles of one name, and a file that cannot be used", () => {
     put("a.json", {});
     expect(() => open("data")).toThrow(
-      /a\.json: batch "flow-cell-a-1" stands in another file too; a bottle has one name, rename one of them$/,
+      /a\.json: batch "flow-cell-a-1" stands in .*flow-cell-a-1\.json too; a bottle has one name, rename one of them$/,
     );
     put("a.json", { batch_g: "0.5 L" });
     expect(() => open()).toThrow(/a\.json, line 1: batch_g is "0.5 L"; it must be a quantity/);

@@ -81,6 +81,18 @@ describe("weighingsOn", () => {
     ]);
   });
 
+  it("takes a mass for a slip that is ten times off, unless the file says that the balance showed it", () => {
+    const of = (mass_g: number, said: object = {}) =>
+      weighingsOn({ sheet, weighed: read({ weighings: [{ portion: "THIN", mass_g, ...said }] }) });
+    expect(() => of(599500)).toThrow(
+      'batch "T-1": weighings[0].mass_g of THIN is 599500, and the sheet says 600 g; check the unit (g), or say "asShown": true beside it if the balance did show that',
+    );
+    expect(() => of(0.5995)).toThrow("weighings[0].mass_g of THIN is 0.5995, and the sheet says 600 g");
+    expect(of(0)).toEqual([{ line: 1, mass_g: 0 }]);
+    expect(of(6000)).toEqual([{ line: 1, mass_g: 6000 }]);
+    expect(of(6001, { asShown: true })).toEqual([{ line: 1, mass_g: 6001 }]);
+  });
+
   it.each([
     [
       { weighings: [{ portion: "THIM", mass_g: 1 }] },

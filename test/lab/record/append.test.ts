@@ -152,6 +152,21 @@ describe("appendRecord", () => {
       "record: repeats[1] is Infinity; it must be a finite number",
     ],
     [
+      "a reading that nature does not allow",
+      { ...measurement, repeats: [301, -316] },
+      "record: repeats[1] (viscosity_mPas) is -316; it must be a finite number above 0; a record is never changed, so check sign and unit before it is written",
+    ],
+    [
+      "a density in kg/m³",
+      { ...measurement, quantity: "density_gcm3", repeats: [1012] },
+      "record: repeats[0] (density_gcm3) is 1012; it must be a number above 0 and at most 25",
+    ],
+    [
+      "a condition below absolute zero",
+      { ...measurement, conditions: { plateTemperature_C: -300, gap: "0.5 mm" } },
+      "record: conditions.plateTemperature_C (plateTemperature_C) is -300; it must be a finite number of at least -273.15",
+    ],
+    [
       "a negative mass",
       { ...batch, lines: [{ ingredient: "A", lot: "", target_g: 1, actual_g: -1 }] },
       "record: lines[0].actual_g is -1; it must be a finite number of at least 0",
