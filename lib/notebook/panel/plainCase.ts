@@ -6,6 +6,7 @@ import type { Brief } from "../../recipe/brief.js";
 import type { MeasuredWorkingCurve } from "../../recipe/cureDepths.js";
 import type { Film } from "../../recipe/film.js";
 import type { Formulation } from "../../recipe/formulation.js";
+import type { Ingredient } from "../../recipe/ingredient.js";
 import type { Interaction } from "../../recipe/interaction.js";
 import type { ResinConstants } from "../../recipe/constants.js";
 import type { Spectrum } from "../../recipe/spectrum.js";
@@ -14,6 +15,8 @@ import type { Spectrum } from "../../recipe/spectrum.js";
 export interface PlainCase {
   readonly formulation: Formulation;
   readonly brief: Brief;
+  /** Ingredients that the brief names to avoid. */
+  readonly avoided: readonly Ingredient[];
   readonly spectra: readonly Spectrum[];
   readonly films: readonly Film[];
   readonly interactions: readonly Interaction[];
@@ -32,6 +35,7 @@ export function plainCase({ formulation, brief, shelf, oxygenCorrection }: Case)
   return {
     formulation,
     brief: { ...brief, formulation: "", shelf: [] },
+    avoided: brief.avoid.flatMap(({ ingredient }) => shelf.ingredients.get(ingredient ?? "") ?? []),
     spectra: [...shelf.spectra.values()].filter(({ id }) => spectra.includes(id)),
     films: [...shelf.films.values()].filter(({ id }) => id === brief.window.film),
     interactions: shelf.interactions.filter(({ pair }) => pair.every((id) => ids.includes(id))),
@@ -51,7 +55,7 @@ export function caseOf({ formulation, brief, oxygenCorrection, ...plain }: Plain
     formulation,
     brief,
     shelf: {
-      ingredients: byId(formulation.components.map(({ ingredient }) => ingredient)),
+      ingredients: byId([...plain.avoided, ...formulation.components.map(({ ingredient }) => ingredient)]),
       lots: new Map(),
       spectra: byId(plain.spectra),
       films: byId(plain.films),
