@@ -4,7 +4,7 @@
 import { readFileSync } from "node:fs";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
-import { assess, formulate, parseJson, readRecipe } from "../../lib/dist/index.js";
+import { assess, calibrate, formulate, parseJson, readRecipe } from "../../lib/dist/index.js";
 import { openBrief } from "../../lib/dist/files.js";
 import { readingOf } from "../../lib/dist/notebook/panel/reading.js";
 import { controlsOf, withSettings } from "../../lib/dist/notebook/panel/settings.js";
@@ -14,7 +14,7 @@ export async function checkPanel({ browser, place, check, axe }) {
   const html = readFileSync(place, "utf8");
   if (!html.includes(`<section class="panel"`)) return;
   const name = `${path.basename(place)}, panel`;
-  const work = openBrief(path.join("data", "briefs", /<p>Brief (\S+\.json) ·/.exec(html)[1]));
+  const work = calibrate(openBrief(path.join("data", "briefs", /<p>Brief (\S+\.json) ·/.exec(html)[1])));
   const controls = controlsOf(work);
   const start = Object.fromEntries(controls.map(({ field, start }) => [field, start]));
 
