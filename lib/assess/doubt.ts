@@ -88,16 +88,15 @@ export function propagate<T>(model: (read: Read) => T, draws: Draws): Ensemble<T
   return { stated, outcomes, inputs: [...columns.keys()] };
 }
 
+/** The answer at the stated values, the drawn ones, and the probability that an interval of them is to hold. */
+export interface StatedDraws {
+  readonly stated: number;
+  readonly values: readonly number[];
+  readonly level: number;
+}
+
 /** The coverage interval of drawn numbers around the answer at the stated values. */
-export function intervalOf({
-  stated,
-  values,
-  level,
-}: {
-  stated: number;
-  values: readonly number[];
-  level: number;
-}): Interval {
+export function intervalOf({ stated, values, level }: StatedDraws): Interval {
   const { low, high } = coverageInterval(values, level);
   // A model that bends can put the stated answer outside the middle of its own draws; the interval never excludes it.
   return { value: stated, low: Math.min(low, stated), high: Math.max(high, stated), level };
@@ -107,15 +106,7 @@ export function intervalOf({
  * As {@link intervalOf}, of the draws that have the quantity at all. Where these are fewer than the level needs, none can be left out
  * at either end.
  */
-export function intervalAmong({
-  stated,
-  values,
-  level,
-}: {
-  stated: number;
-  values: readonly number[];
-  level: number;
-}): Interval {
+export function intervalAmong({ stated, values, level }: StatedDraws): Interval {
   if (values.length >= drawsNeeded(level)) return intervalOf({ stated, values, level });
   return { value: stated, low: Math.min(stated, ...values), high: Math.max(stated, ...values), level };
 }
