@@ -1,16 +1,18 @@
 // Readings that lie so far from what the shelf lets expect that a slip is likelier than a discovery: a wrong unit, two liquids
 // changed over.
 
+import { andradeFromReference, andradeViscosity } from "../models/viscosity.js";
+import { kelvin } from "../models/scales.js";
 import type { Ingredient } from "../recipe/ingredient.js";
 import type { AtTemperature } from "../recipe/sourced.js";
 import type { Interval, Warning } from "../result.js";
+import { logarithmicSpread } from "./doubt.js";
 import { shortText } from "./shortText.js";
 
 /** Lots of an oligomer differ by a factor of two and more (common practice); this is beyond it. */
 const FACTOR = 3;
 /** One reading in 370 lies beyond three standard deviations by chance. */
 const DEVIATIONS = 3;
-const ZERO_C_IN_K = 273.15;
 
 /**
  * A viscosity of a neat liquid against that of the ingredient on the shelf, brought to the temperature of the reading by its
@@ -31,9 +33,16 @@ export function viscosityContradictions({
 }): Warning[] {
   const { viscosity_mPas: stated, viscosityActivation_K: activation, lot } = expected;
   if (stated === undefined || activation === undefined) return [];
-  const perKelvin = (temperature_C: number) => 1 / (temperature_C + ZERO_C_IN_K);
+  const perKelvin = (temperature_C: number) => 1 / kelvin(temperature_C);
   const way = perKelvin(read.temperature_C) - perKelvin(stated.temperature_C);
-  const expected_mPas = stated.value * Math.exp(activation.value * way);
+  const expected_mPas = andradeViscosity({
+    ...andradeFromReference({
+      viscosity_mPas: stated.value,
+      referenceTemperature_C: stated.temperature_C,
+      activation_K: activation.value,
+    }),
+    temperature_C: read.temperature_C,
+  });
   const spread = Math.hypot(logarithmicSpread(read), logarithmicSpread(stated), Math.abs(way) * activation.u);
   const distance = Math.abs(Math.log(read.value / expected_mPas));
   if (distance <= Math.max(Math.log(FACTOR), DEVIATIONS * spread)) return [];
@@ -68,9 +77,4 @@ export function figureContradictions({
       message: `${shortText(value)} ${unit} of ${reading} stands against ${at} (${from} to ${to}) ${unit}, which its ingredients let expect. Check ${check} before you trust what follows from it.`,
     },
   ];
-}
-
-/** Standard deviation of the logarithm of a positive quantity. */
-function logarithmicSpread({ value, u }: AtTemperature): number {
-  return Math.sqrt(Math.log1p((u / value) ** 2));
 }

@@ -154,7 +154,12 @@ function quantileOf({ value, u, spread }: Uncertain, probability: number): numbe
   if (spread === "flat") return value + Math.sqrt(3) * u * (2 * probability - 1);
   const z = normalQuantile({ probability });
   if (spread === "signed") return value + u * z;
-  return value * Math.exp(z * Math.sqrt(Math.log1p((u / value) ** 2)));
+  return value * Math.exp(z * logarithmicSpread({ value, u }));
+}
+
+/** Standard deviation of the logarithm of a positive quantity that is log-normal. */
+export function logarithmicSpread({ value, u }: Pick<SourcedValue, "value" | "u">): number {
+  return Math.sqrt(Math.log1p((u / value) ** 2));
 }
 
 /** FNV-1a (Fowler, Noll, Vo), 32 bit: gives each label its own stream. */

@@ -5,7 +5,7 @@ import type { MeasuredWorkingCurve } from "../recipe/cureDepths.js";
 import type { Formulation } from "../recipe/formulation.js";
 import type { SourcedValue, Warning } from "../result.js";
 import { irradianceOf, layerCureDepth, uncertain, type Case } from "./case.js";
-import type { Read } from "./doubt.js";
+import { logarithmicSpread, type Read } from "./doubt.js";
 import { lightWarnings } from "./light.js";
 import { asMeasured, otherAmounts, sameIngredients } from "./measuredParts.js";
 import { shortText } from "./shortText.js";
@@ -97,7 +97,7 @@ const estimated: Warning = {
 /** A penetration depth, and what is left of the critical exposure's doubt once the depth is known. */
 function jointInputs(curve: MeasuredWorkingCurve) {
   const { series, penetrationDepth_um: Dp, criticalExposure_mJcm2: Ec, correlation } = curve;
-  const spreadE = Math.sqrt(Math.log1p((Ec.u / Ec.value) ** 2));
+  const spreadE = logarithmicSpread(Ec);
   const left = remainders.get(curve) ?? {
     ...Ec,
     u: Ec.value * Math.sqrt(Math.expm1(spreadE ** 2 * (1 - correlation ** 2))),
